@@ -1,0 +1,141 @@
+import { hashPassword } from '../src/auth/passwords';
+import type { Measurement } from '../src/contract/feed';
+import { computedSnapshot, type ComputedSnapshot } from '../src/ingest/computed-snapshot';
+import { roster, type RosterLine } from '../src/ingest/roster';
+import { RUNG_MS, rungRows, rungStart } from '../src/ingest/rung';
+import { snapshotRow } from '../src/ingest/snapshot-row';
+import { inTransaction, type Store } from '../src/store/client';
+import { type LevelRow, writeLevels } from '../src/store/levels';
+import { keepPartitions } from '../src/store/partitions';
+import { insertUser } from '../src/store/people';
+import { readRegister } from '../src/store/register';
+import { insertLine } from '../src/store/register-edit';
+import { type SnapshotRow, writeSnapshots } from '../src/store/snapshots';
+import { createDemoMeasurements, type DemoMeasurements, SAMPLE_MS } from './demo-history';
+import { demoPeople } from './demo-people';
+import { demoLines } from './network/demo-lines';
+
+/** How far back the demo's history reaches, and how closely it is sampled: the nearer, the closer. */
+export const HISTORY = {
+  days: 60,
+  sampleMs: 300_000,
+  /** raw rows are kept from the start of the day before, at this spacing */
+  rawSampleMs: 60_000,
+  /** the last minutes are as close as the feed itself, for the operating plane's tails */
+  closeMs: 15 * 60_000,
+} as const;
+
+const RAW_DAYS = 14;
+const CLOCK_LIMIT_US = 100;
+const RECORDED_BY = 'Jonas Wehrli';
+const ROWS_A_WRITE = 1_000;
+
+type Site = { readonly seed: number; readonly epochMs: number };
+
+/** Loads the demo's people, register and history; the history passes through the product's own evaluation. */
+export async function loadDemo(store: Store, site: Site, progress: (share: number) => void): Promise<void> {
+  await loadPeople(store, site);
+  await loadRegister(store, site);
+  await keepPartitions(store, { now: site.epochMs, rawDays: RAW_DAYS });
+  const lines = [...roster(await readRegister(store), { workerIndex: 0, workerCount: 1 }).values()];
+  const measurements = createDemoMeasurements(site);
+  for (const [index, line] of lines.entries()) {
+    await loadHistory(store, line, { measurements, epochMs: site.epochMs });
+    progress((index + 1) / lines.length);
+  }
+}
+
+async function loadPeople(store: Store, { epochMs }: Site): Promise<void> {
+  for (const { email, name, role, password } of demoPeople)
+    await insertUser(store, {
+      email,
+      name,
+      role,
+      passwordHash: await hashPassword(password),
+      createdAt: new Date(epochMs),
+    });
+}
+
+async function loadRegister(store: Store, { epochMs }: Site): Promise<void> {
+  const engineer = { id: 'demo', name: RECORDED_BY };
+  for (const line of demoLines) {
+    const edit = await insertLine(store, line, { by: engineer, nowMs: epochMs });
+    if (!edit.ok) throw new Error(`The demo line ${line.key} is refused: ${JSON.stringify(edit.problem)}`);
+  }
+}
+
+async function loadHistory(
+  store: Store,
+  line: RosterLine,
+  { measurements, epochMs }: { measurements: DemoMeasurements; epochMs: number },
+): Promise<void> {
+  const hours: LevelRow[] = [];
+  const days: LevelRow[] = [];
+  const rawFromMs = rungStart('day', epochMs) - RUNG_MS.day;
+  let before: SnapshotRow | undefined;
+  for (
+    let dayMs = rungStart('day', epochMs) - HISTORY.days * RUNG_MS.day;
+    dayMs < epochMs;
+    dayMs += RUNG_MS.day
+  ) {
+    const rows: SnapshotRow[] = [];
+    for (const atMs of instants(dayMs, { epochMs, rawFromMs })) {
+      const snapshot = demoSnapshot(line, atMs, measurements);
+      if (snapshot !== undefined) rows.push(snapshotRow(snapshot));
+    }
+    for (const hourRows of byHour(rows)) {
+      const start = new Date(rungStart('hour', hourRows[0]!.at.getTime()));
+      hours.push(...rungRows({ lineId: line.id, start, ratingAmps: line.ratingAmps }, hourRows, before));
+      before = hourRows.at(-1);
+    }
+    days.push(
+      ...rungRows({ lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps }, rows, undefined),
+    );
+    if (dayMs >= rawFromMs) await writeRaw(store, rows);
+  }
+  await writeLevels(store, 'hour', hours);
+  await writeLevels(store, 'day', days);
+}
+
+/** The instants of one day that are loaded, up to the moment the site came up. */
+function* instants(
+  dayMs: number,
+  { epochMs, rawFromMs }: { epochMs: number; rawFromMs: number },
+): Generator<number> {
+  const endMs = Math.min(dayMs + RUNG_MS.day, Math.floor(epochMs / SAMPLE_MS) * SAMPLE_MS);
+  const spacingMs = dayMs >= rawFromMs ? HISTORY.rawSampleMs : HISTORY.sampleMs;
+  let atMs = dayMs;
+  while (atMs < endMs) {
+    yield atMs;
+    atMs += atMs >= epochMs - HISTORY.closeMs ? SAMPLE_MS : spacingMs;
+  }
+}
+
+function demoSnapshot(
+  line: RosterLine,
+  atMs: number,
+  measurements: DemoMeasurements,
+): ComputedSnapshot | undefined {
+  const sent = new Map<string, Measurement>(
+    measurements(line.key, atMs).map(({ terminal, measurement }) => [terminal, measurement]),
+  );
+  return sent.size === 0 ? undefined : computedSnapshot({ line, atMs, measurements: sent }, CLOCK_LIMIT_US);
+}
+
+function byHour(rows: readonly SnapshotRow[]): SnapshotRow[][] {
+  const hours: SnapshotRow[][] = [];
+  for (const row of rows) {
+    const last = hours.at(-1)?.[0];
+    if (last !== undefined && rungStart('hour', last.at.getTime()) === rungStart('hour', row.at.getTime()))
+      hours.at(-1)!.push(row);
+    else hours.push([row]);
+  }
+  return hours;
+}
+
+async function writeRaw(store: Store, rows: readonly SnapshotRow[]): Promise<void> {
+  await inTransaction(store, async (connection) => {
+    for (let from = 0; from < rows.length; from += ROWS_A_WRITE)
+      await writeSnapshots(connection, rows.slice(from, from + ROWS_A_WRITE));
+  });
+}

@@ -1,0 +1,4 @@
+import { register } from './register';
+import { choosePassword, signIn, signOut } from './session';
+
+export const server = { signIn, signOut, choosePassword, ...register };

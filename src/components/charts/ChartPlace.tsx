@@ -1,0 +1,26 @@
+import { lazy, Suspense } from 'react';
+import type { EChartsCoreOption } from 'echarts/core';
+
+interface Props {
+  /** undefined until the theme's colours are known, which is in the browser */
+  readonly option: EChartsCoreOption | undefined;
+  readonly label: string;
+  /** keeps the room, so that nothing jumps when the drawing comes */
+  readonly className: string;
+}
+
+// A chunk of its own: the page stands and can be read before the charts have come.
+const Chart = lazy(() => import('./Chart'));
+
+/** The room of a chart, and the chart in it as soon as it can be drawn. */
+export function ChartPlace({ option, label, className }: Props) {
+  return (
+    <div className={className}>
+      {option !== undefined && (
+        <Suspense fallback={null}>
+          <Chart option={option} label={label} />
+        </Suspense>
+      )}
+    </div>
+  );
+}

@@ -1,0 +1,122 @@
+import { useMemo, useState } from 'react';
+import type { LineSummary } from '../../contract/lines';
+import type { SettingsVersion } from '../../contract/settings-version';
+import { restraintConvention } from '../../protection/restraint';
+import type { Reading } from '../../view/line-readings';
+import { phaseRows } from '../../view/line-phase-rows';
+import { unitWords } from '../../view/line-unit';
+import type { CurrentUnit } from '../../view/line-unit';
+import { csvName } from '../../view/line-csv';
+import { planeShape } from '../../view/plane-shape';
+import { planeSentence, planeTable } from '../../view/plane-table';
+import type { PlaneExtent } from '../../view/plane-window';
+import type { SiteCustom } from '../../view/site-custom';
+import type { ChartInk } from '../charts/chart-ink';
+import { ChartPanel } from '../charts/ChartPanel';
+import { ChartPlace } from '../charts/ChartPlace';
+import { Choice } from '../charts/Choice';
+import { useChartInk } from '../charts/use-chart-ink';
+import { phaseColour } from './phase-colour';
+import { planeOption } from './plane-option';
+
+interface Props {
+  readonly line: LineSummary;
+  readonly inForce: SettingsVersion | undefined;
+  /** the last ten minutes */
+  readonly readings: readonly Reading[];
+  /** why the tails are not there; null while they are or are coming */
+  readonly tailError: Error | null;
+  readonly unit: CurrentUnit;
+  readonly site: SiteCustom;
+  readonly faded: boolean;
+  readonly nowMs: number;
+}
+
+const EXTENTS: readonly { value: PlaneExtent; label: string }[] = [
+  { value: 'near the points', label: 'Near the points' },
+  { value: 'whole characteristic', label: 'Whole characteristic' },
+];
+
+/** Differential against restraint, with the recorded threshold and the way of the last ten minutes. */
+export function OperatingPlane(props: Props) {
+  const { line, inForce, readings, tailError, unit, site, nowMs } = props;
+  const [extent, setExtent] = useState<PlaneExtent>('near the points');
+  const ink = useChartInk();
+  const option = usePlaneOption(props, extent, ink);
+  const table = useMemo(
+    () => planeTable(readings, { letters: site.phaseLetters, unit, ratingAmps: line.ratingAmps }),
+    [readings, site, unit, line.ratingAmps],
+  );
+  return (
+    <ChartPanel
+      title="Operating point"
+      caption={tailError === null ? 'Now, and the last ten minutes' : `Now only: ${tailError.message}`}
+      controls={
+        inForce !== undefined && (
+          <Choice
+            legend="How much of the plane is shown"
+            name="plane-extent"
+            value={extent}
+            options={EXTENTS}
+            onChoose={setExtent}
+          />
+        )
+      }
+      table={table.rows.length === 0 ? undefined : table}
+      fileName={csvName([line.key, 'operating points'], nowMs)}
+      timeZone={site.timeZone}
+    >
+      {inForce === undefined ? (
+        <p className="py-10 text-ink-2">
+          No settings are recorded for this line, so there is no threshold to stand against. Once a version is
+          in the register, the plane is drawn here.
+        </p>
+      ) : (
+        <ChartPlace
+          option={option}
+          label={planeSentence(line, site.phaseLetters)}
+          className="h-80 sm:h-[25.5rem]"
+        />
+      )}
+    </ChartPanel>
+  );
+}
+
+function usePlaneOption(
+  { line, inForce, readings, unit, site, faded }: Props,
+  extent: PlaneExtent,
+  ink: ChartInk | undefined,
+) {
+  return useMemo(() => {
+    if (ink === undefined || inForce === undefined) return undefined;
+    const { characteristic, restraint } = inForce;
+    const unitAmps = unit === 'amperes' ? 1 : line.ratingAmps;
+    const shape = planeShape(line, { characteristic, readings, extent, unitAmps });
+    const rows = new Map(phaseRows(line, unit, site).map((row) => [row.phase, row]));
+    const points = shape.points.map((point) => {
+      const row = rows.get(point.phase)!;
+      return {
+        ...point,
+        letter: row.letter,
+        colour: phaseColour(ink, row.condition, { faded }),
+        lines: [
+          `phase ${row.letter}`,
+          `differential ${row.differential}`,
+          `restraint ${row.restraint}`,
+          `${row.utilisation} of the threshold, ${row.threshold}`,
+        ],
+      };
+    });
+    const words = unitWords(unit, line.ratingAmps);
+    return planeOption({
+      ...shape,
+      ink,
+      points,
+      faded,
+      names: {
+        differential: `differential, ${words}`,
+        restraint: `restraint, ${words} (${restraintConvention(restraint)})`,
+      },
+    });
+  }, [line, inForce, readings, unit, site, faded, extent, ink]);
+}

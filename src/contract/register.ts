@@ -1,0 +1,96 @@
+import { z } from 'zod';
+import { keySchema } from './key';
+import { characteristicSchema, restraintSchema, settingsVersionSchema } from './settings-version';
+
+export const LINE_KINDS = ['overhead', 'cable', 'mixed'] as const;
+export const lineKindSchema = z.enum(LINE_KINDS);
+export const goesBySchema = z.enum(['phasors', 'reported']);
+
+const name = z.string().trim().min(1, 'Give a name.').max(80, 'A name has at most 80 characters.');
+const positive = (what: string, most: number) =>
+  z.number(`${what} is a number.`).positive(`${what} is above 0.`).max(most, `${what} is at most ${most}.`);
+
+/** Recorded only: a transformer inside the zone is not evaluated yet, and the line says so. */
+export const inZoneTransformerSchema = z.object({
+  /** voltage of the far winding, kV phase to phase */
+  otherVoltageKv: positive('The other voltage', 1200),
+  clockNumber: z.int().min(0).max(11),
+});
+
+const lineFields = {
+  name,
+  voltageKv: positive('The voltage', 1200),
+  ratingAmps: positive('The rating', 20_000),
+  emergencyRatingAmps: positive('The emergency rating', 40_000),
+  lengthKm: positive('The length', 2_000),
+  kind: lineKindSchema,
+  /** positive-sequence capacitance, nF per km; null when not known */
+  capacitanceNfPerKm: positive('The capacitance', 2_000).nullable(),
+  goesBy: goesBySchema,
+  inService: z.boolean(),
+  seriesCompensated: z.boolean(),
+  inZoneTransformer: inZoneTransformerSchema.nullable(),
+};
+
+const terminalFields = {
+  substation: keySchema,
+  substationName: name,
+  ctPrimaryAmps: positive('The transformer primary', 20_000),
+  ctClass: z.string().trim().max(20),
+  inService: z.boolean(),
+};
+
+export const newTerminalSchema = z.object({
+  key: keySchema,
+  ...terminalFields,
+  inService: z.boolean().default(true),
+});
+export const terminalPatchSchema = z.object(terminalFields).partial();
+export const terminalSchema = z.object({ key: keySchema, position: z.int(), ...terminalFields });
+export type Terminal = z.infer<typeof terminalSchema>;
+export type NewTerminal = z.infer<typeof newTerminalSchema>;
+
+export const newSettingsVersionSchema = z.object({
+  validFrom: z.iso.datetime({ offset: true }),
+  characteristic: characteristicSchema,
+  restraint: restraintSchema,
+  note: z.string().trim().min(1, 'Say why these settings are recorded.').max(500),
+});
+export type NewSettingsVersion = z.infer<typeof newSettingsVersionSchema>;
+
+const ratingsInOrder = {
+  check: (line: { ratingAmps?: number | undefined; emergencyRatingAmps?: number | undefined }) =>
+    line.ratingAmps === undefined ||
+    line.emergencyRatingAmps === undefined ||
+    line.emergencyRatingAmps >= line.ratingAmps,
+  says: { message: 'The emergency rating is at least the rating.', path: ['emergencyRatingAmps'] },
+};
+
+export const newLineSchema = z
+  .object({
+    key: keySchema,
+    ...lineFields,
+    capacitanceNfPerKm: lineFields.capacitanceNfPerKm.default(null),
+    goesBy: goesBySchema.default('phasors'),
+    inService: z.boolean().default(true),
+    seriesCompensated: z.boolean().default(false),
+    inZoneTransformer: inZoneTransformerSchema.nullable().default(null),
+    terminals: z.array(newTerminalSchema).max(6, 'A line has at most 6 terminals.').default([]),
+    settings: z.array(newSettingsVersionSchema).default([]),
+  })
+  .refine(ratingsInOrder.check, ratingsInOrder.says);
+export type NewLine = z.infer<typeof newLineSchema>;
+
+export const linePatchSchema = z
+  .object(lineFields)
+  .partial()
+  .refine(ratingsInOrder.check, ratingsInOrder.says);
+export type LinePatch = z.infer<typeof linePatchSchema>;
+
+export const registerLineSchema = z.object({
+  key: keySchema,
+  ...lineFields,
+  terminals: z.array(terminalSchema),
+  settings: z.array(settingsVersionSchema),
+});
+export type RegisterLine = z.infer<typeof registerLineSchema>;

@@ -1,0 +1,74 @@
+import { connect, type MqttClient } from 'mqtt';
+import type { IngestSettings } from '../settings';
+import { deferAcknowledgements, type Delivery, type Receipt } from './deferred-acknowledgement';
+import { INGEST_LIMITS } from './limits';
+import type { Log } from './retry';
+
+export interface FeedClient {
+  readonly mqtt: MqttClient;
+  acknowledge(receipts: readonly Receipt[]): void;
+  /** subscribes to what is new and leaves what is no longer this worker's */
+  follow(topics: readonly string[]): void;
+  close(): Promise<void>;
+}
+
+const KEEPALIVE_S = 30;
+const CONNECT_TIMEOUT_MS = 10_000;
+const RECEIVE_MOST = 5_000;
+
+/** Connects with a session that outlives the connection, so that the broker keeps what is not acknowledged. */
+export function connectFeed(
+  settings: IngestSettings,
+  { take, log }: { take: (delivery: Delivery) => Promise<void> | undefined; log: Log },
+): FeedClient {
+  let wanted: readonly string[] = [];
+  let away = false;
+  const mqtt = connect(settings.BROKER_URL, {
+    clientId: `tareline-ingest-${settings.WORKER_INDEX}-of-${settings.WORKER_COUNT}`,
+    clean: false,
+    resubscribe: false,
+    keepalive: KEEPALIVE_S,
+    connectTimeout: CONNECT_TIMEOUT_MS,
+    reconnectPeriod: INGEST_LIMITS.retryFirstMs,
+    ...(settings.MQTT_VERSION === '5'
+      ? {
+          protocolVersion: 5,
+          properties: { receiveMaximum: RECEIVE_MOST, sessionExpiryInterval: 0xffffffff },
+        }
+      : { protocolVersion: 4 }),
+    ...(settings.BROKER_USERNAME !== undefined && { username: settings.BROKER_USERNAME }),
+    ...(settings.BROKER_PASSWORD !== undefined && { password: settings.BROKER_PASSWORD }),
+  });
+  const { acknowledge } = deferAcknowledgements(mqtt, take);
+  const subscribe = (topics: readonly string[]) => {
+    if (topics.length > 0 && mqtt.connected) mqtt.subscribe([...topics], { qos: 1 });
+  };
+  mqtt.on('connect', () => {
+    mqtt.options.reconnectPeriod = INGEST_LIMITS.retryFirstMs;
+    if (away) log('Broker: connected again.');
+    away = false;
+    subscribe(wanted);
+  });
+  mqtt.on('close', () => {
+    if (!away && !mqtt.disconnecting) log('Broker: not reachable; trying again with growing pauses.');
+    away = true;
+    mqtt.options.reconnectPeriod = Math.min(
+      (mqtt.options.reconnectPeriod ?? 0) * 2,
+      INGEST_LIMITS.retryMostMs,
+    );
+  });
+  // every cause ends in a close, which is where it is said
+  mqtt.on('error', () => undefined);
+  return {
+    mqtt,
+    acknowledge,
+    follow(topics) {
+      const gone = wanted.filter((topic) => !topics.includes(topic));
+      const fresh = topics.filter((topic) => !wanted.includes(topic));
+      wanted = topics;
+      if (gone.length > 0 && mqtt.connected) mqtt.unsubscribe(gone);
+      subscribe(fresh);
+    },
+    close: () => mqtt.endAsync(),
+  };
+}

@@ -1,0 +1,35 @@
+import type { IngestSettings } from '../settings';
+import type { Store } from '../store/client';
+import { replaceCreep } from '../store/levels';
+import { dropRefusalsBefore } from '../store/feed';
+import { keepPartitions } from '../store/partitions';
+import type { WarningLimits } from '../warnings/limits';
+import { INGEST_LIMITS } from './limits';
+import { type LineWatch, type WarningChange, watchFindings } from './line-watch';
+import { catchUpRungs } from './rebuild';
+import { readStandingFindings } from './standing-findings';
+
+const DAY_MS = 86_400_000;
+
+/** Brings a line's level rows up to date and, when an hour has closed, looks at what they say. */
+export async function lookBack(
+  store: Store,
+  watch: LineWatch,
+  { settings, limits, nowMs }: { settings: IngestSettings; limits: WarningLimits; nowMs: number },
+): Promise<WarningChange[]> {
+  const { line } = watch;
+  const { hourClosed } = await catchUpRungs(store, line, { nowMs, rawReachMs: settings.RAW_DAYS * DAY_MS });
+  if (!hourClosed && watch.findings !== undefined) return [];
+  const findings = await readStandingFindings(store, line, { nowMs, nearRatio: settings.NEAR_RATIO });
+  await replaceCreep(store, line.id, { creep: findings.creep, computedAt: new Date(nowMs) });
+  return watchFindings(watch, findings, { atMs: nowMs, limits });
+}
+
+/** Housekeeping of the store, done by the first worker alone. */
+export async function keepStore(
+  store: Store,
+  { rawDays, nowMs }: { rawDays: number; nowMs: number },
+): Promise<void> {
+  await keepPartitions(store, { now: nowMs, rawDays });
+  await dropRefusalsBefore(store, new Date(nowMs - INGEST_LIMITS.refusalsKeptDays * DAY_MS));
+}

@@ -1,0 +1,96 @@
+import type { Rung } from '../contract/lines';
+import { PHASES, type PhaseName } from '../protection/phase';
+import { levelSummary } from '../standing/level';
+import {
+  DEFAULT_QUALIFICATION_LIMITS,
+  disqualifications,
+  type SnapshotFacts,
+} from '../standing/qualification';
+import type { LevelRow } from '../store/levels';
+import { hasFlag } from '../store/snapshot-flags';
+import type { SnapshotFigures } from '../store/snapshots';
+
+export const RUNG_MS: Record<Rung, number> = { hour: 3_600_000, day: 86_400_000 };
+export const rungStart = (rung: Rung, atMs: number): number =>
+  Math.floor(atMs / RUNG_MS[rung]) * RUNG_MS[rung];
+
+const DIFFERENTIAL = { a: 'differentialAAmps', b: 'differentialBAmps', c: 'differentialCAmps' } as const;
+const RESTRAINT = { a: 'restraintAAmps', b: 'restraintBAmps', c: 'restraintCAmps' } as const;
+const UTILISATION = { a: 'utilisationA', b: 'utilisationB', c: 'utilisationC' } as const;
+
+/**
+ * The level rows of one line for a window, one a phase, from its raw rows in ascending order. `before` is the raw
+ * row ahead of the window, against which the first one's steadiness is judged. The same rows give the same numbers.
+ */
+export function rungRows(
+  window: { lineId: number; start: Date; ratingAmps: number },
+  figures: readonly SnapshotFigures[],
+  before: SnapshotFigures | undefined,
+): LevelRow[] {
+  const qualified = qualifiedFigures(figures, before, window.ratingAmps);
+  return PHASES.map((phase) => ({
+    lineId: window.lineId,
+    phase,
+    start: window.start,
+    ...phaseLevels(phase, qualified, figures),
+    meanThroughAmps: mean(qualified.map(({ throughAmps }) => throughAmps)),
+    qualifiedCount: qualified.length,
+    allCount: figures.length,
+  }));
+}
+
+function phaseLevels(
+  phase: PhaseName,
+  qualified: readonly SnapshotFigures[],
+  all: readonly SnapshotFigures[],
+) {
+  const summary = levelSummary(qualified.map((row) => row[DIFFERENTIAL[phase]]!));
+  return {
+    leastAmps: summary?.leastAmps ?? null,
+    p05Amps: summary?.p05Amps ?? null,
+    medianAmps: summary?.medianAmps ?? null,
+    p95Amps: summary?.p95Amps ?? null,
+    greatestAmps: summary?.greatestAmps ?? null,
+    meanRestraintAmps: mean(qualified.map((row) => row[RESTRAINT[phase]])),
+    // the greatest there was, qualified or not: a moment that came near counts
+    greatestUtilisation: greatest(all.map((row) => row[UTILISATION[phase]])),
+  };
+}
+
+function qualifiedFigures(
+  figures: readonly SnapshotFigures[],
+  before: SnapshotFigures | undefined,
+  ratingAmps: number,
+): SnapshotFigures[] {
+  let previous = before && factsOf(before);
+  return figures.filter((row) => {
+    const facts = factsOf(row);
+    const reasons = disqualifications(facts, previous, { ratingAmps, limits: DEFAULT_QUALIFICATION_LIMITS });
+    previous = facts;
+    return reasons.length === 0 && row.differentialAAmps !== null;
+  });
+}
+
+function factsOf({ at, flags, throughAmps }: SnapshotFigures): SnapshotFacts {
+  return {
+    atMs: at.getTime(),
+    complete: !hasFlag(flags, 'incomplete'),
+    validityGood: !hasFlag(flags, 'validityNotGood'),
+    test: hasFlag(flags, 'test'),
+    clocksWithinLimit: !hasFlag(flags, 'clockBeyondLimit'),
+    breakersClosed: !hasFlag(flags, 'breakerOpen'),
+    throughAmps: throughAmps ?? undefined,
+  };
+}
+
+function mean(values: readonly (number | null)[]): number | null {
+  const known = values.filter((value) => value !== null);
+  return known.length === 0 ? null : known.reduce((total, value) => total + value, 0) / known.length;
+}
+
+function greatest(values: readonly (number | null)[]): number | null {
+  return values.reduce(
+    (most, value) => (value !== null && (most === null || value > most) ? value : most),
+    null,
+  );
+}

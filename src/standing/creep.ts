@@ -1,0 +1,93 @@
+import { forecastDates } from './forecast';
+import type { Drift, ForecastDates } from './forecast';
+import { hamedRao } from './hamed-rao';
+import { mannKendall } from './mann-kendall';
+import { senSlope } from './sen-slope';
+import type { SeriesPoint } from './sen-slope';
+
+/** The standing level of one phase on one day, amperes rms primary. Days may be missing in between. */
+export interface DailyLevel {
+  /** Days since the epoch, in whole numbers. */
+  readonly day: number;
+  readonly levelAmps: number;
+}
+
+export interface CreepLimits {
+  readonly pickupAmps: number;
+  /** The near mark as a ratio of the pickup. */
+  readonly nearRatio: number;
+  /** A drift that reaches the near mark later than this is within margin. */
+  readonly horizonDays: number;
+  /** A trend is significant below this two-sided probability; 0.01 unless given. */
+  readonly pMost?: number;
+  /** Fewer daily levels than this yield no verdict; 10 unless given. */
+  readonly daysLeast?: number;
+}
+
+/** A trend of daily levels, with where it leads. Amperes are rms primary, days count from the epoch. */
+export interface CreepTrend extends Drift {
+  readonly pTwoSided: number;
+  /** How many daily levels it was taken from. */
+  readonly days: number;
+  /** Level of the Sen line on the last day. */
+  readonly levelNowAmps: number;
+  readonly near: ForecastDates;
+  readonly pickup: ForecastDates;
+}
+
+/**
+ * `creep`: a significant rise that reaches the near mark within the horizon. `within margin`: a significant
+ * rise that does not. `no trend`: no significant rise; nothing is projected then.
+ */
+export type CreepVerdict =
+  | { readonly kind: 'too few days'; readonly days: number; readonly daysNeeded: number }
+  | ({ readonly kind: 'no trend' | 'within margin' | 'creep' } & CreepTrend);
+
+const NO_DRIFT: Drift = { slopeAmpsPerDay: 0, slopeLowAmpsPerDay: 0, slopeHighAmpsPerDay: 0 };
+
+/** With fewer values than this, no slope between two of them is a 95 % limit. */
+const LIMITS_DAYS_LEAST = 5;
+
+/**
+ * Whether the daily levels of one phase, in ascending order of days, creep towards the pickup: Mann–Kendall
+ * with Hamed–Rao's correction for the significance, Theil–Sen with Gilbert's 95 % limits for the drift.
+ * Throws for a level that is not a number and for days out of order.
+ */
+export function creepVerdict(levels: readonly DailyLevel[], limits: CreepLimits): CreepVerdict {
+  const series = levels.map(({ day, levelAmps }) => ({ time: day, value: levelAmps }));
+  const daysNeeded = Math.max(limits.daysLeast ?? 10, LIMITS_DAYS_LEAST);
+  const last = levels.at(-1);
+  const line = senSlope(series);
+  if (levels.length < daysNeeded || last === undefined || line?.limits === undefined) {
+    return { kind: 'too few days', days: levels.length, daysNeeded };
+  }
+  const drift = {
+    slopeAmpsPerDay: line.slope,
+    slopeLowAmpsPerDay: line.limits.low,
+    slopeHighAmpsPerDay: line.limits.high,
+  };
+  const pTwoSided = cautiousP(series);
+  const isRising = line.slope > 0 && pTwoSided < (limits.pMost ?? 0.01);
+  const levelNowAmps = line.intercept + line.slope * last.day;
+  const forecast = (targetAmps: number) =>
+    forecastDates(isRising ? drift : NO_DRIFT, { lastDay: last.day, levelNowAmps, targetAmps });
+  const near = forecast(limits.nearRatio * limits.pickupAmps);
+  const pickup = forecast(limits.pickupAmps);
+  const kind = isRising ? kindOfRise(near, last.day + limits.horizonDays) : 'no trend';
+  return { kind, ...drift, pTwoSided, days: levels.length, levelNowAmps, near, pickup };
+}
+
+function kindOfRise(near: ForecastDates, horizonDay: number): 'creep' | 'within margin' {
+  return near.likelyDay !== undefined && near.likelyDay <= horizonDay ? 'creep' : 'within margin';
+}
+
+/**
+ * Two-sided p of the series: the corrected one, unless the plain one is greater. The correction may take
+ * evidence away and never add any: on uncorrelated noise it would else find a trend about three times as often
+ * as p says, since some lags look negatively correlated by chance.
+ */
+function cautiousP(series: readonly SeriesPoint[]): number {
+  const plain = mannKendall(series.map((point) => point.value));
+  const corrected = hamedRao(series);
+  return Math.max(plain?.pTwoSided ?? 1, corrected?.pTwoSided ?? 0);
+}

@@ -1,0 +1,77 @@
+import { tieCorrectedVariance } from './mann-kendall';
+import { normalQuantile } from './normal';
+import { ascending, quantileOfSome } from './quantile';
+
+/** One value of a series at its time; the units are the caller's, days and amperes for daily levels. */
+export interface SeriesPoint {
+  readonly time: number;
+  readonly value: number;
+}
+
+/** The slope of a series after Theil and Sen and the line it belongs to, in units of its values and times. */
+export interface SenSlope {
+  readonly slope: number;
+  /** Value of the line at time 0. */
+  readonly intercept: number;
+  /** Confidence limits of the slope; `undefined` where the series is too short to have any. */
+  readonly limits: { readonly low: number; readonly high: number } | undefined;
+  /** How many slopes between two points it was taken from. */
+  readonly pairs: number;
+}
+
+/**
+ * The line whose slope is the median of the slopes between all pairs of points, placed so that as many points
+ * lie above it as below (intercept: median of value − slope·time). P. K. Sen, J. Am. Stat. Assoc. 63, 1968,
+ * 1379–1389; limits after R. O. Gilbert, "Statistical Methods for Environmental Pollution Monitoring", 1987,
+ * §16.5. The limits take the values to be independent and are too narrow where they are not. `undefined` for
+ * fewer than two points; throws for a NaN and for times that do not ascend.
+ */
+export function senSlope(
+  series: readonly SeriesPoint[],
+  { confidence }: { readonly confidence: number } = { confidence: 0.95 },
+): SenSlope | undefined {
+  assertAscendingTimes(series);
+  if (series.length < 2) return undefined;
+  const slopes = ascending(pairSlopes(series));
+  const slope = quantileOfSome(slopes, 0.5);
+  const varianceS = tieCorrectedVariance(series.map((point) => point.value));
+  return {
+    slope,
+    intercept: quantileOfSome(ascending(detrended(series, slope)), 0.5),
+    limits: gilbertLimits(slopes, { varianceS, confidence }),
+    pairs: slopes.length,
+  };
+}
+
+/** The values less slope·time, in the unit of the values. */
+export function detrended(series: readonly SeriesPoint[], slope: number): number[] {
+  return series.map((point) => point.value - slope * point.time);
+}
+
+function pairSlopes(series: readonly SeriesPoint[]): number[] {
+  return series.flatMap((from, index) =>
+    series.slice(index + 1).map((to) => (to.value - from.value) / (to.time - from.time)),
+  );
+}
+
+/**
+ * With N slopes and C = z·√Var S, the slopes of rank (N − C)/2 and (N + C)/2 + 1 from below, both rounded to
+ * the nearest rank.
+ */
+function gilbertLimits(
+  slopes: Float64Array,
+  { varianceS, confidence }: { varianceS: number; confidence: number },
+): SenSlope['limits'] {
+  const c = normalQuantile((1 + confidence) / 2) * Math.sqrt(varianceS);
+  const low = slopes[Math.round((slopes.length - c) / 2) - 1];
+  const high = slopes[Math.round((slopes.length + c) / 2)];
+  return low === undefined || high === undefined ? undefined : { low, high };
+}
+
+function assertAscendingTimes(series: readonly SeriesPoint[]): void {
+  let before = -Infinity;
+  for (const { time } of series) {
+    if (!(time > before)) throw new RangeError('The points of a series come in ascending order of time.');
+    before = time;
+  }
+}

@@ -1,0 +1,104 @@
+import { and, asc, desc, eq, getTableColumns, gte, inArray, lt, sql } from 'drizzle-orm';
+import type { Rung } from '../contract/lines';
+import type { Creep } from '../contract/warning';
+import type { Store } from './client';
+import { creepVerdict, dayLevel, hourLevel, staleHour } from './schema/levels';
+
+export type LevelRow = typeof hourLevel.$inferSelect;
+
+const TABLES = { hour: hourLevel, day: dayLevel } as const;
+const KEYS: readonly string[] = ['lineId', 'phase', 'start'];
+const ROWS_A_STATEMENT = 500;
+
+/** Writes level rows, or replaces those of the same line, phase and start. */
+export async function writeLevels(store: Store, rung: Rung, rows: readonly LevelRow[]): Promise<void> {
+  const table = TABLES[rung];
+  const replaced = Object.fromEntries(
+    Object.entries(getTableColumns(table))
+      .filter(([property]) => !KEYS.includes(property))
+      .map(([property, column]) => [property, sql.raw(`values(\`${column.name}\`)`)]),
+  );
+  for (let from = 0; from < rows.length; from += ROWS_A_STATEMENT)
+    await store.db
+      .insert(table)
+      .values(rows.slice(from, from + ROWS_A_STATEMENT))
+      .onDuplicateKeyUpdate({ set: replaced });
+}
+
+/** Level rows of these lines with a start in [from, to), oldest first. */
+export async function readLevels(
+  store: Store,
+  rung: Rung,
+  { lineIds, from, to }: { lineIds: readonly number[]; from: Date; to: Date },
+): Promise<LevelRow[]> {
+  if (lineIds.length === 0) return [];
+  const table = TABLES[rung];
+  return store.db
+    .select()
+    .from(table)
+    .where(and(inArray(table.lineId, [...lineIds]), gte(table.start, from), lt(table.start, to)))
+    .orderBy(asc(table.start), asc(table.phase));
+}
+
+/** The start of the newest hour row of a line. */
+export async function readNewestHour(store: Store, lineId: number): Promise<Date | undefined> {
+  const [row] = await store.db
+    .select({ start: hourLevel.start })
+    .from(hourLevel)
+    .where(eq(hourLevel.lineId, lineId))
+    .orderBy(desc(hourLevel.start))
+    .limit(1);
+  return row?.start;
+}
+
+/** Replaces the kept verdicts of a line: only significant drifts are kept. */
+export async function replaceCreep(
+  store: Store,
+  lineId: number,
+  { creep, computedAt }: { creep: readonly Creep[]; computedAt: Date },
+): Promise<void> {
+  await store.db.transaction(async (transaction) => {
+    await transaction.delete(creepVerdict).where(eq(creepVerdict.lineId, lineId));
+    if (creep.length > 0)
+      await transaction
+        .insert(creepVerdict)
+        .values(creep.map((verdict) => ({ lineId, phase: verdict.phase, computedAt, creep: verdict })));
+  });
+}
+
+export async function readCreep(store: Store, lineIds: readonly number[]): Promise<Map<number, Creep[]>> {
+  const found = new Map<number, Creep[]>(lineIds.map((id) => [id, []]));
+  if (lineIds.length === 0) return found;
+  const rows = await store.db
+    .select()
+    .from(creepVerdict)
+    .where(inArray(creepVerdict.lineId, [...lineIds]));
+  for (const row of rows) found.get(row.lineId)?.push(row.creep);
+  return found;
+}
+
+export type StaleHour = typeof staleHour.$inferSelect;
+
+export async function writeStaleHours(
+  writer: Pick<Store['db'], 'insert'>,
+  hours: readonly StaleHour[],
+): Promise<void> {
+  if (hours.length === 0) return;
+  await writer
+    .insert(staleHour)
+    .ignore()
+    .values([...hours]);
+}
+
+export async function readStaleHours(store: Store, lineIds: readonly number[]): Promise<StaleHour[]> {
+  if (lineIds.length === 0) return [];
+  return store.db
+    .select()
+    .from(staleHour)
+    .where(inArray(staleHour.lineId, [...lineIds]))
+    .orderBy(asc(staleHour.start));
+}
+
+export async function dropStaleHour(store: Store, { lineId, start }: StaleHour): Promise<void> {
+  await store.db.delete(staleHour).where(and(eq(staleHour.lineId, lineId), eq(staleHour.start, start)));
+}

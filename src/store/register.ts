@@ -1,0 +1,62 @@
+import { asc, eq } from 'drizzle-orm';
+import type { RegisterLine } from '../contract/register';
+import type { SettingsVersion } from '../contract/settings-version';
+import type { Store } from './client';
+import { groupedBy } from './grouped';
+import { line, registerRevision, settingRecord, substation, terminal } from './schema/register';
+
+/** A line as the register holds it, with the database's own ids. */
+export interface RegisteredLine extends RegisterLine {
+  readonly id: number;
+  readonly terminalIds: ReadonlyMap<string, number>;
+}
+
+/** The whole register; terminals in position order, settings oldest first. */
+export async function readRegister(store: Store): Promise<RegisteredLine[]> {
+  const [lines, terminals, settings] = await Promise.all([
+    store.db.select().from(line).orderBy(asc(line.name)),
+    store.db
+      .select({ terminal, substationName: substation.name })
+      .from(terminal)
+      .innerJoin(substation, eq(terminal.substation, substation.key))
+      .orderBy(asc(terminal.position)),
+    store.db.select().from(settingRecord).orderBy(asc(settingRecord.validFrom), asc(settingRecord.id)),
+  ]);
+  const terminalsOf = groupedBy(terminals, (row) => row.terminal.lineId);
+  const settingsOf = groupedBy(settings, (row) => row.lineId);
+  return lines.map((row) => {
+    const own = terminalsOf.get(row.id) ?? [];
+    return {
+      ...row,
+      terminals: own.map(({ terminal: { id: _id, lineId: _lineId, ...rest }, substationName }) => ({
+        ...rest,
+        substationName,
+      })),
+      terminalIds: new Map(own.map(({ terminal: { key, id } }) => [key, id])),
+      settings: (settingsOf.get(row.id) ?? []).map(settingsVersion),
+    };
+  });
+}
+
+export async function readRegisterLine(store: Store, key: string): Promise<RegisteredLine | undefined> {
+  // the register is small and read seldom: one way of reading it keeps one meaning
+  return (await readRegister(store)).find((entry) => entry.key === key);
+}
+
+export async function readRegisterRevision(store: Store): Promise<number> {
+  const [row] = await store.db.select().from(registerRevision);
+  return row?.revision ?? 0;
+}
+
+function settingsVersion(row: typeof settingRecord.$inferSelect): SettingsVersion {
+  const { lineId: _lineId, ...rest } = row;
+  return { ...rest, validFrom: row.validFrom.toISOString(), recordedAt: row.recordedAt.toISOString() };
+}
+
+/** The version of a line's settings in force at an instant: the newest that was valid by then. */
+export function settingsInForce(
+  settings: readonly SettingsVersion[],
+  atMs: number,
+): SettingsVersion | undefined {
+  return settings.findLast((version) => Date.parse(version.validFrom) <= atMs);
+}

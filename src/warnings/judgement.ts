@@ -1,0 +1,76 @@
+import type { WarningCause, WarningKind } from '../contract/warning';
+import type { OperatingPoint } from '../protection/evaluation';
+import { PHASES, type PerPhase, type PhaseName } from '../protection/phase';
+import { AT_REST, type Hysteresis, STANDING, stepHysteresis } from './hysteresis';
+import type { WarningLimits } from './limits';
+
+/** What the worker remembers of a line between two sights of it. */
+export interface Judgement {
+  readonly near: Hysteresis;
+  readonly over: Hysteresis;
+  readonly blind: Hysteresis;
+  /** instant of the newest snapshot that could be evaluated */
+  readonly evaluatedAtMs: number | undefined;
+}
+
+export const unjudged = (standing: ReadonlySet<WarningKind>): Judgement => ({
+  near: standing.has('near') ? STANDING : AT_REST,
+  over: standing.has('over') ? STANDING : AT_REST,
+  blind: standing.has('blind') ? STANDING : AT_REST,
+  evaluatedAtMs: undefined,
+});
+
+/** The phase that stands nearest to its threshold. */
+export function worstPhase(points: PerPhase<OperatingPoint>): PhaseName {
+  return PHASES.reduce((worst, phase) =>
+    points[phase].utilisation > points[worst].utilisation ? phase : worst,
+  );
+}
+
+/** Judges a snapshot that could be evaluated. Delays count in snapshot instants, so a replayed hour judges as it did live. */
+export function judgeEvaluated(
+  judgement: Judgement,
+  sight: { atMs: number; points: PerPhase<OperatingPoint> },
+  limits: WarningLimits,
+): Judgement {
+  const { atMs, points } = sight;
+  const utilisation = points[worstPhase(points)].utilisation;
+  const against = (mark: number) => ({
+    atMs,
+    raise: utilisation >= mark,
+    clear: utilisation < mark - limits.returnBand,
+  });
+  return {
+    near: stepHysteresis(judgement.near, against(limits.nearRatio), limits.near),
+    over: stepHysteresis(judgement.over, against(1), limits.over),
+    blind: stepHysteresis(judgement.blind, { atMs, raise: false, clear: true }, limits.blind),
+    evaluatedAtMs: atMs,
+  };
+}
+
+/** Takes note that the line was seen, without judging its figures: a terminal under test sends no evidence. */
+export function judgeUnderTest(judgement: Judgement, atMs: number, limits: WarningLimits): Judgement {
+  const blind = stepHysteresis(judgement.blind, { atMs, raise: false, clear: true }, limits.blind);
+  return { ...judgement, blind, evaluatedAtMs: atMs };
+}
+
+/** Judges the passing of time without an evaluable snapshot: a line is blind when that has lasted. */
+export function judgeUnseen(
+  judgement: Judgement,
+  { nowMs, sinceMs }: { nowMs: number; sinceMs: number },
+  limits: WarningLimits,
+): Judgement {
+  const unseenMs = nowMs - Math.max(judgement.evaluatedAtMs ?? 0, sinceMs);
+  if (unseenMs < limits.blindAfterMs) return judgement;
+  return {
+    ...judgement,
+    blind: stepHysteresis(judgement.blind, { atMs: nowMs, raise: true, clear: false }, limits.blind),
+  };
+}
+
+/** The cause by which utilisation raises near or over. */
+export function utilisationCause(points: PerPhase<OperatingPoint>, limit: number): WarningCause {
+  const phase = worstPhase(points);
+  const { utilisation, differentialAmps, thresholdAmps } = points[phase];
+  return { basis: 'utilisation', phase, utilisation, limit, differentialAmps, thresholdAmps };
+}

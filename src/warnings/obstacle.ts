@@ -1,0 +1,22 @@
+import type { RegisterLine } from '../contract/register';
+
+/** Terminals whose measurements make a snapshot of the line complete. */
+export function expectedTerminals(line: Pick<RegisterLine, 'goesBy' | 'terminals'>): readonly string[] {
+  const inService = line.terminals.filter((terminal) => terminal.inService).map(({ key }) => key);
+  // the historian of a line that goes by reported magnitudes holds what its first terminal computed
+  return line.goesBy === 'reported' ? inService.slice(0, 1) : inService;
+}
+
+/** Why a line can't be evaluated whatever its terminals send; undefined when it can. */
+export function obstacle(
+  line: Pick<RegisterLine, 'goesBy' | 'terminals' | 'settings' | 'inZoneTransformer'>,
+): string | undefined {
+  const expectedCount = expectedTerminals(line).length;
+  if (line.inZoneTransformer !== null)
+    return 'A transformer stands in the zone; its ratio and clock number are recorded but not evaluated yet.';
+  if (expectedCount === 0) return 'The register holds no terminal in service for this line.';
+  if (expectedCount === 1 && line.goesBy === 'phasors')
+    return 'The register holds one terminal in service; a differential needs at least two.';
+  if (line.settings.length === 0) return 'The register holds no settings for this line.';
+  return undefined;
+}
