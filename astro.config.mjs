@@ -34,6 +34,8 @@ export default defineConfig({
   vite: {
     plugins: [tailwindcss()],
     build: { assetsInlineLimit: 0 },
+    // the local database and logs change all the time, and each change would reload every page
+    server: { watch: { ignored: ['**/.tareline/**'] } },
     ssr: { noExternal: ['echarts-for-react', 'echarts', 'zrender'] },
   },
 });

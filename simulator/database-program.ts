@@ -15,14 +15,18 @@ export const databaseProgram = (name: string): string =>
     .map((folder) => join(folder, name))
     .find((path) => existsSync(path)) ?? name;
 
+/** A server clears its folder for temporary tables when it starts, so that two may never share one. */
+export type ServerFolders = { readonly dataDir: string; readonly tmpDir: string };
+
 /** Makes an empty server's data folder; one that was left half made is made anew. */
-export async function installDatabase(dataDir: string): Promise<void> {
+export async function installDatabase({ dataDir, tmpDir }: ServerFolders): Promise<void> {
   if (existsSync(join(dataDir, 'mysql'))) return;
   const half = `${dataDir}.half`;
   await rm(half, { recursive: true, force: true });
   await run(databaseProgram('mariadb-install-db'), [
     '--no-defaults',
     `--datadir=${half}`,
+    `--tmpdir=${tmpDir}`,
     '--auth-root-authentication-method=normal',
     '--skip-test-db',
     '--skip-name-resolve',
@@ -37,13 +41,12 @@ export async function installDatabase(dataDir: string): Promise<void> {
 }
 
 /** Command line of a private server: loopback only, small, and durable at every commit. */
-export const serverArguments = (server: {
-  readonly dataDir: string;
-  readonly port: number;
-  readonly initFile: string;
-}): readonly string[] => [
+export const serverArguments = (
+  server: ServerFolders & { readonly port: number; readonly initFile: string },
+): readonly string[] => [
   '--no-defaults',
   `--datadir=${server.dataDir}`,
+  `--tmpdir=${server.tmpDir}`,
   '--bind-address=127.0.0.1',
   `--port=${server.port}`,
   // Relative to the data folder: a socket's path may not be longer than about 100 characters.

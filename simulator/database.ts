@@ -4,7 +4,7 @@ import { mkdir, open, readFile, rm, writeFile } from 'node:fs/promises';
 import { join, resolve } from 'node:path';
 import { createConnection } from 'mysql2/promise';
 import { newPassword } from './broker-account';
-import { databaseProgram, installDatabase, serverArguments } from './database-program';
+import { databaseProgram, installDatabase, serverArguments, type ServerFolders } from './database-program';
 import { freePort } from './ports';
 
 /** A private MariaDB server on loopback. */
@@ -36,14 +36,16 @@ export async function startDatabase(options: {
 }): Promise<PrivateDatabase> {
   const dir = resolve(options.dir);
   const dataDir = join(dir, 'data');
+  const tmpDir = join(dir, 'tmp');
   await mkdir(dir, { recursive: true, mode: 0o700 });
+  await mkdir(tmpDir, { recursive: true });
   const passwords = options.passwords ?? (await keptPasswords(dir));
   const port = options.port === 0 ? await freePort() : options.port;
-  await installDatabase(dataDir);
+  await installDatabase({ dataDir, tmpDir });
   await endForgottenServer(dataDir);
   const initFile = join(dir, 'init.sql');
   await writeFile(initFile, accountStatements(passwords), { mode: 0o600 });
-  const server = await launched({ dir, dataDir, port, initFile });
+  const server = await launched({ dir, dataDir, tmpDir, port, initFile });
   const adminUrl = urlOf({ user: 'tareline_admin', password: passwords.admin, port }, 'mysql');
   await untilReady(server, adminUrl);
   await rm(initFile, { force: true });
@@ -90,12 +92,9 @@ const urlOf = (
 
 type Server = { readonly child: ChildProcess; readonly logFile: string };
 
-async function launched(place: {
-  readonly dir: string;
-  readonly dataDir: string;
-  readonly port: number;
-  readonly initFile: string;
-}): Promise<Server> {
+async function launched(
+  place: ServerFolders & { readonly dir: string; readonly port: number; readonly initFile: string },
+): Promise<Server> {
   const logFile = join(place.dir, 'server.log');
   const log = await open(logFile, 'w');
   // A process group of its own: Ctrl-C is for us, who stop the server last and in good order.

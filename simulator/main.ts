@@ -144,6 +144,7 @@ const webEnvironment = (site: Site): Record<string, string> => ({
   HOST: '127.0.0.1',
   PORT: String(site.ports.web),
   PUBLIC_URL: addressOf(site),
+  NODE_ENV: development ? 'development' : 'production',
   SITE_TIME_ZONE: 'Europe/Berlin',
 });
 

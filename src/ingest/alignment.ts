@@ -36,6 +36,33 @@ interface LineMemory {
 export const isComplete = (line: RosterLine, measurements: ReadonlyMap<string, Measurement>): boolean =>
   line.expected.length > 0 && line.expected.every((terminal) => measurements.has(terminal));
 
+/**
+ * Makes one of what was gathered of the same line and instant at different times. Only so may they be stored
+ * together: each alone would be written over the other, and neither would find the other in the store.
+ */
+export function joined<Receipt>(gathered: readonly Gathered<Receipt>[]): Gathered<Receipt>[] {
+  const byInstant = new Map<string, Gathered<Receipt>>();
+  for (const entry of gathered) {
+    const key = instantKey(entry);
+    const earlier = byInstant.get(key);
+    byInstant.set(key, earlier === undefined ? entry : joinedPair(earlier, entry));
+  }
+  return [...byInstant.values()];
+}
+
+function joinedPair<Receipt>(earlier: Gathered<Receipt>, later: Gathered<Receipt>): Gathered<Receipt> {
+  return {
+    line: later.line,
+    atMs: later.atMs,
+    // the first word of a terminal stands
+    measurements: new Map([...later.measurements, ...earlier.measurements]),
+    receipts: [...earlier.receipts, ...later.receipts],
+    mayBeStored: earlier.mayBeStored || later.mayBeStored,
+  };
+}
+
+const instantKey = ({ line, atMs }: { line: RosterLine; atMs: number }): string => `${line.key} ${atMs}`;
+
 export interface Alignment<Receipt> {
   /** Takes a measurement; hands back what is ready by it, or that it changed nothing. */
   take(arrival: Arrival<Receipt>): Gathered<Receipt> | 'waiting' | 'duplicate';
@@ -73,7 +100,8 @@ export function createAlignment<Receipt>(limits: {
 
   const begin = (arrival: Arrival<Receipt>, known: Closed | undefined): Pending<Receipt> => {
     const memory = memoryOf(arrival.line.key);
-    const mayBeStored = known === undefined && arrival.atMs <= memory.newestAtMs;
+    // also of an instant that was closed before: its row may hold what an earlier run has heard of it
+    const mayBeStored = arrival.atMs <= memory.newestAtMs;
     memory.newestAtMs = Math.max(memory.newestAtMs, arrival.atMs);
     const measurements = new Map(known === 'complete' ? undefined : known);
     return {
@@ -89,7 +117,7 @@ export function createAlignment<Receipt>(limits: {
   return {
     take(arrival) {
       const { line, terminal, atMs, measurement, receipt } = arrival;
-      const key = `${line.key} ${atMs}`;
+      const key = instantKey(arrival);
       const known = memoryOf(line.key).closed.get(atMs);
       if (known === 'complete' || known?.has(terminal) === true) return 'duplicate';
       let entry = pending.get(key);

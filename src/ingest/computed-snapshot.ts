@@ -40,7 +40,9 @@ export function computedSnapshot(
   const version = versionInForce(line, atMs);
   const unevaluable = feedObstacle(line, measurements) ?? registerObstacle(line, version);
   const points = unevaluable === undefined ? operatingPoints(line, version!.scheme, measurements) : undefined;
-  const through = isComplete(line, measurements) ? meanThroughAmps(line, measurements) : undefined;
+  const through = isComplete(line, measurements)
+    ? meanThroughAmps(line, { measurements, scheme: version?.scheme })
+    : undefined;
   return {
     line,
     atMs,
@@ -108,14 +110,23 @@ function operatingPoints(
 
 function meanThroughAmps(
   line: RosterLine,
-  measurements: ReadonlyMap<string, Measurement>,
+  { measurements, scheme }: { measurements: ReadonlyMap<string, Measurement>; scheme: Scheme | undefined },
 ): number | undefined {
-  if (line.expected.some((terminal) => measurements.get(terminal)!.current === undefined)) {
-    // reported magnitudes alone: with a restraint of half the sum this is the through current itself
-    const reported = measurements.get(line.expected[0]!)!.reported;
-    return reported && mean(reported.restraint);
+  if (line.goesBy === 'phasors')
+    return mean(PHASES.map((phase) => throughAmps(currentsOf(line, measurements, phase))));
+  // one terminal's own phasor says nothing of the others: the through current is what its restraint was formed from
+  const restraintAmps = mean(measurements.get(line.expected[0]!)!.reported!.restraint);
+  return scheme && throughAmpsFromRestraint(scheme.restraint, restraintAmps);
+}
+
+/** Half the sum of the magnitudes where the convention tells it; else the greatest, which of two terminals is as good. */
+function throughAmpsFromRestraint(restraint: Scheme['restraint'], restraintAmps: number): number {
+  switch (restraint.kind) {
+    case 'scaled-sum':
+      return restraintAmps / (2 * restraint.factor);
+    case 'maximum':
+      return restraintAmps;
   }
-  return mean(PHASES.map((phase) => throughAmps(currentsOf(line, measurements, phase))));
 }
 
 const mean = (values: readonly number[]): number =>
@@ -132,7 +143,7 @@ function snapshotFlags({
   clockLimitUs: number;
   notEvaluated: boolean;
 }): number {
-  const sent = [...measurements.values()];
+  const sent = expectedMeasurements(line, measurements);
   return packFlags({
     incomplete: !isComplete(line, measurements),
     validityNotGood: sent.some(({ validity }) => validity !== 'good'),
@@ -144,6 +155,19 @@ function snapshotFlags({
   });
 }
 
-export const allBreakersOpen = (snapshot: Pick<ComputedSnapshot, 'measurements'>): boolean =>
-  snapshot.measurements.size > 0 &&
-  [...snapshot.measurements.values()].every(({ breaker }) => breaker === 'open');
+/**
+ * What the terminals sent by which the line is judged. Whether another one's word, of a terminal out of service, is
+ * there as well depends on who came first, and so must not count.
+ */
+const expectedMeasurements = (
+  line: RosterLine,
+  measurements: ReadonlyMap<string, Measurement>,
+): Measurement[] => line.expected.flatMap((terminal) => measurements.get(terminal) ?? []);
+
+export function allBreakersOpen({ line, measurements }: ComputedSnapshot): boolean {
+  const sent = expectedMeasurements(line, measurements);
+  return sent.length > 0 && sent.every(({ breaker }) => breaker === 'open');
+}
+
+export const isUnderTest = ({ line, measurements }: ComputedSnapshot): boolean =>
+  expectedMeasurements(line, measurements).some(({ test }) => test);

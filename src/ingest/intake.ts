@@ -2,7 +2,7 @@ import { parseFeedTopic, presenceSchema } from '../contract/feed';
 import type { IngestSettings } from '../settings';
 import type { TerminalStateRow } from '../store/feed';
 import { admission } from './admission';
-import { createAlignment, type Gathered } from './alignment';
+import { createAlignment, type Gathered, joined } from './alignment';
 import type { Delivery, Receipt } from './deferred-acknowledgement';
 import { INGEST_LIMITS } from './limits';
 import { createRefusalTally, type RefusalBatch } from './refusal-tally';
@@ -94,7 +94,7 @@ export function createIntake({
       ready.push(...alignment.due(now()));
       if (ready.length === 0 && receipts.length === 0 && refusals.isEmpty() && terminals.isEmpty())
         return undefined;
-      const gathered = ready.slice(0, INGEST_LIMITS.batchSnapshots);
+      const gathered = joined(ready.slice(0, INGEST_LIMITS.batchSnapshots));
       ready = ready.slice(INGEST_LIMITS.batchSnapshots);
       const settled = receipts;
       receipts = [];

@@ -12,7 +12,7 @@ import {
 } from '../warnings/judgement';
 import type { WarningLimits } from '../warnings/limits';
 import { standingLevelCause } from '../warnings/standing-level';
-import { allBreakersOpen, type ComputedSnapshot } from './computed-snapshot';
+import { allBreakersOpen, type ComputedSnapshot, isUnderTest } from './computed-snapshot';
 import { type RosterLine, versionInForce } from './roster';
 
 /** A warning that has just risen or returned, to be written with the batch that showed it. */
@@ -68,10 +68,9 @@ export function watchSnapshot(
     return correctedNewest(watch, snapshot);
   watch.newest = snapshot;
   const { points, atMs } = snapshot;
-  const test = [...snapshot.measurements.values()].some((measurement) => measurement.test);
   if (!isJudged(watch) || points === undefined) return [];
   // what a terminal under test sends is shown, and raises nothing
-  if (test) watch.judgement = judgeUnderTest(watch.judgement, atMs, limits);
+  if (isUnderTest(snapshot)) watch.judgement = judgeUnderTest(watch.judgement, atMs, limits);
   else watch.judgement = judgeEvaluated(watch.judgement, { atMs, points }, limits);
   return turns(watch, atMs, {
     near: () => nearCause(watch, snapshot, limits),

@@ -8,7 +8,7 @@ import { openWebSite, type OpenedSite } from './open-site';
 import { createWebServer, type PageHandler } from './web-server';
 
 const BUILD = new URL('../../dist/', import.meta.url);
-const SHUTDOWN_MS_MOST = 5_000;
+const SHUTDOWN_MS_MOST = 3_000;
 
 /** A fault that whoever started the process can mend. */
 class StartError extends Error {}

@@ -24,6 +24,7 @@ const NUMBERS = [
   'twelve',
 ];
 const numberWord = (count: number): string => NUMBERS[count] ?? `${count}`;
+const uncapital = (words: string): string => words.charAt(0).toLowerCase() + words.slice(1);
 const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
 
 /** How each state goes on after its count; the verb is dropped where the one before already gave it. */
@@ -48,11 +49,13 @@ const be = (count: number, now: boolean): string =>
 
 /**
  * The state of the network as a sentence: "21 of 24 lines are settled. One is near, one rising."
- * When the stream is lost it speaks in the past tense: what is old is never told as if it were so now.
+ * When the stream is lost it speaks of the instant at which it was last live, in the past tense: what is old is
+ * never told as if it were so now.
  */
-export function boardSentence(counts: BoardCounts, tense: 'now' | 'past'): SentencePiece[] {
-  const now = tense === 'now';
-  const pieces: SentencePiece[] = [{ words: `${settledWords(counts, now)}.` }];
+export function boardSentence(counts: BoardCounts, lastLive?: string): SentencePiece[] {
+  const now = lastLive === undefined;
+  const first = settledWords(counts, now);
+  const pieces: SentencePiece[] = [{ words: now ? `${first}.` : `At ${lastLive}, ${uncapital(first)}.` }];
   let verbBefore: string | undefined;
   for (const { state, words } of GOES_ON) {
     const count = counts[state];

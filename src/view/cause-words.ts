@@ -85,7 +85,10 @@ export function lineReason(line: LineSummary, context: WordsContext): ReasonWord
     case 'not evaluated':
       return { lead: 'Not evaluated.', rest: ` ${line.reason ?? 'No settings are recorded for this line.'}` };
     case 'out of service':
-      return { lead: 'Out of service.', rest: line.reason === null ? '' : ` ${line.reason}` };
+      return {
+        lead: 'Out of service.',
+        rest: ` ${line.reason ?? 'The register says so; nothing is judged meanwhile.'}`,
+      };
     case 'settled':
       return { lead: '', rest: '' };
   }

@@ -8,7 +8,11 @@ const COUNTS = ['no', 'one', 'two', 'three', 'four', 'five', 'six'];
 /** The facts beside a line's name, in the order a protection engineer asks for them. */
 export function lineFacts(
   line: LineSummary,
-  { terminalCount, inForce, timeZone }: {
+  {
+    terminalCount,
+    inForce,
+    timeZone,
+  }: {
     terminalCount: number;
     inForce: SettingsVersion | undefined;
     timeZone: string;
@@ -20,7 +24,9 @@ export function lineFacts(
     facts.push(`transformer in the zone to ${kilovoltsText(line.inZoneTransformer.otherVoltageKv)}`);
   }
   if (line.goesBy === 'reported') facts.push('by reported magnitudes');
-  facts.push(inForce === undefined ? 'no settings recorded' : `settings of ${dateText(inForce.validFrom, timeZone)}`);
+  facts.push(
+    inForce === undefined ? 'no settings recorded' : `settings of ${dateText(inForce.validFrom, timeZone)}`,
+  );
   facts.push(loadWords(line));
   return facts;
 }

@@ -51,5 +51,7 @@ export function missingFiguresReason(line: LineSummary): string | undefined {
   const present = PHASES.every((phase) => line.phases[phase].utilisation !== null);
   if (present) return undefined;
   if (line.reason !== null) return line.reason;
-  return line.at === null ? 'Nothing has been heard of this line yet.' : 'These figures cannot be computed at present.';
+  return line.at === null
+    ? 'Nothing has been heard of this line yet.'
+    : 'These figures cannot be computed at present.';
 }

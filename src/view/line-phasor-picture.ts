@@ -46,7 +46,8 @@ export function wholePicture(sum: PhasorSum, box: Box): PhasorPicture {
  */
 export function closingPicture(sum: PhasorSum, box: Box): PhasorPicture | undefined {
   const whole = wholePicture(sum, box);
-  if (sum.differentialAmps * whole.pixelsPerAmp > box.height / 3 || sum.differentialAmps <= 0) return undefined;
+  if (sum.differentialAmps * whole.pixelsPerAmp > box.height / 3 || sum.differentialAmps <= 0)
+    return undefined;
   const { re, im } = sum.differential;
   const reach = sum.differentialAmps * 0.35;
   return picture(
@@ -63,7 +64,11 @@ function picture(sum: PhasorSum, shown: readonly Phasor[], box: Box): PhasorPict
   const fit = phasorFit(shown, box);
   const long = magnitude(sum.differential) * fit.pixelsPerAmp >= SHORTEST_PX;
   return {
-    arrows: sum.steps.map(({ terminal, from, to }) => ({ terminal, from: fit.place(from), to: fit.place(to) })),
+    arrows: sum.steps.map(({ terminal, from, to }) => ({
+      terminal,
+      from: fit.place(from),
+      to: fit.place(to),
+    })),
     differential: long ? { from: fit.place(ORIGIN), to: fit.place(sum.differential) } : undefined,
     start: fit.place(ORIGIN),
     pixelsPerAmp: fit.pixelsPerAmp,

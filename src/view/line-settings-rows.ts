@@ -44,7 +44,10 @@ function values({ characteristic, restraint }: SettingsVersion): SettingsRow['va
   const { pickupAmps, slope1, kneeAmps, slope2, slopeStart } = characteristic;
   return [
     { name: 'pickup', value: ampsText(pickupAmps) },
-    { name: 'first slope', value: `${percentText(slope1)}, ${slopeStart === 'from-zero' ? 'from zero' : 'from the pickup'}` },
+    {
+      name: 'first slope',
+      value: `${percentText(slope1)}, ${slopeStart === 'from-zero' ? 'from zero' : 'from the pickup'}`,
+    },
     { name: 'knee', value: `${ampsText(kneeAmps)} restraint` },
     { name: 'second slope', value: percentText(slope2) },
     { name: 'restraint', value: restraintConvention(restraint) },

@@ -1,7 +1,7 @@
 import type { LineSummary } from '../contract/lines';
 import type { Terminal } from '../contract/register';
 import type { TerminalResult } from '../contract/result';
-import { ampsText, durationText } from './figures';
+import { ampsText, durationText, instantText } from './figures';
 import { DASH, degreesText } from './line-figures';
 import { terminalName } from './line-words';
 import { PHASES } from './phase';
@@ -32,8 +32,8 @@ export interface PhasorRow {
 interface TerminalContext {
   readonly letters: PhaseLetters;
   readonly substations: LineSummary['substations'];
-  /** since when each silent terminal has been so, by key, as a duration in words */
-  readonly silentFor: ReadonlyMap<string, string>;
+  /** since when each silent terminal has been so, by key, in words */
+  readonly silentSince: ReadonlyMap<string, string>;
 }
 
 /** The terminals of the register in their order, each with what it said at the newest instant. */
@@ -67,18 +67,25 @@ function terminalPanel(
 function trouble(
   terminal: Terminal,
   result: TerminalResult | undefined,
-  { silentFor }: TerminalContext,
+  { silentSince }: TerminalContext,
 ): string | undefined {
   if (!terminal.inService) return 'Out of service in the register.';
   if (result === undefined) return 'Nothing has been heard of it yet.';
   if (result.present) return undefined;
-  const lasting = silentFor.get(terminal.key);
-  return lasting === undefined ? 'Silent at the newest instant.' : `Silent for ${lasting}.`;
+  const since = silentSince.get(terminal.key);
+  return since === undefined ? 'Silent at the newest instant.' : `Silent since ${since}.`;
 }
 
 const CLOCKS = { satellite: 'satellite', channel: 'by the channel', free: 'free-running' } as const;
 
-function facts({ validity, breaker, clock, channel, frequencyHz, test }: TerminalResult): TerminalPanel['facts'] {
+function facts({
+  validity,
+  breaker,
+  clock,
+  channel,
+  frequencyHz,
+  test,
+}: TerminalResult): TerminalPanel['facts'] {
   const found = [
     { name: 'values', value: validity ?? DASH, bad: validity !== 'good' },
     { name: 'breaker', value: breaker ?? DASH, bad: breaker === 'open' },
@@ -98,7 +105,8 @@ function facts({ validity, breaker, clock, channel, frequencyHz, test }: Termina
       bad: false,
     });
   }
-  if (frequencyHz !== null) found.push({ name: 'frequency', value: `${frequencyHz.toFixed(3)} Hz`, bad: false });
+  if (frequencyHz !== null)
+    found.push({ name: 'frequency', value: `${frequencyHz.toFixed(3)} Hz`, bad: false });
   if (test) found.push({ name: 'test', value: 'flagged as a test', bad: true });
   return found;
 }
@@ -116,12 +124,16 @@ function phasorRow(result: TerminalResult | undefined, phase: PhaseName, letters
   };
 }
 
-/** How long each silent terminal has been so, from the open warnings that name it. */
-export function silentSince(warnings: LineSummary['warnings'], nowMs: number): ReadonlyMap<string, string> {
+/** Since when each silent terminal has been so, from the open warnings that name it. */
+export function silences(
+  warnings: LineSummary['warnings'],
+  { nowMs, timeZone }: { nowMs: number; timeZone: string },
+): ReadonlyMap<string, string> {
   const found = new Map<string, string>();
   for (const { cause, openedAt, returnedAt } of warnings) {
     if (returnedAt !== null || cause.basis !== 'terminal silent') continue;
-    for (const key of cause.terminals) found.set(key, durationText(nowMs - Date.parse(openedAt)));
+    const since = `${instantText(openedAt, nowMs, timeZone)}, for ${durationText(nowMs - Date.parse(openedAt))}`;
+    for (const key of cause.terminals) found.set(key, since);
   }
   return found;
 }

@@ -32,8 +32,7 @@ function warningRow(warning: Warning, context: WordsContext): WarningRow {
   const { timeZone } = context.site;
   const at = (instant: string) => instantText(instant, context.nowMs, timeZone);
   const { lead, rest } = causeWords(warning.cause, context);
-  const lasted =
-    warning.returnedAt === null ? undefined : Date.parse(warning.returnedAt) - opened(warning);
+  const lasted = warning.returnedAt === null ? undefined : Date.parse(warning.returnedAt) - opened(warning);
   return {
     id: warning.id,
     kind: warning.kind,

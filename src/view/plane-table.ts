@@ -61,6 +61,7 @@ export function planeSentence(
     return [`phase ${letters[phase]} at ${ampsText(differentialAmps)} against ${ampsText(restraintAmps)}`];
   });
   const points = told.length === 0 ? 'no operating point can be computed now' : told.join(', ');
-  const threshold = pickupAmps === null ? 'no threshold is recorded' : `the threshold begins at ${ampsText(pickupAmps)}`;
+  const threshold =
+    pickupAmps === null ? 'no threshold is recorded' : `the threshold begins at ${ampsText(pickupAmps)}`;
   return `Operating plane, differential against restraint current: ${points}; ${threshold}.`;
 }

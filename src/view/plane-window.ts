@@ -34,7 +34,10 @@ export function planeWindow(
   const restraintMax = roundedUp(Math.max(1.15 * pointRestraint, wanted) / unitAmps);
   const threshold = characteristic === undefined ? 0 : thresholdAt(characteristic, restraintMax * unitAmps);
   const differentialAmps = Math.max(1.2 * pointDifferential, 1.05 * threshold);
-  return { restraintMax, differentialMax: roundedUp(Math.max(differentialAmps / unitAmps, restraintMax / 20)) };
+  return {
+    restraintMax,
+    differentialMax: roundedUp(Math.max(differentialAmps / unitAmps, restraintMax / 20)),
+  };
 }
 
 /** The restraint up to which the first slope, or the whole characteristic, can be seen. */

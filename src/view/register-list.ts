@@ -26,6 +26,8 @@ export interface RegisterRow {
   readonly inService: boolean;
   /** "since 12 May 2025", or undefined when nothing is in force and the line is not evaluated */
   readonly settings: string | undefined;
+  /** settings or not, a line with a transformer inside its zone is not evaluated yet */
+  readonly hasTransformer: boolean;
 }
 
 /** A line beside the settings that are in force now. */
@@ -119,6 +121,7 @@ function row({ line, inForce }: ListedLine, timeZone: string): RegisterRow {
     })),
     goesBy: goesByText(line.goesBy),
     inService: line.inService,
+    hasTransformer: line.inZoneTransformer !== null,
     settings: inForce === undefined ? undefined : `since ${dateText(inForce.validFrom, timeZone)}`,
   };
 }

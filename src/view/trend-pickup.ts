@@ -2,15 +2,19 @@ import type { SettingsVersion } from '../contract/settings-version';
 import { pickupAmps } from '../protection/characteristic';
 import type { TrendWindow } from './trend-span';
 
-/** The pickup from an instant on. */
+/** The pickup over the time that its version was in force, in the unit asked for. */
 export interface PickupStep {
   readonly fromMs: number;
   readonly toMs: number;
-  readonly pickupAmps: number;
+  readonly pickup: number;
 }
 
 /** The recorded pickup over a window, each version for the time it was in force; nothing before the first. */
-export function pickupSteps(settings: readonly SettingsVersion[], window: TrendWindow): PickupStep[] {
+export function pickupSteps(
+  settings: readonly SettingsVersion[],
+  window: TrendWindow,
+  unitAmps = 1,
+): PickupStep[] {
   const versions = settings
     .map((version) => ({
       fromMs: Date.parse(version.validFrom),
@@ -21,7 +25,7 @@ export function pickupSteps(settings: readonly SettingsVersion[], window: TrendW
     .map((version, index) => ({
       fromMs: Math.max(version.fromMs, window.fromMs),
       toMs: Math.min(versions[index + 1]?.fromMs ?? Infinity, window.toMs),
-      pickupAmps: version.pickupAmps,
+      pickup: version.pickupAmps / unitAmps,
     }))
     .filter((step) => step.toMs > step.fromMs);
 }

@@ -1,12 +1,12 @@
 import type { Creep } from '../contract/warning';
 import type { TrendWindow } from './trend-span';
 
-/** The Sen line and the lines of its slope's 95 % limits at one end of what is drawn, in amperes. */
+/** The Sen line and the lines of its slope's 95 % limits at one end of what is drawn, in the unit asked for. */
 export interface SenPoint {
   readonly atMs: number;
-  readonly levelAmps: number;
-  readonly lowAmps: number;
-  readonly highAmps: number;
+  readonly level: number;
+  readonly low: number;
+  readonly high: number;
 }
 
 const DAY_MS = 86_400_000;
@@ -17,23 +17,23 @@ const MONTH_DAYS = 365.25 / 12;
  * in the middle of those days, where the Sen line is anchored to the medians; so the fan is narrow there and
  * open at both ends. Only the part inside the window comes back; nothing where none is.
  */
-export function senPoints(creep: Creep, window: TrendWindow): SenPoint[] {
+export function senPoints(creep: Creep, window: TrendWindow, unitAmps = 1): SenPoint[] {
   const spanMs = Math.max(creep.days - 1, 1) * DAY_MS;
   const middleMs = window.toMs - spanMs / 2;
-  const level = (atMs: number, slopePerMonth: number, fromMs: number, fromAmps: number) =>
-    fromAmps + (slopePerMonth * (atMs - fromMs)) / (MONTH_DAYS * DAY_MS);
-  const middleAmps = level(middleMs, creep.slopeAmpsPerMonth, window.toMs, creep.levelNowAmps);
+  const middleAmps = creep.levelNowAmps - risenAmps(creep.slopeAmpsPerMonth, spanMs / 2);
   const startMs = Math.max(window.toMs - spanMs, window.fromMs);
   const instants = startMs < middleMs ? [startMs, middleMs, window.toMs] : [startMs, window.toMs];
   return instants.map((atMs) => {
-    const limits = [creep.slopeLowAmpsPerMonth, creep.slopeHighAmpsPerMonth].map((slope) =>
-      level(atMs, slope, middleMs, middleAmps),
-    );
+    const at = (slope: number) => middleAmps + risenAmps(slope, atMs - middleMs);
+    const limits = [at(creep.slopeLowAmpsPerMonth), at(creep.slopeHighAmpsPerMonth)];
     return {
       atMs,
-      levelAmps: level(atMs, creep.slopeAmpsPerMonth, middleMs, middleAmps),
-      lowAmps: Math.min(...limits),
-      highAmps: Math.max(...limits),
+      level: at(creep.slopeAmpsPerMonth) / unitAmps,
+      low: Math.min(...limits) / unitAmps,
+      high: Math.max(...limits) / unitAmps,
     };
   });
 }
+
+const risenAmps = (slopeAmpsPerMonth: number, lastingMs: number): number =>
+  (slopeAmpsPerMonth * lastingMs) / (MONTH_DAYS * DAY_MS);

@@ -49,9 +49,9 @@ export function trendLevelMax(
   pickup: readonly PickupStep[],
   sen: readonly SenPoint[],
 ): number {
-  const marks = pickup.map((step) => 1.14 * step.pickupAmps);
+  const marks = pickup.map((step) => 1.14 * step.pickup);
   const levels = lines.flat().flatMap(({ medianAmps, highAmps }) => [medianAmps ?? 0, highAmps ?? 0]);
   const most = levels.reduce((greatest, level) => Math.max(greatest, level), 0);
-  const fan = sen.map((point) => point.highAmps);
+  const fan = sen.map((point) => point.high);
   return Math.max(...marks, ...fan, 1.1 * most) || 1;
 }

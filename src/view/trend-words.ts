@@ -30,7 +30,9 @@ export function creepWords(
 ): string {
   const digits = unit === 'amperes' ? 1 : 4;
   const falls = creep.slopeAmpsPerMonth < 0;
-  const sizes = [creep.slopeLowAmpsPerMonth, creep.slopeHighAmpsPerMonth].map((slope) => (falls ? -slope : slope));
+  const sizes = [creep.slopeLowAmpsPerMonth, creep.slopeHighAmpsPerMonth].map((slope) =>
+    falls ? -slope : slope,
+  );
   const figure = (amps: number) => (inUnit(amps, unit, ratingAmps) ?? 0).toFixed(digits);
   const slope = figure(Math.abs(creep.slopeAmpsPerMonth));
   const [low, high] = [Math.min(...sizes), Math.max(...sizes)].map(figure);
@@ -43,7 +45,9 @@ function nearWords({ earliest, latest }: ForecastDatesOnWire, timeZone: string):
   const day = (date: string) => dateText(`${date}T12:00:00Z`, timeZone);
   if (earliest === null) return 'near mark not within five years';
   if (latest === null) return `near mark ${day(earliest)} at the earliest`;
-  return earliest === latest ? `near mark ${day(earliest)}` : `near mark between ${day(earliest)} and ${day(latest)}`;
+  return earliest === latest
+    ? `near mark ${day(earliest)}`
+    : `near mark between ${day(earliest)} and ${day(latest)}`;
 }
 
 /** One line of the trend, as the tooltip needs it. */
@@ -74,14 +78,18 @@ export function trendTooltip(
   if (first === undefined) return [];
   const lines = nearest.map(({ letter, point }) => {
     const spread =
-      point.lowAmps === null || point.highAmps === null ? '' : ` (${shown(point.lowAmps)} to ${shown(point.highAmps)})`;
+      point.lowAmps === null || point.highAmps === null
+        ? ''
+        : ` (${shown(point.lowAmps)} to ${shown(point.highAmps)})`;
     return `${letter}  ${point.medianAmps === null ? DASH : shown(point.medianAmps)}${spread}`;
   });
   return [whenWords(first.point, context), ...lines, ...countLine(first.point)];
 }
 
 function countLine({ qualifiedCount, allCount }: TrendPoint): string[] {
-  return qualifiedCount === null || allCount === null ? [] : [`${qualifiedCount} of ${allCount} snapshots qualified`];
+  return qualifiedCount === null || allCount === null
+    ? []
+    : [`${qualifiedCount} of ${allCount} snapshots qualified`];
 }
 
 function whenWords(

@@ -1,8 +1,7 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it } from 'vitest';
 import { feedHealthSchema, refusalListSchema } from '../../src/contract/feed-health';
 import { GET as getFeed } from '../../src/pages/api/feed';
 import { GET as getRefusals } from '../../src/pages/api/feed/refusals';
-import type { Store } from '../../src/store/client';
 import { insertLine } from '../../src/store/register-edit';
 import { refusalCount, refusedMessage, terminalState } from '../../src/store/schema/feed';
 import { testStore } from '../database';
@@ -18,22 +17,19 @@ const message = (reason: 'not JSON' | 'over 8 KB', payload: Buffer) => ({
   payload,
 });
 
-let store: Store;
+const store = await testStore();
 beforeAll(async () => {
-  store = await testStore();
   const added = await insertLine(store, newLine(), { by: { id: 'p1', name: 'Mira Holt' }, nowMs: NOW_MS });
   const terminalId = added.ok ? added.line.terminalIds.get('arden')! : 0;
-  await store.db
-    .insert(terminalState)
-    .values({
-      terminalId,
-      presence: 'online',
-      lastAt: heardAt,
-      heardAt,
-      lastSeq: 42,
-      gapCount: 1,
-      missedCount: 7,
-    });
+  await store.db.insert(terminalState).values({
+    terminalId,
+    presence: 'online',
+    lastAt: heardAt,
+    heardAt,
+    lastSeq: 42,
+    gapCount: 1,
+    missedCount: 7,
+  });
   await store.db.insert(refusalCount).values([
     { reason: 'not JSON', count: 3, lastAt: heardAt },
     { reason: 'over 8 KB', count: 9, lastAt: heardAt },
@@ -45,8 +41,7 @@ beforeAll(async () => {
       message('over 8 KB', Buffer.alloc(2048, 'x')),
       message('not JSON', Buffer.from('<b>bold</b>')),
     ]);
-}, 60_000);
-afterAll(() => store.close());
+});
 
 const asAdmin = (sent: Sent = {}): Sent => ({ role: 'admin', ...sent });
 

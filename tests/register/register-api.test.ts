@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { problemSchema } from '../../src/contract/problem';
 import { registerLineSchema } from '../../src/contract/register';
 import { ROLES } from '../../src/contract/role';
@@ -10,17 +10,12 @@ import {
   PATCH as patchTerminal,
 } from '../../src/pages/api/register/lines/[key]/terminals/[terminal]';
 import { GET as getLines, POST as postLine } from '../../src/pages/api/register/lines';
-import type { Store } from '../../src/store/client';
 import { line, substation } from '../../src/store/schema/register';
 import { testStore } from '../database';
 import { answerOf, type Sent } from './endpoint-call';
 import { lineSent, settingsSent, terminalSent } from './made-up-line';
 
-let store: Store;
-beforeAll(async () => {
-  store = await testStore();
-}, 60_000);
-afterAll(() => store.close());
+const store = await testStore();
 beforeEach(async () => {
   await store.db.delete(line);
   await store.db.delete(substation);

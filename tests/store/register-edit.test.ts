@@ -1,7 +1,6 @@
 import { desc } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { newSettingsVersionSchema, newTerminalSchema } from '../../src/contract/register';
-import type { Store } from '../../src/store/client';
 import {
   readRegister,
   readRegisterLine,
@@ -25,11 +24,7 @@ import { newLine, settingsSent, terminalSent } from '../register/made-up-line';
 const nowMs = Date.parse('2026-03-02T08:00:00Z');
 const editing = { by: { id: 'p1', name: 'Mira Holt' }, nowMs };
 
-let store: Store;
-beforeAll(async () => {
-  store = await testStore();
-}, 60_000);
-afterAll(() => store.close());
+const store = await testStore();
 beforeEach(async () => {
   await store.db.delete(line);
   await store.db.delete(substation);
@@ -255,17 +250,15 @@ describe('terminals', () => {
     const added = await insertLine(store, newLine(), editing);
     const terminalId = added.ok ? added.line.terminalIds.get('birk')! : 0;
     const at = new Date(nowMs);
-    await store.db
-      .insert(terminalState)
-      .values({
-        terminalId,
-        presence: 'online',
-        lastAt: at,
-        heardAt: at,
-        lastSeq: 1,
-        gapCount: 0,
-        missedCount: 0,
-      });
+    await store.db.insert(terminalState).values({
+      terminalId,
+      presence: 'online',
+      lastAt: at,
+      heardAt: at,
+      lastSeq: 1,
+      gapCount: 0,
+      missedCount: 0,
+    });
     expect(await removeTerminal(store, { key, terminalKey: 'birk' }, editing)).toMatchObject({
       ok: false,
       kind: 'taken',

@@ -18,6 +18,8 @@ export interface AttentionRowProps {
   site: SiteCustom;
   /** site time, ms, for ages and lasting; moves on each second */
   nowMs: number;
+  /** site time for which everything told is known, ms: now, or the last that was heard when the stream is lost */
+  asOfMs: number;
   lost: boolean;
   mayAcknowledge: boolean;
   onAcknowledged: (warning: Warning) => void;
@@ -32,10 +34,11 @@ const EDGE: Readonly<Partial<Record<Condition, string>>> = {
 
 /** A line that is not settled, with room for what it shows, why, and what to do next. */
 export const AttentionRow = memo(function AttentionRow(props: AttentionRowProps) {
-  const { one, site, nowMs, lost, mayAcknowledge, onAcknowledged } = props;
+  const { one, site, nowMs, asOfMs, lost, mayAcknowledge, onAcknowledged } = props;
   const { line } = one;
   const stale = lost || one.stale;
-  const reason = lineReason(line, { site, nowMs, substations: line.substations });
+  const knownAtMs = one.stale && line.at !== null ? Date.parse(line.at) : asOfMs;
+  const reason = lineReason(line, { site, nowMs: knownAtMs, substations: line.substations });
   const nearAmps = line.pickupAmps === null ? undefined : site.nearRatio * line.pickupAmps;
   return (
     <li
@@ -56,7 +59,7 @@ export const AttentionRow = memo(function AttentionRow(props: AttentionRowProps)
         />
       </div>
       <TareStrip picture={tareStrip(line, site)} stale={stale} />
-      <Sparkline picture={sparkline(line.dailyLevels, nearAmps)} condition={line.condition} />
+      <Sparkline picture={sparkline(line.dailyLevels, nearAmps)} condition={line.condition} faded={stale} />
       <div>
         <p className={`max-w-[60ch] text-pretty ${stale ? 'text-ink-2' : ''}`}>
           <strong className="font-semibold">{reason.lead}</strong>

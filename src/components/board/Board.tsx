@@ -2,6 +2,7 @@ import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { LineList } from '../../contract/lines';
 import { boardChoices, boardCounts, boardParts } from '../../view/board';
+import { instantText } from '../../view/figures';
 import { WHOLE_BOARD } from '../../view/board-query';
 import type { SiteCustom } from '../../view/site-custom';
 import { OpenWarnings } from '../warnings/OpenWarnings';
@@ -37,18 +38,17 @@ export function Board(props: BoardProps) {
 
 function BoardView({ list, site, search, mayAcknowledge, mayEditRegister }: BoardProps) {
   const address = useBoardQuery(search);
-  const { lines, live, refused, take } = useBoardLines(list);
+  const { lines, nowMs, asOfMs, lost, refused, take } = useBoardLines(list);
   if (lines.length === 0) return <EmptyBoard mayEditRegister={mayEditRegister} />;
-  const lost = live.status === 'lost';
   const parts = boardParts(lines, address.query);
   const nothing = parts.attention.length + parts.quiet.length + parts.settled.length === 0;
-  const shared = { site, nowMs: live.nowMs, lost };
+  const shared = { site, nowMs, lost };
   return (
     <>
       <BoardSentence
         counts={boardCounts(lines)}
         query={address.query}
-        lost={lost}
+        lastLive={lost ? instantText(asOfMs, nowMs, site.timeZone) : undefined}
         onChoose={address.choose}
       />
       <BoardFilters address={address} choices={boardChoices(lines.map(({ line }) => line))} />
@@ -69,6 +69,7 @@ function BoardView({ list, site, search, mayAcknowledge, mayEditRegister }: Boar
                 key={one.line.key}
                 one={one}
                 {...shared}
+                asOfMs={asOfMs}
                 mayAcknowledge={mayAcknowledge}
                 onAcknowledged={take}
               />
@@ -77,7 +78,7 @@ function BoardView({ list, site, search, mayAcknowledge, mayEditRegister }: Boar
         </section>
       )}
       <OpenWarnings lines={lines} {...shared} mayAcknowledge={mayAcknowledge} onAcknowledged={take} />
-      {parts.quiet.length > 0 && <QuietLines lines={parts.quiet} site={site} nowMs={live.nowMs} />}
+      {parts.quiet.length > 0 && <QuietLines lines={parts.quiet} site={site} nowMs={nowMs} />}
       {parts.settled.length > 0 && (
         <SettledLines lines={parts.settled} group={address.query.group} {...shared} />
       )}

@@ -1,6 +1,7 @@
 import type { BoardLine } from '../../view/board';
 import { lineReason } from '../../view/cause-words';
-import { lineWords } from '../../view/line-words';
+import { kilovoltsText } from '../../view/figures';
+import { buildWords } from '../../view/line-words';
 import type { SiteCustom } from '../../view/site-custom';
 import { ConditionMark } from '../marks/ConditionMark';
 
@@ -30,7 +31,9 @@ export function QuietLines({ lines, site, nowMs }: QuietLinesProps) {
                 <a href={`/lines/${line.key}`} className="block text-ink no-underline hover:underline">
                   {line.name}
                 </a>
-                <span className="text-ink-2">{lineWords(line)}</span>
+                <span className="text-ink-2">
+                  {kilovoltsText(line.voltageKv)} · {buildWords(line)}
+                </span>
               </div>
               <ConditionMark condition={line.condition} className="self-start" />
               <p className="max-w-[70ch] text-ink-2">{reason.rest}</p>

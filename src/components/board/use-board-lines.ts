@@ -3,7 +3,7 @@ import { useCallback, useEffect, useMemo, useState } from 'react';
 import { lineListSchema, type LineList } from '../../contract/lines';
 import type { Warning } from '../../contract/warning';
 import { withWarnings } from '../../live/live-stream';
-import { useLive, type LiveView } from '../../live/use-live';
+import { useLive } from '../../live/use-live';
 import { boardLine, type BoardLine } from '../../view/board';
 import { mergeLive } from '../../view/merge-live';
 import { apiRequest, type RequestRefused } from '../shell/api-request';
@@ -12,7 +12,11 @@ const REFETCH_MS = 60_000;
 
 export interface BoardLines {
   readonly lines: readonly BoardLine[];
-  readonly live: LiveView;
+  /** site time, ms */
+  readonly nowMs: number;
+  /** site time for which the lines are known, ms: now, or the last that was heard when the stream is lost */
+  readonly asOfMs: number;
+  readonly lost: boolean;
   readonly refused: RequestRefused | null;
   /** takes what an acknowledgement made here answered, before the stream tells it to everybody */
   take(warning: Warning): void;
@@ -44,6 +48,8 @@ export function useBoardLines(initial: LineList): BoardLines {
     () => mergeLive(data, live.results, withWarnings(live.warnings, own)),
     [data, live.results, live.warnings, own],
   );
-  const lines = merged.map((line) => boardLine(line, live.nowMs));
-  return { lines, live, refused: error, take };
+  const lost = live.status === 'lost';
+  const asOfMs = lost ? Math.max(live.lastFrameAtMs ?? 0, Date.parse(data.at)) : live.nowMs;
+  const lines = merged.map((line) => boardLine(line, asOfMs));
+  return { lines, nowMs: live.nowMs, asOfMs, lost, refused: error, take };
 }

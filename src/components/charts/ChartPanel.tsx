@@ -31,7 +31,7 @@ export function ChartPanel({ title, caption, controls, table, fileName, timeZone
         </div>
         <div className="flex flex-wrap items-center gap-x-5 gap-y-2">{controls}</div>
       </div>
-      <div className="mt-2 min-w-0">{children}</div>
+      <div className="mt-2 grid min-w-0 flex-1">{children}</div>
       <div className="mt-2 flex gap-2">
         <button
           type="button"

@@ -15,7 +15,7 @@ const Chart = lazy(() => import('./Chart'));
 /** The room of a chart, and the chart in it as soon as it can be drawn. */
 export function ChartPlace({ option, label, className }: Props) {
   return (
-    <div className={className}>
+    <div className={`min-w-0 ${className}`}>
       {option !== undefined && (
         <Suspense fallback={null}>
           <Chart option={option} label={label} />

@@ -3,7 +3,7 @@ import type { LineSummary } from '../../contract/lines';
 import type { SettingsVersion } from '../../contract/settings-version';
 import { restraintConvention } from '../../protection/restraint';
 import type { Reading } from '../../view/line-readings';
-import { phaseRows } from '../../view/line-phase-rows';
+import { missingFiguresReason, phaseRows } from '../../view/line-phase-rows';
 import { unitWords } from '../../view/line-unit';
 import type { CurrentUnit } from '../../view/line-unit';
 import { csvName } from '../../view/line-csv';
@@ -50,7 +50,7 @@ export function OperatingPlane(props: Props) {
   return (
     <ChartPanel
       title="Operating point"
-      caption={tailError === null ? 'Now, and the last ten minutes' : `Now only: ${tailError.message}`}
+      caption={planeCaption(line, tailError)}
       controls={
         inForce !== undefined && (
           <Choice
@@ -75,11 +75,17 @@ export function OperatingPlane(props: Props) {
         <ChartPlace
           option={option}
           label={planeSentence(line, site.phaseLetters)}
-          className="h-80 sm:h-[25.5rem]"
+          className="h-80 sm:h-full sm:min-h-[25.5rem]"
         />
       )}
     </ChartPanel>
   );
+}
+
+function planeCaption(line: LineSummary, tailError: Error | null): string {
+  const missing = missingFiguresReason(line);
+  if (missing !== undefined) return `No operating point now: ${missing}`;
+  return tailError === null ? 'Now, and the last ten minutes' : `Now only. ${tailError.message}`;
 }
 
 function usePlaneOption(

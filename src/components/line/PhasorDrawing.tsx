@@ -1,4 +1,3 @@
-import { useId } from 'react';
 import type { PhasorPicture } from '../../view/line-phasor-picture';
 
 interface Props {
@@ -14,7 +13,7 @@ interface Props {
 const STROKES = [undefined, '7 3', '2 3', '10 3 2 3', '5 2 1 2', '1 2'];
 
 export function PhasorDrawing({ picture, width, height, label, ink }: Props) {
-  const id = useId();
+  const { arrows, start, differential } = picture;
   return (
     <svg
       role="img"
@@ -22,66 +21,58 @@ export function PhasorDrawing({ picture, width, height, label, ink }: Props) {
       viewBox={`0 0 ${width} ${height}`}
       className="block w-full border border-hairline"
     >
-      <defs>
-        <ArrowHead id={`${id}-head`} />
-      </defs>
-      {picture.arrows.map((arrow, index) => (
-        <line
-          key={arrow.terminal}
-          x1={arrow.from.x}
-          y1={arrow.from.y}
-          x2={arrow.to.x}
-          y2={arrow.to.y}
-          stroke={index % 2 === 0 ? 'var(--ink)' : 'var(--ink-2)'}
-          strokeWidth={1.75}
-          strokeDasharray={STROKES[index]}
-          markerEnd={`url(#${id}-head)`}
-        />
+      {arrows.map((arrow, index) => (
+        <Arrow key={arrow.terminal} {...arrow} className={inkOf(index)} width={1.75} dash={STROKES[index]} />
       ))}
-      <circle cx={picture.start.x} cy={picture.start.y} r={3} fill="var(--panel)" stroke="var(--ink)" />
-      {picture.differential !== undefined && (
-        <line
-          className={ink}
-          x1={picture.differential.from.x}
-          y1={picture.differential.from.y}
-          x2={picture.differential.to.x}
-          y2={picture.differential.to.y}
-          stroke="currentColor"
-          strokeWidth={2.5}
-          markerEnd={`url(#${id}-head)`}
-        />
-      )}
+      <circle cx={start.x} cy={start.y} r={3} fill="var(--panel)" stroke="var(--ink)" />
+      {differential !== undefined && <Arrow {...differential} className={ink} width={2.5} />}
     </svg>
   );
 }
 
-function ArrowHead({ id }: { id: string }) {
+interface ArrowProps {
+  readonly from: { readonly x: number; readonly y: number };
+  readonly to: { readonly x: number; readonly y: number };
+  readonly className: string;
+  readonly width: number;
+  readonly dash?: string | undefined;
+}
+
+/** The head is a shape of its own: not every browser gives a marker the colour of its line. */
+function Arrow({ from, to, className, width, dash }: ArrowProps) {
+  const angleDeg = (Math.atan2(to.y - from.y, to.x - from.x) * 180) / Math.PI;
   return (
-    <marker
-      id={id}
-      viewBox="0 0 10 10"
-      refX="9"
-      refY="5"
-      markerWidth="9"
-      markerHeight="9"
-      markerUnits="userSpaceOnUse"
-      orient="auto"
-    >
-      <path d="M0 1.4 9.4 5 0 8.6Z" fill="context-stroke" />
-    </marker>
+    <g className={className}>
+      <line
+        x1={from.x}
+        y1={from.y}
+        x2={to.x}
+        y2={to.y}
+        stroke="currentColor"
+        strokeWidth={width}
+        strokeDasharray={dash}
+      />
+      <path
+        d="M0 0 -8.5 3.4 -8.5 -3.4Z"
+        transform={`translate(${to.x} ${to.y}) rotate(${angleDeg})`}
+        fill="currentColor"
+      />
+    </g>
   );
 }
+
+const inkOf = (index: number): string => (index % 2 === 0 ? 'text-ink' : 'text-ink-2');
 
 /** The stroke of a terminal's arrow, to stand beside its name. */
 export function StrokeSample({ index }: { index: number }) {
   return (
-    <svg width="26" height="8" viewBox="0 0 26 8" aria-hidden="true" className="shrink-0">
+    <svg width="26" height="8" viewBox="0 0 26 8" aria-hidden="true" className={`shrink-0 ${inkOf(index)}`}>
       <line
         x1="0"
         y1="4"
         x2="26"
         y2="4"
-        stroke={index % 2 === 0 ? 'var(--ink)' : 'var(--ink-2)'}
+        stroke="currentColor"
         strokeWidth="1.75"
         strokeDasharray={STROKES[index]}
       />

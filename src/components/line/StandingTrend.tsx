@@ -5,6 +5,7 @@ import { csvName } from '../../view/line-csv';
 import type { Reading } from '../../view/line-readings';
 import type { CurrentUnit } from '../../view/line-unit';
 import { PHASES } from '../../view/phase';
+import { phaseCondition } from '../../view/phase-condition';
 import type { SiteCustom } from '../../view/site-custom';
 import type { TrendPhase } from '../../view/trend-phase';
 import { TREND_SPANS } from '../../view/trend-span';
@@ -19,6 +20,7 @@ import { useChartInk } from '../charts/use-chart-ink';
 import { useNarrow } from './use-narrow';
 import { useTrend } from './use-trend';
 import { useTrendOption } from './use-trend-option';
+import type { DrawnPhase } from './use-trend-option';
 
 interface Props {
   readonly line: LineSummary;
@@ -45,16 +47,17 @@ export function StandingTrend(props: Props) {
   const trend = useTrend(line.key, span, { live, nowMs });
   const ink = useChartInk();
   const narrow = useNarrow();
-  const phases = useMemo(() => (phase === 'all' ? PHASES : [phase]), [phase]);
-  const drawn = span === 'week' || span === 'two months';
+  const drawn = useDrawnPhases(line, phase, site.nearRatio);
+  const phases = drawn.map((each) => each.phase);
+  const daysShown = span === 'week' || span === 'two months';
   const found = [...trend.creep, ...line.creep].find((each) => each.phase === phase);
   const option = useTrendOption({
-    line,
     settings,
     trend,
-    phases,
-    creep: drawn ? found : undefined,
+    drawn,
+    creep: daysShown ? found : undefined,
     unit,
+    ratingAmps: line.ratingAmps,
     site,
     ink,
     faded,
@@ -62,7 +65,7 @@ export function StandingTrend(props: Props) {
   });
   const words = spanWords(span, { several: phase === 'all' });
   const context = { unit, ratingAmps: line.ratingAmps, timeZone: site.timeZone };
-  const caption = found === undefined || !drawn ? words : `${words}; ${creepWords(found, context)}`;
+  const caption = found === undefined || !daysShown ? words : `${words}; ${creepWords(found, context)}`;
   const title =
     phase === 'all' ? 'Standing differential' : `Standing differential, phase ${site.phaseLetters[phase]}`;
   const empty = phases.every((each) => trend.series[each].every((point) => point.medianAmps === null));
@@ -98,6 +101,18 @@ export function StandingTrend(props: Props) {
       )}
     </ChartPanel>
   );
+}
+
+/** The phases shown with their conditions; the same array while nothing of it changes. */
+function useDrawnPhases(line: LineSummary, phase: TrendPhase, nearRatio: number): readonly DrawnPhase[] {
+  const a = phaseCondition(line, 'a', nearRatio);
+  const b = phaseCondition(line, 'b', nearRatio);
+  const c = phaseCondition(line, 'c', nearRatio);
+  return useMemo(() => {
+    const conditions = { a, b, c };
+    const shown = PHASES.filter((each) => phase === 'all' || each === phase);
+    return shown.map((each) => ({ phase: each, condition: conditions[each] }));
+  }, [phase, a, b, c]);
 }
 
 function TrendChoices({ site, span, onSpan, phase, onPhase }: Props) {

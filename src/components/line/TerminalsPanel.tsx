@@ -2,7 +2,7 @@ import type { LineSummary } from '../../contract/lines';
 import type { Terminal } from '../../contract/register';
 import type { Result } from '../../contract/result';
 import { instantText } from '../../view/figures';
-import { silentSince, terminalPanels } from '../../view/line-terminal-rows';
+import { silences, terminalPanels } from '../../view/line-terminal-rows';
 import type { TerminalPanel } from '../../view/line-terminal-rows';
 import type { SiteCustom } from '../../view/site-custom';
 import { PhaseSign } from '../marks/PhaseMarker';
@@ -21,7 +21,7 @@ export function TerminalsPanel({ line, terminals, result, site, nowMs, faded }: 
   const panels = terminalPanels(terminals, result?.terminals ?? [], {
     letters: site.phaseLetters,
     substations: line.substations,
-    silentFor: silentSince(line.warnings, nowMs),
+    silentSince: silences(line.warnings, { nowMs, timeZone: site.timeZone }),
   });
   const at = result?.at ?? null;
   return (
@@ -54,7 +54,7 @@ interface OneProps {
 
 function OneTerminal({ panel, faded, phasorsShown }: OneProps) {
   return (
-    <article className="min-w-0" aria-label={panel.name}>
+    <article className="@container min-w-0" aria-label={panel.name}>
       <h3 className="m-0 flex items-baseline justify-between gap-4 text-body font-medium">
         {panel.name}
         <span className="text-caption font-normal text-ink-2">current transformers {panel.transformer}</span>
@@ -64,7 +64,7 @@ function OneTerminal({ panel, faded, phasorsShown }: OneProps) {
       )}
       {phasorsShown && <Phasors panel={panel} faded={faded} />}
       {panel.facts.length > 0 && (
-        <dl className="m-0 mt-2 grid grid-cols-[5rem_1fr] gap-x-3 gap-y-0.5">
+        <dl className="m-0 mt-2 grid grid-cols-[5rem_1fr] gap-x-3 gap-y-0.5 @min-[38rem]:grid-cols-[5rem_1fr_5rem_1.4fr]">
           {panel.facts.map(({ name, value, bad }) => (
             <div key={name} className="contents">
               <dt className="text-ink-2">{name}</dt>

@@ -147,7 +147,7 @@ function pointSeries(mark: PlaneMark, { faded, ink }: PlaneDrawing): ScatterSeri
     data: [[mark.restraint, mark.differential]],
     itemStyle: faded
       ? { color: ink.panel, borderColor: mark.colour, borderWidth: 1.25, opacity: 1 }
-      : { color: mark.colour, opacity: 1 },
+      : { color: mark.colour, borderColor: ink.panel, borderWidth: 1, opacity: 1 },
     emphasis: { scale: false },
     tooltip: { formatter: () => tooltipLines(mark.lines) },
   };

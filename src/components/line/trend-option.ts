@@ -1,4 +1,3 @@
-import type { CustomSeriesOption, LineSeriesOption } from 'echarts/charts';
 import type { EChartsCoreOption } from 'echarts/core';
 import type { PhaseName } from '../../protection/phase';
 import type { PickupStep } from '../../view/trend-pickup';
@@ -8,6 +7,7 @@ import type { TrendWindow } from '../../view/trend-span';
 import type { TimeTick } from '../../view/trend-ticks';
 import { axisBase, chartBase, tooltipBase, tooltipLines } from '../charts/chart-axes';
 import type { ChartInk } from '../charts/chart-ink';
+import { bandSeries, levelSeries, markSeries, senSeries } from './trend-series';
 import { trendWordsSeries } from './trend-words';
 
 /** Everything the trend draws; levels and pickups in the unit shown. */
@@ -79,6 +79,7 @@ export function trendOption(drawing: TrendDrawing): EChartsCoreOption {
       nameTextStyle: { ...axisBase(ink).nameTextStyle, align: 'left' },
       splitNumber: 4,
       axisLabel: { ...axisBase(ink).axisLabel, showMaxLabel: false },
+      splitLine: { ...axisBase(ink).splitLine, showMaxLine: false },
     },
     series: [
       ...drawing.lines.filter((line) => line.bandShown).map((line) => bandSeries(drawing, line)),
@@ -95,106 +96,4 @@ function pointedAt(params: unknown): number {
   const first: unknown = Array.isArray(params) ? params[0] : params;
   const value = (first as { axisValue?: unknown } | undefined)?.axisValue;
   return typeof value === 'number' ? value : Number(value);
-}
-
-function levelSeries(line: TrendLine): LineSeriesOption {
-  const data = line.stretches.flatMap((stretch) => {
-    const alone = stretch.length === 1;
-    const points = stretch.map((point) => ({
-      value: [point.atMs, point.medianAmps ?? '-'],
-      symbol: alone ? 'circle' : 'none',
-      symbolSize: 4,
-    }));
-    const end = stretch[stretch.length - 1]?.atMs ?? 0;
-    return [...points, { value: [end, '-'], symbol: 'none', symbolSize: 0 }];
-  });
-  return {
-    id: `level-${line.phase}`,
-    type: 'line',
-    data,
-    connectNulls: false,
-    z: 4,
-    lineStyle: { color: line.colour, width: 1.75, type: line.dash === 'solid' ? 'solid' : [6, 3] },
-    itemStyle: { color: line.colour },
-    emphasis: { disabled: true },
-  };
-}
-
-function bandSeries({ ink }: TrendDrawing, line: TrendLine): CustomSeriesOption {
-  return {
-    id: `band-${line.phase}`,
-    type: 'custom',
-    silent: true,
-    clip: true,
-    z: 1,
-    tooltip: { show: false },
-    data: [0],
-    renderItem: (_params, api) => ({
-      type: 'group',
-      children: line.stretches.map((stretch) => {
-        const spread = stretch.filter((point) => point.lowAmps !== null && point.highAmps !== null);
-        const upper = spread.map((point) => api.coord([point.atMs, point.highAmps!]));
-        const lower = spread.map((point) => api.coord([point.atMs, point.lowAmps!])).reverse();
-        return {
-          type: 'polygon' as const,
-          shape: { points: [...upper, ...lower] },
-          style: { fill: ink.band },
-        };
-      }),
-    }),
-  };
-}
-
-/** The recorded pickup and the near mark, each for the time its version was in force. */
-function markSeries({ ink, pickup, nearRatio }: TrendDrawing): LineSeriesOption[] {
-  const steps = (ratio: number) =>
-    pickup.flatMap((step) => [
-      [step.fromMs, ratio * step.pickupAmps],
-      [step.toMs, ratio * step.pickupAmps],
-    ]);
-  const common = { type: 'line' as const, symbol: 'none', silent: true, z: 2, emphasis: { disabled: true } };
-  return [
-    { ...common, id: 'pickup', data: steps(1), lineStyle: { color: ink.ink, width: 1.5 } },
-    {
-      ...common,
-      id: 'near-mark',
-      data: steps(nearRatio),
-      lineStyle: { color: ink.rule, width: 1.25, type: [1.5, 3] },
-    },
-  ];
-}
-
-function senSeries({ sen, lines }: TrendDrawing): (LineSeriesOption | CustomSeriesOption)[] {
-  const colour = lines[0]?.colour;
-  if (sen.length === 0 || colour === undefined) return [];
-  return [
-    {
-      id: 'sen-fan',
-      type: 'custom',
-      silent: true,
-      clip: true,
-      z: 2,
-      data: [0],
-      renderItem: (_params, api) => ({
-        type: 'polygon',
-        shape: {
-          points: [
-            ...sen.map((point) => api.coord([point.atMs, point.highAmps])),
-            ...sen.map((point) => api.coord([point.atMs, point.lowAmps])).reverse(),
-          ],
-        },
-        style: { fill: colour, opacity: 0.16 },
-      }),
-    },
-    {
-      id: 'sen-line',
-      type: 'line',
-      symbol: 'none',
-      silent: true,
-      z: 3,
-      data: sen.map((point) => [point.atMs, point.levelAmps]),
-      lineStyle: { color: colour, width: 1.25, type: [5, 4] },
-      emphasis: { disabled: true },
-    },
-  ];
 }

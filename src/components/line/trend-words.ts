@@ -24,36 +24,39 @@ export function trendWordsSeries(drawing: TrendDrawing): CustomSeriesOption {
 
 type At = (atMs: number, level: number) => { x: number; y: number };
 
+/** A line's name stands clear of the line, halo and all. */
+const MARK_NAME_ABOVE = 10;
+
 /** The pickup is named at the right and the near mark at the left, so that they cannot meet. */
 function markNames({ ink, pickup, nearRatio, levelText }: TrendDrawing, at: At) {
   const first = pickup[0];
   const last = pickup[pickup.length - 1];
   if (first === undefined || last === undefined) return [];
-  const near = at(first.fromMs, nearRatio * first.pickupAmps);
-  const end = at(last.toMs, last.pickupAmps);
+  const near = at(first.fromMs, nearRatio * first.pickup);
+  const end = at(last.toMs, last.pickup);
   const style = {
     ...CHART_TYPE,
     fill: ink.ink2,
     stroke: ink.panel,
     lineWidth: 3,
-    verticalAlign: 'bottom' as const,
+    verticalAlign: 'middle' as const,
   };
   return [
     {
       type: 'text' as const,
       x: near.x + 6,
-      y: near.y - 3,
+      y: near.y - MARK_NAME_ABOVE,
       style: {
         ...style,
-        text: `near mark ${levelText(nearRatio * first.pickupAmps)}`,
+        text: `near mark ${levelText(nearRatio * first.pickup)}`,
         align: 'left' as const,
       },
     },
     {
       type: 'text' as const,
       x: end.x,
-      y: end.y - 3,
-      style: { ...style, text: `pickup ${levelText(last.pickupAmps)}`, align: 'right' as const },
+      y: end.y - MARK_NAME_ABOVE,
+      style: { ...style, text: `pickup ${levelText(last.pickup)}`, align: 'right' as const },
     },
   ];
 }

@@ -1,12 +1,11 @@
 import { useMemo } from 'react';
-import type { LineSummary } from '../../contract/lines';
+import type { Condition } from '../../contract/condition';
 import type { SettingsVersion } from '../../contract/settings-version';
 import type { Creep } from '../../contract/warning';
 import { currentText } from '../../view/line-figures';
 import { unitWords } from '../../view/line-unit';
 import type { CurrentUnit } from '../../view/line-unit';
 import type { PhaseName } from '../../view/phase';
-import { phaseCondition } from '../../view/phase-condition';
 import type { SiteCustom } from '../../view/site-custom';
 import { pickupSteps } from '../../view/trend-pickup';
 import { senPoints } from '../../view/trend-sen';
@@ -16,16 +15,24 @@ import { trendTooltip } from '../../view/trend-words';
 import type { ChartInk } from '../charts/chart-ink';
 import { phaseColour } from './phase-colour';
 import { trendOption } from './trend-option';
+import type { TrendDrawing } from './trend-option';
 import type { Trend } from './use-trend';
 
-export interface TrendOptionInput {
-  readonly line: LineSummary;
+/** A phase that is drawn, and the condition whose colour it may carry. */
+export interface DrawnPhase {
+  readonly phase: PhaseName;
+  readonly condition: Condition;
+}
+
+export interface TrendInput {
   readonly settings: readonly SettingsVersion[];
   readonly trend: Trend;
-  readonly phases: readonly PhaseName[];
+  /** keeps its identity while it says the same, or the drawing is made anew with every snapshot */
+  readonly drawn: readonly DrawnPhase[];
   /** the drift to draw; undefined where there is none or several phases are shown */
   readonly creep: Creep | undefined;
   readonly unit: CurrentUnit;
+  readonly ratingAmps: number;
   readonly site: SiteCustom;
   readonly ink: ChartInk | undefined;
   readonly faded: boolean;
@@ -33,40 +40,29 @@ export interface TrendOptionInput {
 }
 
 /** The trend's drawing; undefined until the theme's colours are known. */
-export function useTrendOption(input: TrendOptionInput) {
-  const { line, settings, trend, phases, creep, unit, site, ink, faded, narrow } = input;
+export function useTrendOption(input: TrendInput) {
+  const { settings, trend, drawn, creep, unit, ratingAmps, site, ink, faded, narrow } = input;
+  const { window, series, source } = trend;
   return useMemo(() => {
     if (ink === undefined) return undefined;
-    const unitAmps = unit === 'amperes' ? 1 : line.ratingAmps;
-    const pickup = pickupSteps(settings, trend.window).map((step) => ({
-      ...step,
-      pickupAmps: step.pickupAmps / unitAmps,
-    }));
-    const sen =
-      creep === undefined
-        ? []
-        : senPoints(creep, trend.window).map((point) => ({
-            atMs: point.atMs,
-            levelAmps: point.levelAmps / unitAmps,
-            lowAmps: point.lowAmps / unitAmps,
-            highAmps: point.highAmps / unitAmps,
-          }));
-    const lines = phases.map((phase, index) => ({
+    const unitAmps = unit === 'amperes' ? 1 : ratingAmps;
+    const { timeZone, nearRatio, phaseLetters } = site;
+    const pickup = pickupSteps(settings, window, unitAmps);
+    const sen = creep === undefined ? [] : senPoints(creep, window, unitAmps);
+    const lines = drawn.map(({ phase, condition }) => ({
       phase,
-      letter: site.phaseLetters[phase],
-      colour: lineColour(ink, input, phase),
-      dash: index === 2 ? ('dashed' as const) : ('solid' as const),
-      stretches: shownStretches(trend.series[phase], trend.source, unitAmps),
-      bandShown: phases.length === 1,
+      letter: phaseLetters[phase],
+      ...lineLook(ink, { phase, condition, faded, alone: drawn.length === 1 }),
+      stretches: shownStretches(series[phase], source, unitAmps),
+      bandShown: drawn.length === 1,
     }));
-    const { timeZone, nearRatio } = site;
-    const told = phases.map((phase) => ({ letter: site.phaseLetters[phase], points: trend.series[phase] }));
+    const told = drawn.map(({ phase }) => ({ letter: phaseLetters[phase], points: series[phase] }));
     return trendOption({
       ink,
-      window: trend.window,
-      ticks: timeTicks(trend.window, { timeZone, most: narrow ? 5 : 10 }),
+      window,
+      ticks: timeTicks(window, { timeZone, most: narrow ? 5 : 10 }),
       levelMax: trendLevelMax(
-        lines.flatMap((each) => each.stretches),
+        lines.flatMap((line) => line.stretches),
         pickup,
         sen,
       ),
@@ -74,41 +70,24 @@ export function useTrendOption(input: TrendOptionInput) {
       pickup,
       nearRatio,
       sen,
-      levelName: `differential, ${unitWords(unit, line.ratingAmps)}`,
-      levelText: (level) => currentText(level * unitAmps, unit, line.ratingAmps),
-      tooltip: (atMs) =>
-        trendTooltip(told, atMs, {
-          source: trend.source,
-          unit,
-          ratingAmps: line.ratingAmps,
-          nowMs: trend.window.toMs,
-          timeZone,
-        }),
+      levelName: `differential, ${unitWords(unit, ratingAmps)}`,
+      levelText: (level) => currentText(level * unitAmps, unit, ratingAmps),
+      tooltip: (atMs) => trendTooltip(told, atMs, { source, unit, ratingAmps, nowMs: window.toMs, timeZone }),
     });
-    // `input` itself is new each time; its parts below are what the drawing depends on.
-    // eslint-disable-next-line react-hooks/exhaustive-deps
-  }, [
-    line,
-    settings,
-    trend.window,
-    trend.series,
-    trend.source,
-    phases,
-    creep,
-    unit,
-    site,
-    ink,
-    faded,
-    narrow,
-  ]);
+  }, [settings, window, series, source, drawn, creep, unit, ratingAmps, site, ink, faded, narrow]);
 }
 
-/** The state's colour where the phase has earned one. Alone it is ink; among others the second stands back. */
-function lineColour(
+type LineLook = Pick<TrendDrawing['lines'][number], 'colour' | 'dash'>;
+
+/** The state's colour where the phase has earned one. Among others the second stands back and the third is dashed. */
+function lineLook(
   ink: ChartInk,
-  { line, phases, site, faded }: TrendOptionInput,
-  phase: PhaseName,
-): string {
-  const colour = phaseColour(ink, phaseCondition(line, phase, site.nearRatio), { faded });
-  return phases.length > 1 && colour === ink.ink && phase === 'b' ? ink.ink2 : colour;
+  { phase, condition, faded, alone }: DrawnPhase & { faded: boolean; alone: boolean },
+): LineLook {
+  const colour = phaseColour(ink, condition, { faded });
+  if (alone) return { colour, dash: 'solid' };
+  return {
+    colour: colour === ink.ink && phase === 'b' ? ink.ink2 : colour,
+    dash: phase === 'c' ? 'dashed' : 'solid',
+  };
 }

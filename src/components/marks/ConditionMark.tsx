@@ -5,21 +5,25 @@ interface ConditionMarkProps {
   condition: Condition;
   /** the value is not live: the word is followed by this, such as "42 s ago" */
   age?: string | undefined;
+  /** without its colour: the page is not live */
+  faded?: boolean;
   className?: string;
 }
 
 /** A line's condition: its shape and its word, in its colour. Over is the only one that is filled. */
-export function ConditionMark({ condition, age, className = '' }: ConditionMarkProps) {
+export function ConditionMark({ condition, age, faded = false, className = '' }: ConditionMarkProps) {
   const ink = condition === 'over' ? 'bg-over px-1.5 text-on-over' : CONDITION_INK[condition];
-  const faded = age === undefined ? ink : 'text-ink-2';
+  const shown = faded || age !== undefined ? 'text-ink-2' : ink;
   return (
     <span
-      className={`inline-flex items-center gap-1.5 font-semibold whitespace-nowrap ${faded} ${className}`}
+      className={`inline-flex items-center gap-1.5 font-semibold whitespace-nowrap ${shown} ${className}`}
       title={CONDITION_MEANING[condition]}
     >
       <ConditionShape condition={condition} />
-      {condition}
-      {age !== undefined && <span className="font-normal">, {age}</span>}
+      <span>
+        {condition}
+        {age !== undefined && <span className="font-normal">, {age}</span>}
+      </span>
     </span>
   );
 }

@@ -6,17 +6,19 @@ import type { SparklinePicture } from '../../view/sparkline';
 interface SparklineProps {
   picture: SparklinePicture | undefined;
   condition: Condition;
+  /** without its colour: the condition that gave it may no longer be so */
+  faded?: boolean;
 }
 
 const WIDE = 240;
 const TALL = 40;
 
 /** Daily standing levels with the near mark of the pickup dotted above them. */
-export function Sparkline({ picture, condition }: SparklineProps) {
+export function Sparkline({ picture, condition, faded = false }: SparklineProps) {
   if (picture === undefined)
     return <p className="text-caption text-ink-2">No trend yet: fewer than two days known.</p>;
   const { runs, near, dayCount, firstAmps, lastAmps } = picture;
-  const ink = condition === 'blind' ? 'text-ink-2' : CONDITION_INK[condition];
+  const ink = faded || condition === 'blind' ? 'text-ink-2' : CONDITION_INK[condition];
   const y = (place: number) => TALL - 1 - place * (TALL - 2);
   return (
     <div className="text-caption text-ink-2">

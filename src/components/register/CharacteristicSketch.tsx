@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { useEffect, useId, useState } from 'react';
 import {
   characteristicDrawing,
   settingsTyped,
@@ -47,6 +47,7 @@ function followForm(
 }
 
 function Sketch({ drawing }: { drawing: CharacteristicDrawing }) {
+  const hatchId = useId();
   const floor = BOX.height - BOX.bottom;
   const line = drawing.threshold.map(([x, y]) => `${x.toFixed(1)},${y.toFixed(1)}`).join(' ');
   const operates = `${line} ${BOX.width},0 ${BOX.left},0`;
@@ -61,7 +62,7 @@ function Sketch({ drawing }: { drawing: CharacteristicDrawing }) {
     >
       <defs>
         <pattern
-          id="operates"
+          id={hatchId}
           width="6"
           height="6"
           patternUnits="userSpaceOnUse"
@@ -70,7 +71,7 @@ function Sketch({ drawing }: { drawing: CharacteristicDrawing }) {
           <line x1="0" y1="0" x2="0" y2="6" stroke="var(--rule)" strokeWidth="0.6" />
         </pattern>
       </defs>
-      <polygon points={operates} fill="url(#operates)" opacity="0.7" />
+      <polygon points={operates} fill={`url(#${hatchId})`} opacity="0.7" />
       <path d={`M${BOX.left} 0V${floor}H${BOX.width}`} fill="none" stroke="var(--rule)" />
       <path
         d={`M${BOX.left} ${drawing.pickupY.toFixed(1)}H${BOX.width}`}

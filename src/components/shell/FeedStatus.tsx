@@ -19,13 +19,19 @@ export function FeedStatus({ initial, at, timeZone }: FeedStatusProps) {
   }, [live.status]);
   return (
     <>
-      <span data-testid="feed-heard">{heardWords(heard, live.nowMs)}</span>
+      <span data-testid="feed-heard">
+        {live.status === 'lost' ? lostWords(heard, live.nowMs) : heardWords(heard, live.nowMs)}
+      </span>
       <time className="whitespace-nowrap" dateTime={new Date(live.nowMs).toISOString()}>
         {timeText(live.nowMs, timeZone)} {zoneText(live.nowMs, timeZone)}
       </time>
     </>
   );
 }
+
+/** Without the stream nobody can say how many are heard now. */
+const lostWords = ({ newestAtMs }: HeardTerminals, nowMs: number): string =>
+  `Not live · newest ${ageText(newestAtMs, nowMs)}`;
 
 function heardWords({ heardCount, knownCount, newestAtMs }: HeardTerminals, nowMs: number): string {
   if (newestAtMs === undefined) return 'No terminal heard yet';

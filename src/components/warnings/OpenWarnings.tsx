@@ -39,6 +39,7 @@ function WarningRow({
   one,
   site,
   nowMs,
+  lost,
   mayAcknowledge,
   onAcknowledged,
 }: Omit<OpenWarningsProps, 'lines'> & { one: OpenWarning }) {
@@ -50,7 +51,7 @@ function WarningRow({
       data-warning={warning.id}
       className="grid items-baseline gap-x-6 gap-y-0.5 border-b border-hairline py-1.5 md:grid-cols-[4.5rem_14rem_minmax(0,1fr)] lg:grid-cols-[4.5rem_14rem_minmax(0,1fr)_minmax(0,28rem)]"
     >
-      <ConditionMark condition={warning.kind} className="justify-self-start" />
+      <ConditionMark condition={warning.kind} faded={lost} className="justify-self-start" />
       <a href={`/lines/${warning.line}`} className="text-ink no-underline hover:underline">
         {warning.lineName}
       </a>
@@ -66,7 +67,9 @@ function WarningRow({
         </span>
       </p>
       <div className="flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1 md:col-start-3 lg:col-start-4">
-        <p className={waits ? 'font-medium' : 'text-ink-2'}>{stateWords(warning, nowMs, site)}</p>
+        <p className={waits ? 'font-medium' : 'line-clamp-3 text-ink-2'}>
+          {stateWords(warning, nowMs, site)}
+        </p>
         {waits && mayAcknowledge && <AcknowledgeButton warning={warning} onAcknowledged={onAcknowledged} />}
       </div>
     </li>

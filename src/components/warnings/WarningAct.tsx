@@ -39,7 +39,7 @@ export function WarningAct({
   return (
     <>
       {noted !== undefined && waiting === undefined && (
-        <p className="mt-1 text-ink-2">
+        <p className="mt-1 line-clamp-4 text-ink-2">
           Acknowledged by {noted.acknowledgedBy ?? 'someone'},{' '}
           {instantText(noted.acknowledgedAt!, nowMs, site.timeZone)}
           {noted.note === null ? '.' : `: “${noted.note}”`}
