@@ -51,7 +51,7 @@ export function computedSnapshot(
     points,
     unevaluable,
     throughAmps: through,
-    flags: snapshotFlags({ line, measurements, clockLimitUs, notEvaluated: unevaluable !== undefined }),
+    flags: snapshotFlags({ line, measurements, clockLimitUs, notEvaluated: unevaluable?.by === 'register' }),
   };
 }
 

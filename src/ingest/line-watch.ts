@@ -62,7 +62,7 @@ export function conditionOf(watch: LineWatch): Condition {
 export function watchSnapshot(
   watch: LineWatch,
   snapshot: ComputedSnapshot,
-  limits: WarningLimits,
+  { nowMs, limits }: { nowMs: number; limits: WarningLimits },
 ): WarningChange[] {
   if (watch.newest !== undefined && snapshot.atMs <= watch.newest.atMs)
     return correctedNewest(watch, snapshot);
@@ -70,8 +70,8 @@ export function watchSnapshot(
   const { points, atMs } = snapshot;
   if (!isJudged(watch) || points === undefined) return [];
   // what a terminal under test sends is shown, and raises nothing
-  if (isUnderTest(snapshot)) watch.judgement = judgeUnderTest(watch.judgement, atMs, limits);
-  else watch.judgement = judgeEvaluated(watch.judgement, { atMs, points }, limits);
+  if (isUnderTest(snapshot)) watch.judgement = judgeUnderTest(watch.judgement, { atMs, nowMs }, limits);
+  else watch.judgement = judgeEvaluated(watch.judgement, { atMs, nowMs, points }, limits);
   return turns(watch, atMs, {
     near: () => nearCause(watch, snapshot, limits),
     over: () => utilisationCause(points, 1),

@@ -26,14 +26,17 @@ export function resultMessage(
     at: snapshot === undefined ? null : new Date(snapshot.atMs).toISOString(),
     publishedAt: new Date(nowMs).toISOString(),
     condition,
-    reason: reasonOf(line, snapshot),
+    reason:
+      reasonOf(line, snapshot) ??
+      (condition === 'out of service' ? 'Every breaker of the line is open.' : null),
     phases: perPhase((phase) => (points === undefined ? NOTHING : phaseResult(points[phase]))),
     throughAmps: snapshot?.throughAmps ?? null,
     throughRatio: snapshot?.throughAmps === undefined ? null : snapshot.throughAmps / line.ratingAmps,
     settingsVersion: snapshot?.version?.id ?? null,
-    terminals: [...line.terminals.values()].map((terminal) =>
-      terminalOnWire(terminal.key, snapshot?.measurements.get(terminal.key)),
-    ),
+    // a terminal that nothing is expected from is not missing
+    terminals: [...line.terminals.values()]
+      .filter(({ key }) => line.expected.includes(key) || snapshot?.measurements.has(key) === true)
+      .map(({ key }) => terminalOnWire(key, snapshot?.measurements.get(key))),
   };
 }
 

@@ -48,28 +48,29 @@ export function createStoring(parts: StoringParts): Storing {
       // the line left the register while its snapshot was waiting
       if (watch === undefined) continue;
       const shown = watch.newest;
-      note(watch, watchSnapshot(watch, snapshot, limits));
+      note(watch, watchSnapshot(watch, snapshot, { nowMs: now(), limits }));
       if (watch.newest === snapshot && isWorthShowing(watch, shown)) touched.add(watch);
     }
     return touched;
   };
 
   const storeOnce = async (): Promise<void> => {
-    for (const watch of room.watches()) note(watch, watchTime(watch, now(), limits));
     const collected = intake.collect() ?? NOTHING;
-    if (collected === NOTHING && turned.length === 0) return;
     await untilDone(() => joinStored(store, collected.gathered), database);
     const snapshots = collected.gathered.map((entry) => computedSnapshot(entry, parts.clockLimitUs));
     const touched = watched(snapshots);
+    // after the snapshots: lines that waited for a database that was away are not blind
+    for (const watch of room.watches()) note(watch, watchTime(watch, now(), limits));
+    if (collected === NOTHING && turned.length === 0) return;
     const warnings = turned;
     turned = [];
-    const batch: Batch = {
-      ...collected,
-      rows: snapshots.map(snapshotRow),
-      warnings,
-      staleHours: staleHours(snapshots, now()),
-    };
-    await untilDone(() => commitBatch(store, batch, new Date(now())), database);
+    const rows = snapshots.map(snapshotRow);
+    await untilDone(() => {
+      // asked anew at every try: an hour may close while the database is away
+      const nowMs = now();
+      const batch: Batch = { ...collected, rows, warnings, staleHours: staleHours(snapshots, nowMs) };
+      return commitBatch(store, batch, new Date(nowMs));
+    }, database);
     parts.acknowledge(collected.receipts);
     intake.settle(collected.receipts);
     committed += snapshots.length;

@@ -9,7 +9,8 @@ const VERSION = 1;
 const VALIDITIES = ['good', 'questionable', 'invalid'] as const;
 const SOURCES = ['satellite', 'channel', 'free'] as const;
 const HAS = { current: 1, voltage: 2, reported: 4, channel: 8, breakerOpen: 16, test: 32 } as const;
-const MOST_BYTES = 4096;
+// one scratch for all: nothing here waits between the first byte and the copy
+const scratch = Buffer.allocUnsafe(4096);
 
 export interface PackedTerminal {
   readonly terminalId: number;
@@ -18,7 +19,7 @@ export interface PackedTerminal {
 
 /** The instant itself is the row's key and is not packed. */
 export function packMeasurements(terminals: readonly PackedTerminal[]): Buffer {
-  const writer = createWriter(Buffer.allocUnsafe(MOST_BYTES));
+  const writer = createWriter(scratch);
   writer.byte(VERSION);
   writer.byte(terminals.length);
   for (const { terminalId, measurement } of terminals) {

@@ -1,4 +1,4 @@
-import { and, desc, eq, gte, inArray, isNotNull, isNull, or, type SQL } from 'drizzle-orm';
+import { and, desc, eq, gte, inArray, isNotNull, isNull, or, sql, type SQL } from 'drizzle-orm';
 import type { Warning, WarningCause, WarningKind, WarningState } from '../contract/warning';
 import type { Store } from './client';
 import { line } from './schema/register';
@@ -105,7 +105,8 @@ export async function returnWarning(
 ): Promise<void> {
   await writer
     .update(warning)
-    .set({ returnedAt, changedAt })
+    // instants of the feed and of the worker's clock meet here: no warning returns before it opened
+    .set({ returnedAt: sql`greatest(${warning.openedAt}, ${returnedAt})`, changedAt })
     .where(and(eq(warning.id, id), isNull(warning.returnedAt)));
 }
 

@@ -87,7 +87,7 @@ export function lineReason(line: LineSummary, context: WordsContext): ReasonWord
     case 'out of service':
       return {
         lead: 'Out of service.',
-        rest: ` ${line.reason ?? 'The register says so; nothing is judged meanwhile.'}`,
+        rest: ` ${line.reason ?? 'Nothing is judged meanwhile.'}`,
       };
     case 'settled':
       return { lead: '', rest: '' };

@@ -28,6 +28,6 @@ export const CONDITION_MEANING: Readonly<Record<Condition, string>> = {
   rising: 'A standing level is climbing significantly.',
   blind: 'The differential current cannot be computed at present.',
   'not evaluated': 'Tareline has no settings for this line, or cannot judge its scheme yet.',
-  'out of service': 'The register says that this line is out of service.',
+  'out of service': 'The line is out of service, by the register or because its breakers are open.',
   settled: 'Every phase stands where it should.',
 };

@@ -1,3 +1,4 @@
+import type { FeedHealth } from '../contract/feed-health';
 import type { FeedRow, FeedStanding } from './feed-rows';
 
 /** How the feed stands, in the words of the page. */
@@ -34,6 +35,11 @@ export function feedSentence(counts: Readonly<Record<FeedStanding, number>>): {
   const ill = counts['never heard'] + counts.offline + counts.silent;
   const expected = ill + counts.heard;
   if (expected === 0) return { well: 'No terminal is expected to be heard', ill: undefined };
+  if (counts.heard === 0)
+    return {
+      well: 'No terminal is heard',
+      ill: expected === 1 ? 'The only one is silent' : `All ${expected} are silent`,
+    };
   const well =
     ill === 0
       ? expected === 1
@@ -47,4 +53,13 @@ export function feedSentence(counts: Readonly<Record<FeedStanding, number>>): {
 export function gapsText({ gapCount, missedCount }: Pick<FeedRow, 'gapCount' | 'missedCount'>): string {
   if (gapCount === 0) return 'none';
   return `${gapCount} ${gapCount === 1 ? 'gap' : 'gaps'}, ${missedCount} missed`;
+}
+
+/** "17,060 messages refused so far" */
+export function refusedText(refusals: FeedHealth['refusals']): string {
+  const total = refusals.reduce((sum, { count }) => sum + count, 0);
+  if (total === 0) return 'No message refused so far';
+  return total === 1
+    ? 'One message refused so far'
+    : `${total.toLocaleString('en-GB')} messages refused so far`;
 }

@@ -3,7 +3,7 @@
 export const NOT_COMPUTABLE = 'not computable';
 const LANGUAGE = 'en-GB';
 /** no-break space: a figure stays with its unit */
-const UNIT_SPACE = ' ';
+const UNIT_SPACE = '\u00a0';
 
 type Figure = number | null | undefined;
 const isFigure = (value: Figure): value is number => typeof value === 'number' && Number.isFinite(value);

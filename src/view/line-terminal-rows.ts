@@ -97,13 +97,11 @@ function facts({
   ];
   if (channel !== null) {
     const { send_ms, receive_ms, path, loss_ppm } = channel;
-    const apart = Math.abs(send_ms - receive_ms);
+    const asymmetryMs = Math.abs(send_ms - receive_ms);
     found.push({ name: 'channel', value: `${path}, loss ${loss_ppm} ppm`, bad: false });
-    found.push({
-      name: 'delay',
-      value: `${send_ms.toFixed(2)} ms out, ${receive_ms.toFixed(2)} ms back, ${apart.toFixed(2)} apart`,
-      bad: false,
-    });
+    const delay = `${send_ms.toFixed(2)} ms out, ${receive_ms.toFixed(2)} ms back`;
+    found.push({ name: 'delay', value: delay, bad: false });
+    found.push({ name: 'asymmetry', value: `${asymmetryMs.toFixed(2)} ms`, bad: false });
   }
   if (frequencyHz !== null)
     found.push({ name: 'frequency', value: `${frequencyHz.toFixed(3)} Hz`, bad: false });

@@ -1,4 +1,5 @@
 import type { Problem } from '../contract/problem';
+import { characteristicProblems, type Characteristic } from '../protection/characteristic';
 import { typedInstant } from './register-instant';
 
 /** What stood in a form's fields, by name; a box that was not ticked is absent. */
@@ -101,17 +102,18 @@ const SLOPE_PERCENT_MOST = 200;
 export function settingsFromTyped(typed: Typed, timeZone: string): FromTyped {
   const instant = typedInstant(typed.validFrom ?? '', timeZone);
   const isScaledSum = typed.restraint === 'scaled-sum';
+  const characteristic = {
+    kind: 'two-slope',
+    pickupAmps: amount(typed.pickupAmps),
+    slope1: ratio(typed.slope1),
+    kneeAmps: amount(typed.kneeAmps),
+    slope2: ratio(typed.slope2),
+    slopeStart: typed.slopeStart,
+  };
   return {
     value: {
       validFrom: instant.ok ? instant.iso : undefined,
-      characteristic: {
-        kind: 'two-slope',
-        pickupAmps: amount(typed.pickupAmps),
-        slope1: ratio(typed.slope1),
-        kneeAmps: amount(typed.kneeAmps),
-        slope2: ratio(typed.slope2),
-        slopeStart: typed.slopeStart,
-      },
+      characteristic,
       restraint: isScaledSum
         ? { kind: 'scaled-sum', factor: amount(typed.factor) }
         : { kind: typed.restraint },
@@ -121,9 +123,18 @@ export function settingsFromTyped(typed: Typed, timeZone: string): FromTyped {
       ...(instant.ok ? [] : [{ field: 'validFrom', problem: instant.problem }]),
       ...amountProblems(typed, SETTINGS_AMOUNTS),
       ...['slope1', 'slope2'].flatMap((field) => slopeProblems(field, typed[field])),
+      ...(isJudgeable(characteristic) ? characteristicProblems(characteristic) : []),
       ...(isScaledSum ? amountProblems(typed, { factor: 'the factor; one half is common' }) : []),
     ],
   };
+}
+
+/** Whether every figure is there as a number, so that their combination can be judged. */
+function isJudgeable(
+  characteristic: Record<keyof Characteristic, unknown>,
+): characteristic is Characteristic {
+  const { pickupAmps, slope1, kneeAmps, slope2 } = characteristic;
+  return [pickupAmps, slope1, kneeAmps, slope2].every((value) => typeof value === 'number');
 }
 
 function slopeProblems(field: string, text: string | undefined): Problem['fields'] {

@@ -53,8 +53,8 @@ function hourTicks(
   toMs: number,
   { step, timeZone }: { step: number; timeZone: string },
 ): number[] {
-  // Walking in the smallest step keeps wall times round across a change of the clocks.
-  const strideMs = Math.min(step, 60) * MINUTE_MS;
+  // Walking in the smallest step keeps wall times round across a change of the clocks and in any zone.
+  const strideMs = STEPS[0]! * MINUTE_MS;
   const found: number[] = [];
   for (let atMs = Math.ceil(fromMs / strideMs) * strideMs; atMs <= toMs; atMs += strideMs) {
     const wall = wallTime(atMs, timeZone);

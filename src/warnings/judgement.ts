@@ -27,10 +27,16 @@ export function worstPhase(points: PerPhase<OperatingPoint>): PhaseName {
   );
 }
 
+/** A snapshot's instant, and the instant at which it is looked at: far apart while a backlog is being caught up with. */
+interface SeenAt {
+  readonly atMs: number;
+  readonly nowMs: number;
+}
+
 /** Judges a snapshot that could be evaluated. Delays count in snapshot instants, so a replayed hour judges as it did live. */
 export function judgeEvaluated(
   judgement: Judgement,
-  sight: { atMs: number; points: PerPhase<OperatingPoint> },
+  sight: SeenAt & { points: PerPhase<OperatingPoint> },
   limits: WarningLimits,
 ): Judgement {
   const { atMs, points } = sight;
@@ -43,15 +49,27 @@ export function judgeEvaluated(
   return {
     near: stepHysteresis(judgement.near, against(limits.nearRatio), limits.near),
     over: stepHysteresis(judgement.over, against(1), limits.over),
-    blind: stepHysteresis(judgement.blind, { atMs, raise: false, clear: true }, limits.blind),
+    blind: seenAgain(judgement.blind, sight, limits),
     evaluatedAtMs: atMs,
   };
 }
 
 /** Takes note that the line was seen, without judging its figures: a terminal under test sends no evidence. */
-export function judgeUnderTest(judgement: Judgement, atMs: number, limits: WarningLimits): Judgement {
-  const blind = stepHysteresis(judgement.blind, { atMs, raise: false, clear: true }, limits.blind);
-  return { ...judgement, blind, evaluatedAtMs: atMs };
+export function judgeUnderTest(judgement: Judgement, sight: SeenAt, limits: WarningLimits): Judgement {
+  return {
+    ...judgement,
+    blind: seenAgain(judgement.blind, sight, limits),
+    evaluatedAtMs: sight.atMs,
+  };
+}
+
+/** Only what was just sampled ends blindness: a line that is an hour behind is still not seen. */
+function seenAgain(blind: Hysteresis, { atMs, nowMs }: SeenAt, limits: WarningLimits): Hysteresis {
+  return stepHysteresis(
+    blind,
+    { atMs, raise: false, clear: nowMs - atMs < limits.blindAfterMs },
+    limits.blind,
+  );
 }
 
 /** Judges the passing of time without an evaluable snapshot: a line is blind when that has lasted. */

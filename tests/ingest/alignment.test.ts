@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { createAlignment, type Gathered } from '../../src/ingest/alignment';
+import { createAlignment, type Gathered, joined } from '../../src/ingest/alignment';
 import type { RosterLine } from '../../src/ingest/roster';
 import { AT_MS, iso, measurement, registeredLine, reportedMeasurement, rosterLine } from './made-up-feed';
 
@@ -15,7 +15,8 @@ function gathering(limits: Partial<typeof LIMITS> = {}, line: RosterLine = LINE)
   let spoken = 0;
   return {
     alignment,
-    hears(terminal: string, { atMs = AT_MS, nowMs = atMs, seq = 1 } = {}) {
+    hears(terminal: string, said: { atMs?: number; nowMs?: number; seq?: number } = {}) {
+      const { atMs = AT_MS, nowMs = atMs, seq = 1 } = said;
       spoken += 1;
       return alignment.take({
         line,
@@ -33,6 +34,7 @@ function gathered(outcome: Gathered<string> | 'waiting' | 'duplicate'): Gathered
   if (typeof outcome === 'string') throw new Error(`Nothing was gathered; the outcome is ${outcome}.`);
   return outcome;
 }
+const seqOf = ({ measurements }: Gathered<string>, terminal: string) => measurements.get(terminal)?.seq;
 const terminalsOf = ({ measurements }: Gathered<string>) => [...measurements.keys()].sort();
 
 describe('an instant', () => {
@@ -132,8 +134,6 @@ describe('an instant that lacks a terminal', () => {
 });
 
 describe('a duplicate', () => {
-  const seqOf = ({ measurements }: Gathered<string>, terminal: string) => measurements.get(terminal)?.seq;
-
   it('of a pending instant changes nothing: the first word stands, and both receipts are handed over', () => {
     const { hears } = gathering();
     hears('arden', { seq: 1 });
@@ -212,5 +212,29 @@ describe('more pending instants than are allowed', () => {
       hears('arden', { atMs: AT_MS + period * PERIOD_MS, nowMs: AT_MS });
     expect(alignment.due(AT_MS).map(({ atMs }) => atMs)).toEqual([AT_MS, AT_MS + PERIOD_MS]);
     expect(alignment.pendingCount()).toBe(3);
+  });
+});
+
+describe('parts of one instant, gathered at different times', () => {
+  it('are joined into one, in which the first word of a terminal stands', () => {
+    const part = (terminals: string[], seq: number, mayBeStored: boolean): Gathered<string> => ({
+      line: THREE_ENDED,
+      atMs: AT_MS,
+      measurements: new Map(terminals.map((terminal) => [terminal, measurement({ seq })])),
+      receipts: terminals.map((terminal) => `${terminal} ${seq}`),
+      mayBeStored,
+    });
+    const other = { ...part(['arden'], 3, false), atMs: AT_MS + PERIOD_MS };
+    const [whole, ...others] = joined([
+      part(['arden', 'corl'], 1, false),
+      other,
+      part(['corl', 'birk'], 2, true),
+    ]);
+    expect(others).toEqual([other]);
+    expect(whole).toMatchObject({
+      mayBeStored: true,
+      receipts: ['arden 1', 'corl 1', 'corl 2', 'birk 2'],
+    });
+    expect(['arden', 'birk', 'corl'].map((terminal) => seqOf(whole!, terminal))).toEqual([1, 2, 1]);
   });
 });

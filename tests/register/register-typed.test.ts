@@ -144,9 +144,13 @@ describe('settings as typed', () => {
   });
 
   it('say in the form’s own units what a slope may be', () => {
-    expect(settingsFromTyped({ ...typed, slope1: '300' }, ZONE).problems).toEqual([
-      { field: 'slope1', problem: 'A slope is 0 to 200 %.' },
-    ]);
+    const { problems } = settingsFromTyped({ ...typed, slope1: '300' }, ZONE);
+    expect(problemsByField(problems).slope1).toBe('A slope is 0 to 200 %.');
+  });
+
+  it('that no scheme can have are named together with what is missing', () => {
+    const { problems } = settingsFromTyped({ ...typed, validFrom: '', kneeAmps: '100', slope2: '10' }, ZONE);
+    expect(problems.map(({ field }) => field)).toEqual(['validFrom', 'kneeAmps', 'slope2']);
   });
 });
 

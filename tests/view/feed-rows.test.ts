@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { FeedTerminal } from '../../src/contract/feed-health';
 import { feedCounts, feedListState, feedRows } from '../../src/view/feed-rows';
-import { feedSentence, gapsText, standingText } from '../../src/view/feed-words';
+import { feedSentence, gapsText, refusedText, standingText } from '../../src/view/feed-words';
 
 const NOW_MS = Date.parse('2026-03-02T08:00:00Z');
 const heardAgo = (agoMs: number) => new Date(NOW_MS - agoMs).toISOString();
@@ -87,6 +87,24 @@ describe('the sentence', () => {
       well: 'No terminal is expected to be heard',
       ill: undefined,
     });
+  });
+
+  it('says plainly when nobody is heard', () => {
+    expect(sentence([terminal('e', never), terminal('g', never)])).toEqual({
+      well: 'No terminal is heard',
+      ill: 'All 2 are silent',
+    });
+  });
+
+  it('of refusals adds up every reason', () => {
+    const lastAt = heardAgo(0);
+    expect(refusedText([])).toBe('No message refused so far');
+    expect(
+      refusedText([
+        { reason: 'not JSON', count: 12, lastAt },
+        { reason: 'over 8 KB', count: 1_700, lastAt },
+      ]),
+    ).toBe('1,712 messages refused so far');
   });
 
   it('of gaps tells one from many', () => {

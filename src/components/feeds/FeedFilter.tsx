@@ -23,7 +23,7 @@ export function FeedFilter({ state, shown, known, onChange }: FeedFilterProps) {
       role="search"
       className="mb-2 flex flex-wrap items-end gap-x-3 gap-y-2"
     >
-      <div>
+      <div className="max-sm:w-full">
         <label htmlFor="feed-search" className="block text-caption text-ink-2">
           Line, terminal, substation or state
         </label>
@@ -34,7 +34,7 @@ export function FeedFilter({ state, shown, known, onChange }: FeedFilterProps) {
           autoComplete="off"
           value={state.search}
           onChange={(event) => onChange({ ...state, search: event.target.value })}
-          className="field mt-0.5 w-64 max-w-full"
+          className="field mt-0.5 w-64 max-w-full max-sm:w-full"
         />
       </div>
       <div>

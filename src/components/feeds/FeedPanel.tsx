@@ -2,7 +2,7 @@ import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { FeedHealth } from '../../contract/feed-health';
 import { feedCounts, feedListState, feedRows, type FeedListState } from '../../view/feed-rows';
-import { feedSentence } from '../../view/feed-words';
+import { feedSentence, refusedText } from '../../view/feed-words';
 import { durationText } from '../../view/figures';
 import { FeedFilter } from './FeedFilter';
 import { FeedTable } from './FeedTable';
@@ -37,7 +37,7 @@ function Panel({ initial, address, timeZone }: FeedPanelProps) {
     keepInAddress(next);
   };
   return (
-    <div className={oldMs === undefined ? undefined : 'text-ink-2'} data-old={oldMs !== undefined}>
+    <div className={`group ${oldMs === undefined ? '' : 'text-ink-2'}`} data-old={oldMs !== undefined}>
       <h1 className={`text-sentence font-medium text-balance ${oldMs === undefined ? '' : 'font-normal'}`}>
         {well}.{' '}
         {ill !== undefined && (
@@ -54,12 +54,17 @@ function Panel({ initial, address, timeZone }: FeedPanelProps) {
           Not refreshed for {durationText(oldMs)}: what stands here is old.
         </p>
       )}
+      <p className="mt-1 text-ink-2">
+        <a href="#refused" className="link">
+          {refusedText(health.refusals)}
+        </a>
+      </p>
       <div className="mt-5 grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_24rem]">
         <section aria-label="Terminals" className="min-w-0">
           <FeedFilter state={state} shown={rows.length} known={all.length} onChange={change} />
           <FeedTable rows={rows} timeZone={timeZone} nowMs={nowMs} />
         </section>
-        <section aria-labelledby="refusals-head">
+        <section id="refused" aria-labelledby="refusals-head">
           <h2 id="refusals-head" className="text-lead font-semibold">
             Refused, by reason
           </h2>

@@ -27,6 +27,9 @@ export function FeedTable({ rows, nowMs, timeZone }: FeedTableProps) {
             newest instant
           </th>
           <th scope="col" className="figure">
+            number
+          </th>
+          <th scope="col" className="figure">
             gaps
           </th>
         </tr>
@@ -40,6 +43,9 @@ export function FeedTable({ rows, nowMs, timeZone }: FeedTableProps) {
   );
 }
 
+/** What was read too long ago loses its ink. */
+const OLD = 'group-data-[old=true]:font-normal group-data-[old=true]:text-ink-2';
+
 const STACKED =
   'max-md:grid max-md:grid-cols-2 max-md:gap-x-3 max-md:border-b max-md:border-hairline max-md:py-2.5 max-md:[&>*]:border-0! max-md:[&>*]:p-0!';
 
@@ -48,26 +54,31 @@ function TerminalRow({ row, nowMs, timeZone }: { row: FeedRow; nowMs: number; ti
   return (
     <tr className={STACKED}>
       <th scope="row" className="max-md:col-span-2">
-        <a href={`/register/${row.line}`} className="text-ink hover:underline">
+        <a
+          href={`/register/${row.line}`}
+          className="font-medium text-ink group-data-[old=true]:text-ink-2 hover:underline"
+        >
           {row.lineName}
         </a>
       </th>
       <td>
         {row.substationName} <span className="text-caption text-ink-2">{row.terminal}</span>
       </td>
-      <td className={isIll ? 'font-semibold text-ink' : 'text-ink-2'}>
+      <td className={isIll ? `font-semibold text-ink ${OLD}` : 'text-ink-2'}>
         <span aria-hidden="true" className="mr-1.5 inline-block w-3 text-center">
           {STANDING_SHAPES[row.standing]}
         </span>
         {standingText(row)}
       </td>
-      <td className={`figure max-md:text-left! ${isIll ? 'font-semibold' : ''}`}>
+      <td className={`figure max-md:text-left! ${isIll ? `font-semibold ${OLD}` : ''}`}>
+        {row.silentMs !== undefined && <span className="font-normal text-ink-2 md:hidden">last heard </span>}
         {row.silentMs === undefined ? '—' : `${durationText(row.silentMs)} ago`}
       </td>
       <td className="figure text-ink-2 max-md:text-left!">
+        {row.lastAt !== null && <span className="md:hidden">newest </span>}
         {row.lastAt === null ? 'no measurement' : instantText(row.lastAt, nowMs, timeZone)}
-        {row.lastSeq !== null && <span className="block text-caption">number {row.lastSeq}</span>}
       </td>
+      <td className="figure text-ink-2 max-md:hidden">{row.lastSeq ?? '—'}</td>
       <td className="figure max-md:col-span-2 max-md:text-left!">
         <span className="md:hidden">gaps: </span>
         {gapsText(row)}

@@ -50,7 +50,7 @@ export function OperatingPlane(props: Props) {
   return (
     <ChartPanel
       title="Operating point"
-      caption={planeCaption(line, tailError)}
+      caption={inForce === undefined ? 'No threshold to draw' : planeCaption(line, tailError)}
       controls={
         inForce !== undefined && (
           <Choice
@@ -62,12 +62,12 @@ export function OperatingPlane(props: Props) {
           />
         )
       }
-      table={table.rows.length === 0 ? undefined : table}
+      table={table.rows.length === 0 || inForce === undefined ? undefined : table}
       fileName={csvName([line.key, 'operating points'], nowMs)}
       timeZone={site.timeZone}
     >
       {inForce === undefined ? (
-        <p className="py-10 text-ink-2">
+        <p className="py-6 text-ink-2">
           No settings are recorded for this line, so there is no threshold to stand against. Once a version is
           in the register, the plane is drawn here.
         </p>

@@ -86,7 +86,7 @@ export function StandingTrend(props: Props) {
       timeZone={site.timeZone}
     >
       {trend.error !== null || trend.waiting || empty ? (
-        <div className="h-64 py-10">
+        <div className={trend.waiting ? 'h-64 py-6' : 'py-6'}>
           {trend.error === null && !trend.waiting ? (
             <p className="text-ink-2">
               No differential could be told in this time

@@ -18,15 +18,21 @@ const BOX = { width: 340, height: 190, left: 6, bottom: 20 };
 export function CharacteristicSketch({ typed, formId }: CharacteristicSketchProps) {
   const [values, setValues] = useState(typed);
   useEffect(() => (formId === undefined ? undefined : followForm(formId, setValues)), [formId]);
-  const drawing = characteristicDrawing(settingsTyped(values), BOX);
+  const settings = settingsTyped(values);
+  const drawing = characteristicDrawing(settings, BOX);
   if (drawing === undefined)
     return (
       <p className="flex aspect-[34/19] w-full max-w-[22rem] items-center justify-center border border-dashed border-rule px-6 text-center text-ink-2">
-        No scheme can have these figures, so there is nothing to draw.
+        {isComplete(settings)
+          ? 'No scheme can have these figures, so there is nothing to draw.'
+          : 'Drawn once pickup, knee and both slopes are typed.'}
       </p>
     );
   return <Sketch drawing={drawing} />;
 }
+
+const isComplete = ({ pickupAmps, slope1, kneeAmps, slope2 }: ReturnType<typeof settingsTyped>): boolean =>
+  [pickupAmps, slope1, kneeAmps, slope2].every(Number.isFinite);
 
 function followForm(
   formId: string,

@@ -33,5 +33,5 @@ export const POST: APIRoute = async (context) => {
     subject: `warning ${id} of ${warning.line}`,
     detail: { note },
   });
-  return jsonAnswer({ warning });
+  return jsonAnswer(warning);
 };

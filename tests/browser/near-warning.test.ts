@@ -1,0 +1,84 @@
+import type { Browser, Page } from 'playwright-core';
+import { afterAll, beforeAll, expect, it } from 'vitest';
+import { type Broker, startBroker } from '../../simulator/broker';
+import {
+  ACCOUNTS,
+  connectTerminals,
+  insertMadeUpLine,
+  instantsBefore,
+  publishInstants,
+} from '../faults/site-under-test';
+import { emailOf, nameOf, PASSWORD, type RunningSite, startSite } from '../running-site';
+import { startChromium } from './chromium';
+
+const FOLLOWS_WITHIN_MS = 1_000;
+const PATIENCE_MS = 20_000;
+
+let broker: Broker;
+let site: RunningSite;
+let browser: Browser;
+
+beforeAll(async () => {
+  broker = await startBroker({ port: 0, accounts: ACCOUNTS });
+  site = await startSite(broker.url, [
+    { username: 'ingest', password: 'ingest-secret' },
+    { username: 'web', password: 'web-secret' },
+  ]);
+  await insertMadeUpLine(site.store);
+  browser = await startChromium();
+});
+afterAll(async () => {
+  await browser.close();
+  await site.close();
+  await broker.close();
+});
+
+/** Signs in through the page, as a person does. */
+async function boardOf(role: 'operator' | 'engineer'): Promise<Page> {
+  const context = await browser.newContext({ viewport: { width: 1440, height: 900 } });
+  const page = await context.newPage();
+  page.setDefaultTimeout(PATIENCE_MS);
+  await page.goto(site.address);
+  await page.getByLabel(/e-mail/i).fill(emailOf(role));
+  await page.getByLabel(/password/i).fill(PASSWORD);
+  await page.getByRole('button', { name: /sign in/i }).click();
+  await page.getByRole('heading', { level: 1 }).waitFor();
+  return page;
+}
+
+it(
+  'an operator sees a line turn near, acknowledges it, and a second browser follows',
+  { timeout: 180_000 },
+  async () => {
+    const terminals = await connectTerminals(broker.url);
+    const operator = await boardOf('operator');
+    const engineer = await boardOf('engineer');
+    const settled = instantsBefore(Date.now() - 90_000, 10);
+    await publishInstants(terminals, settled, { differentialAmps: 20 });
+    // 400 A in and 310 A out: 90 A stand against the threshold of 106.5 A, 85 %, for longer than the minute it takes
+    const feeding = setInterval(
+      () => void publishInstants(terminals, instantsBefore(Date.now(), 40), { differentialAmps: 90 }),
+      2_000,
+    );
+    try {
+      await operator.getByText('Phase A at 85 % of its threshold').first().waitFor();
+      await operator
+        .getByRole('button', { name: /acknowledge/i })
+        .first()
+        .click();
+      await operator.getByRole('textbox', { name: /note/i }).fill('Called the line crew.');
+      const followed = engineer
+        .getByText(new RegExp(`acknowledged by ${nameOf('operator')}`, 'i'))
+        .first()
+        .waitFor();
+      const begunMs = performance.now();
+      await operator.getByRole('button', { name: /with this note/i }).click();
+      await followed;
+      expect(performance.now() - begunMs).toBeLessThan(FOLLOWS_WITHIN_MS);
+      await engineer.getByText('Called the line crew.').first().waitFor();
+    } finally {
+      clearInterval(feeding);
+      await terminals.close();
+    }
+  },
+);
