@@ -1,5 +1,4 @@
 import type { Store } from '../store/client';
-import type { StaleHour } from '../store/levels';
 import type { WarningLimits } from '../warnings/limits';
 import { type Batch, commitBatch, joinStored, type LineChange } from './commit';
 import { computedSnapshot, type ComputedSnapshot } from './computed-snapshot';
@@ -7,8 +6,8 @@ import type { Receipt } from './deferred-acknowledgement';
 import type { FeedIntake, Intake } from './intake';
 import { type LineWatch, type WarningChange, watchSnapshot, watchTime } from './line-watch';
 import { untilDone, type Retrying } from './retry';
-import { rungStart } from './rung';
 import { snapshotRow } from './snapshot-row';
+import { staleHours } from './stale-hours';
 import type { WatchRoom } from './watch-room';
 
 export interface StoringParts {
@@ -94,15 +93,4 @@ const NOTHING: Intake = {
 /** One missing message must not blank a line that is seen again two seconds later. */
 function isWorthShowing({ newest, standing }: LineWatch, shownBefore: ComputedSnapshot | undefined): boolean {
   return newest?.unevaluable?.by !== 'feed' || shownBefore?.points === undefined || standing.has('blind');
-}
-
-/** Hours that were closed when these snapshots came: their rows have to be built again. */
-function staleHours(snapshots: readonly ComputedSnapshot[], nowMs: number): StaleHour[] {
-  const current = rungStart('hour', nowMs);
-  const hours = new Map<string, StaleHour>();
-  for (const { line, atMs } of snapshots) {
-    const startMs = rungStart('hour', atMs);
-    if (startMs < current) hours.set(`${line.id} ${startMs}`, { lineId: line.id, start: new Date(startMs) });
-  }
-  return [...hours.values()];
 }

@@ -21,12 +21,18 @@ export interface PhasorSum {
 
 /**
  * The head-to-tail sum of one phase, turned so that the greatest current points right: turning every phasor
- * alike changes no magnitude and keeps the drawing still. `undefined` unless every terminal sent its currents.
+ * alike changes no magnitude and keeps the drawing still. `undefined` unless every
+ * terminal in service sent its currents.
  */
-export function phasorSum(terminals: readonly TerminalResult[], phase: PhaseName): PhasorSum | undefined {
+export function phasorSum(
+  terminals: readonly TerminalResult[],
+  { phase, inService }: { phase: PhaseName; inService: readonly string[] },
+): PhasorSum | undefined {
   const currents: { terminal: string; phasor: Phasor; angleDeg: number }[] = [];
-  for (const { key, present, current } of terminals) {
-    if (!present || current === null) return undefined;
+  for (const key of inService) {
+    const terminal = terminals.find((each) => each.key === key);
+    if (terminal === undefined || !terminal.present || terminal.current === null) return undefined;
+    const { current } = terminal;
     const [amps, angleDeg] = current[phase];
     currents.push({ terminal: key, phasor: phasorFromPolar(amps, (angleDeg * Math.PI) / 180), angleDeg });
   }
@@ -64,8 +70,11 @@ export function phasorFit(
   return {
     pixelsPerAmp,
     place: ({ re, im }) => ({
-      x: width / 2 + (re - (left + right) / 2) * pixelsPerAmp,
-      y: height / 2 - (im - (low + high) / 2) * pixelsPerAmp,
+      x: hundredths(width / 2 + (re - (left + right) / 2) * pixelsPerAmp),
+      y: hundredths(height / 2 - (im - (low + high) / 2) * pixelsPerAmp),
     }),
   };
 }
+
+// Server and browser disagree in a sine's last digit, and would draw the same page differently.
+const hundredths = (pixels: number): number => Math.round(pixels * 100) / 100;

@@ -30,11 +30,15 @@ export interface PhasorRow {
 }
 
 interface TerminalContext {
+  readonly goesBy: LineSummary['goesBy'];
   readonly letters: PhaseLetters;
   readonly substations: LineSummary['substations'];
   /** since when each silent terminal has been so, by key, in words */
   readonly silentSince: ReadonlyMap<string, string>;
 }
+
+/** On a line by reported magnitudes one terminal speaks for all: the others' silence is no trouble. */
+type TroubleContext = TerminalContext & { readonly unexpected: boolean };
 
 /** The terminals of the register in their order, each with what it said at the newest instant. */
 export function terminalPanels(
@@ -43,15 +47,16 @@ export function terminalPanels(
   context: TerminalContext,
 ): TerminalPanel[] {
   const byKey = new Map(results.map((result) => [result.key, result]));
+  const unexpected = context.goesBy === 'reported' && results.some((result) => result.present);
   return [...terminals]
     .sort((one, other) => one.position - other.position)
-    .map((terminal) => terminalPanel(terminal, byKey.get(terminal.key), context));
+    .map((terminal) => terminalPanel(terminal, byKey.get(terminal.key), { ...context, unexpected }));
 }
 
 function terminalPanel(
   terminal: Terminal,
   result: TerminalResult | undefined,
-  context: TerminalContext,
+  context: TroubleContext,
 ): TerminalPanel {
   return {
     key: terminal.key,
@@ -67,11 +72,12 @@ function terminalPanel(
 function trouble(
   terminal: Terminal,
   result: TerminalResult | undefined,
-  { silentSince }: TerminalContext,
+  { silentSince, unexpected }: TroubleContext,
 ): string | undefined {
   if (!terminal.inService) return 'Out of service in the register.';
+  if (result?.present === true) return undefined;
+  if (unexpected) return 'Nothing is expected of it: this line goes by what another terminal reports.';
   if (result === undefined) return 'Nothing has been heard of it yet.';
-  if (result.present) return undefined;
   const since = silentSince.get(terminal.key);
   return since === undefined ? 'Silent at the newest instant.' : `Silent since ${since}.`;
 }

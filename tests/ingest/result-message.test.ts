@@ -39,7 +39,12 @@ describe('a published result', () => {
     ]);
   });
 
-  it.each([
+  const cases: [
+    string,
+    Readonly<Record<string, Measurement>> | undefined,
+    Partial<RegisteredLine>,
+    string | null,
+  ][] = [
     ['of a complete snapshot', loaded, {}, null],
     [
       'of one that lacks a terminal',
@@ -73,7 +78,9 @@ describe('a published result', () => {
       'The register says that this line is out of service.',
     ],
     ['before anything was heard', undefined, {}, 'Nothing has been heard of this line yet.'],
-  ] as const)('%s gives its reason and is of the contract’s form', (_, sent, change, reason) => {
+  ];
+
+  it.each(cases)('%s gives its reason and is of the contract’s form', (_, sent, change, reason) => {
     const result = published(sent, change);
     expect(result.reason).toBe(reason);
     expect(resultSchema.parse(JSON.parse(JSON.stringify(result)))).toEqual(result);

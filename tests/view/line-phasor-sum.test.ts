@@ -15,26 +15,26 @@ const terminal = (key: string, amps: number, degrees: number): TerminalResult =>
   validity: 'good',
   test: false,
 });
+/** Phase a of terminals that are all in service. */
+const sumOf = (terminals: TerminalResult[]) =>
+  phasorSum(terminals, { phase: 'a', inService: terminals.map(({ key }) => key) });
 const BOX = { width: 300, height: 132, margin: 16 };
 
 describe('currents head to tail', () => {
   it('what is left over is the differential current', () => {
-    const sum = phasorSum([terminal('one', 5, -80), terminal('two', 3, -80)], 'a');
+    const sum = sumOf([terminal('one', 5, -80), terminal('two', 3, -80)]);
     expect(sum?.differentialAmps).toBeCloseTo(8, 9);
   });
 
   it('the greatest current points right, whatever the time reference', () => {
-    const sum = phasorSum([terminal('one', 100, 33), terminal('two', 98, -147)], 'a');
+    const sum = sumOf([terminal('one', 100, 33), terminal('two', 98, -147)]);
     expect(sum?.steps[0]?.to.re).toBeCloseTo(100, 9);
     expect(sum?.steps[0]?.to.im).toBeCloseTo(0, 9);
     expect(sum?.differentialAmps).toBeCloseTo(2, 9);
   });
 
   it('each arrow begins where the one before it ends', () => {
-    const sum = phasorSum(
-      [terminal('one', 100, 0), terminal('two', 60, 170), terminal('three', 39, 190)],
-      'a',
-    )!;
+    const sum = sumOf([terminal('one', 100, 0), terminal('two', 60, 170), terminal('three', 39, 190)])!;
     expect(sum.steps[1]?.from).toEqual(sum.steps[0]?.to);
     expect(sum.steps[2]?.from).toEqual(sum.steps[1]?.to);
     expect(sum.steps[2]?.to).toEqual(sum.differential);
@@ -42,13 +42,23 @@ describe('currents head to tail', () => {
 
   it('one terminal without currents leaves nothing to add up', () => {
     const silent = { ...terminal('two', 0, 0), present: false, current: null };
-    expect(phasorSum([terminal('one', 100, 0), silent], 'a')).toBeUndefined();
-    expect(phasorSum([], 'a')).toBeUndefined();
+    expect(sumOf([terminal('one', 100, 0), silent])).toBeUndefined();
+    expect(sumOf([])).toBeUndefined();
+  });
+});
+
+describe('terminals out of service', () => {
+  it('are left out of the sum', () => {
+    const sum = phasorSum([terminal('one', 100, 0), terminal('two', 98, 180), terminal('old', 5, 0)], {
+      phase: 'a',
+      inService: ['one', 'two'],
+    });
+    expect(sum?.differentialAmps).toBeCloseTo(2, 9);
   });
 });
 
 describe('the drawing of the sum', () => {
-  const sum = phasorSum([terminal('one', 500, 0), terminal('two', 490, 178)], 'a')!;
+  const sum = sumOf([terminal('one', 500, 0), terminal('two', 490, 178)])!;
 
   it('the whole polygon lies inside its box', () => {
     const { arrows } = wholePicture(sum, BOX);
@@ -67,12 +77,12 @@ describe('the drawing of the sum', () => {
   });
 
   it('a gap that the whole polygon shows is not drawn twice', () => {
-    const wide = phasorSum([terminal('one', 500, 0), terminal('two', 500, 90)], 'a')!;
+    const wide = sumOf([terminal('one', 500, 0), terminal('two', 500, 90)])!;
     expect(closingPicture(wide, BOX)).toBeUndefined();
   });
 
   it('currents that cancel exactly leave nothing to magnify', () => {
-    const balanced = phasorSum([terminal('one', 0, 0), terminal('two', 0, 0)], 'a')!;
+    const balanced = sumOf([terminal('one', 0, 0), terminal('two', 0, 0)])!;
     expect(closingPicture(balanced, BOX)).toBeUndefined();
     expect(wholePicture(balanced, BOX).differential).toBeUndefined();
   });

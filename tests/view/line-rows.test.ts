@@ -139,7 +139,12 @@ describe('the terminals', () => {
     test: false,
     ...change,
   });
-  const context = { letters: SITE.phaseLetters, substations: lineWith().substations, silentSince: new Map() };
+  const context = {
+    goesBy: 'phasors' as const,
+    letters: SITE.phaseLetters,
+    substations: lineWith().substations,
+    silentSince: new Map(),
+  };
 
   it('come in the order of the register, each with what it says', () => {
     const panels = terminalPanels([terminal('hask', 1), terminal('skelder', 0)], [result('hask')], context);
@@ -176,6 +181,16 @@ describe('the terminals', () => {
     expect(panel?.trouble).toBe('Silent since 14:28:48, for 3\u00a0min 20\u00a0s.');
     expect(panel?.phasors[0]).toMatchObject({ current: '–', currentAngle: '–', voltage: '–' });
     expect(panel?.facts).toEqual([]);
+  });
+
+  it('on a line by reported magnitudes one terminal speaks and the silence of the other is no trouble', () => {
+    const reported = { ...context, goesBy: 'reported' as const };
+    const spoken = result('skelder', { current: null });
+    const panels = terminalPanels([terminal('skelder', 0), terminal('hask', 1)], [spoken], reported);
+    expect(panels.map(({ trouble }) => trouble)).toEqual([
+      undefined,
+      'Nothing is expected of it: this line goes by what another terminal reports.',
+    ]);
   });
 
   it('what is not as it should be is marked', () => {

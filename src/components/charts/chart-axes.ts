@@ -8,12 +8,15 @@ export const chartBase = (ink: ChartInk) => ({
   textStyle: { ...CHART_TYPE, color: ink.ink2 },
 });
 
+/** As figures are written on the rest of the page: thousands ungrouped, no rounding dust. */
+const plainFigure = (value: number): string => String(Number(value.toPrecision(6)));
+
 export const axisBase = (ink: ChartInk) => ({
   type: 'value' as const,
   min: 0,
   axisLine: { show: false },
   axisTick: { show: false },
-  axisLabel: { ...CHART_TYPE, color: ink.ink2 },
+  axisLabel: { ...CHART_TYPE, color: ink.ink2, formatter: plainFigure },
   splitLine: { show: true, lineStyle: { color: ink.hairline, width: 1 } },
   nameTextStyle: { ...CHART_TYPE, color: ink.ink2 },
 });

@@ -16,6 +16,8 @@ import { PhasorDrawing, StrokeSample } from './PhasorDrawing';
 
 interface Props {
   readonly line: LineSummary;
+  /** the terminals in service, whose currents add up */
+  readonly inService: readonly string[];
   readonly result: Result | undefined;
   readonly site: SiteCustom;
   readonly unit: CurrentUnit;
@@ -60,8 +62,10 @@ function NoPhasors() {
   );
 }
 
-function Sum({ line, result, site, unit, faded, phase }: Props & { phase: PhaseName }) {
-  const sum = result === undefined ? undefined : phasorSum(result.terminals, phase);
+function Sum({ line, inService, result, site, unit, faded, phase }: Props & { phase: PhaseName }) {
+  // Where no differential is computed, by a transformer in the zone or a broken clock, the plain sum is none either.
+  const told = line.phases[phase].differentialAmps !== null;
+  const sum = result === undefined || !told ? undefined : phasorSum(result.terminals, { phase, inService });
   if (sum === undefined)
     return (
       <p className="mt-3 text-ink-2">

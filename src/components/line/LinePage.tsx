@@ -61,6 +61,7 @@ function LineView({ detail: initial, site, mayAcknowledge, address }: LinePagePr
   const recent = useRecentReadings(line.key, live, { nowMs, windowMs: TAIL_MS, enabled: true });
   const minuteMs = Math.floor(nowMs / 60_000) * 60_000;
   const inForce = useMemo(() => versionInForce(detail.settings, minuteMs), [detail.settings, minuteMs]);
+  const inService = detail.terminals.filter((terminal) => terminal.inService).map(({ key }) => key);
   const shared = { line, site, nowMs, faded };
   return (
     <div className="grid gap-4">
@@ -87,7 +88,13 @@ function LineView({ detail: initial, site, mayAcknowledge, address }: LinePagePr
             unit={unit}
             convention={inForce === undefined ? undefined : restraintConvention(inForce.restraint)}
           />
-          <CurrentSumPanel {...shared} result={result} unit={unit} initialPhase={worst} />
+          <CurrentSumPanel
+            {...shared}
+            inService={inService}
+            result={result}
+            unit={unit}
+            initialPhase={worst}
+          />
         </div>
       </div>
       <StandingTrend

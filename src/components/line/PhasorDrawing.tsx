@@ -54,7 +54,7 @@ function Arrow({ from, to, className, width, dash }: ArrowProps) {
       />
       <path
         d="M0 0 -8.5 3.4 -8.5 -3.4Z"
-        transform={`translate(${to.x} ${to.y}) rotate(${angleDeg})`}
+        transform={`translate(${to.x} ${to.y}) rotate(${angleDeg.toFixed(1)})`}
         fill="currentColor"
       />
     </g>

@@ -19,6 +19,7 @@ interface Props {
 /** What each terminal says at the newest instant: phasors, validity, breaker, clock and channel. */
 export function TerminalsPanel({ line, terminals, result, site, nowMs, faded }: Props) {
   const panels = terminalPanels(terminals, result?.terminals ?? [], {
+    goesBy: line.goesBy,
     letters: site.phaseLetters,
     substations: line.substations,
     silentSince: silences(line.warnings, { nowMs, timeZone: site.timeZone }),
