@@ -62,7 +62,7 @@ async function listening(child: ChildProcess, port: number, logFile: string): Pr
   const answers = await until(
     async () => failure !== undefined || (await accepts(port)),
     START_MS,
-    'A broker that listens',
+    'a broker that listens',
   );
   if (failure === undefined && answers) return;
   const log = await readFile(logFile, 'utf8').catch(() => '');

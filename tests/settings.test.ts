@@ -80,9 +80,8 @@ describe('the worker’s settings', () => {
     ['WORKER_COUNT', '0', 'is at least 1'],
     ['WORKER_INDEX', '-1', 'is at least 0'],
     ['WORKER_INDEX', '1', 'is below WORKER_COUNT (workers count from 0)'],
-    ['MQTT_VERSION', '3', 'Invalid option: expected one of "4"|"5"'],
   ])('that are wrong are named with what they are to be: %s=%s', (name, value, words) => {
-    expect(faultsOf(() => ingestSettings({ ...ingest, [name]: value }))).toEqual([`${name} ${words}`]);
+    expect(faultsOf(() => ingestSettings({ ...ingest, [name]: value }))[0]).toBe(`${name} ${words}`);
   });
 
   it('that are wrong are named together', () => {
@@ -116,7 +115,6 @@ describe('the web process’s settings', () => {
     ['PORT', '65536', 'is at most 65535'],
     ['PUBLIC_URL', 'tareline.example', 'is an address that begins with http:// or https://'],
     ['PUBLIC_URL', 'ftp://tareline.example', 'is an address that begins with http:// or https://'],
-    ['TRUST_PROXY', 'true', 'Invalid option: expected one of "yes"|"no"'],
     ['NOMINAL_FREQUENCY_HZ', '55', 'is 50 or 60'],
     ['SITE_TIME_ZONE', 'Mars/Olympus', 'is a time zone such as Europe/Berlin'],
     ['PHASE_LETTERS', 'A,B', 'is three letters parted by commas, such as A,B,C or L1,L2,L3'],
@@ -131,6 +129,17 @@ describe('the web process’s settings', () => {
     ['NOMINAL_FREQUENCY_HZ', '60'],
   ])('may be the site’s own: %s=%s', (name, value) => {
     expect(String(webSettings({ ...web, [name]: value })[name as keyof typeof web])).toBe(value);
+  });
+});
+
+describe('a setting that is one of a few words', () => {
+  it.each([
+    ['MQTT_VERSION', '3', ingestSettings, ['"4"', '"5"']],
+    ['TRUST_PROXY', 'true', webSettings, ['"yes"', '"no"']],
+  ] as const)('is named with all of them: %s=%s', (name, value, read, words) => {
+    const [fault, ...others] = faultsOf(() => read({ ...web, [name]: value }));
+    expect(others).toEqual([]);
+    for (const word of [name, ...words]) expect(fault).toContain(word);
   });
 });
 

@@ -7,8 +7,8 @@ export const feedTerminalSchema = z.object({
   lineName: z.string(),
   terminal: keySchema,
   substationName: z.string(),
-  /** false when the terminal or its line is out of service: its silence is expected */
-  inService: z.boolean(),
+  /** false when nothing is to come from it: it or its line is out of service, or the line goes by another terminal's report */
+  expected: z.boolean(),
   presence: presenceSchema.nullable(),
   /** instant of the newest measurement */
   lastAt: z.iso.datetime().nullable(),

@@ -73,6 +73,16 @@ export interface Alignment<Receipt> {
   pendingCount(): number;
 }
 
+function begun<Receipt>(
+  { line, atMs, nowMs }: Arrival<Receipt>,
+  { memory, known }: { memory: LineMemory; known: ReadonlyMap<string, Measurement> | undefined },
+): Pending<Receipt> {
+  // also of an instant that was closed before: its row may hold what an earlier run has heard of it
+  const mayBeStored = atMs <= memory.newestAtMs;
+  memory.newestAtMs = Math.max(memory.newestAtMs, atMs);
+  return { line, atMs, measurements: new Map(known), receipts: [], mayBeStored, firstAtMs: nowMs };
+}
+
 /** Brings the terminals of a line together by snapshot instant. Holds no clock: time comes with every call. */
 export function createAlignment<Receipt>(limits: {
   latenessMs: number;
@@ -98,22 +108,6 @@ export function createAlignment<Receipt>(limits: {
     return entry;
   };
 
-  const begin = (arrival: Arrival<Receipt>, known: Closed | undefined): Pending<Receipt> => {
-    const memory = memoryOf(arrival.line.key);
-    // also of an instant that was closed before: its row may hold what an earlier run has heard of it
-    const mayBeStored = arrival.atMs <= memory.newestAtMs;
-    memory.newestAtMs = Math.max(memory.newestAtMs, arrival.atMs);
-    const measurements = new Map(known === 'complete' ? undefined : known);
-    return {
-      line: arrival.line,
-      atMs: arrival.atMs,
-      measurements,
-      receipts: [],
-      mayBeStored,
-      firstAtMs: arrival.nowMs,
-    };
-  };
-
   return {
     take(arrival) {
       const { line, terminal, atMs, measurement, receipt } = arrival;
@@ -121,7 +115,8 @@ export function createAlignment<Receipt>(limits: {
       const known = memoryOf(line.key).closed.get(atMs);
       if (known === 'complete' || known?.has(terminal) === true) return 'duplicate';
       let entry = pending.get(key);
-      if (entry === undefined) pending.set(key, (entry = begin(arrival, known)));
+      if (entry === undefined)
+        pending.set(key, (entry = begun(arrival, { memory: memoryOf(line.key), known })));
       if (receipt !== undefined) entry.receipts.push(receipt);
       // the first word of a terminal stands: a repetition changes nothing
       if (!entry.measurements.has(terminal)) entry.measurements.set(terminal, measurement);
@@ -130,7 +125,10 @@ export function createAlignment<Receipt>(limits: {
     due(nowMs) {
       const ready: Gathered<Receipt>[] = [];
       for (const [key, entry] of pending) {
-        if (nowMs - entry.firstAtMs < limits.latenessMs && pending.size <= limits.pendingMost) break;
+        const waitedMs = nowMs - entry.firstAtMs;
+        // a clock that was set back must not keep an instant waiting: below zero it is due as well
+        const waits = waitedMs >= 0 && waitedMs < limits.latenessMs;
+        if (waits && pending.size <= limits.pendingMost) break;
         ready.push(close(key, entry));
       }
       return ready;

@@ -10,11 +10,13 @@ export interface RefusalBatch {
 }
 
 /** Gathers refusals between two commits; a flood is counted in full and kept in part. */
-export function createRefusalTally(keptMost: number): {
+export interface RefusalTally {
   add(message: { topic: string; payload: Buffer }, refusal: Refusal, at: Date): void;
   drain(): RefusalBatch;
   isEmpty(): boolean;
-} {
+}
+
+export function createRefusalTally(keptMost: number): RefusalTally {
   let kept: RefusedMessage[] = [];
   let counts = new Map<RefusalReason, number>();
   return {

@@ -1,6 +1,7 @@
 import type { Scheme } from '../protection/evaluation';
 import type { RegisteredLine } from '../store/register';
-import { expectedTerminals, obstacle } from '../warnings/obstacle';
+import { expectedTerminals } from '../contract/expected-terminals';
+import { obstacle } from '../warnings/obstacle';
 import { ownerOf } from './ownership';
 
 export interface RosterTerminal {

@@ -44,17 +44,11 @@ export function createLiveHub(now: () => number): LiveHub {
   let change = 0;
   let ticked = 0;
 
-  const frame = (since: number, lines: ReadonlySet<string> | undefined): string | undefined => {
-    const fresh = <T>(held: Iterable<Versioned<T>>, lineOf: (value: T) => string) =>
-      [...held].flatMap((entry) =>
-        entry.change > since && (lines === undefined || lines.has(lineOf(entry.value))) ? [entry.json] : [],
-      );
-    const freshResults = fresh(results.values(), (result) => result.line);
-    const freshWarnings = fresh(warnings.values(), (warning) => warning.line);
-    if (freshResults.length === 0 && freshWarnings.length === 0) return undefined;
-    const at = new Date(now()).toISOString();
-    return `{"kind":"tick","at":"${at}","results":[${freshResults.join()}],"warnings":[${freshWarnings.join()}]}`;
-  };
+  const frameSince = (since: number, lines: Listener['lines']) =>
+    tickFrame(
+      { results: results.values(), warnings: warnings.values() },
+      { since, lines, at: new Date(now()) },
+    );
 
   const tick = () => {
     if (listeners.size === 0 || (change === ticked && isAllSent(listeners, change))) return;
@@ -63,8 +57,8 @@ export function createLiveHub(now: () => number): LiveHub {
     for (const [listener, sent] of listeners) {
       if (sent === change || listener.waitingBytes() > LIVE_LIMITS.waitingBytes) continue;
       const isShared = sent === ticked && listener.lines === undefined;
-      if (isShared && shared === null) shared = frame(ticked, undefined);
-      const text = isShared ? shared : frame(sent, listener.lines);
+      if (isShared && shared === null) shared = frameSince(ticked, undefined);
+      const text = isShared ? shared : frameSince(sent, listener.lines);
       if (text !== undefined && text !== null) listener.send(text);
       listeners.set(listener, change);
     }
@@ -102,6 +96,21 @@ export function createLiveHub(now: () => number): LiveHub {
     listenerCount: () => listeners.size,
     close: () => timers.forEach((timer) => clearInterval(timer)),
   };
+}
+
+/** What has changed since a change, of the lines asked for, as one frame; undefined when nothing has. */
+function tickFrame(
+  held: { results: Iterable<Versioned<Result>>; warnings: Iterable<Versioned<Warning>> },
+  { since, lines, at }: { since: number; lines: Listener['lines']; at: Date },
+): string | undefined {
+  const fresh = <T>(entries: Iterable<Versioned<T>>, lineOf: (value: T) => string) =>
+    [...entries].flatMap(({ change, value, json }) =>
+      change > since && (lines === undefined || lines.has(lineOf(value))) ? [json] : [],
+    );
+  const results = fresh(held.results, (result) => result.line);
+  const warnings = fresh(held.warnings, (warning) => warning.line);
+  if (results.length === 0 && warnings.length === 0) return undefined;
+  return `{"kind":"tick","at":"${at.toISOString()}","results":[${results.join()}],"warnings":[${warnings.join()}]}`;
 }
 
 function isAllSent(listeners: ReadonlyMap<Listener, number>, change: number): boolean {

@@ -1,7 +1,9 @@
 import { and, asc, desc, eq, lt, sql, type SQL } from 'drizzle-orm';
 import { FEED_LIMITS, type RefusalReason } from '../contract/feed';
 import type { FeedHealth, FeedTerminal, KeptRefusal } from '../contract/feed-health';
+import { expectedTerminals } from '../contract/expected-terminals';
 import type { Store } from './client';
+import { groupedBy } from './grouped';
 import { refusalCount, refusedMessage, terminalState } from './schema/feed';
 import { line, substation, terminal } from './schema/register';
 
@@ -9,6 +11,13 @@ import { line, substation, terminal } from './schema/register';
 export async function readFeedHealth(store: Store, nowMs: number): Promise<FeedHealth> {
   const [terminals, refusals] = await Promise.all([readFeedTerminals(store), readRefusalCounts(store)]);
   return { at: new Date(nowMs).toISOString(), terminals, refusals };
+}
+
+interface FeedTerminalRow {
+  readonly line: typeof line.$inferSelect;
+  readonly terminal: typeof terminal.$inferSelect;
+  readonly substationName: string;
+  readonly state: typeof terminalState.$inferSelect | null;
 }
 
 async function readFeedTerminals(store: Store): Promise<FeedTerminal[]> {
@@ -19,19 +28,33 @@ async function readFeedTerminals(store: Store): Promise<FeedTerminal[]> {
     .innerJoin(substation, eq(terminal.substation, substation.key))
     .leftJoin(terminalState, eq(terminalState.terminalId, terminal.id))
     .orderBy(asc(line.name), asc(terminal.position));
-  return rows.map(({ line, terminal, substationName, state }) => ({
+  const terminalsOf = groupedBy(rows, (row) => row.line.id);
+  const isExpected = (row: (typeof rows)[number]) =>
+    row.line.inService &&
+    expectedTerminals({
+      goesBy: row.line.goesBy,
+      terminals: terminalsOf.get(row.line.id)!.map(({ terminal: one }) => one),
+    }).includes(row.terminal.key);
+  return rows.map((row) => feedTerminal(row, isExpected(row)));
+}
+
+function feedTerminal(
+  { line, terminal, substationName, state }: FeedTerminalRow,
+  expected: boolean,
+): FeedTerminal {
+  return {
     line: line.key,
     lineName: line.name,
     terminal: terminal.key,
     substationName,
-    inService: line.inService && terminal.inService,
+    expected,
     presence: state?.presence ?? null,
     lastAt: state?.lastAt?.toISOString() ?? null,
     heardAt: state?.heardAt?.toISOString() ?? null,
     lastSeq: state?.lastSeq ?? null,
     gapCount: state?.gapCount ?? 0,
     missedCount: state?.missedCount ?? 0,
-  }));
+  };
 }
 
 async function readRefusalCounts(store: Store): Promise<FeedHealth['refusals']> {

@@ -62,11 +62,11 @@ function feedRow(terminal: FeedTerminal, nowMs: number): FeedRow {
 }
 
 function standing(
-  { inService, presence }: FeedTerminal,
+  { expected, presence }: FeedTerminal,
   { heardMs, nowMs }: { heardMs: number | undefined; nowMs: number },
 ): FeedStanding {
   if (!isStale(heardMs, nowMs)) return 'heard';
-  if (!inService) return 'resting';
+  if (!expected) return 'resting';
   if (heardMs === undefined) return 'never heard';
   return presence === 'offline' ? 'offline' : 'silent';
 }

@@ -23,7 +23,7 @@ export function standingText({ standing, presence }: FeedRow): string {
     case 'heard':
       return presence === 'offline' ? 'heard, said it goes offline' : presence === null ? 'heard' : 'online';
     case 'resting':
-      return 'out of service, silent';
+      return 'not expected';
   }
 }
 

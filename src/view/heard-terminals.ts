@@ -1,7 +1,7 @@
 import type { Result } from '../contract/result';
 import { isStale } from './staleness';
 
-/** How many terminals the newest results speak of, and how many of them were in a snapshot that is not stale; lines out of service left out. */
+/** How many terminals the newest results speak of, and how many of them were in a snapshot that is not stale. */
 export interface HeardTerminals {
   readonly heardCount: number;
   readonly knownCount: number;
@@ -14,7 +14,6 @@ export function heardTerminals(results: Iterable<Result>, nowMs: number): HeardT
   let knownCount = 0;
   let newestAtMs: number | undefined;
   for (const result of results) {
-    if (result.condition === 'out of service') continue;
     knownCount += result.terminals.length;
     if (result.at === null) continue;
     const atMs = Date.parse(result.at);

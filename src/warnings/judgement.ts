@@ -78,7 +78,8 @@ export function judgeUnseen(
   { nowMs, sinceMs }: { nowMs: number; sinceMs: number },
   limits: WarningLimits,
 ): Judgement {
-  const unseenMs = nowMs - Math.max(judgement.evaluatedAtMs ?? 0, sinceMs);
+  // either way: after a clock was set back, what was last seen lies ahead of now, and what comes is refused
+  const unseenMs = Math.abs(nowMs - Math.max(judgement.evaluatedAtMs ?? 0, sinceMs));
   if (unseenMs < limits.blindAfterMs) return judgement;
   return {
     ...judgement,

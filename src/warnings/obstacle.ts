@@ -1,11 +1,5 @@
+import { expectedTerminals } from '../contract/expected-terminals';
 import type { RegisterLine } from '../contract/register';
-
-/** Terminals whose measurements make a snapshot of the line complete. */
-export function expectedTerminals(line: Pick<RegisterLine, 'goesBy' | 'terminals'>): readonly string[] {
-  const inService = line.terminals.filter((terminal) => terminal.inService).map(({ key }) => key);
-  // the historian of a line that goes by reported magnitudes holds what its first terminal computed
-  return line.goesBy === 'reported' ? inService.slice(0, 1) : inService;
-}
 
 /** Why a line can't be evaluated whatever its terminals send; undefined when it can. */
 export function obstacle(

@@ -55,7 +55,7 @@ describe('the health of the feed', () => {
         expect.objectContaining({
           terminal: 'arden',
           substationName: 'Arden',
-          inService: true,
+          expected: true,
           presence: 'online',
           heardAt: '2026-03-02T07:59:58.500Z',
           lastSeq: 42,

@@ -10,7 +10,7 @@ const terminal = (name: string, change: Partial<FeedTerminal> = {}): FeedTermina
   lineName: `Line ${name}`,
   terminal: name,
   substationName: `Substation ${name}`,
-  inService: true,
+  expected: true,
   presence: 'online',
   lastAt: heardAgo(2_000),
   heardAt: heardAgo(1_000),
@@ -26,7 +26,7 @@ const names = (rows: readonly FeedTerminal[]) => rows.map(({ terminal }) => term
 const mixed = [
   terminal('a'),
   terminal('b', { heardAt: heardAgo(60_000) }),
-  terminal('c', { ...never, inService: false }),
+  terminal('c', { ...never, expected: false }),
   terminal('d', { heardAt: heardAgo(3_600_000), presence: 'offline' }),
   terminal('e', never),
   terminal('f', { heardAt: heardAgo(400), gapCount: 2, missedCount: 30 }),
@@ -83,7 +83,7 @@ describe('the sentence', () => {
   it('counts only terminals that are expected to be heard', () => {
     expect(sentence(mixed)).toEqual({ well: '2 of 5 terminals are heard', ill: '3 are silent' });
     expect(sentence([terminal('a')])).toEqual({ well: 'The one terminal is heard', ill: undefined });
-    expect(sentence([terminal('c', { ...never, inService: false })])).toEqual({
+    expect(sentence([terminal('c', { ...never, expected: false })])).toEqual({
       well: 'No terminal is expected to be heard',
       ill: undefined,
     });

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { expectedTerminals, obstacle } from '../../src/warnings/obstacle';
+import { expectedTerminals } from '../../src/contract/expected-terminals';
+import { obstacle } from '../../src/warnings/obstacle';
 import { registeredLine } from '../ingest/made-up-feed';
 
 const out = (line: ReturnType<typeof registeredLine>, ...keys: string[]) => ({

@@ -82,12 +82,12 @@ function Sum({ line, inService, result, site, unit, faded, phase }: Props & { ph
   return (
     <div className="mt-3 grid gap-x-6 gap-y-3 sm:grid-cols-2">
       <figure className="m-0 min-w-0">
-        <PhasorDrawing picture={whole} {...BOX} label={words} ink={ink} />
+        <PhasorDrawing picture={whole} {...BOX} label={words} ink={ink} faded={faded} />
         <figcaption className="mt-1 text-caption text-ink-2">all of it</figcaption>
       </figure>
       {closing !== undefined && (
         <figure className="m-0 min-w-0">
-          <PhasorDrawing picture={closing} {...BOX} label={`${words} Magnified.`} ink={ink} />
+          <PhasorDrawing picture={closing} {...BOX} label={`${words} Magnified.`} ink={ink} faded={faded} />
           <figcaption className="mt-1 text-caption text-ink-2">
             where it ends, magnified {Math.round(closing.pixelsPerAmp / whole.pixelsPerAmp)} times
           </figcaption>

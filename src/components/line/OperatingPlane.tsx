@@ -39,7 +39,7 @@ const EXTENTS: readonly { value: PlaneExtent; label: string }[] = [
 
 /** Differential against restraint, with the recorded threshold and the way of the last ten minutes. */
 export function OperatingPlane(props: Props) {
-  const { line, inForce, readings, tailError, unit, site, nowMs } = props;
+  const { line, inForce, readings, unit, site, nowMs } = props;
   const [extent, setExtent] = useState<PlaneExtent>('near the points');
   const ink = useChartInk();
   const option = usePlaneOption(props, extent, ink);
@@ -50,7 +50,7 @@ export function OperatingPlane(props: Props) {
   return (
     <ChartPanel
       title="Operating point"
-      caption={inForce === undefined ? 'No threshold to draw' : planeCaption(line, tailError)}
+      caption={inForce === undefined ? 'No threshold to draw' : planeCaption(props)}
       controls={
         inForce !== undefined && (
           <Choice
@@ -82,9 +82,10 @@ export function OperatingPlane(props: Props) {
   );
 }
 
-function planeCaption(line: LineSummary, tailError: Error | null): string {
+function planeCaption({ line, tailError, faded }: Props): string {
   const missing = missingFiguresReason(line);
   if (missing !== undefined) return `No operating point now: ${missing}`;
+  if (faded) return 'Last known, not live, and the ten minutes before';
   return tailError === null ? 'Now, and the last ten minutes' : `Now only. ${tailError.message}`;
 }
 

@@ -7,12 +7,13 @@ interface Props {
   readonly label: string;
   /** the differential's colour as a text utility */
   readonly ink: string;
+  readonly faded: boolean;
 }
 
 /** Arrows of the terminals' currents, told apart by their stroke, and the dashed arrow of what is left over. */
 const STROKES = [undefined, '7 3', '2 3', '10 3 2 3', '5 2 1 2', '1 2'];
 
-export function PhasorDrawing({ picture, width, height, label, ink }: Props) {
+export function PhasorDrawing({ picture, width, height, label, ink, faded }: Props) {
   const { arrows, start, differential } = picture;
   return (
     <svg
@@ -22,7 +23,13 @@ export function PhasorDrawing({ picture, width, height, label, ink }: Props) {
       className="block w-full border border-hairline"
     >
       {arrows.map((arrow, index) => (
-        <Arrow key={arrow.terminal} {...arrow} className={inkOf(index)} width={1.75} dash={STROKES[index]} />
+        <Arrow
+          key={arrow.terminal}
+          {...arrow}
+          className={faded ? 'text-ink-2' : inkOf(index)}
+          width={1.75}
+          dash={STROKES[index]}
+        />
       ))}
       <circle cx={start.x} cy={start.y} r={3} fill="var(--panel)" stroke="var(--ink)" />
       {differential !== undefined && <Arrow {...differential} className={ink} width={2.5} />}
