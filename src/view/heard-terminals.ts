@@ -14,11 +14,12 @@ export function heardTerminals(results: Iterable<Result>, nowMs: number): HeardT
   let knownCount = 0;
   let newestAtMs: number | undefined;
   for (const result of results) {
-    knownCount += result.terminals.length;
-    if (result.at === null) continue;
-    const atMs = Date.parse(result.at);
-    newestAtMs = newestAtMs === undefined ? atMs : Math.max(newestAtMs, atMs);
-    if (!isStale(atMs, nowMs)) heardCount += result.terminals.filter((terminal) => terminal.present).length;
+    const atMs = result.at === null ? undefined : Date.parse(result.at);
+    const present = isStale(atMs, nowMs) ? 0 : result.terminals.filter((terminal) => terminal.present).length;
+    heardCount += present;
+    // nothing is missing on a line out of service, though what it sends is heard
+    knownCount += result.condition === 'out of service' ? present : result.terminals.length;
+    if (atMs !== undefined) newestAtMs = Math.max(newestAtMs ?? -Infinity, atMs);
   }
   return { heardCount, knownCount, newestAtMs };
 }

@@ -44,7 +44,7 @@ describe('the list of terminals', () => {
     expect(words).toEqual({
       a: 'online',
       b: 'online but silent',
-      c: 'out of service, silent',
+      c: 'not expected',
       d: 'offline',
       e: 'never heard',
       f: 'online',
