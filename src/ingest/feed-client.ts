@@ -9,12 +9,16 @@ export interface FeedClient {
   acknowledge(receipts: readonly Receipt[]): void;
   /** subscribes to what is new and leaves what is no longer this worker's */
   follow(topics: readonly string[]): void;
+  /** settles when the broker has granted the first subscription: nothing published from then on is missed */
+  readonly subscribed: Promise<void>;
   close(): Promise<void>;
 }
 
 const KEEPALIVE_S = 30;
 const CONNECT_TIMEOUT_MS = 10_000;
 const RECEIVE_MOST = 5_000;
+/** A SUBACK at or above this grants nothing. */
+const REFUSED_QOS = 128;
 
 /** Connects with a session that outlives the connection, so that the broker keeps what is not acknowledged. */
 export function connectFeed(
@@ -40,8 +44,16 @@ export function connectFeed(
     ...(settings.BROKER_PASSWORD !== undefined && { password: settings.BROKER_PASSWORD }),
   });
   const { acknowledge } = deferAcknowledgements(mqtt, take);
+  let granted = () => {};
+  const subscribed = new Promise<void>((resolve) => (granted = resolve));
   const subscribe = (topics: readonly string[]) => {
-    if (topics.length > 0 && mqtt.connected) mqtt.subscribe([...topics], { qos: 1 });
+    if (topics.length === 0 || !mqtt.connected) return;
+    mqtt.subscribe([...topics], { qos: 1 }, (error, grants) => {
+      const refused = grants?.filter(({ qos }) => qos >= REFUSED_QOS).map(({ topic }) => topic) ?? [];
+      if (refused.length > 0) log(`Broker: it refuses this account the topics ${refused.join(', ')}.`);
+      // without a grant the connection has gone, and the next one subscribes again
+      else if (error === null) granted();
+    });
   };
   mqtt.on('connect', () => {
     mqtt.options.reconnectPeriod = INGEST_LIMITS.retryFirstMs;
@@ -62,6 +74,7 @@ export function connectFeed(
   return {
     mqtt,
     acknowledge,
+    subscribed,
     follow(topics) {
       const gone = wanted.filter((topic) => !topics.includes(topic));
       const fresh = topics.filter((topic) => !wanted.includes(topic));

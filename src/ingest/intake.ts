@@ -41,7 +41,7 @@ interface Reception {
   readonly refusals: RefusalTally;
   readonly terminals: TerminalTally;
   ready: Gathered<Receipt>[];
-  receipts: Receipt[];
+  readonly receipts: Receipt[];
 }
 
 /** The worker's entrance: judges, aligns and tallies deliveries. Writes nothing and never waits. */
@@ -110,8 +110,9 @@ function collected(reception: Reception, nowMs: number): Intake | undefined {
   if (ready.length === 0 && reception.receipts.length === 0 && refusals.isEmpty() && terminals.isEmpty())
     return undefined;
   const gathered = joined(ready.slice(0, INGEST_LIMITS.batchSnapshots));
-  const receipts = [...reception.receipts, ...gathered.flatMap((entry) => entry.receipts)];
   reception.ready = ready.slice(INGEST_LIMITS.batchSnapshots);
-  reception.receipts = [];
+  // a repetition of what still waits its turn must not be acknowledged ahead of it
+  const settled = reception.ready.length === 0 ? reception.receipts.splice(0) : [];
+  const receipts = [...settled, ...gathered.flatMap((entry) => entry.receipts)];
   return { gathered, receipts, refusals: refusals.drain(), terminals: terminals.drain() };
 }

@@ -11,7 +11,9 @@ try {
   const store = createStore(settings.DATABASE_URL);
   const log = (sentence: string) => console.log(`${new Date().toISOString()} ingest: ${sentence}`);
   const worker = await startWorker({ settings, store, now: Date.now, log, stop });
-  log(`worker ${settings.WORKER_INDEX} of ${settings.WORKER_COUNT} is listening to the feed.`);
+  void worker.subscribed.then(() =>
+    log(`worker ${settings.WORKER_INDEX} of ${settings.WORKER_COUNT} is listening to the feed.`),
+  );
   await worker.stopped;
   await worker.close();
   await store.close();

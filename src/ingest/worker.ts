@@ -23,6 +23,8 @@ export interface WorkerParts {
 export interface Worker {
   /** how many snapshots have been committed since the start */
   committedCount(): number;
+  /** settles when the feed is being heard */
+  readonly subscribed: Promise<void>;
   /** settles when the worker has stopped; rejects when it stopped by a fault of its own */
   readonly stopped: Promise<void>;
   close(): Promise<void>;
@@ -79,6 +81,7 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
   );
   return {
     committedCount: storing.committedCount,
+    subscribed: feed.subscribed,
     stopped,
     async close() {
       stop.abort();
