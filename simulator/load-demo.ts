@@ -27,6 +27,7 @@ export const HISTORY = {
 
 const RAW_DAYS = 14;
 const CLOCK_LIMIT_US = 100;
+const FREQUENCY_HZ = 50;
 const RECORDED_BY = 'Jonas Wehrli';
 const ROWS_A_WRITE = 1_000;
 
@@ -37,7 +38,13 @@ export async function loadDemo(store: Store, site: Site, progress: (share: numbe
   await loadPeople(store, site);
   await loadRegister(store, site);
   await keepPartitions(store, { now: site.epochMs, rawDays: RAW_DAYS });
-  const lines = [...roster(await readRegister(store), { workerIndex: 0, workerCount: 1 }).values()];
+  const lines = [
+    ...roster(await readRegister(store), {
+      workerIndex: 0,
+      workerCount: 1,
+      frequencyHz: FREQUENCY_HZ,
+    }).values(),
+  ];
   const measurements = createDemoMeasurements(site);
   for (const [index, line] of lines.entries()) {
     await loadHistory(store, line, { measurements, epochMs: site.epochMs });

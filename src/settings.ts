@@ -37,6 +37,11 @@ const judgement = {
     .min(0.1, 'is at least 0.1')
     .max(0.99, 'is at most 0.99')
     .default(0.7),
+  /** the system's nominal frequency, by which line constants become charging currents */
+  NOMINAL_FREQUENCY_HZ: z.coerce
+    .number('is a number')
+    .refine((hertz) => hertz === 50 || hertz === 60, 'is 50 or 60')
+    .default(50),
   PERIOD_MS: count(100, 60_000).default(2_000),
 };
 
@@ -66,11 +71,6 @@ const webSchema = z.object({
   PORT: count(1, 65_535).default(8720),
   ...address,
   TRUST_PROXY: z.enum(['yes', 'no']).default('no'),
-  /** the system's nominal frequency, by which line constants become charging currents */
-  NOMINAL_FREQUENCY_HZ: z.coerce
-    .number('is a number')
-    .refine((hertz) => hertz === 50 || hertz === 60, 'is 50 or 60')
-    .default(50),
   SITE_NAME: z.string().max(60).default('Tareline'),
   SITE_TIME_ZONE: timeZone.default('UTC'),
   PHASE_LETTERS: z

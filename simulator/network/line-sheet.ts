@@ -23,6 +23,8 @@ export type LineSheet = {
   readonly settings: NewLine['settings'];
   readonly load: LoadProfile;
   readonly secondShare?: number;
+  /** from the owner's short-circuit study; some lines have none recorded */
+  readonly leastInternalFaultAmps?: number;
   readonly goesBy?: NewLine['goesBy'];
   readonly inZoneTransformer?: NonNullable<NewLine['inZoneTransformer']>;
   readonly transformerReactanceOhm?: number;
@@ -65,6 +67,7 @@ function registerLine(sheet: LineSheet): NewLine {
     lengthKm,
     kind: kinds.size > 1 ? 'mixed' : [...kinds][0]!,
     capacitanceNfPerKm: round(capacitanceNf / lengthKm, 2),
+    leastInternalFaultAmps: sheet.leastInternalFaultAmps ?? null,
     goesBy: sheet.goesBy ?? 'phasors',
     inService: true,
     seriesCompensated: sheet.seriesCompensation !== undefined,

@@ -1,7 +1,7 @@
 import { cable110, km, overhead110 } from './conductors';
 import { demoLine } from './line-sheet';
 import { towns, works } from './load-shapes';
-import { fromPickup, fromZero, halfSum } from './settings-sheet';
+import { compensated, fromPickup, fromZero, halfSum } from './settings-sheet';
 
 export const lines110 = [
   demoLine({
@@ -34,6 +34,7 @@ export const lines110 = [
       halfSum('2022-06-20', fromZero(72, [0.2, 700, 0.6])),
       halfSum('2025-05-12', fromZero(60, [0.2, 700, 0.6]), 'Pickup lowered with the new conductor.'),
     ],
+    leastInternalFaultAmps: 620,
     load: works(0.59),
     ctErrors: {
       skelder: [
@@ -99,7 +100,7 @@ export const lines110 = [
     ctPrimaryAmps: 400,
     ctClass: '5P20',
     stretches: [[km(24, overhead110), km(3, cable110)]],
-    settings: [halfSum('2024-01-15', fromZero(60, [0.2, 800, 0.6]))],
+    settings: [compensated(halfSum('2024-01-15', fromZero(60, [0.2, 800, 0.6])))],
     load: works(0.55, 'last'),
     ctSpread: 0.8,
     hasVoltage: false,
@@ -114,7 +115,8 @@ export const lines110 = [
     ctPrimaryAmps: 600,
     ctClass: '5P20',
     stretches: [[km(12.4, cable110)]],
-    settings: [halfSum('2023-12-04', fromPickup(95, [0.2, 900, 0.6]))],
+    settings: [compensated(halfSum('2023-12-04', fromPickup(60, [0.2, 900, 0.6])))],
+    leastInternalFaultAmps: 740,
     load: towns(0.4),
   }),
   demoLine({

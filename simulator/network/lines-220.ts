@@ -1,7 +1,7 @@
 import { cable220, km, overhead220 } from './conductors';
 import { demoLine } from './line-sheet';
 import { generation, towns, transit, works } from './load-shapes';
-import { fromPickup, fromZero, greatest, halfSum } from './settings-sheet';
+import { alphaPlane, fromZero, greatest, halfSum, phaseComparison } from './settings-sheet';
 
 export const lines220 = [
   demoLine({
@@ -80,6 +80,7 @@ export const lines220 = [
       halfSum('2021-08-23', fromZero(240, [0.2, 2000, 0.5])),
       halfSum('2025-01-20', fromZero(160, [0.12, 2000, 0.5]), 'Lowered to see faults of high resistance.'),
     ],
+    leastInternalFaultAmps: 1250,
     load: generation(0.93),
     ctErrors: {
       'low-pell': [
@@ -104,7 +105,7 @@ export const lines220 = [
     ctPrimaryAmps: 1000,
     ctClass: '5PR20',
     stretches: [[km(52, overhead220)]],
-    settings: [halfSum('2022-10-03', fromZero(150, [0.3, 2000, 0.7]))],
+    settings: [phaseComparison('2022-09-13', { toleranceDeg: 45, releaseAmps: 120 })],
     load: towns(0.36, 'last'),
     ctSpread: 0.8,
     hasVoltage: false,
@@ -120,6 +121,7 @@ export const lines220 = [
     ctClass: 'TPY',
     stretches: [[km(18.4, cable220)]],
     settings: [halfSum('2024-03-12', fromZero(220, [0.3, 1600, 0.6]))],
+    leastInternalFaultAmps: 1900,
     load: towns(0.5),
     ctSpread: 0.2,
   }),
@@ -133,7 +135,12 @@ export const lines220 = [
     ctPrimaryAmps: [600, 1200],
     ctClass: '5P20',
     stretches: [[km(31, overhead220)]],
-    inZoneTransformer: { otherVoltageKv: 110, clockNumber: 11 },
+    inZoneTransformer: {
+      otherVoltageKv: 110,
+      clockNumber: 11,
+      otherTerminals: ['fennick'],
+      removesZeroSequence: { line: true, other: true },
+    },
     transformerReactanceOhm: 31,
     settings: [halfSum('2024-08-27', fromZero(120, [0.3, 1200, 0.7]))],
     load: towns(0.55),
@@ -162,7 +169,8 @@ export const lines220 = [
     ctPrimaryAmps: 1000,
     ctClass: '5P20',
     stretches: [[km(35, overhead220)], [km(21, overhead220)], [km(6, cable220)]],
-    settings: [halfSum('2024-11-19', fromPickup(165, [0.2, 1600, 0.6]))],
+    settings: [alphaPlane('2021-10-04', { pickupAmps: 165, radius: 6, angleDeg: 195 })],
+    leastInternalFaultAmps: 1450,
     load: works(0.45),
     secondShare: 0.55,
     missingShare: { brindle: 0.0005 },

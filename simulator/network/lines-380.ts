@@ -1,7 +1,7 @@
 import { cable380, km, overhead380 } from './conductors';
 import { demoLine } from './line-sheet';
 import { generation, transit } from './load-shapes';
-import { fromPickup, fromZero, halfSum } from './settings-sheet';
+import { adaptive, alphaPlane, fromPickup, fromZero, halfSum } from './settings-sheet';
 
 export const lines380 = [
   demoLine({
@@ -14,7 +14,8 @@ export const lines380 = [
     ctPrimaryAmps: 2500,
     ctClass: 'TPY',
     stretches: [[km(84, overhead380)]],
-    settings: [halfSum('2023-09-18', fromZero(375, [0.25, 3000, 0.6]))],
+    settings: [alphaPlane('2023-09-18', { pickupAmps: 375, radius: 6, angleDeg: 195 })],
+    leastInternalFaultAmps: 2900,
     load: transit(0.56),
     reportsToo: true,
   }),
@@ -28,7 +29,17 @@ export const lines380 = [
     ctPrimaryAmps: 2000,
     ctClass: 'TPY',
     stretches: [[km(61, overhead380)]],
-    settings: [halfSum('2022-05-30', fromPickup(300, [0.2, 3000, 0.5]))],
+    settings: [
+      adaptive('2022-05-30', {
+        pickupAmps: 200,
+        ctErrors: [
+          { terminal: 'ostrel', errorBelow: 0.02, errorAbove: 0.05, limitAmps: 4000 },
+          { terminal: 'tarn-head', errorBelow: 0.02, errorAbove: 0.05, limitAmps: 4000 },
+        ],
+        timeErrorMs: 0.1,
+      }),
+    ],
+    leastInternalFaultAmps: 2400,
     load: transit(0.33, 'last'),
   }),
   demoLine({

@@ -16,6 +16,7 @@ const version = (
   validFrom: `${from}T08:00:00Z`,
   characteristic: { kind: 'two-slope', ...slopes },
   restraint,
+  chargingCompensation: false,
   note,
 });
 
@@ -46,3 +47,37 @@ export const fromPickup = (
   pickupAmps: number,
   [slope1, kneeAmps, slope2]: readonly [number, number, number],
 ): Slopes => ({ pickupAmps, slope1, kneeAmps, slope2, slopeStart: 'from-pickup' });
+
+/** The same settings in a scheme that takes the charging current out of the differential. */
+export const compensated = (settings: NewSettingsVersion): NewSettingsVersion => ({
+  ...settings,
+  chargingCompensation: true,
+});
+
+const COPIED = 'Copied from the setting sheet.';
+
+type Of<Kind extends NewSettingsVersion['characteristic']['kind']> = Omit<
+  Extract<NewSettingsVersion['characteristic'], { kind: Kind }>,
+  'kind'
+>;
+
+const ofKind = (
+  from: string,
+  characteristic: NewSettingsVersion['characteristic'],
+  restraint: NewSettingsVersion['restraint'],
+): NewSettingsVersion => ({
+  validFrom: `${from}T08:00:00Z`,
+  characteristic,
+  restraint,
+  chargingCompensation: false,
+  note: COPIED,
+});
+
+export const alphaPlane = (from: string, settings: Of<'alpha-plane'>): NewSettingsVersion =>
+  ofKind(from, { kind: 'alpha-plane', ...settings }, { kind: 'none' });
+
+export const phaseComparison = (from: string, settings: Of<'phase-comparison'>): NewSettingsVersion =>
+  ofKind(from, { kind: 'phase-comparison', ...settings }, { kind: 'none' });
+
+export const adaptive = (from: string, settings: Of<'adaptive'>): NewSettingsVersion =>
+  ofKind(from, { kind: 'adaptive', ...settings }, { kind: 'error-sum' });

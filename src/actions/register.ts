@@ -14,7 +14,7 @@ import {
 import { parseSent } from '../server/problems';
 import { refusalStatus } from '../server/register-answer';
 import { databaseIsAway } from '../store/database-away';
-import { readRegister } from '../store/register';
+import { readRegister, readRegisterLine } from '../store/register';
 import type { Editing, RegisterEdit } from '../store/register-change';
 import {
   insertLine,
@@ -131,7 +131,13 @@ const dropTerminal = registerForm('edit the register', async (call) => {
 const recordSettings = registerForm('record settings', async (call) => {
   const { typed, context } = call;
   const { site } = context.locals;
-  const version = judged(newSettingsVersionSchema, settingsFromTyped(typed, site.settings.SITE_TIME_ZONE));
+  const line = await readRegisterLine(site.store, typed.line ?? '');
+  const place = {
+    timeZone: site.settings.SITE_TIME_ZONE,
+    terminals: line?.terminals.map(({ key }) => key) ?? [],
+    capacitanceNfPerKm: line?.capacitanceNfPerKm ?? null,
+  };
+  const version = judged(newSettingsVersionSchema, settingsFromTyped(typed, place));
   if (!version.ok) return refused(typed, 400, version);
   return outcomeOf(
     call,

@@ -7,6 +7,8 @@ const HOLDERS = {
   'see the register': ['engineer', 'admin'],
   'edit the register': ['engineer', 'admin'],
   'record settings': ['engineer', 'admin'],
+  'replay settings': ['engineer'],
+  'keep proposals': ['engineer'],
   'see feeds': ['admin'],
 } as const satisfies Readonly<Record<string, readonly Role[]>>;
 

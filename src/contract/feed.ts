@@ -110,7 +110,8 @@ function refusalOf(issues: readonly z.core.$ZodIssue[], value: unknown): Refusal
   if (first === undefined) return { reason: 'field missing or of the wrong type', detail };
   const found = first.path.reduce<unknown>((at, key) => (at as Record<PropertyKey, unknown>)?.[key], value);
   if (typeof found === 'number' && !Number.isFinite(found)) return { reason: 'number not finite', detail };
-  if (first.code === 'too_small' && typeof found === 'number' && found < 0)
+  const isMagnitude = !['seq', 'frequency'].includes(String(first.path[0]));
+  if (isMagnitude && first.code === 'too_small' && typeof found === 'number' && found < 0)
     return { reason: 'negative magnitude', detail };
   return { reason: 'field missing or of the wrong type', detail };
 }

@@ -62,7 +62,7 @@ export type LineDetail = z.infer<typeof lineDetailSchema>;
 
 /** One raw row: GET /api/lines/<key>/snapshots */
 export const snapshotSchema = resultSchema
-  .pick({ phases: true, throughAmps: true, settingsVersion: true, terminals: true })
+  .pick({ phases: true, throughAmps: true, compensation: true, settingsVersion: true, terminals: true })
   .extend({ at: z.iso.datetime(), complete: z.boolean(), reason: z.string().nullable() });
 export type Snapshot = z.infer<typeof snapshotSchema>;
 export const snapshotListSchema = z.object({

@@ -10,12 +10,21 @@ const name = z.string().trim().min(1, 'Give a name.').max(80, 'A name has at mos
 const positive = (what: string, most: number) =>
   z.number(`${what} is a number.`).positive(`${what} is above 0.`).max(most, `${what} is at most ${most}.`);
 
-/** Recorded only: a transformer inside the zone is not evaluated yet, and the line says so. */
+/**
+ * A transformer of two windings inside the zone (IEC 60076-1). Currents of the terminals behind it are brought to
+ * the line's own voltage by ratio and clock number; zero sequence is taken out per winding where the scheme does so.
+ */
 export const inZoneTransformerSchema = z.object({
-  /** voltage of the far winding, kV phase to phase */
+  /** voltage of the winding away from the line, kV phase to phase */
   otherVoltageKv: positive('The other voltage', 1200),
-  clockNumber: z.int().min(0).max(11),
+  clockNumber: z.int().min(0, 'The clock number is 0 to 11.').max(11, 'The clock number is 0 to 11.'),
+  /** terminals behind the transformer, measured at its other voltage */
+  otherTerminals: z.array(keySchema).max(5).default([]),
+  removesZeroSequence: z
+    .object({ line: z.boolean(), other: z.boolean() })
+    .default({ line: true, other: true }),
 });
+export type InZoneTransformer = z.infer<typeof inZoneTransformerSchema>;
 
 const lineFields = {
   name,
@@ -26,6 +35,8 @@ const lineFields = {
   kind: lineKindSchema,
   /** positive-sequence capacitance, nF per km; null when not known */
   capacitanceNfPerKm: positive('The capacitance', 2_000).nullable(),
+  /** least current of a fault inside the zone, from the owner's short-circuit study; null when not recorded */
+  leastInternalFaultAmps: positive('The least internal fault current', 100_000).nullable(),
   goesBy: goesBySchema,
   inService: z.boolean(),
   seriesCompensated: z.boolean(),
@@ -54,6 +65,7 @@ export const newSettingsVersionSchema = z.object({
   validFrom: z.iso.datetime({ offset: true }),
   characteristic: characteristicSchema,
   restraint: restraintSchema,
+  chargingCompensation: z.boolean().default(false),
   note: z.string().trim().min(1, 'Say why these settings are recorded.').max(500),
 });
 export type NewSettingsVersion = z.infer<typeof newSettingsVersionSchema>;
@@ -71,6 +83,7 @@ export const newLineSchema = z
     key: keySchema,
     ...lineFields,
     capacitanceNfPerKm: lineFields.capacitanceNfPerKm.default(null),
+    leastInternalFaultAmps: lineFields.leastInternalFaultAmps.default(null),
     goesBy: goesBySchema.default('phasors'),
     inService: z.boolean().default(true),
     seriesCompensated: z.boolean().default(false),

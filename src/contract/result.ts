@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { compensationSchema } from './compensation';
 import { conditionSchema } from './condition';
 import { breakerSchema, channelSchema, clockSchema, validitySchema } from './feed';
 import { keySchema } from './key';
@@ -51,6 +52,8 @@ export const resultSchema = z.object({
   throughAmps: amps,
   /** through current over the line's rating */
   throughRatio: z.number().nonnegative().nullable(),
+  /** what became of the charging current; "fallen back" means that it stands in the differential after all */
+  compensation: compensationSchema,
   settingsVersion: z.int().nullable(),
   terminals: z.array(terminalResultSchema),
 });

@@ -43,7 +43,8 @@ export const warningCauseSchema = z.discriminatedUnion('basis', [
     utilisation: z.number(),
     limit: z.number(),
     differentialAmps: z.number(),
-    thresholdAmps: z.number(),
+    /** null under a scheme that judges by a region, not by a threshold */
+    thresholdAmps: z.number().nullable(),
   }),
   z.object({
     basis: z.literal('standing level'),

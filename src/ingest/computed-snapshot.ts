@@ -1,17 +1,19 @@
 import type { Measurement } from '../contract/feed';
+import type { CompensationOnWire } from '../contract/compensation';
 import type { WarningCause } from '../contract/warning';
 import {
-  operatingPoint,
-  operatingPointFromReported,
+  type Evaluated,
+  evaluation,
+  evaluationFromReported,
+  isComputable,
   throughAmps,
-  type OperatingPoint,
-  type Scheme,
 } from '../protection/evaluation';
 import { perPhase, PHASES, type PerPhase } from '../protection/phase';
-import { phasorFromPolar, type Phasor } from '../protection/phasor';
+import type { Scheme } from '../protection/scheme';
 import { packFlags } from '../store/snapshot-flags';
 import { isComplete } from './alignment';
 import { versionInForce, type RosterLine, type SchemeVersion } from './roster';
+import { type ZoneCurrents, zoneCurrents } from './zone-currents';
 
 /** Why a snapshot has no differential: something of the feed, or something of the register. */
 export type Unevaluable = { by: 'feed'; cause: WarningCause } | { by: 'register'; reason: string };
@@ -21,7 +23,8 @@ export interface ComputedSnapshot {
   readonly atMs: number;
   readonly measurements: ReadonlyMap<string, Measurement>;
   readonly version: SchemeVersion | undefined;
-  readonly points: PerPhase<OperatingPoint> | undefined;
+  readonly points: PerPhase<Evaluated> | undefined;
+  readonly compensation: CompensationOnWire;
   readonly unevaluable: Unevaluable | undefined;
   /** mean of the phases, amperes */
   readonly throughAmps: number | undefined;
@@ -38,21 +41,41 @@ export function computedSnapshot(
   clockLimitUs: number,
 ): ComputedSnapshot {
   const version = versionInForce(line, atMs);
-  const unevaluable = feedObstacle(line, measurements) ?? registerObstacle(line, version);
-  const points = unevaluable === undefined ? operatingPoints(line, version!.scheme, measurements) : undefined;
-  const through = isComplete(line, measurements)
-    ? meanThroughAmps(line, { measurements, scheme: version?.scheme })
-    : undefined;
+  const { currents, ...judged } = judgedSnapshot(line, version, measurements);
   return {
     line,
     atMs,
     measurements,
     version,
-    points,
-    unevaluable,
-    throughAmps: through,
-    flags: snapshotFlags({ line, measurements, clockLimitUs, notEvaluated: unevaluable?.by === 'register' }),
+    ...judged,
+    throughAmps: isComplete(line, measurements)
+      ? meanThroughAmps(line, { version, measurements, currents })
+      : undefined,
+    flags: snapshotFlags({ line, measurements, clockLimitUs, ...judged }),
   };
+}
+
+type Judged = Pick<ComputedSnapshot, 'points' | 'compensation' | 'unevaluable'>;
+/** Currents as the scheme judged them; undefined where it judged none. */
+type Currents = ZoneCurrents['phases'] | undefined;
+
+/** The three phases under a version of the settings, or why they can't be judged: also what a replay asks. */
+export function judgedSnapshot(
+  line: RosterLine,
+  version: SchemeVersion | undefined,
+  measurements: ReadonlyMap<string, Measurement>,
+): Judged & { currents: Currents } {
+  const unevaluable = feedObstacle(line, measurements) ?? registerObstacle(line, version);
+  if (unevaluable !== undefined)
+    return { points: undefined, compensation: 'none', unevaluable, currents: undefined };
+  const { evaluations, compensation, currents } = evaluated(line, version!, measurements);
+  const obstacle = PHASES.map((phase) => evaluations[phase]).find((point) => !isComputable(point));
+  if (obstacle !== undefined && !isComputable(obstacle)) {
+    const reason = obstacle.notComputable;
+    return { points: undefined, compensation, unevaluable: { by: 'register', reason }, currents };
+  }
+  // every phase was just found to be computable
+  return { points: evaluations as PerPhase<Evaluated>, compensation, unevaluable: undefined, currents };
 }
 
 function feedObstacle(
@@ -77,55 +100,56 @@ function registerObstacle(line: RosterLine, version: SchemeVersion | undefined):
   return undefined;
 }
 
-const DEGREES = Math.PI / 180;
-
-/** The currents of one phase at every expected terminal, amperes. */
-function currentsOf(
-  line: RosterLine,
-  measurements: ReadonlyMap<string, Measurement>,
-  phase: 'a' | 'b' | 'c',
-): Phasor[] {
-  return line.expected.map((terminal) => {
-    const [amps, degrees] = measurements.get(terminal)!.current![phase];
-    return phasorFromPolar(amps, degrees * DEGREES);
-  });
-}
-
-function operatingPoints(
-  line: RosterLine,
-  scheme: Scheme,
-  measurements: ReadonlyMap<string, Measurement>,
-): PerPhase<OperatingPoint> {
-  if (line.goesBy === 'phasors')
-    return perPhase((phase) => operatingPoint(scheme, currentsOf(line, measurements, phase)));
+function evaluated(line: RosterLine, version: SchemeVersion, measurements: ReadonlyMap<string, Measurement>) {
+  const { scheme, zone, conditions } = version;
+  if (line.goesBy === 'phasors') {
+    const { phases, compensation } = zoneCurrents(expectedMeasurements(line, measurements), zone);
+    const evaluations = perPhase((phase) => evaluation(scheme, phases[phase], conditions));
+    return { evaluations, compensation, currents: phases };
+  }
   const reported = measurements.get(line.expected[0]!)!.reported!;
-  return perPhase((phase) => {
+  const evaluations = perPhase((phase) => {
     const index = PHASES.indexOf(phase);
-    return operatingPointFromReported(scheme, {
+    return evaluationFromReported(scheme, {
       differentialAmps: reported.differential[index]!,
       restraintAmps: reported.restraint[index]!,
     });
   });
+  return { evaluations, compensation: 'none' as const, currents: undefined };
 }
 
 function meanThroughAmps(
   line: RosterLine,
-  { measurements, scheme }: { measurements: ReadonlyMap<string, Measurement>; scheme: Scheme | undefined },
+  snapshot: {
+    version: SchemeVersion | undefined;
+    measurements: ReadonlyMap<string, Measurement>;
+    currents: Currents;
+  },
 ): number | undefined {
-  if (line.goesBy === 'phasors')
-    return mean(PHASES.map((phase) => throughAmps(currentsOf(line, measurements, phase))));
+  const { version, measurements, currents } = snapshot;
+  if (line.goesBy === 'phasors') {
+    const sent = expectedMeasurements(line, measurements);
+    // the charging belongs to the through current, and a transformer's two sides carry different ones: the line's counts
+    const zone = version?.zone && { ...version.zone, charging: undefined };
+    const isJudgedAlike = currents !== undefined && version?.zone?.charging === undefined;
+    const phases = isJudgedAlike ? currents : zoneCurrents(sent, zone).phases;
+    return mean(PHASES.map((phase) => throughAmps(phases[phase])));
+  }
   // one terminal's own phasor says nothing of the others: the through current is what its restraint was formed from
   const restraintAmps = mean(measurements.get(line.expected[0]!)!.reported!.restraint);
-  return scheme && throughAmpsFromRestraint(scheme.restraint, restraintAmps);
+  return version && throughAmpsFromRestraint(version.scheme.restraint, restraintAmps);
 }
 
 /** Half the sum of the magnitudes where the convention tells it; else the greatest, which of two terminals is as good. */
-function throughAmpsFromRestraint(restraint: Scheme['restraint'], restraintAmps: number): number {
+function throughAmpsFromRestraint(restraint: Scheme['restraint'], restraintAmps: number): number | undefined {
   switch (restraint.kind) {
     case 'scaled-sum':
       return restraintAmps / (2 * restraint.factor);
     case 'maximum':
       return restraintAmps;
+    case 'error-sum':
+    case 'none':
+      return undefined;
   }
 }
 
@@ -136,13 +160,13 @@ function snapshotFlags({
   line,
   measurements,
   clockLimitUs,
-  notEvaluated,
+  unevaluable,
+  compensation,
 }: {
   line: RosterLine;
   measurements: ReadonlyMap<string, Measurement>;
   clockLimitUs: number;
-  notEvaluated: boolean;
-}): number {
+} & Judged): number {
   const sent = expectedMeasurements(line, measurements);
   return packFlags({
     incomplete: !isComplete(line, measurements),
@@ -151,7 +175,9 @@ function snapshotFlags({
     test: sent.some(({ test }) => test),
     clockBeyondLimit: sent.some(({ clock }) => clock.source === 'free' || clock.error_us > clockLimitUs),
     breakerOpen: sent.some(({ breaker }) => breaker === 'open'),
-    notEvaluated,
+    notEvaluated: unevaluable?.by === 'register',
+    chargingCompensated: compensation === 'applied',
+    compensationFellBack: compensation === 'fallen back',
   });
 }
 

@@ -1,5 +1,6 @@
 import type { Condition } from '../contract/condition';
 import type { Creep, WarningCause, WarningKind } from '../contract/warning';
+import { pickupAmps } from '../protection/characteristic';
 import type { PerPhase } from '../protection/phase';
 import { lineCondition } from '../warnings/condition';
 import {
@@ -33,6 +34,8 @@ export interface LineWatch {
   readonly standing: Set<WarningKind>;
   judgement: Judgement;
   findings: StandingFindings | undefined;
+  /** the hour that was current when the level rows were last brought up to date */
+  caughtUpMs: number | undefined;
   readonly watchedSinceMs: number;
 }
 
@@ -43,6 +46,7 @@ export function lineWatch(line: RosterLine, standing: ReadonlySet<WarningKind>, 
     standing: new Set(standing),
     judgement: unjudged(standing),
     findings: undefined,
+    caughtUpMs: undefined,
     watchedSinceMs: nowMs,
   };
 }
@@ -153,7 +157,10 @@ function nearCause(
 function standingNear(watch: LineWatch, atMs: number, limits: WarningLimits): WarningCause | undefined {
   const version = versionInForce(watch.line, atMs);
   if (watch.findings === undefined || version === undefined) return undefined;
-  return standingLevelCause(watch.findings.levelAmps, version.scheme.characteristic.pickupAmps, {
+  const pickup = pickupAmps(version.scheme.characteristic);
+  // a phase comparison has no pickup for the differential current: its utilisation alone speaks
+  if (pickup === undefined) return undefined;
+  return standingLevelCause(watch.findings.levelAmps, pickup, {
     nearRatio: limits.nearRatio,
     returnBand: limits.returnBand,
     standing: watch.standing.has('near'),

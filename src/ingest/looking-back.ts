@@ -18,7 +18,12 @@ export async function lookBack(
   { settings, limits, nowMs }: { settings: IngestSettings; limits: WarningLimits; nowMs: number },
 ): Promise<WarningChange[]> {
   const { line } = watch;
-  const { hourClosed } = await catchUpRungs(store, line, { nowMs, rawReachMs: settings.RAW_DAYS * DAY_MS });
+  const { hourClosed, caughtUpMs } = await catchUpRungs(store, line, {
+    nowMs,
+    rawReachMs: settings.RAW_DAYS * DAY_MS,
+    caughtUpMs: watch.caughtUpMs,
+  });
+  watch.caughtUpMs = caughtUpMs;
   if (!hourClosed && watch.findings !== undefined) return [];
   const findings = await readStandingFindings(store, line, { nowMs, nearRatio: settings.NEAR_RATIO });
   await replaceCreep(store, line.id, { creep: findings.creep, computedAt: new Date(nowMs) });

@@ -1,12 +1,13 @@
 import type { Condition } from '../contract/condition';
 import type { PhaseResult, Result } from '../contract/result';
 import type { WarningCause } from '../contract/warning';
-import type { OperatingPoint } from '../protection/evaluation';
+import type { Evaluated } from '../protection/evaluation';
 import { perPhase } from '../protection/phase';
 import { terminalOnWire } from '../view/terminal-on-wire';
 import type { ComputedSnapshot } from './computed-snapshot';
 import type { RosterLine } from './roster';
 
+const SILENT = 'Nothing has come from this line since the instant shown.';
 const NOTHING: PhaseResult = {
   differentialAmps: null,
   restraintAmps: null,
@@ -20,7 +21,10 @@ export function resultMessage(
   snapshot: ComputedSnapshot | undefined,
   { condition, nowMs }: { condition: Condition; nowMs: number },
 ): Result {
-  const points = snapshot?.points;
+  // a line that has fallen silent altogether: its last figures say nothing of now
+  const isSilent = condition === 'blind' && snapshot?.points !== undefined;
+  const through = isSilent ? undefined : snapshot?.throughAmps;
+  const points = isSilent ? undefined : snapshot?.points;
   return {
     line: line.key,
     at: snapshot === undefined ? null : new Date(snapshot.atMs).toISOString(),
@@ -28,10 +32,11 @@ export function resultMessage(
     condition,
     reason:
       reasonOf(line, snapshot) ??
-      (condition === 'out of service' ? 'Every breaker of the line is open.' : null),
+      (isSilent ? SILENT : condition === 'out of service' ? 'Every breaker of the line is open.' : null),
     phases: perPhase((phase) => (points === undefined ? NOTHING : phaseResult(points[phase]))),
-    throughAmps: snapshot?.throughAmps ?? null,
-    throughRatio: snapshot?.throughAmps === undefined ? null : snapshot.throughAmps / line.ratingAmps,
+    throughAmps: through ?? null,
+    throughRatio: through === undefined ? null : through / line.ratingAmps,
+    compensation: snapshot?.compensation ?? 'none',
     settingsVersion: snapshot?.version?.id ?? null,
     // a terminal that nothing is expected from is not missing
     terminals: [...line.terminals.values()]
@@ -40,16 +45,11 @@ export function resultMessage(
   };
 }
 
-export const phaseResult = ({
-  differentialAmps,
-  restraintAmps,
-  thresholdAmps,
-  utilisation,
-}: OperatingPoint): PhaseResult => ({
-  differentialAmps,
-  restraintAmps,
-  thresholdAmps,
-  utilisation,
+export const phaseResult = (point: Evaluated): PhaseResult => ({
+  differentialAmps: point.differentialAmps,
+  restraintAmps: point.restraintAmps ?? null,
+  thresholdAmps: point.thresholdAmps ?? null,
+  utilisation: point.utilisation,
 });
 
 function reasonOf(line: RosterLine, snapshot: ComputedSnapshot | undefined): string | null {

@@ -1,6 +1,10 @@
-import type { Scheme } from '../protection/evaluation';
-import type { RegisteredLine } from '../store/register';
 import { expectedTerminals } from '../contract/expected-terminals';
+import { type Conditions, type Scheme, schemeAtTerminals } from '../protection/scheme';
+import type { Zone } from '../protection/zone';
+import type { RegisteredLine } from '../store/register';
+import { lineZone } from '../view/line-zone';
+import type { RegisterLine } from '../contract/register';
+import type { SettingsVersion } from '../contract/settings-version';
 import { obstacle } from '../warnings/obstacle';
 import { ownerOf } from './ownership';
 
@@ -13,7 +17,11 @@ export interface RosterTerminal {
 export interface SchemeVersion {
   readonly id: number;
   readonly fromMs: number;
+  /** its figures in the order of the expected terminals */
   readonly scheme: Scheme;
+  /** undefined where nothing lies in the zone that has to be taken out */
+  readonly zone: Zone | undefined;
+  readonly conditions: Conditions;
 }
 
 /** A line as the worker needs it on every measurement. */
@@ -37,13 +45,19 @@ export type Roster = ReadonlyMap<string, RosterLine>;
 /** The lines that are this worker's, ready for the hot path. */
 export function roster(
   register: readonly RegisteredLine[],
-  { workerIndex, workerCount }: { workerIndex: number; workerCount: number },
+  {
+    workerIndex,
+    workerCount,
+    frequencyHz,
+  }: { workerIndex: number; workerCount: number; frequencyHz: number },
 ): Roster {
   const own = register.filter(({ key }) => ownerOf(key, workerCount) === workerIndex);
-  return new Map(own.map((line) => [line.key, rosterLine(line)]));
+  return new Map(own.map((line) => [line.key, rosterLine(line, frequencyHz)]));
 }
 
-function rosterLine(line: RegisteredLine): RosterLine {
+/** `frequencyHz` is the system's nominal one, by which line constants and time errors are turned into currents. */
+export function rosterLine(line: RegisteredLine, frequencyHz: number): RosterLine {
+  const expected = expectedTerminals(line);
   return {
     id: line.id,
     key: line.key,
@@ -57,12 +71,26 @@ function rosterLine(line: RegisteredLine): RosterLine {
         { id: line.terminalIds.get(key)!, key, substationName },
       ]),
     ),
-    expected: expectedTerminals(line),
-    versions: line.settings.map(({ id, validFrom, characteristic, restraint }) => ({
-      id,
-      fromMs: Date.parse(validFrom),
-      scheme: { characteristic, restraint },
-    })),
+    expected,
+    versions: line.settings.map((version) => schemeVersion(version, { line, expected, frequencyHz })),
+  };
+}
+
+/** A version of a line's settings, ready to be evaluated. */
+export function schemeVersion(
+  version: Pick<
+    SettingsVersion,
+    'id' | 'validFrom' | 'characteristic' | 'restraint' | 'chargingCompensation'
+  >,
+  { line, expected, frequencyHz }: { line: RegisterLine; expected: readonly string[]; frequencyHz: number },
+): SchemeVersion {
+  const { id, validFrom, characteristic, restraint, chargingCompensation } = version;
+  return {
+    id,
+    fromMs: Date.parse(validFrom),
+    scheme: schemeAtTerminals({ characteristic, restraint }, expected),
+    zone: lineZone(line, { expected, chargingCompensation, frequencyHz }),
+    conditions: { frequencyHz },
   };
 }
 

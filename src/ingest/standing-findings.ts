@@ -1,4 +1,5 @@
 import type { Creep, ForecastDatesOnWire } from '../contract/warning';
+import { pickupAmps } from '../protection/characteristic';
 import { perPhase, PHASES, type PhaseName } from '../protection/phase';
 import { creepVerdict } from '../standing/creep';
 import type { ForecastDates } from '../standing/forecast';
@@ -29,13 +30,14 @@ export async function readStandingFindings(
     // today is not over: its level would be that of a part of the load cycle
     to: new Date(rungStart('day', nowMs)),
   });
-  const pickupAmps = versionInForce(line, nowMs)?.scheme.characteristic.pickupAmps;
+  const inForce = versionInForce(line, nowMs);
+  const pickup = inForce && pickupAmps(inForce.scheme.characteristic);
   return {
     levelAmps: perPhase((phase) => standingLevel24h(mediansOf(hours, phase))),
     creep:
-      pickupAmps === undefined || line.obstacle !== undefined
+      pickup === undefined || line.obstacle !== undefined
         ? []
-        : PHASES.flatMap((phase) => creepOf(days, phase, { pickupAmps, nearRatio }) ?? []),
+        : PHASES.flatMap((phase) => creepOf(days, phase, { pickupAmps: pickup, nearRatio }) ?? []),
   };
 }
 

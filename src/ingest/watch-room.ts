@@ -40,6 +40,7 @@ export function createWatchRoom({ settings, store, now }: Parts): WatchRoom {
     const fresh = roster(await readRegister(store), {
       workerIndex: settings.WORKER_INDEX,
       workerCount: settings.WORKER_COUNT,
+      frequencyHz: settings.NOMINAL_FREQUENCY_HZ,
     });
     const added = [...fresh.values()].filter(({ id }) => !watches.has(id));
     const addedIds = added.map(({ id }) => id);

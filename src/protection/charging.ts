@@ -24,10 +24,17 @@ export function susceptanceMicrosiemensPerKm(
   return (angularFrequency * capacitanceNanofaradsPerKm) / 1000;
 }
 
+/** Susceptance ωC′l of the whole line, millisiemens: amperes of charging per kilovolt to earth. */
+export function lineSusceptanceMillisiemens({
+  susceptanceMicrosiemensPerKm,
+  lengthKm,
+}: Omit<ChargedLine, 'voltageKv'>): number {
+  return (susceptanceMicrosiemensPerKm * lengthKm) / 1000;
+}
+
 /** Total charging current per phase, amperes rms: what the differential current shows without compensation. */
 export function chargingAmps(line: ChargedLine): number {
-  const susceptanceMillisiemens = (line.susceptanceMicrosiemensPerKm * line.lengthKm) / 1000;
-  return susceptanceMillisiemens * (line.voltageKv / Math.sqrt(3));
+  return lineSusceptanceMillisiemens(line) * (line.voltageKv / Math.sqrt(3));
 }
 
 /** The charging current that one end supplies, amperes rms: half of the total in the π model of a line. */

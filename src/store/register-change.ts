@@ -25,7 +25,10 @@ export interface AuditNote {
   readonly detail: Record<string, unknown>;
 }
 
-class Refused extends Error {
+/** One change within a transaction, and what the audit trail says of it; undefined when there was nothing to change. */
+export type Change = (transaction: Transaction) => Promise<AuditNote | undefined>;
+
+export class Refused extends Error {
   constructor(
     readonly kind: RefusalKind,
     readonly refusal: Problem,
@@ -54,15 +57,11 @@ class NothingToChange extends Error {}
 export async function changeRegister(
   store: Store,
   { key, by, nowMs }: Editing & { key: string },
-  change: (transaction: Transaction) => Promise<AuditNote | undefined>,
+  change: Change,
 ): Promise<RegisterEdit> {
   try {
     await store.db.transaction(async (transaction) => {
-      // First of all: the row's lock makes changes wait for each other, so that what one has checked still holds
-      await transaction
-        .update(registerRevision)
-        .set({ revision: sql`${registerRevision.revision} + 1` })
-        .where(eq(registerRevision.id, 1));
+      await lockRegister(transaction);
       const note = await change(transaction);
       if (note === undefined) throw new NothingToChange();
       await insertAuditEntry(within(store, transaction), { at: new Date(nowMs), person: by, ...note });
@@ -76,7 +75,18 @@ export async function changeRegister(
   return { ok: true, line };
 }
 
+/**
+ * Counts the revision up. First of all in every change: the row's lock makes changes wait for each other, so that
+ * what one has checked still holds.
+ */
+export async function lockRegister(transaction: Transaction): Promise<void> {
+  await transaction
+    .update(registerRevision)
+    .set({ revision: sql`${registerRevision.revision} + 1` })
+    .where(eq(registerRevision.id, 1));
+}
+
 /** The store as its queries see it inside a transaction; they use nothing that a transaction has not. */
-function within(store: Store, transaction: Transaction): Store {
+export function within(store: Store, transaction: Transaction): Store {
   return { ...store, db: transaction as unknown as Store['db'] };
 }

@@ -1,5 +1,5 @@
 import { asc, eq } from 'drizzle-orm';
-import type { RegisterLine } from '../contract/register';
+import { inZoneTransformerSchema, type RegisterLine } from '../contract/register';
 import type { SettingsVersion } from '../contract/settings-version';
 import type { Store } from './client';
 import { groupedBy } from './grouped';
@@ -28,6 +28,8 @@ export async function readRegister(store: Store): Promise<RegisteredLine[]> {
     const own = terminalsOf.get(row.id) ?? [];
     return {
       ...row,
+      // Entries from before the terminals behind a transformer were kept lack them
+      inZoneTransformer: row.inZoneTransformer && inZoneTransformerSchema.parse(row.inZoneTransformer),
       terminals: own.map(({ terminal: { id: _id, lineId: _lineId, ...rest }, substationName }) => ({
         ...rest,
         substationName,

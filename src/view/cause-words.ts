@@ -25,7 +25,7 @@ export function causeWords(cause: WarningCause, context: WordsContext): ReasonWo
     case 'utilisation':
       return {
         lead: `Phase ${context.site.phaseLetters[cause.phase]} at ${percentOfMarkText(cause.utilisation)} of its threshold`,
-        rest: `: ${ampsText(cause.differentialAmps)} against ${ampsText(cause.thresholdAmps)}.`,
+        rest: `: ${againstText(cause)}.`,
       };
     case 'standing level':
       return {
@@ -111,7 +111,7 @@ function nearReason(
   return {
     lead: `Phase ${context.site.phaseLetters[phase]} at ${percentOfMarkText(utilisation)} of its threshold`,
     rest:
-      `${lasting === '' ? '' : ` for ${lasting}`}: ${ampsText(differentialAmps)} against ${ampsText(thresholdAmps)}.` +
+      `${lasting === '' ? '' : ` for ${lasting}`}: ${againstText({ differentialAmps, thresholdAmps })}.` +
       chargingWords(line),
   };
 }
@@ -145,4 +145,16 @@ function blindReason(
     return { lead: words.lead, rest: `${words.rest}${since}` };
   }
   return { lead: line.reason ?? 'The differential cannot be computed.', rest: since };
+}
+
+/** The differential and what it stands against; a scheme with a region has no threshold to name. */
+function againstText({
+  differentialAmps,
+  thresholdAmps,
+}: {
+  differentialAmps: number | null;
+  thresholdAmps: number | null;
+}): string {
+  if (thresholdAmps === null) return `a differential current of ${ampsText(differentialAmps)}`;
+  return `${ampsText(differentialAmps)} against ${ampsText(thresholdAmps)}`;
 }

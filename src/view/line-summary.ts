@@ -4,6 +4,7 @@ import type { RegisterLine } from '../contract/register';
 import type { Result } from '../contract/result';
 import type { Creep, Warning } from '../contract/warning';
 import { chargingAmps, susceptanceMicrosiemensPerKm } from '../protection/charging';
+import { pickupAmps } from '../protection/characteristic';
 import { perPhase, PHASES, type PhaseName } from '../protection/phase';
 import { standingLevel24h } from '../standing/level';
 import type { LevelRow } from '../store/levels';
@@ -50,7 +51,8 @@ export function lineSummary(line: RegisterLine, known: LineKnowledge): LineSumma
     throughAmps: result?.throughAmps ?? null,
     throughRatio: result?.throughRatio ?? null,
     settingsVersion: inForce?.id ?? null,
-    pickupAmps: inForce?.characteristic.pickupAmps ?? null,
+    pickupAmps: (inForce && pickupAmps(inForce.characteristic)) ?? null,
+    compensation: result?.compensation ?? 'none',
     chargingAmps: expectedChargingAmps(line, known.nominalFrequencyHz),
     lastDay: perPhase((phase) => lastDay(known.hours, phase)),
     dailyLevels: dailyLevels(known.days),

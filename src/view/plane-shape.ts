@@ -1,6 +1,6 @@
 import type { LineSummary } from '../contract/lines';
 import { characteristicPath } from '../protection/characteristic';
-import type { Characteristic } from '../protection/characteristic';
+import type { ThresholdCharacteristic } from '../protection/characteristic';
 import { perPhase } from '../protection/phase';
 import type { PerPhase } from '../protection/phase';
 import type { Reading } from './line-readings';
@@ -29,16 +29,18 @@ export interface PlaneShape {
 }
 
 interface PlaneContext {
-  readonly characteristic: Characteristic | undefined;
+  readonly characteristic: ThresholdCharacteristic | undefined;
   readonly readings: readonly Reading[];
   readonly extent: PlaneExtent;
   /** amperes of one unit: 1 for amperes, the rating for per unit */
   readonly unitAmps: number;
+  /** other places that are drawn and that the window has to show */
+  readonly also?: readonly PlanePoint[];
 }
 
 export function planeShape(
   line: Pick<LineSummary, 'phases' | 'emergencyRatingAmps'>,
-  { characteristic, readings, extent, unitAmps }: PlaneContext,
+  { characteristic, readings, extent, unitAmps, also = [] }: PlaneContext,
 ): PlaneShape {
   const ways = tails(readings, readings[readings.length - 1]?.atMs ?? 0);
   const now = PHASES.flatMap((phase) => {
@@ -46,7 +48,7 @@ export function planeShape(
     if (restraintAmps === null || differentialAmps === null) return [];
     return [{ phase, restraintAmps, differentialAmps }];
   });
-  const everywhere = [...now, ...PHASES.flatMap((phase) => ways[phase].flat())];
+  const everywhere = [...now, ...also, ...PHASES.flatMap((phase) => ways[phase].flat())];
   const { emergencyRatingAmps: emergencyAmps } = line;
   const window = planeWindow(characteristic, everywhere, { extent, emergencyAmps, unitAmps });
   const place = ({ restraintAmps, differentialAmps }: PlanePoint) => ({
@@ -64,7 +66,7 @@ export function planeShape(
 }
 
 function thresholdPlaces(
-  characteristic: Characteristic | undefined,
+  characteristic: ThresholdCharacteristic | undefined,
   window: PlaneWindow,
   unitAmps: number,
 ): PlanePlace[] {

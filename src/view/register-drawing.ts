@@ -1,17 +1,47 @@
-import type { TwoSlope } from '../protection/two-slope';
-import { characteristicPath, characteristicProblems } from '../protection/characteristic';
+import type { AlphaPlane } from '../protection/alpha-plane';
+import {
+  characteristicPath,
+  characteristicProblems,
+  isThresholdCharacteristic,
+  pickupAmps,
+  type Characteristic,
+  type ThresholdCharacteristic,
+} from '../protection/characteristic';
+import type { PhaseComparison } from '../protection/phase-comparison';
 import { ampsText } from './figures';
 
-/** A characteristic as a small drawing: pixel points of the threshold, and where its labels stand. */
-export interface CharacteristicDrawing {
-  readonly threshold: readonly (readonly [number, number])[];
+export type Point = readonly [number, number];
+
+/** A threshold over restraint as pixels, and where its labels stand. */
+export interface ThresholdCurve {
+  readonly points: readonly Point[];
   readonly pickupY: number;
-  /** undefined when the knee is at zero and there is only one slope */
-  readonly kneeX: number | undefined;
   readonly pickupLabel: string;
+  /** undefined where there is one slope only */
+  readonly kneeX: number | undefined;
   readonly kneeLabel: string;
-  readonly restraintLabel: string;
 }
+
+/** A region around 180° as the corners of a polygon in pixels, with what it is in words. */
+export interface PlaneRegion {
+  readonly points: readonly Point[];
+  readonly label: string;
+}
+
+/** One or two characteristics of like kind in one frame, in the order given. */
+export type SchemeDrawing =
+  | {
+      readonly kind: 'threshold';
+      readonly curves: readonly ThresholdCurve[];
+      readonly restraintLabel: string;
+    }
+  | {
+      readonly kind: 'alpha-plane' | 'phase-comparison';
+      readonly centre: Point;
+      /** pixels of a ratio of 1, or of the circle that the angles are drawn in */
+      readonly unit: number;
+      readonly regions: readonly PlaneRegion[];
+    };
 
 export interface DrawingBox {
   readonly width: number;
@@ -20,38 +50,85 @@ export interface DrawingBox {
   readonly bottom: number;
 }
 
-/** Undefined while the settings are not ones that a scheme can have. */
-export function characteristicDrawing(
-  settings: TwoSlope,
+/**
+ * Undefined while one of the characteristics is not one that a scheme can have, and where they are of kinds that
+ * have no plane in common.
+ */
+export function schemeDrawing(
+  characteristics: readonly Characteristic[],
   box: DrawingBox,
-): CharacteristicDrawing | undefined {
-  if (characteristicProblems(settings).length > 0) return undefined;
-  const cornerAmps =
-    settings.slopeStart === 'from-zero' && settings.slope1 > 0 ? settings.pickupAmps / settings.slope1 : 0;
-  const restraintAmpsMax = 1.6 * Math.max(settings.kneeAmps, cornerAmps, 2 * settings.pickupAmps);
-  const path = characteristicPath(settings, restraintAmpsMax);
-  const thresholdAmpsMax = 1.12 * path[path.length - 1]!.thresholdAmps;
-  const x = (amps: number) => box.left + (amps / restraintAmpsMax) * (box.width - box.left);
-  const y = (amps: number) => (1 - amps / thresholdAmpsMax) * (box.height - box.bottom);
-  return {
-    threshold: path.map((point) => [x(point.restraintAmps), y(point.thresholdAmps)] as const),
-    pickupY: y(settings.pickupAmps),
-    kneeX: settings.kneeAmps > 0 ? x(settings.kneeAmps) : undefined,
-    pickupLabel: ampsText(settings.pickupAmps),
-    kneeLabel: ampsText(settings.kneeAmps),
-    restraintLabel: ampsText(restraintAmpsMax),
-  };
+): SchemeDrawing | undefined {
+  if (characteristics.some((one) => characteristicProblems(one).length > 0)) return undefined;
+  const thresholds = characteristics.filter(isThresholdCharacteristic);
+  const alphas = characteristics.filter((one) => one.kind === 'alpha-plane');
+  const comparisons = characteristics.filter((one) => one.kind === 'phase-comparison');
+  const whole = characteristics.length;
+  if (whole === 0) return undefined;
+  if (thresholds.length === whole) return thresholdDrawing(thresholds, box);
+  if (alphas.length === whole) return alphaDrawing(alphas, box);
+  return comparisons.length === whole ? sectorDrawing(comparisons, box) : undefined;
 }
 
-/** The settings that a form's fields make, slopes from per cent; whatever is not a number becomes NaN, which no drawing has. */
-export function settingsTyped(typed: Readonly<Record<string, string | undefined>>): TwoSlope {
-  const amount = (text: string | undefined) => (text?.trim() ? Number(text.trim().replace(',', '.')) : NaN);
-  return {
-    kind: 'two-slope',
-    pickupAmps: amount(typed.pickupAmps),
-    slope1: amount(typed.slope1) / 100,
-    kneeAmps: amount(typed.kneeAmps),
-    slope2: amount(typed.slope2) / 100,
-    slopeStart: typed.slopeStart === 'from-pickup' ? 'from-pickup' : 'from-zero',
+function thresholdDrawing(thresholds: readonly ThresholdCharacteristic[], box: DrawingBox): SchemeDrawing {
+  const restraintAmpsMax = Math.max(...thresholds.map(restraintAmpsShown));
+  const paths = thresholds.map((one) => characteristicPath(one, restraintAmpsMax));
+  const thresholdAmpsMax = 1.12 * Math.max(...paths.map((path) => path[path.length - 1]!.thresholdAmps));
+  const x = (amps: number) => box.left + (amps / restraintAmpsMax) * (box.width - box.left);
+  const y = (amps: number) => (1 - amps / thresholdAmpsMax) * (box.height - box.bottom);
+  const curves = thresholds.map((one, index) => ({
+    points: paths[index]!.map((point) => [x(point.restraintAmps), y(point.thresholdAmps)] as const),
+    pickupY: y(pickupAmps(one)),
+    pickupLabel: ampsText(pickupAmps(one)),
+    kneeX: kneeAmps(one) > 0 ? x(kneeAmps(one)) : undefined,
+    kneeLabel: ampsText(kneeAmps(one)),
+  }));
+  return { kind: 'threshold', curves, restraintLabel: ampsText(restraintAmpsMax) };
+}
+
+const kneeAmps = (one: ThresholdCharacteristic): number => (one.kind === 'two-slope' ? one.kneeAmps : 0);
+
+function restraintAmpsShown(one: ThresholdCharacteristic): number {
+  if (one.kind === 'adaptive') return 6 * one.pickupAmps;
+  const cornerAmps = one.slopeStart === 'from-zero' && one.slope1 > 0 ? one.pickupAmps / one.slope1 : 0;
+  return 1.6 * Math.max(one.kneeAmps, cornerAmps, 2 * one.pickupAmps);
+}
+
+function alphaDrawing(planes: readonly AlphaPlane[], box: DrawingBox): SchemeDrawing {
+  const frame = planeFrame(box);
+  const unit = frame.reach / Math.max(...planes.map(({ radius }) => radius));
+  const regions = planes.map(({ radius, angleDeg }) => ({
+    points: sectorPoints(frame.centre, { inner: unit / radius, outer: unit * radius, halfDeg: angleDeg / 2 }),
+    label: `radius ${radius}, angle ${angleDeg}°`,
+  }));
+  return { kind: 'alpha-plane', centre: frame.centre, unit, regions };
+}
+
+function sectorDrawing(comparisons: readonly PhaseComparison[], box: DrawingBox): SchemeDrawing {
+  const { centre, reach: unit } = planeFrame(box);
+  const regions = comparisons.map(({ toleranceDeg, releaseAmps }) => ({
+    points: sectorPoints(centre, { inner: 0, outer: unit, halfDeg: toleranceDeg }),
+    label: `within ${toleranceDeg}° of opposition, release ${ampsText(releaseAmps)}`,
+  }));
+  return { kind: 'phase-comparison', centre, unit, regions };
+}
+
+const planeFrame = ({ width, height }: DrawingBox): { centre: Point; reach: number } => ({
+  centre: [width / 2, height / 2],
+  reach: 0.44 * height,
+});
+
+/** Straight pieces this short look round, and a full circle needs no case of its own. */
+const ARC_STEP_DEG = 3;
+
+function sectorPoints(
+  [centreX, centreY]: Point,
+  { inner, outer, halfDeg }: { inner: number; outer: number; halfDeg: number },
+): Point[] {
+  const steps = Math.max(1, Math.ceil((2 * halfDeg) / ARC_STEP_DEG));
+  const angles = Array.from({ length: steps + 1 }, (_, step) => 180 - halfDeg + (2 * halfDeg * step) / steps);
+  const at = (radius: number) => (angleDeg: number) => {
+    const angleRad = (angleDeg * Math.PI) / 180;
+    return [centreX + radius * Math.cos(angleRad), centreY - radius * Math.sin(angleRad)] as const;
   };
+  return [...angles.map(at(outer)), ...angles.toReversed().map(at(inner))];
 }

@@ -26,7 +26,6 @@ export interface RegisterRow {
   readonly inService: boolean;
   /** "since 12 May 2025", or undefined when nothing is in force and the line is not evaluated */
   readonly settings: string | undefined;
-  /** settings or not, a line with a transformer inside its zone is not evaluated yet */
   readonly hasTransformer: boolean;
 }
 

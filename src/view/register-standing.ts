@@ -1,7 +1,8 @@
-import type { RegisterLine } from '../contract/register';
+import type { InZoneTransformer, RegisterLine } from '../contract/register';
 import type { SettingsVersion } from '../contract/settings-version';
 import { wallTimeTyped } from './register-instant';
-import type { Typed } from './register-typed';
+import { schemeTyped, STARTING_SCHEME } from './register-scheme-typed';
+import { behindField, type Typed } from './register-typed';
 
 /** What stands in the register, as the fields of a form hold it. */
 
@@ -12,14 +13,28 @@ export function lineTyped(line: RegisterLine): Typed {
     lengthKm: String(line.lengthKm),
     ratingAmps: String(line.ratingAmps),
     emergencyRatingAmps: String(line.emergencyRatingAmps),
-    capacitanceNfPerKm: line.capacitanceNfPerKm === null ? '' : String(line.capacitanceNfPerKm),
+    capacitanceNfPerKm: figureTyped(line.capacitanceNfPerKm),
     kind: line.kind,
     goesBy: line.goesBy,
     ...ticked('inService', line.inService),
     ...ticked('seriesCompensated', line.seriesCompensated),
     ...ticked('hasTransformer', line.inZoneTransformer !== null),
-    otherVoltageKv: line.inZoneTransformer === null ? '' : String(line.inZoneTransformer.otherVoltageKv),
-    clockNumber: line.inZoneTransformer === null ? '' : String(line.inZoneTransformer.clockNumber),
+    leastInternalFaultAmps: figureTyped(line.leastInternalFaultAmps),
+    ...transformerTyped(line.inZoneTransformer),
+  };
+}
+
+const figureTyped = (value: number | null): string => (value === null ? '' : String(value));
+
+function transformerTyped(transformer: InZoneTransformer | null): Typed {
+  // What a form begins with when there is none yet: the more usual of the two for either winding
+  if (transformer === null) return { removesLineZero: 'yes', removesOtherZero: 'yes' };
+  const { otherVoltageKv, clockNumber, otherTerminals, removesZeroSequence } = transformer;
+  return {
+    ...{ otherVoltageKv: String(otherVoltageKv), clockNumber: String(clockNumber) },
+    ...Object.fromEntries(otherTerminals.map((key) => [behindField(key), 'yes'])),
+    ...ticked('removesLineZero', removesZeroSequence.line),
+    ...ticked('removesOtherZero', removesZeroSequence.other),
   };
 }
 
@@ -31,23 +46,10 @@ export function settingsTypedFrom(
   { nowMs, timeZone }: { nowMs: number; timeZone: string },
 ): Typed {
   const validFrom = wallTimeTyped(nowMs, timeZone);
-  if (inForce === undefined)
-    return { validFrom, slopeStart: 'from-zero', restraint: 'scaled-sum', factor: '0.5' };
-  const { characteristic, restraint } = inForce;
-  return {
-    validFrom,
-    pickupAmps: String(characteristic.pickupAmps),
-    kneeAmps: String(characteristic.kneeAmps),
-    slope1: percentTyped(characteristic.slope1),
-    slope2: percentTyped(characteristic.slope2),
-    slopeStart: characteristic.slopeStart,
-    restraint: restraint.kind,
-    factor: restraint.kind === 'scaled-sum' ? String(restraint.factor) : '0.5',
-  };
+  if (inForce === undefined) return { validFrom, ...STARTING_SCHEME };
+  const { chargingCompensation } = inForce;
+  return { validFrom, ...schemeTyped(inForce), ...ticked('chargingCompensation', chargingCompensation) };
 }
-
-// 0.29 · 100 is 28.999999999999996
-const percentTyped = (ratio: number): string => String(Math.round(ratio * 1e8) / 1e6);
 
 const SAVED: Readonly<Record<string, string>> = {
   line: 'The line is added. Give it its terminals and the settings to compare with.',

@@ -9,7 +9,10 @@ export interface PickupStep {
   readonly pickup: number;
 }
 
-/** The recorded pickup over a window, each version for the time it was in force; nothing before the first. */
+/**
+ * The recorded pickup over a window, each version for the time it was in force; nothing before the first, and
+ * nothing while a scheme without a pickup was in force.
+ */
 export function pickupSteps(
   settings: readonly SettingsVersion[],
   window: TrendWindow,
@@ -25,9 +28,12 @@ export function pickupSteps(
     .map((version, index) => ({
       fromMs: Math.max(version.fromMs, window.fromMs),
       toMs: Math.min(versions[index + 1]?.fromMs ?? Infinity, window.toMs),
-      pickup: version.pickupAmps / unitAmps,
+      pickupAmps: version.pickupAmps,
     }))
-    .filter((step) => step.toMs > step.fromMs);
+    .filter((step) => step.toMs > step.fromMs)
+    .flatMap(({ pickupAmps, ...step }) =>
+      pickupAmps === undefined ? [] : [{ ...step, pickup: pickupAmps / unitAmps }],
+    );
 }
 
 /** The version in force at an instant; undefined before the first. */

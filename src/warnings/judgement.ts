@@ -1,5 +1,5 @@
 import type { WarningCause, WarningKind } from '../contract/warning';
-import type { OperatingPoint } from '../protection/evaluation';
+import type { Evaluated } from '../protection/evaluation';
 import { PHASES, type PerPhase, type PhaseName } from '../protection/phase';
 import { AT_REST, type Hysteresis, STANDING, stepHysteresis } from './hysteresis';
 import type { WarningLimits } from './limits';
@@ -21,7 +21,7 @@ export const unjudged = (standing: ReadonlySet<WarningKind>): Judgement => ({
 });
 
 /** The phase that stands nearest to its threshold. */
-export function worstPhase(points: PerPhase<OperatingPoint>): PhaseName {
+export function worstPhase(points: PerPhase<Evaluated>): PhaseName {
   return PHASES.reduce((worst, phase) =>
     points[phase].utilisation > points[worst].utilisation ? phase : worst,
   );
@@ -36,7 +36,7 @@ interface SeenAt {
 /** Judges a snapshot that could be evaluated. Delays count in snapshot instants, so a replayed hour judges as it did live. */
 export function judgeEvaluated(
   judgement: Judgement,
-  sight: SeenAt & { points: PerPhase<OperatingPoint> },
+  sight: SeenAt & { points: PerPhase<Evaluated> },
   limits: WarningLimits,
 ): Judgement {
   const { atMs, points } = sight;
@@ -88,8 +88,15 @@ export function judgeUnseen(
 }
 
 /** The cause by which utilisation raises near or over. */
-export function utilisationCause(points: PerPhase<OperatingPoint>, limit: number): WarningCause {
+export function utilisationCause(points: PerPhase<Evaluated>, limit: number): WarningCause {
   const phase = worstPhase(points);
   const { utilisation, differentialAmps, thresholdAmps } = points[phase];
-  return { basis: 'utilisation', phase, utilisation, limit, differentialAmps, thresholdAmps };
+  return {
+    basis: 'utilisation',
+    phase,
+    utilisation,
+    limit,
+    differentialAmps,
+    thresholdAmps: thresholdAmps ?? null,
+  };
 }

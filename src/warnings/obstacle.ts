@@ -6,8 +6,8 @@ export function obstacle(
   line: Pick<RegisterLine, 'goesBy' | 'terminals' | 'settings' | 'inZoneTransformer'>,
 ): string | undefined {
   const expectedCount = expectedTerminals(line).length;
-  if (line.inZoneTransformer !== null)
-    return 'A transformer stands in the zone; its ratio and clock number are recorded but not evaluated yet.';
+  if (line.inZoneTransformer !== null && line.inZoneTransformer.otherTerminals.length === 0)
+    return 'A transformer stands in the zone, and the register does not say which terminals are behind it.';
   if (expectedCount === 0) return 'The register holds no terminal in service for this line.';
   if (expectedCount === 1 && line.goesBy === 'phasors')
     return 'The register holds one terminal in service; a differential needs at least two.';

@@ -7,7 +7,15 @@ import { ROLES, type Role } from '../../src/contract/role';
 
 const TABLE: Readonly<Record<Role, readonly string[]>> = {
   operator: ['see lines', 'acknowledge warnings'],
-  engineer: ['see lines', 'acknowledge warnings', 'see the register', 'edit the register', 'record settings'],
+  engineer: [
+    'see lines',
+    'acknowledge warnings',
+    'see the register',
+    'edit the register',
+    'record settings',
+    'replay settings',
+    'keep proposals',
+  ],
   planner: ['see lines'],
   admin: ['see lines', 'see the register', 'edit the register', 'record settings', 'see feeds'],
 };

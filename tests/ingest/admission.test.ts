@@ -20,7 +20,7 @@ function admitted(sent: unknown, { topic, line }: { topic?: string; line?: Parti
   return admission(
     { topic: topic ?? 'feed/arden-birk/arden/measurement', payload: payloadOf(sent) },
     {
-      roster: roster([registeredLine(line)], { workerIndex: 0, workerCount: 1 }),
+      roster: roster([registeredLine(line)], { workerIndex: 0, workerCount: 1, frequencyHz: 50 }),
       nowMs: AT_MS,
       rawReachMs: RAW_REACH_MS,
     },

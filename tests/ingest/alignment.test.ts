@@ -109,6 +109,12 @@ describe('an instant that lacks a terminal', () => {
     expect(alignment.due(AT_MS + 60_000)).toEqual([]);
   });
 
+  it('does not wait for a clock that was set back to catch up', () => {
+    const { hears, alignment } = gathering();
+    hears('arden');
+    expect(alignment.due(AT_MS - 3_600_000)).toHaveLength(1);
+  });
+
   it('is completed by the late measurement, with what it had and the late receipt alone', () => {
     const { hears, alignment } = gathering();
     hears('arden');

@@ -11,6 +11,7 @@ import {
   reportedMeasurement,
   rosterLine,
   settingsVersion,
+  withTransformer,
 } from './made-up-feed';
 
 const CLOCK_LIMIT_US = 100;
@@ -146,14 +147,15 @@ describe('a snapshot without a differential', () => {
     });
   });
 
-  it.each([
+  const unjudgeable: [string, Partial<RegisteredLine>, RegExp][] = [
     [
-      'with a transformer in its zone',
-      { inZoneTransformer: { otherVoltageKv: 110, clockNumber: 5 } },
-      /transformer stands in the zone.*not evaluated yet/,
+      'with a transformer in its zone and no terminal behind it',
+      withTransformer(),
+      /does not say which terminals are behind it/,
     ],
     ['with one terminal', { terminals: registeredLine().terminals.slice(0, 1) }, /at least two/],
-  ] as const)('is one of a line %s', (_, line, reason) => {
+  ];
+  it.each(unjudgeable)('is one of a line %s', (_, line, reason) => {
     const snapshot = computed(loaded, { line });
     expect(snapshot.points).toBeUndefined();
     expect(snapshot.unevaluable).toMatchObject({

@@ -13,7 +13,7 @@ import {
 } from '../../src/ingest/line-watch';
 import type { RegisteredLine } from '../../src/store/register';
 import { warningLimits } from '../../src/warnings/limits';
-import { AT_MS, balanced, measurement, registeredLine, rosterLine } from './made-up-feed';
+import { AT_MS, balanced, measurement, registeredLine, rosterLine, withTransformer } from './made-up-feed';
 
 const PERIOD_MS = 2_000;
 const LIMITS = warningLimits({ nearRatio: 0.7, periodMs: PERIOD_MS, latenessMs: 2_000 });
@@ -210,6 +210,12 @@ describe('blind', () => {
     expect(changes[1]!.atMs).toBeGreaterThan(nowMs - LIMITS.blindAfterMs);
   });
 
+  it('opens when the clock was set back, since what was last seen lies ahead', () => {
+    sees(0.2);
+    nowMs -= 3_600_000;
+    expect(turnsOf(hearsNothingFor(100))).toEqual(['blind opens']);
+  });
+
   it('lets a replayed hour be judged by its own instants', () => {
     nowMs += 3_600_000;
     const opened: WarningChange[] = [];
@@ -304,10 +310,11 @@ describe('what raises nothing', () => {
     expect(conditionOf(watch)).toBe('near');
   });
 
-  it.each([
+  const unjudgeable: [string, Partial<RegisteredLine>][] = [
     ['without settings', { settings: [] }],
-    ['with a transformer in its zone', { inZoneTransformer: { otherVoltageKv: 110, clockNumber: 5 } }],
-  ])('is a line %s, heard or not', (_, line) => {
+    ['with a transformer in its zone', withTransformer()],
+  ];
+  it.each(unjudgeable)('is a line %s, heard or not', (_, line) => {
     watch = newWatch(line);
     expect([...seesFor(120_000, 2), ...hearsNothingFor(60_000)]).toEqual([]);
     expect(conditionOf(watch)).toBe('not evaluated');

@@ -1,6 +1,8 @@
 import type { Measurement } from '../../src/contract/feed';
+import { inZoneTransformerSchema, newSettingsVersionSchema } from '../../src/contract/register';
 import { roster, type RosterLine } from '../../src/ingest/roster';
 import type { RegisteredLine } from '../../src/store/register';
+import { newLine, settingsSent, terminalSent } from '../register/made-up-line';
 
 /** Ten o'clock, UTC, on a spring morning: the instant about which the made-up feed turns. */
 export const AT_MS = Date.parse('2026-03-02T10:00:00.000Z');
@@ -50,28 +52,15 @@ export function registeredLine(
   change: Partial<RegisteredLine> = {},
   terminalKeys: readonly string[] = ['arden', 'birk'],
 ): RegisteredLine {
+  // by way of the contract, so that what a line need not say is filled in as the register fills it in
+  const { terminals, ...line } = newLine({ terminals: terminalKeys.map(terminalSent) });
   return {
     id: 7,
-    key: 'arden-birk',
-    name: 'Arden – Birk',
-    voltageKv: 220,
-    ratingAmps: 1000,
-    emergencyRatingAmps: 1200,
-    lengthKm: 42.5,
-    kind: 'overhead',
-    capacitanceNfPerKm: 8.9,
-    goesBy: 'phasors',
-    inService: true,
-    seriesCompensated: false,
-    inZoneTransformer: null,
-    terminals: terminalKeys.map((key, position) => ({
-      key,
+    ...line,
+    terminals: terminals.map((terminal, position) => ({
+      ...terminal,
       position,
-      substation: key,
-      substationName: key[0]!.toUpperCase() + key.slice(1),
-      ctPrimaryAmps: 1200,
-      ctClass: '5P20',
-      inService: true,
+      substationName: terminal.key[0]!.toUpperCase() + terminal.key.slice(1),
     })),
     terminalIds: TERMINAL_IDS,
     settings: [settingsVersion(1, '2026-01-01T00:00:00.000Z', 120)],
@@ -79,27 +68,21 @@ export function registeredLine(
   };
 }
 
-export const settingsVersion = (
+export function settingsVersion(
   id: number,
   validFrom: string,
   pickupAmps: number,
-): RegisteredLine['settings'][number] => ({
-  id,
-  validFrom,
-  characteristic: {
-    kind: 'two-slope',
-    pickupAmps,
-    slope1: 0.3,
-    kneeAmps: 1500,
-    slope2: 0.6,
-    slopeStart: 'from-zero',
-  },
-  restraint: { kind: 'scaled-sum', factor: 0.5 },
-  note: 'As commissioned.',
-  recordedBy: 'Mira Holt',
-  recordedAt: validFrom,
+): RegisteredLine['settings'][number] {
+  const characteristic = { ...(settingsSent().characteristic as object), pickupAmps };
+  const version = newSettingsVersionSchema.parse(settingsSent({ validFrom, characteristic }));
+  return { id, ...version, recordedBy: 'Mira Holt', recordedAt: validFrom };
+}
+
+/** A line with a transformer of 220/110 kV in its zone. */
+export const withTransformer = (): Partial<RegisteredLine> => ({
+  inZoneTransformer: inZoneTransformerSchema.parse({ otherVoltageKv: 110, clockNumber: 5 }),
 });
 
 /** A line as the worker holds it. */
 export const rosterLine = (line: RegisteredLine = registeredLine()): RosterLine =>
-  roster([line], { workerIndex: 0, workerCount: 1 }).get(line.key)!;
+  roster([line], { workerIndex: 0, workerCount: 1, frequencyHz: 50 }).get(line.key)!;

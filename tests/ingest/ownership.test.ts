@@ -34,7 +34,7 @@ describe('the owner of a line', () => {
   it('is exactly one worker’s roster', () => {
     const register = KEYS.slice(0, 60).map((key, id) => registeredLine({ id, key }));
     const keys = [0, 1, 2].flatMap((workerIndex) => [
-      ...roster(register, { workerIndex, workerCount: 3 }).keys(),
+      ...roster(register, { workerIndex, workerCount: 3, frequencyHz: 50 }).keys(),
     ]);
     expect(keys.sort()).toEqual(KEYS.slice(0, 60).sort());
   });

@@ -35,7 +35,8 @@ const levels = (rung: 'hour' | 'day'): Promise<LevelRow[]> =>
 const hoursOf = (rows: readonly LevelRow[]): number[] => [
   ...new Set(rows.map(({ start }) => (start.getTime() - DAY) / HOUR_MS)),
 ];
-const catchUp = (nowMs: number) => catchUpRungs(store, line, { nowMs, rawReachMs: RAW_REACH_MS });
+const catchUp = (nowMs: number) =>
+  catchUpRungs(store, line, { nowMs, rawReachMs: RAW_REACH_MS, caughtUpMs: undefined });
 
 /** Raw rows every minute of an hour of the day, at a level all their own. */
 const storeHour = (hour: number, levelAmps: number, { from = 0, to = 60 } = {}): Promise<void> => {
@@ -85,7 +86,7 @@ describe('catching up', () => {
     await storeHour(9, 10);
     await storeHour(10, 20);
     await storeHour(11, 30, { to: 20 });
-    expect(await catchUp(DAY + 11 * HOUR_MS + 20 * 60_000)).toEqual({ hourClosed: true });
+    expect(await catchUp(DAY + 11 * HOUR_MS + 20 * 60_000)).toMatchObject({ hourClosed: true });
     const hours = await levels('hour');
     expect(hoursOf(hours)).toEqual([9, 10, 11]);
     expect(hours.filter(({ phase }) => phase === 'a').map(({ allCount }) => allCount)).toEqual([60, 60, 20]);
@@ -98,7 +99,7 @@ describe('catching up', () => {
     await storeHour(10, 10, { to: 20 });
     await catchUp(DAY + 10 * HOUR_MS + 20 * 60_000);
     await storeHour(10, 10, { from: 20, to: 40 });
-    expect(await catchUp(DAY + 10 * HOUR_MS + 40 * 60_000)).toEqual({ hourClosed: false });
+    expect(await catchUp(DAY + 10 * HOUR_MS + 40 * 60_000)).toMatchObject({ hourClosed: false });
     expect((await levels('hour'))[0]).toMatchObject({ allCount: 40 });
   });
 
@@ -135,7 +136,7 @@ describe('a late completion', () => {
     expect((await levels('hour'))[0]).toMatchObject({ allCount: 60, qualifiedCount: 57 });
     await commitBatch(store, batchOf(99, DAY + 10 * HOUR_MS), new Date(nowMs));
     expect(await readStaleHours(store, [line.id])).toHaveLength(1);
-    expect(await catchUp(nowMs)).toEqual({ hourClosed: true });
+    expect(await catchUp(nowMs)).toMatchObject({ hourClosed: true });
     expect((await levels('hour'))[0]).toMatchObject({ allCount: 60, qualifiedCount: 59, greatestAmps: 99 });
     const [day] = await levels('day');
     expect(day).toMatchObject({ greatestAmps: 99 });
@@ -157,7 +158,7 @@ describe('a late completion', () => {
     const reachMs = nowMs - (DAY + 10.5 * HOUR_MS);
     const [before] = await levels('hour');
     await commitBatch(store, batchOf(99, DAY + 10 * HOUR_MS), new Date(nowMs));
-    await catchUpRungs(store, line, { nowMs, rawReachMs: reachMs });
+    await catchUpRungs(store, line, { nowMs, rawReachMs: reachMs, caughtUpMs: undefined });
     expect((await levels('hour'))[0]).toEqual(before);
     expect(await readStaleHours(store, [line.id])).toEqual([]);
   });
@@ -186,7 +187,11 @@ describe('a day that raw rows cover only in part', () => {
       whole.map((row) => ({ ...row, allCount: 43_200 })),
     );
     // the reach of the raw store begins in the afternoon of that day
-    await catchUpRungs(store, line, { nowMs, rawReachMs: nowMs - (DAY + 15 * HOUR_MS) });
+    await catchUpRungs(store, line, {
+      nowMs,
+      rawReachMs: nowMs - (DAY + 15 * HOUR_MS),
+      caughtUpMs: undefined,
+    });
     expect(hoursOf(await levels('hour'))).toEqual([22, 23]);
     expect((await levels('day'))[0]).toMatchObject({ allCount: 43_200 });
   });

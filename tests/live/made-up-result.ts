@@ -18,6 +18,7 @@ export const resultOf = (line: string, differentialAmps: number): Result => ({
   phases: { a: phase(differentialAmps), b: phase(8), c: phase(12) },
   throughAmps: 400,
   throughRatio: 0.4,
+  compensation: 'none',
   settingsVersion: 1,
   terminals: [],
 });

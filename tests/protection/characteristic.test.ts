@@ -7,9 +7,9 @@ import {
   thresholdAmps,
   utilisation,
 } from '../../src/protection/characteristic';
-import type { Characteristic } from '../../src/protection/characteristic';
+import type { TwoSlope } from '../../src/protection/two-slope';
 
-const FROM_ZERO: Characteristic = {
+const FROM_ZERO: TwoSlope = {
   kind: 'two-slope',
   pickupAmps: 150,
   slope1: 0.3,
@@ -17,8 +17,8 @@ const FROM_ZERO: Characteristic = {
   slope2: 0.7,
   slopeStart: 'from-zero',
 };
-const FROM_PICKUP: Characteristic = { ...FROM_ZERO, slopeStart: 'from-pickup' };
-const FLAT: Characteristic = { ...FROM_ZERO, slope1: 0, slope2: 0 };
+const FROM_PICKUP: TwoSlope = { ...FROM_ZERO, slopeStart: 'from-pickup' };
+const FLAT: TwoSlope = { ...FROM_ZERO, slope1: 0, slope2: 0 };
 
 describe.each([FROM_ZERO, FROM_PICKUP, FLAT])(
   'threshold $slopeStart with slope $slope1',

@@ -1,8 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import { operatingPoint, operatingPointFromReported, throughAmps } from '../../src/protection/evaluation';
-import type { OperatingPoint, Scheme } from '../../src/protection/evaluation';
+import type { OperatingPoint } from '../../src/protection/evaluation';
 import { phasor, rotate, scale } from '../../src/protection/phasor';
 import type { Phasor } from '../../src/protection/phasor';
+import type { PercentageScheme } from '../../src/protection/scheme';
 import { seededCurrents } from './seeded-currents';
 
 const CHARACTERISTIC = {
@@ -13,8 +14,11 @@ const CHARACTERISTIC = {
   slope2: 0.7,
   slopeStart: 'from-zero',
 } as const;
-const HALF_SUM: Scheme = { characteristic: CHARACTERISTIC, restraint: { kind: 'scaled-sum', factor: 0.5 } };
-const MAXIMUM: Scheme = { characteristic: CHARACTERISTIC, restraint: { kind: 'maximum' } };
+const HALF_SUM: PercentageScheme = {
+  characteristic: CHARACTERISTIC,
+  restraint: { kind: 'scaled-sum', factor: 0.5 },
+};
+const MAXIMUM: PercentageScheme = { characteristic: CHARACTERISTIC, restraint: { kind: 'maximum' } };
 
 function expectSamePoint(actual: OperatingPoint, expected: OperatingPoint): void {
   expect(actual.differentialAmps).toBeCloseTo(expected.differentialAmps, 8);

@@ -1,11 +1,11 @@
 import { describe, expect, test } from 'vitest';
 import { phasor } from '../../src/protection/phasor';
 import { restraintAmps, restraintConvention, restraintProblems } from '../../src/protection/restraint';
-import type { Restraint } from '../../src/protection/restraint';
+import type { MagnitudeRestraint } from '../../src/protection/restraint';
 
 const CURRENTS = [phasor(300, 400), phasor(-300, 0), phasor(0, -100)];
-const MAXIMUM: Restraint = { kind: 'maximum' };
-const scaledSum = (factor: number): Restraint => ({ kind: 'scaled-sum', factor });
+const MAXIMUM: MagnitudeRestraint = { kind: 'maximum' };
+const scaledSum = (factor: number): MagnitudeRestraint => ({ kind: 'scaled-sum', factor });
 
 describe('restraint current', () => {
   test('is the scaled sum of all magnitudes', () => {

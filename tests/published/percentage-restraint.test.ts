@@ -1,11 +1,11 @@
 import { describe, expect, test } from 'vitest';
 import { operatingPoint, throughAmps } from '../../src/protection/evaluation';
-import type { Scheme } from '../../src/protection/evaluation';
 import { phasor } from '../../src/protection/phasor';
+import type { PercentageScheme } from '../../src/protection/scheme';
 import { expectFigure, printed } from './tolerance';
 
 /** One slope all along, on half the sum of both ends' magnitudes: the scheme of the textbooks. */
-function singleSlope(slope: number, pickupAmps: number): Scheme {
+function singleSlope(slope: number, pickupAmps: number): PercentageScheme {
   return {
     characteristic: {
       kind: 'two-slope',

@@ -114,6 +114,8 @@ describe('a terminal as typed', () => {
   });
 });
 
+const PLACE = { timeZone: ZONE, terminals: ['arden', 'birk'], capacitanceNfPerKm: 8.9 };
+
 describe('settings as typed', () => {
   const typed = {
     validFrom: '2026-03-01T10:00',
@@ -128,7 +130,7 @@ describe('settings as typed', () => {
   };
 
   it('turn per cent into ratios and the site’s clock into an instant', () => {
-    const { value, problems } = settingsFromTyped(typed, ZONE);
+    const { value, problems } = settingsFromTyped(typed, PLACE);
     expect(problems).toEqual([]);
     expect(newSettingsVersionSchema.parse(value)).toMatchObject({
       validFrom: '2026-03-01T09:00:00.000Z',
@@ -138,18 +140,18 @@ describe('settings as typed', () => {
   });
 
   it('need no factor when the greatest magnitude restrains', () => {
-    const { value, problems } = settingsFromTyped({ ...typed, restraint: 'maximum', factor: '' }, ZONE);
+    const { value, problems } = settingsFromTyped({ ...typed, restraint: 'maximum', factor: '' }, PLACE);
     expect(problems).toEqual([]);
     expect(newSettingsVersionSchema.parse(value).restraint).toEqual({ kind: 'maximum' });
   });
 
   it('say in the form’s own units what a slope may be', () => {
-    const { problems } = settingsFromTyped({ ...typed, slope1: '300' }, ZONE);
+    const { problems } = settingsFromTyped({ ...typed, slope1: '300' }, PLACE);
     expect(problemsByField(problems).slope1).toBe('A slope is 0 to 200 %.');
   });
 
   it('that no scheme can have are named together with what is missing', () => {
-    const { problems } = settingsFromTyped({ ...typed, validFrom: '', kneeAmps: '100', slope2: '10' }, ZONE);
+    const { problems } = settingsFromTyped({ ...typed, validFrom: '', kneeAmps: '100', slope2: '10' }, PLACE);
     expect(problems.map(({ field }) => field)).toEqual(['validFrom', 'kneeAmps', 'slope2']);
   });
 });

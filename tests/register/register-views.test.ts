@@ -2,7 +2,8 @@ import { describe, expect, it } from 'vitest';
 import type { RegisterLine } from '../../src/contract/register';
 import type { SettingsVersion } from '../../src/contract/settings-version';
 import { chargingExample } from '../../src/view/register-charging';
-import { characteristicDrawing, settingsTyped } from '../../src/view/register-drawing';
+import type { Characteristic } from '../../src/protection/characteristic';
+import { schemeDrawing } from '../../src/view/register-drawing';
 import {
   registerCounts,
   registerListAddress,
@@ -91,20 +92,49 @@ describe('the expected charging current', () => {
   });
 });
 
+const twoSlope: Characteristic = {
+  kind: 'two-slope',
+  pickupAmps: 120,
+  slope1: 0.3,
+  kneeAmps: 1500,
+  slope2: 0.6,
+  slopeStart: 'from-zero',
+};
+const alpha: Characteristic = { kind: 'alpha-plane', pickupAmps: 100, radius: 5, angleDeg: 180 };
+
 describe('a characteristic', () => {
-  const typed = { pickupAmps: '120', slope1: '30', kneeAmps: '1500', slope2: '60', slopeStart: 'from-zero' };
   const box = { width: 200, height: 100, left: 0, bottom: 0 };
 
-  it('is drawn from the pickup through corner and knee', () => {
-    const drawing = characteristicDrawing(settingsTyped(typed), box);
-    expect(drawing?.threshold).toHaveLength(4);
-    expect(drawing?.threshold[0]).toEqual([0, drawing?.pickupY]);
-    expect(drawing?.kneeX).toBeCloseTo(125);
+  it('with a threshold is drawn from the pickup through corner and knee', () => {
+    const drawing = schemeDrawing([twoSlope], box);
+    if (drawing?.kind !== 'threshold') throw new Error('A two-slope characteristic has a threshold.');
+    expect(drawing.curves[0]?.points).toHaveLength(4);
+    expect(drawing.curves[0]?.points[0]).toEqual([0, drawing.curves[0]?.pickupY]);
+    expect(drawing.curves[0]?.kneeX).toBeCloseTo(125);
+  });
+
+  it('with a region is drawn between the radius and its inverse, around 180°', () => {
+    const drawing = schemeDrawing([alpha], box);
+    if (drawing?.kind !== 'alpha-plane') throw new Error('An alpha plane has a region.');
+    const [centreX, centreY] = drawing.centre;
+    const distances = drawing.regions[0]!.points.map(([x, y]) => Math.hypot(x - centreX, y - centreY));
+    expect(Math.max(...distances)).toBeCloseTo(5 * drawing.unit);
+    expect(Math.min(...distances)).toBeCloseTo(drawing.unit / 5);
+    expect(drawing.regions[0]!.points.every(([x]) => x <= centreX + 1e-9)).toBe(true);
+  });
+
+  it('is laid over another of its kind in one frame, and over none of another kind', () => {
+    const higher = { ...twoSlope, pickupAmps: 240, kneeAmps: 3000 };
+    const both = schemeDrawing([twoSlope, higher], box);
+    if (both?.kind !== 'threshold') throw new Error('Both have thresholds.');
+    expect(both.curves[0]!.pickupY).toBeGreaterThan(both.curves[1]!.pickupY);
+    expect(schemeDrawing([twoSlope, alpha], box)).toBeUndefined();
   });
 
   it('is not drawn while its figures are not possible', () => {
-    expect(characteristicDrawing(settingsTyped({ ...typed, slope2: '10' }), box)).toBeUndefined();
-    expect(characteristicDrawing(settingsTyped({ ...typed, pickupAmps: '' }), box)).toBeUndefined();
+    expect(schemeDrawing([{ ...twoSlope, slope2: 0.1 }], box)).toBeUndefined();
+    expect(schemeDrawing([{ ...twoSlope, pickupAmps: Number.NaN }], box)).toBeUndefined();
+    expect(schemeDrawing([], box)).toBeUndefined();
   });
 
   it('is put in words with its convention', () => {

@@ -25,6 +25,7 @@ const version = (id: number, validFrom: string): SettingsVersion => ({
     slopeStart: 'from-zero',
   },
   restraint: { kind: 'scaled-sum', factor: 0.5 },
+  chargingCompensation: false,
   note: 'First copy.',
   recordedBy: 'Maren Oduya',
   recordedAt: validFrom,
@@ -51,7 +52,12 @@ describe('the facts beside a name', () => {
     const special = lineWith({
       seriesCompensated: true,
       goesBy: 'reported',
-      inZoneTransformer: { otherVoltageKv: 220, clockNumber: 5 },
+      inZoneTransformer: {
+        otherVoltageKv: 220,
+        clockNumber: 5,
+        otherTerminals: ['hask'],
+        removesZeroSequence: { line: true, other: true },
+      },
     });
     const facts = lineFacts(special, { ...context, inForce: undefined });
     expect(facts).toContain('series-compensated');
@@ -60,6 +66,35 @@ describe('the facts beside a name', () => {
     expect(facts).toContain('no settings recorded');
   });
 });
+
+const OTHER_KINDS = [
+  {
+    characteristic: {
+      kind: 'adaptive',
+      pickupAmps: 70,
+      ctErrors: [{ terminal: 'hask', errorBelow: 0.01, errorAbove: 0.05, limitAmps: 1200 }],
+      timeErrorMs: 0.05,
+    },
+    restraint: { kind: 'error-sum' },
+    says: [
+      'kind: adaptive restraint',
+      'pickup: 70\u00a0A',
+      'time error: 0.05\u00a0ms',
+      'hask: 1\u00a0% up to 1200\u00a0A, 5\u00a0% above',
+      'restraint: pickup and sum of errors',
+    ],
+  },
+  {
+    characteristic: { kind: 'alpha-plane', pickupAmps: 80, radius: 6, angleDeg: 195 },
+    restraint: { kind: 'none' },
+    says: ['kind: alpha plane', 'pickup: 80\u00a0A', 'radius: 6', 'angle: 195° around 180°'],
+  },
+  {
+    characteristic: { kind: 'phase-comparison', toleranceDeg: 60, releaseAmps: 120 },
+    restraint: { kind: 'none' },
+    says: ['kind: phase comparison', 'tolerance: 60°', 'release: 120\u00a0A at both ends'],
+  },
+] satisfies (Pick<SettingsVersion, 'characteristic' | 'restraint'> & { says: string[] })[];
 
 describe('the rows of the phases', () => {
   it('a phase that cannot be computed has dashes and the reason stands beside', () => {
@@ -227,6 +262,16 @@ describe('the versions of the settings', () => {
     const [row] = settingsRows([version(1, AT)], { nowMs: AT_MS, timeZone: 'Europe/Berlin' });
     expect(row?.values).toContainEqual({ name: 'first slope', value: '20\u00a0%, from zero' });
     expect(row?.values).toContainEqual({ name: 'restraint', value: '½ sum of magnitudes' });
+    expect(row?.values).toContainEqual({ name: 'charging', value: 'not compensated' });
+  });
+
+  it.each(OTHER_KINDS)('of $characteristic.kind carry its own figures and no others', (settings) => {
+    const recorded = { ...version(1, AT), ...settings, chargingCompensation: true };
+    const [row] = settingsRows([recorded], { nowMs: AT_MS, timeZone: 'Europe/Berlin' });
+    expect(row?.values.map(({ name, value }) => `${name}: ${value}`)).toEqual([
+      ...settings.says,
+      'charging: compensated from voltages',
+    ]);
   });
 });
 

@@ -4,7 +4,7 @@ import type { Result } from '../../src/contract/result';
 import type { LevelRow } from '../../src/store/levels';
 import type { RegisteredLine } from '../../src/store/register';
 import { type LineKnowledge, lineSummary } from '../../src/view/line-summary';
-import { AT_MS, iso, registeredLine, settingsVersion } from '../ingest/made-up-feed';
+import { AT_MS, iso, registeredLine, settingsVersion, withTransformer } from '../ingest/made-up-feed';
 
 const SILENT_AFTER_MS = 20_000;
 const HOUR_MS = 3_600_000;
@@ -25,6 +25,7 @@ const result = (change: Partial<Result> = {}): Result => ({
   phases: { a: phase(9), b: phase(8), c: phase(12) },
   throughAmps: 400,
   throughRatio: 0.4,
+  compensation: 'none',
   settingsVersion: 1,
   terminals: [],
   ...change,
@@ -87,10 +88,9 @@ describe('the condition of a line in a list', () => {
   });
 
   it('is not evaluated with a transformer in the zone', () => {
-    const inZoneTransformer = { otherVoltageKv: 110, clockNumber: 5 };
-    expect(summary({}, { inZoneTransformer })).toMatchObject({
+    expect(summary({}, withTransformer())).toMatchObject({
       condition: 'not evaluated',
-      inZoneTransformer,
+      ...withTransformer(),
     });
   });
 

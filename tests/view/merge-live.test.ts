@@ -20,6 +20,7 @@ const result = (change: Partial<Result>): Result => ({
   phases: { a: phaseAt(0.8), b: phaseAt(0.2), c: phaseAt(0.2) },
   throughAmps: 500,
   throughRatio: 0.6,
+  compensation: 'none',
   settingsVersion: 2,
   terminals: [],
   ...change,

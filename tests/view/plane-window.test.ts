@@ -36,6 +36,13 @@ describe('the window of the plane', () => {
     expect(at(560)).toEqual(at(575));
   });
 
+  it('of an adaptive scheme shows the pickup with room above it', () => {
+    const adaptive = { kind: 'adaptive', pickupAmps: 60, ctErrors: [], timeErrorMs: 0 } as const;
+    const window = planeWindow(adaptive, [{ restraintAmps: 75, differentialAmps: 8 }], near);
+    expect(window.restraintMax).toBeGreaterThanOrEqual(180);
+    expect(window.differentialMax).toBeGreaterThanOrEqual(window.restraintMax);
+  });
+
   it('a line without settings and points still has a window', () => {
     const window = planeWindow(undefined, [], near);
     expect(window.restraintMax).toBeGreaterThan(0);

@@ -49,6 +49,7 @@ export function lineWith(change: Partial<LineSummary> = {}): LineSummary {
     phases: { a: phaseAt(0.1), b: phaseAt(0.2), c: phaseAt(0.15) },
     throughAmps: 400,
     throughRatio: 0.5,
+    compensation: 'none',
     settingsVersion: 1,
     lastDay: { a: null, b: null, c: null },
     dailyLevels: [],

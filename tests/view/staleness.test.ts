@@ -44,11 +44,12 @@ describe('heard terminals', () => {
     test: false,
   });
   const result = (change: Partial<Result>): Result => {
-    const { at, condition, reason, phases, throughAmps, throughRatio, settingsVersion } = lineWith();
+    const { at, condition, reason, phases, throughAmps, throughRatio, compensation, settingsVersion } =
+      lineWith();
     return {
       line: 'x',
       publishedAt: AT,
-      ...{ at, condition, reason, phases, throughAmps, throughRatio, settingsVersion },
+      ...{ at, condition, reason, phases, throughAmps, throughRatio, compensation, settingsVersion },
       terminals: [terminal('x', true), terminal('y', true)],
       ...change,
     };

@@ -14,6 +14,7 @@ const version = (id: number, validFrom: string, pickupAmps: number): SettingsVer
     slopeStart: 'from-zero',
   },
   restraint: { kind: 'scaled-sum', factor: 0.5 },
+  chargingCompensation: false,
   note: 'first copy',
   recordedBy: 'Maren Oduya',
   recordedAt: validFrom,
@@ -27,6 +28,17 @@ describe('the recorded pickup over time', () => {
     expect(pickupSteps([newer, older], window)).toEqual([
       { fromMs: window.fromMs, toMs: Date.UTC(2026, 1, 1), pickup: 72 },
       { fromMs: Date.UTC(2026, 1, 1), toMs: window.toMs, pickup: 60 },
+    ]);
+  });
+
+  it('while a scheme without a pickup was in force there is none', () => {
+    const comparing: SettingsVersion = {
+      ...newer,
+      characteristic: { kind: 'phase-comparison', toleranceDeg: 60, releaseAmps: 120 },
+      restraint: { kind: 'none' },
+    };
+    expect(pickupSteps([comparing, older], window)).toEqual([
+      { fromMs: window.fromMs, toMs: Date.UTC(2026, 1, 1), pickup: 72 },
     ]);
   });
 

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { expectedTerminals } from '../../src/contract/expected-terminals';
 import { obstacle } from '../../src/warnings/obstacle';
-import { registeredLine } from '../ingest/made-up-feed';
+import { registeredLine, withTransformer } from '../ingest/made-up-feed';
 
 const out = (line: ReturnType<typeof registeredLine>, ...keys: string[]) => ({
   ...line,
@@ -19,11 +19,7 @@ describe('what keeps a line from being evaluated', () => {
     ['no terminal in service', out(three, 'arden', 'birk', 'corl'), /no terminal in service/],
     ['no terminal at all', registeredLine({}, []), /no terminal in service/],
     ['no settings', registeredLine({ settings: [] }), /no settings/],
-    [
-      'a transformer in the zone',
-      registeredLine({ inZoneTransformer: { otherVoltageKv: 110, clockNumber: 5 } }),
-      /transformer stands in the zone/,
-    ],
+    ['a transformer in the zone', registeredLine(withTransformer()), /transformer stands in the zone/],
     [
       'nothing, with one terminal, on a line that goes by reported magnitudes',
       registeredLine({ goesBy: 'reported' }, ['arden']),

@@ -1,7 +1,6 @@
 import { QueryClient, QueryClientProvider, useQueryClient } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import type { LineDetail } from '../../contract/lines';
-import { restraintConvention } from '../../protection/restraint';
 import type { CurrentUnit } from '../../view/line-unit';
 import type { PhaseName } from '../../view/phase';
 import { TAIL_MS } from '../../view/plane-tail';
@@ -83,11 +82,7 @@ function LineView({ detail: initial, site, mayAcknowledge, address }: LinePagePr
           unit={unit}
         />
         <div className="grid min-w-0 content-start gap-4">
-          <PhasesPanel
-            {...shared}
-            unit={unit}
-            convention={inForce === undefined ? undefined : restraintConvention(inForce.restraint)}
-          />
+          <PhasesPanel {...shared} unit={unit} restraint={inForce?.restraint} />
           <CurrentSumPanel
             {...shared}
             inService={inService}

@@ -1,9 +1,11 @@
 import { useMemo, useState } from 'react';
 import type { LineSummary } from '../../contract/lines';
 import type { SettingsVersion } from '../../contract/settings-version';
+import { isThresholdCharacteristic } from '../../protection/characteristic';
 import { restraintConvention } from '../../protection/restraint';
 import type { Reading } from '../../view/line-readings';
 import { missingFiguresReason, phaseRows } from '../../view/line-phase-rows';
+import { characteristicName } from '../../view/line-settings-rows';
 import { unitWords } from '../../view/line-unit';
 import type { CurrentUnit } from '../../view/line-unit';
 import { csvName } from '../../view/line-csv';
@@ -39,6 +41,35 @@ const EXTENTS: readonly { value: PlaneExtent; label: string }[] = [
 
 /** Differential against restraint, with the recorded threshold and the way of the last ten minutes. */
 export function OperatingPlane(props: Props) {
+  const { inForce } = props;
+  if (inForce !== undefined && !isThresholdCharacteristic(inForce.characteristic)) {
+    return <RegionInstead {...props} inForce={inForce} />;
+  }
+  return <ThresholdPlane {...props} />;
+}
+
+/** A scheme that weighs no differential against a restraint has a plane of its own, on the Review page. */
+function RegionInstead({ line, inForce }: Props & { inForce: SettingsVersion }) {
+  return (
+    <section className="panel min-w-0 p-4 sm:p-[1.125rem]" aria-labelledby="plane-title">
+      <h2 id="plane-title" className="m-0 text-body font-semibold">
+        Operating point
+      </h2>
+      <p className="mt-0.5 text-caption text-ink-2">{missingFiguresReason(line) ?? 'Judged by region'}</p>
+      <p className="mt-3 max-w-[60ch] text-pretty">
+        This line’s scheme is {inForce.characteristic.kind === 'alpha-plane' ? 'an' : 'a'}{' '}
+        {characteristicName(inForce.characteristic.kind)}: it operates outside a region and has no threshold
+        over restraint.{' '}
+        <a className="link" href={`/lines/${line.key}/review`}>
+          Its plane is on the Review page
+        </a>
+        .
+      </p>
+    </section>
+  );
+}
+
+function ThresholdPlane(props: Props) {
   const { line, inForce, readings, unit, site, nowMs } = props;
   const [extent, setExtent] = useState<PlaneExtent>('near the points');
   const ink = useChartInk();
@@ -97,6 +128,7 @@ function usePlaneOption(
   return useMemo(() => {
     if (ink === undefined || inForce === undefined) return undefined;
     const { characteristic, restraint } = inForce;
+    if (!isThresholdCharacteristic(characteristic)) return undefined;
     const unitAmps = unit === 'amperes' ? 1 : line.ratingAmps;
     const shape = planeShape(line, { characteristic, readings, extent, unitAmps });
     const rows = new Map(phaseRows(line, unit, site).map((row) => [row.phase, row]));

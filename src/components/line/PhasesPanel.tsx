@@ -1,4 +1,6 @@
 import type { LineSummary } from '../../contract/lines';
+import type { RestraintOnWire } from '../../contract/settings-version';
+import { restraintConvention } from '../../protection/restraint';
 import { CONDITION_INK } from '../../view/condition-words';
 import { missingFiguresReason, phaseRows } from '../../view/line-phase-rows';
 import type { PhaseRow } from '../../view/line-phase-rows';
@@ -11,21 +13,32 @@ interface Props {
   readonly unit: CurrentUnit;
   readonly site: SiteCustom;
   readonly faded: boolean;
-  /** the restraint convention in words; undefined without settings */
-  readonly convention: string | undefined;
+  /** undefined without settings */
+  readonly restraint: RestraintOnWire | undefined;
 }
 
-const FIGURES = [
+interface Figure {
+  readonly head: string;
+  readonly of: (row: PhaseRow) => string;
+  readonly live: boolean;
+  /** only schemes that form a restraint current have it */
+  readonly ofRestraint?: true;
+}
+
+const FIGURES: readonly Figure[] = [
   { head: 'differential', of: (row: PhaseRow) => row.differential, live: true },
-  { head: 'restraint', of: (row: PhaseRow) => row.restraint, live: true },
-  { head: 'threshold', of: (row: PhaseRow) => row.threshold, live: true },
+  { head: 'restraint', of: (row: PhaseRow) => row.restraint, live: true, ofRestraint: true },
+  { head: 'threshold', of: (row: PhaseRow) => row.threshold, live: true, ofRestraint: true },
   { head: 'utilisation', of: (row: PhaseRow) => row.utilisation, live: true },
   { head: 'standing, 24 h', of: (row: PhaseRow) => row.standing, live: false },
   { head: 'of pickup', of: (row: PhaseRow) => row.shareOfPickup, live: false },
-] as const;
+];
 
 /** The three phases in figures. On a narrow page the phases are the columns. */
-export function PhasesPanel({ line, unit, site, faded, convention }: Props) {
+export function PhasesPanel({ line, unit, site, faded, restraint }: Props) {
+  const figures = FIGURES.filter(
+    ({ ofRestraint }) => restraint?.kind !== 'none' || ofRestraint === undefined,
+  );
   const rows = phaseRows(line, unit, site);
   const missing = missingFiguresReason(line);
   return (
@@ -35,31 +48,38 @@ export function PhasesPanel({ line, unit, site, faded, convention }: Props) {
       </h2>
       <p className="mt-0.5 mb-2 text-caption text-ink-2">
         {unit === 'amperes' ? 'Amperes primary' : `Per unit of ${Math.round(line.ratingAmps)} A`}
-        {convention === undefined ? '' : `; restraint is ${convention}`}
+        {restraintWords(restraint)}
       </p>
       <div className="hidden @min-[34rem]:block">
-        <WideTable rows={rows} faded={faded} />
+        <WideTable figures={figures} rows={rows} faded={faded} />
       </div>
       <div className="@min-[34rem]:hidden">
-        <NarrowTable rows={rows} faded={faded} />
+        <NarrowTable figures={figures} rows={rows} faded={faded} />
       </div>
       {missing !== undefined && <p className="mt-2 text-ink-2">– {missing}</p>}
     </section>
   );
 }
 
+function restraintWords(restraint: RestraintOnWire | undefined): string {
+  if (restraint === undefined) return '';
+  if (restraint.kind === 'none') return '; this scheme forms no restraint current';
+  return `; restraint is ${restraintConvention(restraint)}`;
+}
+
 interface TableProps {
+  readonly figures: readonly Figure[];
   readonly rows: readonly PhaseRow[];
   readonly faded: boolean;
 }
 
-function WideTable({ rows, faded }: TableProps) {
+function WideTable({ figures, rows, faded }: TableProps) {
   return (
     <table className="figures">
       <thead>
         <tr>
           <th scope="col">phase</th>
-          {FIGURES.map(({ head }) => (
+          {figures.map(({ head }) => (
             <th key={head} scope="col" className="figure">
               {head}
             </th>
@@ -72,7 +92,7 @@ function WideTable({ rows, faded }: TableProps) {
             <th scope="row">
               <PhaseName row={row} faded={faded} />
             </th>
-            {FIGURES.map(({ head, of, live }) => (
+            {figures.map(({ head, of, live }) => (
               <td key={head} className={`figure ${inkOf(row, live && faded)} ${live ? 'live-value' : ''}`}>
                 {of(row)}
               </td>
@@ -84,7 +104,7 @@ function WideTable({ rows, faded }: TableProps) {
   );
 }
 
-function NarrowTable({ rows, faded }: TableProps) {
+function NarrowTable({ figures, rows, faded }: TableProps) {
   return (
     <table className="figures">
       <thead>
@@ -98,7 +118,7 @@ function NarrowTable({ rows, faded }: TableProps) {
         </tr>
       </thead>
       <tbody>
-        {FIGURES.map(({ head, of, live }) => (
+        {figures.map(({ head, of, live }) => (
           <tr key={head}>
             <th scope="row">{head}</th>
             {rows.map((row) => (

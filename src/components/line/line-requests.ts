@@ -1,5 +1,7 @@
 import { lineDetailSchema, levelListSchema, snapshotListSchema } from '../../contract/lines';
 import type { LevelList, LineDetail, Rung, Snapshot } from '../../contract/lines';
+import { reviewCloudSchema } from '../../contract/review';
+import type { ReviewCloud } from '../../contract/review';
 import type { TrendWindow } from '../../view/trend-span';
 import { apiRequest } from '../shell/api-request';
 
@@ -24,6 +26,14 @@ export function fetchLevels(
 ): Promise<LevelList> {
   const query = new URLSearchParams({ from: instant(fromMs), to: instant(toMs), rung });
   return apiRequest(`${address(key)}/levels?${query}`, { answer: levelListSchema, signal });
+}
+
+export function fetchReviewCloud(
+  { key, signal }: LineRequest,
+  { fromMs, toMs }: TrendWindow,
+): Promise<ReviewCloud> {
+  const query = new URLSearchParams({ from: instant(fromMs), to: instant(toMs) });
+  return apiRequest(`${address(key)}/review?${query}`, { answer: reviewCloudSchema, signal });
 }
 
 /** All snapshots of a window, oldest first, over as many answers as it takes. */

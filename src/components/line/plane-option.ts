@@ -3,7 +3,7 @@ import type { EChartsCoreOption } from 'echarts/core';
 import type { PerPhase } from '../../protection/phase';
 import { PHASES } from '../../view/phase';
 import type { PhaseName } from '../../view/phase';
-import type { PhasePlace, PlaneShape, TailPlace } from '../../view/plane-shape';
+import type { PhasePlace, PlanePlace, PlaneShape, TailPlace } from '../../view/plane-shape';
 import { axisBase, chartBase, CHART_TYPE, hatching, tooltipBase, tooltipLines } from '../charts/chart-axes';
 import type { ChartInk } from '../charts/chart-ink';
 import { planeWordsSeries } from './plane-words';
@@ -15,6 +15,17 @@ export interface PlaneDrawing extends Omit<PlaneShape, 'points'> {
   /** values are not live: marks are outlines */
   readonly faded: boolean;
   readonly names: { readonly restraint: string; readonly differential: string };
+  /** where snapshots lay, the denser the darker */
+  readonly cloud?: readonly CloudPatch[];
+  /** where a prediction goes, with the word at its end */
+  readonly path?: { readonly places: readonly PlanePlace[]; readonly label: string };
+}
+
+/** A rectangle of the plane; `density` from 0 to 1. */
+export interface CloudPatch {
+  readonly from: PlanePlace;
+  readonly to: PlanePlace;
+  readonly density: number;
 }
 
 export type PlaneMark = PhasePlace & {
@@ -72,6 +83,8 @@ export function planeOption(drawing: PlaneDrawing): EChartsCoreOption {
     },
     series: [
       ...thresholdSeries(drawing),
+      ...cloudSeries(drawing),
+      ...pathSeries(drawing),
       ...PHASES.map((phase) => tailSeries(drawing, phase)),
       ...drawing.points.map((mark) => pointSeries(mark, drawing)),
       planeWordsSeries(drawing),
@@ -91,6 +104,70 @@ function thresholdSeries({ ink, threshold }: PlaneDrawing): LineSeriesOption[] {
       z: 2,
       lineStyle: { color: ink.ink, width: 2 },
       areaStyle: { origin: 'end', color: hatching(ink.hairline), opacity: 1 },
+    },
+  ];
+}
+
+function cloudSeries({ ink, cloud = [] }: PlaneDrawing): CustomSeriesOption[] {
+  if (cloud.length === 0) return [];
+  return [
+    {
+      id: 'cloud',
+      type: 'custom',
+      silent: true,
+      clip: true,
+      z: 3,
+      data: [0],
+      renderItem: (_params, api) => ({
+        type: 'group',
+        children: cloud.map(({ from, to, density }) => {
+          const [left = 0, bottom = 0] = api.coord([from.restraint, from.differential]);
+          const [right = 0, top = 0] = api.coord([to.restraint, to.differential]);
+          return {
+            type: 'rect' as const,
+            // a patch under a pixel would vanish, and with it the snapshots that lay there
+            shape: {
+              x: left,
+              y: top,
+              width: Math.max(1.5, right - left),
+              height: Math.max(1.5, bottom - top),
+            },
+            style: { fill: ink.ink2, opacity: 0.12 + 0.6 * density },
+          };
+        }),
+      }),
+    },
+  ];
+}
+
+function pathSeries({ ink, path }: PlaneDrawing): LineSeriesOption[] {
+  if (path === undefined || path.places.length === 0) return [];
+  const end = path.places.length - 1;
+  return [
+    {
+      id: 'path',
+      type: 'line',
+      silent: true,
+      z: 4,
+      symbol: (_value: unknown, { dataIndex }: { dataIndex: number }) =>
+        dataIndex === end ? 'circle' : 'none',
+      symbolSize: 8,
+      showAllSymbol: true,
+      data: path.places.map((place, index) => ({
+        value: [place.restraint, place.differential],
+        label: {
+          show: index === end,
+          formatter: path.label,
+          position: 'left' as const,
+          distance: 8,
+          ...CHART_TYPE,
+          color: ink.accent,
+          textBorderColor: ink.panel,
+          textBorderWidth: 3,
+        },
+      })),
+      lineStyle: { color: ink.accent, width: 1.5, type: 'dashed' },
+      itemStyle: { color: ink.panel, borderColor: ink.accent, borderWidth: 1.5 },
     },
   ];
 }

@@ -15,7 +15,7 @@ export class RequestRefused extends Error {
 
 export interface RequestOptions<Answer> {
   readonly answer: z.ZodType<Answer>;
-  readonly method?: 'GET' | 'POST' | 'PATCH';
+  readonly method?: 'GET' | 'POST' | 'PATCH' | 'DELETE';
   readonly body?: unknown;
   readonly signal?: AbortSignal;
 }

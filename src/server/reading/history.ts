@@ -66,6 +66,7 @@ function snapshotOnWire(row: SnapshotRow, line: RegisteredLine): Snapshot {
       c: phase(row.differentialCAmps, row.restraintCAmps, row.thresholdCAmps, row.utilisationC),
     },
     throughAmps: row.throughAmps,
+    compensation: rowCompensation(row),
     settingsVersion: row.settingRecordId,
     terminals: line.terminals.map(({ key }) => terminalOnWire(key, sent.get(line.terminalIds.get(key)!))),
   };
@@ -79,6 +80,11 @@ const phase = (
   thresholdAmps: thresholdAmps ?? null,
   utilisation: utilisation ?? null,
 });
+
+function rowCompensation({ flags }: SnapshotRow): Snapshot['compensation'] {
+  if (hasFlag(flags, 'compensationFellBack')) return 'fallen back';
+  return hasFlag(flags, 'chargingCompensated') ? 'applied' : 'none';
+}
 
 /** Why a raw row has no differential, as far as the row itself tells. */
 function rowReason(row: SnapshotRow, line: RegisteredLine): string | null {

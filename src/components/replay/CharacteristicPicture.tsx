@@ -1,0 +1,166 @@
+import { useId } from 'react';
+import {
+  regionPicture,
+  thresholdPicture,
+  type DrawingRoom,
+  type RegionPicture,
+  type SideDrawn,
+  type ThresholdPicture,
+} from '../../view/replay-drawing';
+import { PhaseMarker } from '../marks/PhaseMarker';
+
+interface Props {
+  readonly replayed: SideDrawn | undefined;
+  readonly recorded: SideDrawn | undefined;
+}
+
+const ROOM: DrawingRoom = { width: 460, height: 260, left: 44, bottom: 34, top: 14 };
+const HALF: DrawingRoom = { width: 240, height: 240, left: 4, bottom: 4, top: 4 };
+
+/** Both characteristics: over one pair of axes where both have a threshold, else each in its own plane. */
+export function CharacteristicPicture({ replayed, recorded }: Props) {
+  const sides = [replayed, recorded].filter((side) => side !== undefined);
+  if (sides.length === 0) return null;
+  const together = thresholdPicture(sides, ROOM);
+  if (together !== undefined)
+    return (
+      <figure className="m-0">
+        <ThresholdDrawing picture={together} tried={replayed !== undefined} />
+        <Key tried={replayed !== undefined} recorded={recorded !== undefined} />
+      </figure>
+    );
+  return (
+    <div className="flex flex-wrap gap-4">
+      {replayed && <OwnPlane side={replayed} title="these settings" tried />}
+      {recorded && <OwnPlane side={recorded} title="recorded" />}
+    </div>
+  );
+}
+
+function OwnPlane({ side, title, tried = false }: { side: SideDrawn; title: string; tried?: boolean }) {
+  const region = regionPicture(side, HALF);
+  const threshold = thresholdPicture([side], ROOM);
+  return (
+    <figure className="m-0 min-w-0 flex-1 basis-56">
+      <figcaption className="text-caption text-ink-2">{title}</figcaption>
+      {region && <RegionDrawing picture={region} tried={tried} />}
+      {threshold && <ThresholdDrawing picture={threshold} tried={tried} />}
+    </figure>
+  );
+}
+
+const path = (points: readonly (readonly [number, number])[]): string =>
+  `M${points.map(([x, y]) => `${x.toFixed(1)} ${y.toFixed(1)}`).join('L')}`;
+
+/** The first curve is that of the settings tried, unless there are none. */
+function ThresholdDrawing({ picture, tried }: { picture: ThresholdPicture; tried: boolean }) {
+  const clip = useId();
+  const { width, height, left, bottom, top } = ROOM;
+  const isTried = (index: number) => tried && index === 0;
+  return (
+    <svg
+      viewBox={`0 0 ${width} ${height}`}
+      className="block w-full"
+      role="img"
+      aria-label="Threshold over restraint, with the greatest point of each phase"
+    >
+      <clipPath id={clip}>
+        <rect x={left} y={top} width={width - left} height={height - bottom - top + 6} />
+      </clipPath>
+      {picture.differentialTicks.map(({ y, label }) => (
+        <g key={label}>
+          <line x1={left} x2={width} y1={y} y2={y} stroke="var(--hairline)" />
+          <text x={left - 6} y={y + 4} textAnchor="end" className="fill-ink-2 text-caption">
+            {label}
+          </text>
+        </g>
+      ))}
+      {picture.restraintTicks.map(({ x, label }) => (
+        <text key={label} x={Math.min(x, width - 12)} y={height - bottom + 16} textAnchor="middle" className="fill-ink-2 text-caption">
+          {label}
+        </text>
+      ))}
+      <text x={left} y={10} className="fill-ink-2 text-caption">
+        differential, A
+      </text>
+      <text x={width} y={height - 3} textAnchor="end" className="fill-ink-2 text-caption">
+        restraint, A
+      </text>
+      <g clipPath={`url(#${clip})`}>
+        {picture.curves.map((curve, index) => (
+          <path
+            key={index}
+            d={path(curve)}
+            fill="none"
+            stroke={isTried(index) ? 'var(--accent)' : 'var(--ink)'}
+            strokeWidth={2}
+            strokeDasharray={isTried(index) ? undefined : '6 4'}
+          />
+        ))}
+        {picture.points.map((points, index) => (
+          <g key={index} color={isTried(index) ? 'var(--accent)' : 'var(--ink)'}>
+            {points.map(({ phase, at: [x, y] }) => (
+              <g key={phase} transform={`translate(${x} ${y})`}>
+                <PhaseMarker phase={phase} size={4.5} hollow={!isTried(index)} />
+              </g>
+            ))}
+          </g>
+        ))}
+      </g>
+    </svg>
+  );
+}
+
+function RegionDrawing({ picture, tried }: { picture: RegionPicture; tried: boolean }) {
+  const { centre, radius } = picture;
+  const colour = tried ? 'var(--accent)' : 'var(--ink)';
+  return (
+    <>
+      <svg
+        viewBox={`0 0 ${HALF.width} ${HALF.height}`}
+        className="block w-full max-w-72"
+        role="img"
+        aria-label={picture.words}
+      >
+        <circle cx={centre[0]} cy={centre[1]} r={radius} fill="none" stroke="var(--hairline)" />
+        <line x1={centre[0] - radius} x2={centre[0] + radius} y1={centre[1]} y2={centre[1]} stroke="var(--hairline)" />
+        <line x1={centre[0]} x2={centre[0]} y1={centre[1] - radius} y2={centre[1] + radius} stroke="var(--hairline)" />
+        <path d={picture.restrains} fill="none" stroke={colour} strokeWidth={2} strokeDasharray={tried ? undefined : '6 4'} />
+        {picture.labels.map(({ at: [x, y], text }) => (
+          <text key={text} x={x} y={y + 4} textAnchor="middle" className="fill-ink-2 text-caption">
+            {text}
+          </text>
+        ))}
+        <g color={colour}>
+          {picture.points.map(({ phase, at: [x, y] }) => (
+            <g key={phase} transform={`translate(${x} ${y})`}>
+              <PhaseMarker phase={phase} size={4.5} hollow={!tried} />
+            </g>
+          ))}
+        </g>
+      </svg>
+      <p className="mt-1 text-caption text-ink-2">{picture.words}</p>
+    </>
+  );
+}
+
+function Key({ tried, recorded }: { tried: boolean; recorded: boolean }) {
+  return (
+    <figcaption className="mt-1 flex flex-wrap gap-x-5 text-caption text-ink-2">
+      {tried && <Entry colour="var(--accent)" words="these settings, filled marks" />}
+      {recorded && <Entry colour="var(--ink)" dash="6 4" words="recorded, outlined marks" />}
+      <span>marks: each phase where it came nearest</span>
+    </figcaption>
+  );
+}
+
+function Entry({ colour, dash, words }: { colour: string; dash?: string; words: string }) {
+  return (
+    <span className="inline-flex items-center gap-1.5">
+      <svg width="28" height="8" aria-hidden="true">
+        <line x1="0" x2="28" y1="4" y2="4" stroke={colour} strokeWidth="2" strokeDasharray={dash} />
+      </svg>
+      {words}
+    </span>
+  );
+}

@@ -1,0 +1,93 @@
+import { useQuery } from '@tanstack/react-query';
+import { useCallback, useMemo, useState } from 'react';
+import type { LineDetail } from '../../contract/lines';
+import type { Result } from '../../contract/result';
+import type { SettingsVersion } from '../../contract/settings-version';
+import { expectedLevels } from '../../view/review-expected';
+import type { ReviewLine } from '../../view/review-line';
+import { INFEEDS, reviewLoadability, reviewSensitivity } from '../../view/review-margins';
+import type { MismatchBasis } from '../../view/review-model';
+import { reviewPoints, reviewSequences, reviewSnapshot, terminalsOnLineSide } from '../../view/review-now';
+import { periodInAddress, periodWindow } from '../../view/review-period';
+import type { ReviewPeriod } from '../../view/review-period';
+import { isComputable } from '../../protection/evaluation';
+import { fetchReviewCloud } from '../line/line-requests';
+
+/** The period of the page, kept in its address. */
+export function usePeriod(initial: ReviewPeriod): [ReviewPeriod, (period: ReviewPeriod) => void] {
+  const [period, setPeriod] = useState(initial);
+  const choose = useCallback((next: ReviewPeriod) => {
+    setPeriod(next);
+    const url = new URL(window.location.href);
+    for (const [name, kept] of Object.entries(periodInAddress(next))) {
+      if (kept === undefined) url.searchParams.delete(name);
+      else url.searchParams.set(name, kept);
+    }
+    window.history.replaceState(window.history.state, '', url);
+  }, []);
+  return [period, choose];
+}
+
+/** Where the snapshots of the period lay: counted on the server once for each period. */
+export function useCloud(key: string, period: ReviewPeriod, nowMs: number) {
+  return useQuery({
+    queryKey: ['review', key, periodInAddress(period)],
+    queryFn: ({ signal }) => fetchReviewCloud({ key, signal }, periodWindow(period, nowMs)),
+    staleTime: 5 * 60_000,
+  });
+}
+
+/** The newest snapshot as the recorded scheme sees it; moves with the stream. */
+export function useLiveSnapshot(
+  review: ReviewLine,
+  inForce: SettingsVersion | undefined,
+  result: Result | undefined,
+) {
+  return useMemo(() => {
+    if (inForce === undefined || result === undefined) return undefined;
+    const snapshot = reviewSnapshot(review, inForce, result.terminals);
+    if (!isComputable(snapshot)) return { notComputable: snapshot.notComputable };
+    return {
+      snapshot,
+      points: reviewPoints(review, inForce, snapshot),
+      sequences: reviewSequences(review, inForce, snapshot),
+      terminals: terminalsOnLineSide(result.terminals, snapshot),
+    };
+  }, [review, inForce, result]);
+}
+
+interface MarginChoices {
+  readonly basis: MismatchBasis;
+  readonly lagDeg: number;
+}
+
+/** What follows from constants and one snapshot: of the minute, since it takes a while to compute. */
+export function useFigures(
+  review: ReviewLine,
+  detail: LineDetail,
+  inForce: SettingsVersion | undefined,
+  { basis, lagDeg }: MarginChoices,
+) {
+  const standing = useMemo(() => {
+    if (inForce === undefined) return undefined;
+    const results = detail.result?.terminals ?? [];
+    const snapshot = reviewSnapshot(review, inForce, results);
+    const input = { line: review, recorded: inForce, snapshot };
+    const expected = expectedLevels({
+      ...input,
+      results,
+      lastDay: detail.line.lastDay,
+      throughAmps: detail.line.throughAmps,
+    });
+    const seen = INFEEDS.map((fedFrom) => ({ fedFrom, figures: reviewSensitivity(input, fedFrom) }));
+    return { input, expected, seen };
+  }, [review, detail, inForce]);
+  const load = useMemo(
+    () => (standing === undefined ? undefined : reviewLoadability(standing.input, { basis, lagDeg })),
+    [standing, basis, lagDeg],
+  );
+  return standing === undefined || load === undefined ? undefined : { ...standing, load };
+}
+
+export type ReviewFigures = NonNullable<ReturnType<typeof useFigures>>;
+export type LiveSnapshot = NonNullable<ReturnType<typeof useLiveSnapshot>>;

@@ -1,0 +1,78 @@
+import type { LineSummary } from '../contract/lines';
+import type { AlphaPlane } from '../protection/alpha-plane';
+import { isComputable } from '../protection/evaluation';
+import type { Evaluation } from '../protection/evaluation';
+import type { Loadability, PredictedPoint } from '../protection/loadability';
+import type { PerPhase } from '../protection/phase';
+import type { PhaseComparison } from '../protection/phase-comparison';
+import { ampsText, percentOfMarkText } from './figures';
+import { PHASES } from './phase';
+import type { PhaseName } from './phase';
+import type { ReviewSnapshot } from './review-now';
+import { reviewPlace } from './review-place';
+import type { ReviewPlace } from './review-place';
+import type { DiscPlace, DiscWindow, PolarPlane } from './review-polar';
+import type { PhaseLetters } from './site-custom';
+
+/** A live point on a scheme's region, with its two measures in words. */
+export interface RegionMark extends DiscPlace {
+  readonly phase: PhaseName;
+  readonly words: string;
+}
+
+/** The live points; a phase whose currents are too small to have a place is left out. */
+export function regionMarks(
+  { snapshot, points }: { snapshot: ReviewSnapshot; points: PerPhase<Evaluation> },
+  plane: PolarPlane,
+): RegionMark[] {
+  return PHASES.flatMap((phase) => {
+    const found = points[phase];
+    if (!isComputable(found) || found.region === undefined) return [];
+    const place = reviewPlace(found, snapshot.zone[phase].currents);
+    if (place === undefined) return [];
+    return [{ phase, ...plane.place(place), words: placeWords(found.region.kind, place) }];
+  });
+}
+
+function placeWords(kind: 'alpha-plane' | 'phase-comparison', { x, y }: ReviewPlace): string {
+  if (kind === 'alpha-plane') return `|k| ${Math.exp(x).toFixed(3)}, ${(180 + y).toFixed(2)}°`;
+  return `${y.toFixed(2)}° from opposition, smaller current ${ampsText(x)}`;
+}
+
+/** The predicted way from no load to emergency rating; the through current stands for the smaller end's current. */
+export function pathPlaces({ path }: Pick<Loadability, 'path'>, plane: PolarPlane): DiscPlace[] {
+  return path.flatMap((point) => {
+    const place = predictedPlace(point);
+    return place === undefined ? [] : [plane.place(place)];
+  });
+}
+
+function predictedPlace(point: PredictedPoint): ReviewPlace | undefined {
+  if (point.region === undefined) return undefined;
+  const through = { re: point.throughAmps, im: 0 };
+  return reviewPlace(point, [through]);
+}
+
+/** How much of the plane a window around the points shows, in words. */
+export function regionSpan(kind: 'alpha-plane' | 'phase-comparison', { half }: DiscWindow): string {
+  const share = `${(100 * half).toPrecision(2)} % of the plane’s width`;
+  return kind === 'alpha-plane'
+    ? `Around the points: ${share}; the region’s border lies outside unless it is seen`
+    : `Around the points: ${share}`;
+}
+
+/** The plane in a sentence, for whoever does not see it. */
+export function regionSentence(
+  { phases }: Pick<LineSummary, 'phases'>,
+  characteristic: AlphaPlane | PhaseComparison,
+  letters: PhaseLetters,
+): string {
+  const told = PHASES.map(
+    (phase) => `phase ${letters[phase]} at ${percentOfMarkText(phases[phase].utilisation)}`,
+  ).join(', ');
+  const region =
+    characteristic.kind === 'alpha-plane'
+      ? `restrains for |k| from 1/${characteristic.radius} to ${characteristic.radius} within ${characteristic.angleDeg / 2}° of 180°`
+      : `restrains within ${characteristic.toleranceDeg}° of opposition, and below ${ampsText(characteristic.releaseAmps)}`;
+  return `The scheme ${region}. Utilisation: ${told}.`;
+}
