@@ -11,22 +11,13 @@ import type { PhaseComparison } from './phase-comparison';
 import type { Phasor } from './phasor';
 import { isMagnitudeRestraint, restraintAmps } from './restraint';
 import { pairingProblem } from './scheme';
-import type { Conditions, PercentageScheme, Scheme } from './scheme';
+import type { Conditions, Scheme } from './scheme';
 import { differentialAmps, magnitudeSumAmps } from './terminal-currents';
 
 /** The two currents of one phase that a characteristic weighs against each other, amperes rms primary. */
 export interface MeasuredBalance {
   readonly differentialAmps: number;
   readonly restraintAmps: number;
-}
-
-/**
- * Where one phase stands: its currents, the threshold at that restraint (amperes rms primary), and the
- * utilisation as a ratio. The scheme operates exactly when the utilisation is 1 or more.
- */
-export interface OperatingPoint extends MeasuredBalance {
-  readonly thresholdAmps: number;
-  readonly utilisation: number;
 }
 
 /** Where one phase lies in the region of a scheme that has no threshold over restraint. */
@@ -56,6 +47,7 @@ export interface NotComputable {
 
 export type Evaluation = Evaluated | NotComputable;
 
+/** Whether a result of this room is a result, and not the reason why there is none. */
 export function isComputable<T extends object>(result: T | NotComputable): result is T {
   return !('notComputable' in result);
 }
@@ -86,35 +78,11 @@ export function evaluation(scheme: Scheme, currents: readonly Phasor[], conditio
 }
 
 /**
- * The operating point of one phase under a percentage restraint: what `evaluation` answers for it, without the
- * kinds of result that such a scheme can't have. Throws as that does.
+ * One phase from the magnitudes that a terminal itself computed, for lines whose historian holds nothing else. The
+ * restraint is taken as reported: that it follows the scheme's convention can't be told from magnitudes. A scheme
+ * with a region in place of a threshold needs phasors and says so. Throws for a magnitude that is negative or not
+ * finite.
  */
-export function operatingPoint(scheme: PercentageScheme, currents: readonly Phasor[]): OperatingPoint {
-  return operatingPointFromReported(scheme, {
-    differentialAmps: differentialAmps(currents),
-    restraintAmps: restraintAmps(scheme.restraint, currents),
-  });
-}
-
-/**
- * The operating point of one phase from the magnitudes that a terminal itself computed, for lines whose
- * historian holds nothing else. The restraint is taken as reported: that it follows the scheme's convention
- * can't be told from magnitudes. Throws for a magnitude that is negative or not finite.
- */
-export function operatingPointFromReported(
-  scheme: { readonly characteristic: ThresholdCharacteristic },
-  reported: MeasuredBalance,
-): OperatingPoint {
-  const threshold = thresholdAmps(scheme.characteristic, reported.restraintAmps);
-  return {
-    differentialAmps: reported.differentialAmps,
-    restraintAmps: reported.restraintAmps,
-    thresholdAmps: threshold,
-    utilisation: utilisation(reported.differentialAmps, threshold),
-  };
-}
-
-/** As `operatingPointFromReported` for a scheme of any kind; one with a region in place of a threshold needs phasors. */
 export function evaluationFromReported(
   { characteristic }: Pick<Scheme, 'characteristic'>,
   reported: MeasuredBalance,

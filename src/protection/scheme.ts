@@ -3,20 +3,13 @@ import { characteristicProblems } from './characteristic';
 import type { Characteristic } from './characteristic';
 import type { Phasor } from './phasor';
 import { isMagnitudeRestraint, restraintAmps, restraintProblems } from './restraint';
-import type { MagnitudeRestraint, Restraint } from './restraint';
+import type { Restraint } from './restraint';
 import type { SettingProblem } from './setting-problem';
-import type { TwoSlope } from './two-slope';
 
 /** What a line's phases are judged by: the recorded characteristic and the convention of its restraint. */
 export interface Scheme {
   readonly characteristic: Characteristic;
   readonly restraint: Restraint;
-}
-
-/** A percentage restraint: the scheme whose operating point follows from magnitudes alone. */
-export interface PercentageScheme extends Scheme {
-  readonly characteristic: TwoSlope;
-  readonly restraint: MagnitudeRestraint;
 }
 
 /** What a scheme needs to know beside the currents. */

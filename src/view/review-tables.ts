@@ -2,6 +2,7 @@ import type { ReviewCloud } from '../contract/review';
 import { isComputable } from '../protection/evaluation';
 import type { NotComputable } from '../protection/evaluation';
 import type { PerPhase } from '../protection/phase';
+import type { PickupWindow } from '../protection/pickup-window';
 import type { SequenceDifferential } from '../protection/sequence-differential';
 import type { LineTable, TableColumn } from './line-table';
 import { PHASES } from './phase';
@@ -158,5 +159,20 @@ export function sequenceTable(
       found[sequence].restraintAmps ?? null,
       convention,
     ]),
+  };
+}
+
+export function pickupTable(
+  { lowerAmps, upperAmps, pickupAmps }: PickupWindow & { readonly pickupAmps: number },
+  convention: string,
+): LineTable {
+  return {
+    caption: 'Pickup window',
+    columns: [text('figure'), figure('A primary'), text('convention')],
+    rows: [
+      ['lower bound', lowerAmps, convention],
+      ['recorded pickup', pickupAmps, convention],
+      ['upper bound', upperAmps ?? null, convention],
+    ],
   };
 }

@@ -1,15 +1,10 @@
 import { describe, expect, test } from 'vitest';
-import {
-  evaluation,
-  evaluationFromReported,
-  isComputable,
-  operatingPoint,
-} from '../../src/protection/evaluation';
+import { evaluation, evaluationFromReported, isComputable } from '../../src/protection/evaluation';
 import type { Evaluated } from '../../src/protection/evaluation';
 import { phasor, rotate, scale } from '../../src/protection/phasor';
 import type { Phasor } from '../../src/protection/phasor';
 import { schemeAtTerminals } from '../../src/protection/scheme';
-import type { PercentageScheme, Scheme } from '../../src/protection/scheme';
+import type { Scheme } from '../../src/protection/scheme';
 import { adaptiveScheme, ALPHA_PLANE, PHASE_COMPARISON, scaledScheme, TWO_SLOPE } from './schemes';
 import { seededCurrents } from './seeded-currents';
 
@@ -111,15 +106,6 @@ describe('a terminal without current', () => {
 });
 
 describe('evaluation', () => {
-  test('of a percentage restraint is its operating point', () => {
-    for (const currents of sets) {
-      expect(evaluated(TWO_SLOPE, currents)).toEqual({
-        ...operatingPoint(TWO_SLOPE as PercentageScheme, currents),
-        region: undefined,
-      });
-    }
-  });
-
   test('of an adaptive restraint has it as its threshold', () => {
     for (const currents of sets) {
       const found = evaluated(ADAPTIVE, currents);

@@ -1,11 +1,12 @@
 import { describe, expect, test } from 'vitest';
-import { operatingPoint, throughAmps } from '../../src/protection/evaluation';
+import { throughAmps } from '../../src/protection/evaluation';
 import { phasor } from '../../src/protection/phasor';
-import type { PercentageScheme } from '../../src/protection/scheme';
+import type { Scheme } from '../../src/protection/scheme';
+import { evaluated } from '../protection/evaluated';
 import { expectFigure, printed } from './tolerance';
 
 /** One slope all along, on half the sum of both ends' magnitudes: the scheme of the textbooks. */
-function singleSlope(slope: number, pickupAmps: number): PercentageScheme {
+function singleSlope(slope: number, pickupAmps: number): Scheme {
   return {
     characteristic: {
       kind: 'two-slope',
@@ -26,7 +27,7 @@ function throughSecondary(inPrimaryAmps: number, outPrimaryAmps: number) {
 
 describe('Chakrabarti, Soni, Gupta, Bhatnagar, A Textbook on Power System Engineering, part III, example 8.4', () => {
   const currents = throughSecondary(360, 300);
-  const point = operatingPoint(singleSlope(0.12, 0.15), currents);
+  const point = evaluated(singleSlope(0.12, 0.15), currents);
 
   test('360 A in and 300 A out differ by 18.18 % of their mean', () => {
     expectFigure((100 * point.differentialAmps) / throughAmps(currents), printed('18.18'));
@@ -39,7 +40,7 @@ describe('Chakrabarti, Soni, Gupta, Bhatnagar, A Textbook on Power System Engine
 
 describe('Mason, The Art and Science of Protective Relaying, 1956, chapter 3 (from memory)', () => {
   // The chapter's pickup is not recalled; 0.1 A keeps it out of the way of the slope.
-  const point = operatingPoint(singleSlope(0.1, 0.1), throughSecondary(320, 304));
+  const point = evaluated(singleSlope(0.1, 0.1), throughSecondary(320, 304));
 
   test('320 A in and 304 A out leave 0.20 A against 0.39 A', () => {
     expectFigure(point.differentialAmps, printed('0.20'));
@@ -58,7 +59,7 @@ describe('Glover, Sarma, Overbye, Power System Analysis and Design (from memory)
     { slope: 0.4, ratio: '1.5' },
   ])('slope $slope is bounded by the lines of ratio $ratio', ({ slope, ratio }) => {
     const utilisationAt = (entering: number) =>
-      operatingPoint(singleSlope(slope, 1e-6), [phasor(entering, 0), phasor(-1, 0)]).utilisation;
+      evaluated(singleSlope(slope, 1e-6), [phasor(entering, 0), phasor(-1, 0)]).utilisation;
     const { value, tolerance } = printed(ratio);
     expect(utilisationAt(value - tolerance)).toBeLessThan(1);
     expect(utilisationAt(value + tolerance)).toBeGreaterThan(1);

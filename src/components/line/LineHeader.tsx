@@ -60,6 +60,16 @@ export function LineHeader(props: Props) {
           onChoose={onUnit}
         />
       </div>
+      <nav aria-label="More of this line" className="mt-1 flex flex-wrap gap-x-5 gap-y-1">
+        <a className="link" href={`/lines/${line.key}/review`}>
+          Review
+        </a>
+        {line.goesBy === 'phasors' && inForce !== undefined && (
+          <a className="link" href={`/lines/${line.key}/replay`}>
+            What would other settings have done?
+          </a>
+        )}
+      </nav>
       {lead !== '' && (
         <p className={`mt-2 max-w-[80ch] text-pretty ${faded ? 'text-ink-2' : ''}`}>
           <strong className="font-semibold">{lead}</strong>

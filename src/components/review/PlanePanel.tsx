@@ -3,6 +3,7 @@ import type { LineSummary } from '../../contract/lines';
 import type { ReviewCloud } from '../../contract/review';
 import type { SettingsVersion } from '../../contract/settings-version';
 import { isThresholdCharacteristic } from '../../protection/characteristic';
+import type { NotComputable } from '../../protection/evaluation';
 import { csvName } from '../../view/line-csv';
 import { missingFiguresReason } from '../../view/line-phase-rows';
 import { PHASES } from '../../view/phase';
@@ -32,7 +33,7 @@ export interface PlanePanelProps {
   readonly cloud: ReviewCloud | undefined;
   readonly cloudError: Error | null;
   readonly onTryAgain: () => void;
-  readonly live: LiveSnapshot | undefined;
+  readonly live: LiveSnapshot | NotComputable | undefined;
   readonly load: ReviewFigures['load'];
 }
 
