@@ -26,6 +26,7 @@ export const HISTORY = {
 } as const;
 
 const RAW_DAYS = 14;
+const MINUTE_DAYS = 90;
 const CLOCK_LIMIT_US = 100;
 const FREQUENCY_HZ = 50;
 const RECORDED_BY = 'Jonas Wehrli';
@@ -37,7 +38,8 @@ type Site = { readonly seed: number; readonly epochMs: number };
 export async function loadDemo(store: Store, site: Site, progress: (share: number) => void): Promise<void> {
   await loadPeople(store, site);
   await loadRegister(store, site);
-  await keepPartitions(store, { now: site.epochMs, rawDays: RAW_DAYS });
+  await keepPartitions(store, { table: 'snapshot', now: site.epochMs, days: RAW_DAYS });
+  await keepPartitions(store, { table: 'minute_level', now: site.epochMs, days: MINUTE_DAYS });
   const lines = [
     ...roster(await readRegister(store), {
       workerIndex: 0,

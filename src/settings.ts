@@ -55,6 +55,8 @@ const ingestSchema = z
     WORKER_COUNT: count(1, 1000).default(1),
     LATENESS_MS: count(100, 60_000).default(2_000),
     RAW_DAYS: count(1, 400).default(14),
+    MINUTE_DAYS: count(1, 4_000).default(90),
+    HOUR_DAYS: count(30, 40_000).default(3_650),
     CLOCK_LIMIT_US: count(1, 1_000_000).default(100),
     MQTT_VERSION: z.enum(['4', '5']).default('4'),
   })

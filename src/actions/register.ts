@@ -32,6 +32,7 @@ import {
   type FromTyped,
   type Typed,
 } from '../view/register-typed';
+import { importRegister } from './register-import';
 
 /** What a form of the register comes back with; a refused one brings along all that was typed. */
 export type RegisterOutcome =
@@ -146,6 +147,7 @@ const recordSettings = registerForm('record settings', async (call) => {
 });
 
 export const register = {
+  importRegister,
   addLine,
   changeLine,
   addTerminal,

@@ -89,7 +89,7 @@ export const levelSchema = z.object({
   allCount: z.int(),
 });
 export type Level = z.infer<typeof levelSchema>;
-export const rungSchema = z.enum(['hour', 'day']);
+export const rungSchema = z.enum(['minute', 'hour', 'day']);
 export type Rung = z.infer<typeof rungSchema>;
 export const levelListSchema = z.object({
   line: keySchema,

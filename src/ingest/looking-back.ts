@@ -1,6 +1,6 @@
 import type { IngestSettings } from '../settings';
 import type { Store } from '../store/client';
-import { replaceCreep } from '../store/levels';
+import { dropHourLevelsBefore, replaceCreep } from '../store/levels';
 import { dropRefusalsBefore } from '../store/feed';
 import { keepPartitions } from '../store/partitions';
 import type { WarningLimits } from '../warnings/limits';
@@ -33,8 +33,10 @@ export async function lookBack(
 /** Housekeeping of the store, done by the first worker alone. */
 export async function keepStore(
   store: Store,
-  { rawDays, nowMs }: { rawDays: number; nowMs: number },
+  { settings, nowMs }: { settings: IngestSettings; nowMs: number },
 ): Promise<void> {
-  await keepPartitions(store, { now: nowMs, rawDays });
+  await keepPartitions(store, { table: 'snapshot', now: nowMs, days: settings.RAW_DAYS });
+  await keepPartitions(store, { table: 'minute_level', now: nowMs, days: settings.MINUTE_DAYS });
+  await dropHourLevelsBefore(store, new Date(nowMs - settings.HOUR_DAYS * DAY_MS));
   await dropRefusalsBefore(store, new Date(nowMs - INGEST_LIMITS.refusalsKeptDays * DAY_MS));
 }

@@ -10,7 +10,7 @@ import type { LevelRow } from '../store/levels';
 import { hasFlag } from '../store/snapshot-flags';
 import type { SnapshotFigures } from '../store/snapshots';
 
-export const RUNG_MS: Record<Rung, number> = { hour: 3_600_000, day: 86_400_000 };
+export const RUNG_MS: Record<Rung, number> = { minute: 60_000, hour: 3_600_000, day: 86_400_000 };
 export const rungStart = (rung: Rung, atMs: number): number =>
   Math.floor(atMs / RUNG_MS[rung]) * RUNG_MS[rung];
 
@@ -27,7 +27,7 @@ export function rungRows(
   figures: readonly SnapshotFigures[],
   before: SnapshotFigures | undefined,
 ): LevelRow[] {
-  const qualified = qualifiedFigures(figures, before, window.ratingAmps);
+  const { qualified, disqualified } = qualification(figures, before, window.ratingAmps);
   return PHASES.map((phase) => ({
     lineId: window.lineId,
     phase,
@@ -36,6 +36,8 @@ export function rungRows(
     meanThroughAmps: mean(qualified.map(({ throughAmps }) => throughAmps)),
     qualifiedCount: qualified.length,
     allCount: figures.length,
+    disqualified,
+    sums: null,
   }));
 }
 
@@ -57,18 +59,23 @@ function phaseLevels(
   };
 }
 
-function qualifiedFigures(
-  figures: readonly SnapshotFigures[],
+/** The rows that count, and how many each rule kept from counting. */
+export function qualification<Row extends SnapshotFigures>(
+  figures: readonly Row[],
   before: SnapshotFigures | undefined,
   ratingAmps: number,
-): SnapshotFigures[] {
+): { qualified: Row[]; disqualified: NonNullable<LevelRow['disqualified']> } {
+  const qualified: Row[] = [];
+  const disqualified: NonNullable<LevelRow['disqualified']> = {};
   let previous = before && factsOf(before);
-  return figures.filter((row) => {
+  for (const row of figures) {
     const facts = factsOf(row);
     const reasons = disqualifications(facts, previous, { ratingAmps, limits: DEFAULT_QUALIFICATION_LIMITS });
     previous = facts;
-    return reasons.length === 0 && row.differentialAAmps !== null;
-  });
+    for (const reason of reasons) disqualified[reason] = (disqualified[reason] ?? 0) + 1;
+    if (reasons.length === 0 && row.differentialAAmps !== null) qualified.push(row);
+  }
+  return { qualified, disqualified };
 }
 
 function factsOf({ at, flags, throughAmps }: SnapshotFigures): SnapshotFacts {

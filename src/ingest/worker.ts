@@ -41,7 +41,7 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
   const room = createWatchRoom({ settings, store, now });
   const intake = createIntake({ settings, room, now });
   if (settings.WORKER_INDEX === 0)
-    await untilDone(() => keepStore(store, { rawDays: settings.RAW_DAYS, nowMs: now() }), database);
+    await untilDone(() => keepStore(store, { settings, nowMs: now() }), database);
   await refreshRegister(room, intake, database);
   const feed = connectFeed(settings, { take: (delivery: Delivery) => intake.take(delivery), log });
   feed.follow(room.topics());
@@ -63,7 +63,7 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
     }),
     every(INGEST_LIMITS.rungEveryMs, stop.signal, async () => {
       if (settings.WORKER_INDEX === 0)
-        await untilDone(() => keepStore(store, { rawDays: settings.RAW_DAYS, nowMs: now() }), database);
+        await untilDone(() => keepStore(store, { settings, nowMs: now() }), database);
       for (const watch of room.watches()) {
         if (stop.signal.aborted) return;
         storing.note(

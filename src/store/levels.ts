@@ -2,11 +2,11 @@ import { and, asc, desc, eq, getTableColumns, gte, inArray, lt, sql } from 'driz
 import type { Rung } from '../contract/lines';
 import type { Creep } from '../contract/warning';
 import type { Store } from './client';
-import { creepVerdict, dayLevel, hourLevel, staleHour } from './schema/levels';
+import { creepVerdict, dayLevel, hourLevel, minuteLevel, staleHour } from './schema/levels';
 
 export type LevelRow = typeof hourLevel.$inferSelect;
 
-const TABLES = { hour: hourLevel, day: dayLevel } as const;
+const TABLES = { minute: minuteLevel, hour: hourLevel, day: dayLevel } as const;
 const KEYS: readonly string[] = ['lineId', 'phase', 'start'];
 const ROWS_A_STATEMENT = 500;
 
@@ -101,4 +101,14 @@ export async function readStaleHours(store: Store, lineIds: readonly number[]): 
 
 export async function dropStaleHour(store: Store, { lineId, start }: StaleHour): Promise<void> {
   await store.db.delete(staleHour).where(and(eq(staleHour.lineId, lineId), eq(staleHour.start, start)));
+}
+
+/** Hour rows beyond their reach, except of days that no day row holds: what is dropped can't be built again. */
+export async function dropHourLevelsBefore(store: Store, before: Date): Promise<void> {
+  await store.db.execute(
+    sql`delete hour_level from hour_level
+        join day_level on day_level.line_id = hour_level.line_id and day_level.phase = hour_level.phase
+          and day_level.start = date(hour_level.start)
+        where hour_level.start < ${before}`,
+  );
 }

@@ -55,16 +55,22 @@ export function thresholdPicture(
   if (!sides.every(({ characteristic }) => isThresholdCharacteristic(characteristic))) return undefined;
   const kinds = sides.map(({ characteristic }) => characteristic as ThresholdCharacteristic);
   const points = sides.flatMap((side) => side.points.map(({ point }) => point));
-  const restraintMax = Math.max(...kinds.map(shownRestraint), ...points.map((point) => 1.3 * (point.restraintAmps ?? 0)));
+  const restraintMax = Math.max(
+    ...kinds.map(shownRestraint),
+    ...points.map((point) => 1.3 * (point.restraintAmps ?? 0)),
+  );
   const paths = kinds.map((kind) => characteristicPath(kind, restraintMax));
   const least = Math.min(...paths.map((path) => path[path.length - 1]!.thresholdAmps));
   const pickupMax = Math.max(...kinds.map(({ pickupAmps }) => pickupAmps));
-  const differentialMax = 1.1 * Math.max(least, 1.4 * pickupMax, ...points.map((point) => 1.15 * point.differentialAmps));
+  const differentialMax =
+    1.1 * Math.max(least, 1.4 * pickupMax, ...points.map((point) => 1.15 * point.differentialAmps));
   const x = (amps: number) => room.left + (amps / restraintMax) * (room.width - room.left);
   const y = (amps: number) =>
     room.height - room.bottom - (amps / differentialMax) * (room.height - room.bottom - room.top);
   return {
-    curves: paths.map((path) => path.map((point) => [x(point.restraintAmps), y(point.thresholdAmps)] as const)),
+    curves: paths.map((path) =>
+      path.map((point) => [x(point.restraintAmps), y(point.thresholdAmps)] as const),
+    ),
     points: sides.map((side) =>
       side.points.flatMap(({ phase, point }) =>
         point.restraintAmps === null
@@ -101,7 +107,10 @@ export interface RegionPicture {
 }
 
 /** A scheme with a region in the plane of its ratio or angle. Undefined for one with a threshold. */
-export function regionPicture({ characteristic, points }: SideDrawn, room: DrawingRoom): RegionPicture | undefined {
+export function regionPicture(
+  { characteristic, points }: SideDrawn,
+  room: DrawingRoom,
+): RegionPicture | undefined {
   const radius = (Math.min(room.width - room.left, room.height - room.bottom - room.top) - 24) / 2;
   const centre: Pixel = [(room.left + room.width) / 2, room.top + 12 + radius];
   const place = (share: number, angleDeg: number): Pixel => {
@@ -114,7 +123,11 @@ export function regionPicture({ characteristic, points }: SideDrawn, room: Drawi
     const half = characteristic.angleDeg / 2;
     return {
       ...shared,
-      restrains: ringSector(place, { inner: share(1 / characteristic.radius), outer: share(characteristic.radius), half }),
+      restrains: ringSector(place, {
+        inner: share(1 / characteristic.radius),
+        outer: share(characteristic.radius),
+        half,
+      }),
       points: points.flatMap(({ phase, point: { region } }) =>
         region?.kind === 'alpha-plane' ? [{ phase, at: place(share(region.ratio), region.angleDeg) }] : [],
       ),
@@ -122,7 +135,8 @@ export function regionPicture({ characteristic, points }: SideDrawn, room: Drawi
         { at: place(1.1, 180), text: '180°' },
         { at: place(1.08, 0), text: '0°' },
       ],
-      words: 'ratio of the ends’ currents, distance from the centre logarithmic; inside the outline it restrains',
+      words:
+        'ratio of the ends’ currents, distance from the centre logarithmic; inside the outline it restrains',
     };
   }
   if (characteristic.kind === 'phase-comparison')

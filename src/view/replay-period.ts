@@ -29,7 +29,10 @@ export type Period =
   | { readonly ok: false; readonly problems: Readonly<Record<string, string>> };
 
 /** The instants of a period as it is chosen, up to now; or what is wrong beside which field. */
-export function periodOf(typed: TypedPeriod, { nowMs, timeZone }: { nowMs: number; timeZone: string }): Period {
+export function periodOf(
+  typed: TypedPeriod,
+  { nowMs, timeZone }: { nowMs: number; timeZone: string },
+): Period {
   if (typed.choice !== 'typed') {
     const from = new Date(nowMs - DAYS[typed.choice] * DAY_MS).toISOString();
     return { ok: true, from, to: new Date(nowMs).toISOString() };

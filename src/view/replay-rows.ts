@@ -52,7 +52,9 @@ function sideFigures(
 
 /** "12 · 24 s": snapshots and time; "none" */
 const markText = ({ snapshots, durationMs }: AtMark): string =>
-  snapshots === 0 ? 'none' : `${snapshots.toLocaleString('en-GB', { useGrouping: 'min2' })} · ${durationText(durationMs)}`;
+  snapshots === 0
+    ? 'none'
+    : `${snapshots.toLocaleString('en-GB', { useGrouping: 'min2' })} · ${durationText(durationMs)}`;
 
 /** "98 A at 640 A restraint, threshold 160 A", or the place in the scheme's region */
 export function pointText({ differentialAmps, restraintAmps, thresholdAmps, region }: ReplayPoint): string {

@@ -88,11 +88,7 @@ function figureOf(text: string | undefined): number | undefined {
 
 const lastPart = (name: string): string => name.split('.').at(-1) ?? name;
 
-function valueAt(
-  characteristic: CharacteristicOnWire,
-  name: string,
-  line: ReplayLine,
-): number | undefined {
+function valueAt(characteristic: CharacteristicOnWire, name: string, line: ReplayLine): number | undefined {
   const [list, index, field] = name.split('.');
   if (characteristic.kind === 'adaptive' && list === 'ctErrors') {
     const key = line.terminals[Number(index)]?.key;

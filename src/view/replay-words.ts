@@ -35,7 +35,8 @@ export function resultSentence(summary: ReplaySummary, letters: PhaseLetters): s
   const { recorded, replayed, nearRatio, snapshots } = summary;
   if (snapshots === 0) return 'Nothing is stored of this line in this period, so there is nothing to replay.';
   const tried = worstOf(replayed);
-  if (tried === undefined) return `None of the ${countText(snapshots)} could be evaluated under these settings.`;
+  if (tried === undefined)
+    return `None of the ${countText(snapshots)} could be evaluated under these settings.`;
   const was = worstOf(recorded);
   const hasThresholds = [tried, was].every((side) => side === undefined || side.point.thresholdAmps !== null);
   const reached = utilisationText(tried.point.utilisation, nearRatio);

@@ -1,10 +1,9 @@
 import type { RegisterLine } from '../contract/register';
 import type { SettingsVersion } from '../contract/settings-version';
-import { lineSusceptanceMillisiemens, susceptanceMicrosiemensPerKm } from '../protection/charging';
 import type { Scheme } from '../protection/scheme';
 import { schemeAtTerminals } from '../protection/scheme';
-import type { WindingCompensation } from '../protection/winding-compensation';
 import type { Zone } from '../protection/zone';
+import { lineSusceptanceMillisiemens, lineZone } from './line-zone';
 
 /** What a review knows of a line beside what moves: its constants, and the load that its standing level stood under. */
 export interface ReviewLine extends Pick<
@@ -40,14 +39,7 @@ export function terminalsInService({ terminals }: Pick<ReviewLine, 'terminals'>)
 export function susceptanceMillisiemens(
   line: Pick<ReviewLine, 'capacitanceNfPerKm' | 'lengthKm' | 'nominalFrequencyHz'>,
 ): number | undefined {
-  if (line.capacitanceNfPerKm === null) return undefined;
-  return lineSusceptanceMillisiemens({
-    susceptanceMicrosiemensPerKm: susceptanceMicrosiemensPerKm(
-      line.capacitanceNfPerKm,
-      line.nominalFrequencyHz,
-    ),
-    lengthKm: line.lengthKm,
-  });
+  return lineSusceptanceMillisiemens(line, line.nominalFrequencyHz);
 }
 
 /** What lies between the terminals in service, as the register and the recorded settings say. */
@@ -55,30 +47,13 @@ export function reviewZone(
   line: ReviewLine,
   { chargingCompensation }: Pick<RecordedScheme, 'chargingCompensation'>,
 ): Zone {
-  return {
-    windings: terminalsInService(line).map((key) => windingAt(line, key)),
-    charging: chargingCompensation ? { susceptanceMillisiemens: susceptanceMillisiemens(line) } : undefined,
-  };
+  const expected = terminalsInService(line);
+  const frequencyHz = line.nominalFrequencyHz;
+  const nothingWithin = { windings: expected.map(() => undefined), charging: undefined };
+  return lineZone(line, { expected, chargingCompensation, frequencyHz }) ?? nothingWithin;
 }
 
 /** The recorded scheme with its figures for the terminals in service. */
 export function reviewScheme(line: ReviewLine, { characteristic, restraint }: RecordedScheme): Scheme {
   return schemeAtTerminals({ characteristic, restraint }, terminalsInService(line));
-}
-
-function windingAt(
-  { inZoneTransformer, voltageKv }: ReviewLine,
-  key: string,
-): WindingCompensation | undefined {
-  if (inZoneTransformer === null) return undefined;
-  const { otherTerminals, otherVoltageKv, clockNumber, removesZeroSequence } = inZoneTransformer;
-  const removed = (is: boolean) => (is ? 'removed' : 'kept');
-  if (!otherTerminals.includes(key)) {
-    return { ratio: 1, clockNumber: 0, zeroSequence: removed(removesZeroSequence.line) };
-  }
-  return {
-    ratio: voltageKv / otherVoltageKv,
-    clockNumber,
-    zeroSequence: removed(removesZeroSequence.other),
-  };
 }

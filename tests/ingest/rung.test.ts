@@ -58,6 +58,8 @@ describe('the level rows of a window', () => {
       greatestUtilisation: 5 / 120,
       qualifiedCount: 5,
       allCount: 5,
+      disqualified: {},
+      sums: null,
     });
     expect([b?.medianAmps, b?.meanRestraintAmps]).toEqual([4, 410]);
     expect([c?.medianAmps, c?.greatestUtilisation]).toEqual([5, 7 / 120]);

@@ -1,16 +1,13 @@
 import { describe, expect, test } from 'vitest';
-import { evaluation, isComputable } from '../../src/protection/evaluation';
 import type { Scheme } from '../../src/protection/scheme';
+import { evaluated } from './evaluated';
 import { FAULT_CASES, KINDS, SCHEMES } from './fault-cases';
 import type { Kind } from './fault-cases';
 import { adaptiveVerdict, alphaPlaneVerdict, phaseComparisonVerdict, twoSlopeVerdict } from './fault-theory';
 import type { Ends, Verdict } from './fault-theory';
 
-function productVerdict(scheme: Scheme, ends: Ends): Verdict {
-  const found = evaluation(scheme, ends, { frequencyHz: 50 });
-  if (!isComputable(found)) throw new Error(found.notComputable);
-  return found.utilisation >= 1 ? 'operates' : 'restrains';
-}
+const productVerdict = (scheme: Scheme, ends: Ends): Verdict =>
+  evaluated(scheme, ends).utilisation >= 1 ? 'operates' : 'restrains';
 
 /** Theory's verdict with every level of the settings moved by a factor: one that it changes is too close to call. */
 function theoryVerdict(kind: Kind, ends: Ends, factor: number): Verdict {

@@ -106,7 +106,7 @@ describe('a refusal', () => {
     expect(fieldsOf(body)).toEqual({
       'terminals.0.substation': 'This is missing.',
       'settings.0.validFrom': 'Give an instant with its offset, such as 2026-03-01T10:00:00Z.',
-      'settings.0.characteristic.kind': 'Give two-slope.',
+      'settings.0.characteristic.kind': 'Give one of two-slope, adaptive, alpha-plane, phase-comparison.',
       'settings.0.note': 'Say why these settings are recorded.',
     });
   });

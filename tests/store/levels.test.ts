@@ -32,6 +32,8 @@ const level = (hour: number, phase: 'a' | 'b' | 'c', medianAmps: number | null, 
   greatestUtilisation: medianAmps && medianAmps / 120,
   qualifiedCount: medianAmps === null ? 0 : 1_800,
   allCount: 1_800,
+  disqualified: { unsteady: 3 },
+  sums: null,
 });
 const hours = (from: number, to: number, lineIds = [7]) =>
   readLevels(store, 'hour', {

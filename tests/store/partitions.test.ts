@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
 import { describe, expect, it } from 'vitest';
+import { writeLevels } from '../../src/store/levels';
 import { keepPartitions, readPartitionDays } from '../../src/store/partitions';
 import { readSnapshots } from '../../src/store/snapshots';
 import { testStore } from '../database';
@@ -7,11 +8,36 @@ import { snapshotRowOf, storeRows } from './made-up-rows';
 
 const store = await testStore();
 const daysOf = async () =>
-  (await readPartitionDays(store)).map((dayMs) => new Date(dayMs).toISOString().slice(0, 10));
-const keep = (now: string, rawDays: number) => keepPartitions(store, { now: Date.parse(now), rawDays });
+  (await readPartitionDays(store, 'snapshot')).map((dayMs) => new Date(dayMs).toISOString().slice(0, 10));
+const keep = (now: string, rawDays: number) =>
+  keepPartitions(store, { table: 'snapshot', now: Date.parse(now), days: rawDays });
 const instants = async () =>
   (await readSnapshots(store, 7, { from: new Date(0), to: new Date('2030-01-01'), most: 100 })).map((row) =>
     row.at.toISOString().slice(0, 10),
+  );
+
+/** Day rows of the line, as the worker builds them: what they hold may be dropped. */
+const hold = (...days: string[]) =>
+  writeLevels(
+    store,
+    'day',
+    days.map((day) => ({
+      lineId: 7,
+      phase: 'a',
+      start: new Date(`${day}T00:00:00Z`),
+      leastAmps: 9,
+      p05Amps: 9,
+      medianAmps: 9,
+      p95Amps: 9,
+      greatestAmps: 9,
+      meanRestraintAmps: 400,
+      meanThroughAmps: 400,
+      greatestUtilisation: 0.1,
+      qualifiedCount: 1,
+      allCount: 1,
+      disqualified: {},
+      sums: null,
+    })),
   );
 
 /** The partition that a day's rows lie in. */
@@ -54,7 +80,15 @@ describe('the raw store’s partitions', () => {
     expect(await daysOf()).toEqual(before);
   });
 
-  it('lose the days beyond reach, with their rows and nothing else, as time goes on', async () => {
+  it('keep a day beyond reach that no day row holds yet', async () => {
+    await hold('2026-02-28');
+    await keep('2026-03-04T00:00:00Z', 2);
+    expect((await daysOf())[0]).toBe('2026-03-01');
+    expect(await instants()).toEqual(['2026-03-01', '2026-03-02', '2026-03-05']);
+  });
+
+  it('lose the days beyond reach that are held, with their rows and nothing else, as time goes on', async () => {
+    await hold('2026-03-01');
     await keep('2026-03-04T00:00:00Z', 2);
     expect(await daysOf()).toEqual([
       '2026-03-02',
@@ -72,6 +106,7 @@ describe('the raw store’s partitions', () => {
     const days = await daysOf();
     expect(days.at(-1)).toBe('2026-03-23');
     expect(days).toContain('2026-03-10');
+    await hold('2026-03-02', '2026-03-05');
     await keep('2026-03-20T10:01:00Z', 2);
     expect((await daysOf())[0]).toBe('2026-03-18');
     expect(await instants()).toEqual([]);

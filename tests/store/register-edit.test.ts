@@ -1,6 +1,10 @@
 import { desc } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
-import { newSettingsVersionSchema, newTerminalSchema } from '../../src/contract/register';
+import {
+  newSettingsVersionSchema,
+  newTerminalSchema,
+  type InZoneTransformer,
+} from '../../src/contract/register';
 import {
   readRegister,
   readRegisterLine,
@@ -65,13 +69,36 @@ describe('adding a line', () => {
   });
 
   it('keeps a transformer inside the zone as it was given', async () => {
-    await insertLine(
-      store,
-      newLine({ inZoneTransformer: { otherVoltageKv: 110, clockNumber: 11 } }),
-      editing,
-    );
+    const inZoneTransformer = {
+      ...{ otherVoltageKv: 110, clockNumber: 11, otherTerminals: ['birk'] },
+      removesZeroSequence: { line: true, other: false },
+    };
+    await insertLine(store, newLine({ inZoneTransformer, leastInternalFaultAmps: 1850 }), editing);
     const read = await readRegisterLine(store, 'arden-birk');
-    expect(read?.inZoneTransformer).toEqual({ otherVoltageKv: 110, clockNumber: 11 });
+    expect(read).toMatchObject({ inZoneTransformer, leastInternalFaultAmps: 1850 });
+  });
+
+  it('reads a transformer that was kept before its terminals were, with none behind it', async () => {
+    await insertLine(store, newLine(), editing);
+    const kept = { otherVoltageKv: 110, clockNumber: 11 } as unknown as InZoneTransformer;
+    await store.db.update(line).set({ inZoneTransformer: kept });
+    expect((await readRegisterLine(store, 'arden-birk'))?.inZoneTransformer).toEqual({
+      ...{ ...kept, otherTerminals: [] },
+      removesZeroSequence: { line: true, other: true },
+    });
+  });
+
+  it('names a terminal behind a transformer that the line does not have', async () => {
+    const transformer = (otherTerminals: string[]) =>
+      newLine({ inZoneTransformer: { otherVoltageKv: 110, clockNumber: 5, otherTerminals } });
+    const field = 'inZoneTransformer.otherTerminals';
+    const none = await insertLine(store, transformer(['corl']), editing);
+    const all = await insertLine(store, transformer(['arden', 'birk']), editing);
+    for (const refused of [none, all])
+      expect(refused).toMatchObject({ ok: false, problem: { fields: [{ field }] } });
+    await insertLine(store, transformer(['birk']), editing);
+    const gone = { key: 'arden-birk', terminalKey: 'birk' };
+    expect(await removeTerminal(store, gone, editing)).toMatchObject({ ok: false, kind: 'not allowed' });
   });
 
   it('with a key that is taken says so and writes nothing', async () => {
@@ -318,6 +345,71 @@ describe('settings', () => {
       },
       { field: 'characteristic.slope2', problem: 'The second slope must not be below the first slope.' },
     ]);
+  });
+});
+
+describe('settings of each kind', () => {
+  const key = 'arden-birk';
+  const errors = (name: string) => ({
+    terminal: name,
+    errorBelow: 0.01,
+    errorAbove: 0.05,
+    limitAmps: 2400,
+  });
+  const adaptive = {
+    kind: 'adaptive',
+    pickupAmps: 80,
+    ctErrors: [errors('arden'), errors('birk')],
+    timeErrorMs: 0.2,
+  };
+  const alphaPlane = { kind: 'alpha-plane', pickupAmps: 100, radius: 6, angleDeg: 195 };
+  const comparison = { kind: 'phase-comparison', toleranceDeg: 60, releaseAmps: 120 };
+  const none = { kind: 'none' };
+  const recorded = (change: Record<string, unknown>) =>
+    insertSettingsVersion(store, { key, version: version({ ...later, ...change }) }, editing);
+  const later = { validFrom: '2026-07-01T00:00:00.000Z' };
+
+  it.each([
+    ['two slopes', { restraint: { kind: 'maximum' }, chargingCompensation: true }],
+    ['adaptive', { characteristic: adaptive, restraint: { kind: 'error-sum' }, chargingCompensation: false }],
+    ['alpha plane', { characteristic: alphaPlane, restraint: none, chargingCompensation: false }],
+    ['phase comparison', { characteristic: comparison, restraint: none, chargingCompensation: true }],
+  ])('are read back as they were recorded: %s', async (_kind, scheme) => {
+    await insertLine(store, newLine(), editing);
+    const edit = await recorded(scheme);
+    expect(edit.ok && edit.line.settings.at(-1)).toMatchObject({ ...later, ...scheme });
+  });
+
+  it.each([
+    [{ ...alphaPlane, radius: 1 }, none, 'characteristic.radius'],
+    [{ ...alphaPlane, angleDeg: 361 }, none, 'characteristic.angleDeg'],
+    [{ ...alphaPlane, pickupAmps: -5 }, none, 'characteristic.pickupAmps'],
+    [{ ...comparison, toleranceDeg: -1 }, none, 'characteristic.toleranceDeg'],
+    [{ ...adaptive, ctErrors: [errors('arden')] }, { kind: 'error-sum' }, 'characteristic.ctErrors'],
+    [alphaPlane, { kind: 'maximum' }, 'restraint.kind'],
+  ])('that are impossible are refused beside their field: %o', async (characteristic, restraint, field) => {
+    await insertLine(store, newLine(), editing);
+    const refused = await recorded({ characteristic, restraint });
+    expect(refused).toMatchObject({ ok: false, kind: 'not allowed' });
+    expect(!refused.ok && refused.problem.fields.map((found) => found.field)).toEqual([field]);
+  });
+
+  it('compare phases of two terminals only', async () => {
+    await insertLine(store, newLine(), editing);
+    await insertTerminal(store, { key, entry: terminal('corl') }, editing);
+    const refused = await recorded({ characteristic: comparison, restraint: none });
+    expect(!refused.ok && refused.problem.fields).toEqual([
+      {
+        field: 'characteristic.kind',
+        problem: 'A phase comparison weighs two terminals against each other; this line has 3.',
+      },
+    ]);
+  });
+
+  it('compensate the charging only where the capacitance is recorded', async () => {
+    await insertLine(store, newLine({ capacitanceNfPerKm: null }), editing);
+    const refused = await recorded({ chargingCompensation: true });
+    expect(!refused.ok && refused.problem.fields.map(({ field }) => field)).toEqual(['chargingCompensation']);
   });
 });
 

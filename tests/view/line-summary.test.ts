@@ -42,6 +42,8 @@ const level = (startMs: number, of: LevelRow['phase'], medianAmps: number | null
   meanRestraintAmps: null,
   meanThroughAmps: null,
   greatestUtilisation: null,
+  disqualified: {},
+  sums: null,
   qualifiedCount: 1,
   allCount: 1,
 });

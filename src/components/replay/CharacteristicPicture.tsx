@@ -76,7 +76,13 @@ function ThresholdDrawing({ picture, tried }: { picture: ThresholdPicture; tried
         </g>
       ))}
       {picture.restraintTicks.map(({ x, label }) => (
-        <text key={label} x={Math.min(x, width - 12)} y={height - bottom + 16} textAnchor="middle" className="fill-ink-2 text-caption">
+        <text
+          key={label}
+          x={Math.min(x, width - 12)}
+          y={height - bottom + 16}
+          textAnchor="middle"
+          className="fill-ink-2 text-caption"
+        >
           {label}
         </text>
       ))}
@@ -123,9 +129,27 @@ function RegionDrawing({ picture, tried }: { picture: RegionPicture; tried: bool
         aria-label={picture.words}
       >
         <circle cx={centre[0]} cy={centre[1]} r={radius} fill="none" stroke="var(--hairline)" />
-        <line x1={centre[0] - radius} x2={centre[0] + radius} y1={centre[1]} y2={centre[1]} stroke="var(--hairline)" />
-        <line x1={centre[0]} x2={centre[0]} y1={centre[1] - radius} y2={centre[1] + radius} stroke="var(--hairline)" />
-        <path d={picture.restrains} fill="none" stroke={colour} strokeWidth={2} strokeDasharray={tried ? undefined : '6 4'} />
+        <line
+          x1={centre[0] - radius}
+          x2={centre[0] + radius}
+          y1={centre[1]}
+          y2={centre[1]}
+          stroke="var(--hairline)"
+        />
+        <line
+          x1={centre[0]}
+          x2={centre[0]}
+          y1={centre[1] - radius}
+          y2={centre[1] + radius}
+          stroke="var(--hairline)"
+        />
+        <path
+          d={picture.restrains}
+          fill="none"
+          stroke={colour}
+          strokeWidth={2}
+          strokeDasharray={tried ? undefined : '6 4'}
+        />
         {picture.labels.map(({ at: [x, y], text }) => (
           <text key={text} x={x} y={y + 4} textAnchor="middle" className="fill-ink-2 text-caption">
             {text}

@@ -93,4 +93,6 @@ function keepInAddress(id: string): void {
 }
 
 const asRefusal = (error: unknown): RequestRefused =>
-  error instanceof RequestRefused ? error : new RequestRefused('The replay could not be asked for.', undefined);
+  error instanceof RequestRefused
+    ? error
+    : new RequestRefused('The replay could not be asked for.', undefined);

@@ -1,6 +1,7 @@
 import { double, int, json, mysqlEnum, mysqlTable, primaryKey } from 'drizzle-orm/mysql-core';
 import type { Creep } from '../../contract/warning';
-import { amps, instant } from './columns';
+import type { Disqualification } from '../../standing/qualification';
+import { amps, bytes, instant } from './columns';
 
 const levelColumns = () => ({
   lineId: int('line_id').notNull(),
@@ -16,7 +17,16 @@ const levelColumns = () => ({
   greatestUtilisation: double('greatest_utilisation'),
   qualifiedCount: int('qualified_count').notNull(),
   allCount: int('all_count').notNull(),
+  /** how many snapshots each rule kept from counting, one may fail several; null on rows of before this was counted */
+  disqualified: json('disqualified').$type<Partial<Record<Disqualification, number>>>(),
+  /** what the composition needs, packed by store/composition-packing; they add over any window */
+  sums: bytes('sums', { length: 1024 }),
 });
+
+/** Partitioned by day in a hand-written migration, as the raw rows are. */
+export const minuteLevel = mysqlTable('minute_level', levelColumns(), (table) => [
+  primaryKey({ columns: [table.lineId, table.phase, table.start] }),
+]);
 
 export const hourLevel = mysqlTable('hour_level', levelColumns(), (table) => [
   primaryKey({ columns: [table.lineId, table.phase, table.start] }),
