@@ -2,9 +2,6 @@ import type { RegisterLine } from '../contract/register';
 import { chargingAmps, chargingMva, susceptanceMicrosiemensPerKm } from '../protection/charging';
 import { ampsText, kilometresText, kilovoltsText } from './figures';
 
-/** The system frequency that line constants are taken at. */
-const FREQUENCY_HZ = 50;
-
 /** The expected charging current, worked through with the line's own figures. */
 export interface ChargingExample {
   readonly susceptance: string;
@@ -19,10 +16,10 @@ export interface ChargingExample {
 /** Undefined when the capacitance is not known: nothing can be expected then. */
 export function chargingExample(
   line: Pick<RegisterLine, 'capacitanceNfPerKm' | 'lengthKm' | 'voltageKv'>,
-  pickupAmps: number | undefined,
+  { pickupAmps, frequencyHz }: { pickupAmps: number | undefined; frequencyHz: number },
 ): ChargingExample | undefined {
   if (line.capacitanceNfPerKm === null) return undefined;
-  const susceptance = susceptanceMicrosiemensPerKm(line.capacitanceNfPerKm, FREQUENCY_HZ);
+  const susceptance = susceptanceMicrosiemensPerKm(line.capacitanceNfPerKm, frequencyHz);
   const charged = {
     susceptanceMicrosiemensPerKm: susceptance,
     lengthKm: line.lengthKm,
@@ -30,7 +27,7 @@ export function chargingExample(
   };
   const totalAmps = chargingAmps(charged);
   const figures = [
-    `2π · ${FREQUENCY_HZ} Hz`,
+    `2π · ${frequencyHz} Hz`,
     `${line.capacitanceNfPerKm} nF/km`,
     kilometresText(line.lengthKm),
     `${kilovoltsText(line.voltageKv)} / √3`,

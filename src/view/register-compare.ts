@@ -24,7 +24,10 @@ export function comparedVersions(
   timeZone: string,
 ): ComparedVersions {
   return {
-    settings: compared(schemeFields(from), schemeFields(to)),
+    settings: [
+      ...compared(characteristicFields(from.characteristic), characteristicFields(to.characteristic)),
+      ...compared(conventionFields(from), conventionFields(to)),
+    ],
     record: compared(recordFields(from, timeZone), recordFields(to, timeZone)),
   };
 }
@@ -36,11 +39,23 @@ export function comparedSentence({ settings }: ComparedVersions): string {
   return changed === 1 ? 'One setting differs.' : `${changed} settings differ.`;
 }
 
+/** Why the two drawings must be read with care; undefined when they need not. */
+export function conventionCaution({ from, to }: ComparedPair): string | undefined {
+  const [before, after] = [restraintConvention(from.restraint), restraintConvention(to.restraint)];
+  if (before === after || from.characteristic.kind !== to.characteristic.kind) return undefined;
+  return `The restraint is the ${before} in the earlier version and the ${after} in the later one: the same currents do not lie above one another.`;
+}
+
+export interface ComparedPair {
+  readonly from: SettingsVersion;
+  readonly to: SettingsVersion;
+}
+
 /** The version that comes before another in time; what a comparison begins with unless asked for others. */
 export function comparedPair(
   settings: readonly SettingsVersion[],
   { from, to, inForceId }: { from: number; to: number; inForceId: number | undefined },
-): { from: SettingsVersion; to: SettingsVersion } | undefined {
+): ComparedPair | undefined {
   const byId = (id: number | undefined) => settings.find((version) => version.id === id);
   const later = byId(to) ?? byId(inForceId) ?? settings.at(-1);
   if (later === undefined) return undefined;
@@ -49,33 +64,29 @@ export function comparedPair(
   return earlier && { from: earlier, to: later };
 }
 
-type Fields = ReadonlyMap<string, string>;
+type Fields = readonly (readonly [string, string])[];
 
 function compared(from: Fields, to: Fields): ComparedSetting[] {
-  const names = [...new Set([...from.keys(), ...to.keys()])];
+  const [before, after] = [new Map(from), new Map(to)];
+  const names = [...new Set([...before.keys(), ...after.keys()])];
   return names.map((name) => ({
     name,
-    from: from.get(name),
-    to: to.get(name),
-    changed: from.get(name) !== to.get(name),
+    from: before.get(name),
+    to: after.get(name),
+    changed: before.get(name) !== after.get(name),
   }));
 }
 
-function schemeFields(version: SettingsVersion): Fields {
-  return new Map([
-    ...characteristicFields(version.characteristic),
-    ['restraint', restraintConvention(version.restraint)],
-    ['charging current', version.chargingCompensation ? 'compensated' : 'not compensated'],
-  ]);
-}
+const conventionFields = ({ restraint, chargingCompensation }: SettingsVersion): Fields => [
+  ['restraint', restraintConvention(restraint)],
+  ['charging current', chargingCompensation ? 'compensated' : 'not compensated'],
+];
 
 // Figures in full: two versions that differ in a decimal must not look alike
 const exactAmps = (amps: number): string => `${amps} A`;
 const percent = (ratio: number): string => `${percentTyped(ratio)} %`;
 
-function characteristicFields(
-  characteristic: SettingsVersion['characteristic'],
-): readonly (readonly [string, string])[] {
+function characteristicFields(characteristic: SettingsVersion['characteristic']): Fields {
   switch (characteristic.kind) {
     case 'two-slope':
       return [
@@ -118,14 +129,12 @@ function characteristicFields(
   }
 }
 
-function recordFields(version: SettingsVersion, timeZone: string): Fields {
-  return new Map([
-    ['valid from', whenText(version.validFrom, timeZone)],
-    ['why', version.note],
-    ['recorded by', version.recordedBy],
-    ['recorded', whenText(version.recordedAt, timeZone)],
-  ]);
-}
+const recordFields = (version: SettingsVersion, timeZone: string): Fields => [
+  ['valid from', whenText(version.validFrom, timeZone)],
+  ['why', version.note],
+  ['recorded by', version.recordedBy],
+  ['recorded', whenText(version.recordedAt, timeZone)],
+];
 
 /** "12 May 2026, 14:32 CEST" */
 export const whenText = (instant: string, timeZone: string): string =>

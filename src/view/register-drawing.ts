@@ -26,6 +26,8 @@ export interface ThresholdCurve {
 export interface PlaneRegion {
   readonly points: readonly Point[];
   readonly label: string;
+  /** the outermost point on the negative real axis, and what to write there */
+  readonly mark: { readonly at: Point; readonly text: string };
 }
 
 /** One or two characteristics of like kind in one frame, in the order given. */
@@ -64,7 +66,9 @@ export function schemeDrawing(
   const comparisons = characteristics.filter((one) => one.kind === 'phase-comparison');
   const whole = characteristics.length;
   if (whole === 0) return undefined;
-  if (thresholds.length === whole) return thresholdDrawing(thresholds, box);
+  // Two-slope and adaptive restraint currents are different quantities: no axis is common to them
+  const isOneKind = new Set(characteristics.map(({ kind }) => kind)).size === 1;
+  if (thresholds.length === whole && isOneKind) return thresholdDrawing(thresholds, box);
   if (alphas.length === whole) return alphaDrawing(alphas, box);
   return comparisons.length === whole ? sectorDrawing(comparisons, box) : undefined;
 }
@@ -99,6 +103,7 @@ function alphaDrawing(planes: readonly AlphaPlane[], box: DrawingBox): SchemeDra
   const regions = planes.map(({ radius, angleDeg }) => ({
     points: sectorPoints(frame.centre, { inner: unit / radius, outer: unit * radius, halfDeg: angleDeg / 2 }),
     label: `radius ${radius}, angle ${angleDeg}°`,
+    mark: { at: [frame.centre[0] - unit * radius, frame.centre[1]] as const, text: String(radius) },
   }));
   return { kind: 'alpha-plane', centre: frame.centre, unit, regions };
 }
@@ -108,6 +113,7 @@ function sectorDrawing(comparisons: readonly PhaseComparison[], box: DrawingBox)
   const regions = comparisons.map(({ toleranceDeg, releaseAmps }) => ({
     points: sectorPoints(centre, { inner: 0, outer: unit, halfDeg: toleranceDeg }),
     label: `within ${toleranceDeg}° of opposition, release ${ampsText(releaseAmps)}`,
+    mark: { at: [centre[0] - unit, centre[1]] as const, text: `±${toleranceDeg}°` },
   }));
   return { kind: 'phase-comparison', centre, unit, regions };
 }

@@ -9,7 +9,7 @@ export type SharePoint = readonly [utilisation: number, share: number];
 const HISTOGRAM_BARS_MOST = 60;
 const WIDER = [1, 2, 4, 10, 20] as const;
 
-const total = (counts: readonly number[]): number => counts.reduce((sum, count) => sum + count, 0);
+export const total = (counts: readonly number[]): number => counts.reduce((sum, count) => sum + count, 0);
 /** Bin edges as they are written: multiples of the width are not exact. */
 const percent = (bin: number, binRatio: number): number => Number((100 * bin * binRatio).toPrecision(10));
 

@@ -78,7 +78,7 @@ export function periodText({ from, to }: Pick<ReplaySummary, 'from' | 'to'>, tim
 export function coverageSentences(summary: ReplaySummary): string[] {
   const { snapshots, underTest, recorded, replayed } = summary;
   if (snapshots === 0) return [];
-  const sentences = [`Of ${countText(snapshots)}, ${evaluatedWords(summary)}.`];
+  const sentences = [evaluatedSentence(summary)];
   const same = JSON.stringify(recorded.notComputable) === JSON.stringify(replayed.notComputable);
   if (same) sentences.push(...reasonsSentence('Not computable', replayed));
   else
@@ -94,10 +94,13 @@ export function coverageSentences(summary: ReplaySummary): string[] {
   return sentences;
 }
 
-function evaluatedWords({ recorded, replayed }: ReplaySummary): string {
+function evaluatedSentence({ snapshots, recorded, replayed }: ReplaySummary): string {
   const figure = (count: number) => count.toLocaleString('en-GB', { useGrouping: 'min2' });
-  if (recorded.evaluated === replayed.evaluated) return `${figure(replayed.evaluated)} were evaluated`;
-  return `${figure(replayed.evaluated)} were evaluated with these settings and ${figure(recorded.evaluated)} with the recorded ones`;
+  if (recorded.evaluated !== replayed.evaluated)
+    return `Of ${countText(snapshots)}, ${figure(replayed.evaluated)} were evaluated with these settings and ${figure(recorded.evaluated)} with the recorded ones.`;
+  return replayed.evaluated === snapshots
+    ? `${countText(snapshots)}, all evaluated.`
+    : `Of ${countText(snapshots)}, ${figure(replayed.evaluated)} were evaluated.`;
 }
 
 const REASONS_SHOWN = 4;

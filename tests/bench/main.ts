@@ -12,10 +12,11 @@ import { snapshot } from '../../src/store/schema/snapshots';
 import { insertMadeUpLine, spawnWorker } from '../faults/site-under-test';
 import { startMosquitto } from '../mosquitto';
 import { until } from '../until';
+import { printEvaluationRates } from './evaluation';
 import { type BenchMessage, LOAD, lineKey, MEASUREMENTS } from './shape';
 
 /**
- * npm run bench: how fast the worker takes the feed to committed snapshots, against a subscriber that only counts,
+ * npm run bench: how fast snapshots are evaluated; and how fast the worker takes the feed to committed snapshots, against a subscriber that only counts,
  * on the same broker in the same run. Digits depend on the machine; the ratios are what is looked at.
  */
 
@@ -126,6 +127,9 @@ async function row(name: string, brokerUrl: string, database: PrivateDatabase): 
     `${name.padEnd(10)} bare subscriber ${thousands(median(bare))}   feed to committed ${thousands(median(worker))}   ratio ${ratio.toFixed(2)}`,
   );
 }
+
+console.log('Full evaluation of a snapshot, one core:');
+printEvaluationRates();
 
 const dir = await mkdtemp(join(tmpdir(), 'tareline-bench-'));
 const database = await startDatabase({ dir, port: 0 });

@@ -78,17 +78,19 @@ describe('the list of lines', () => {
 });
 
 describe('the expected charging current', () => {
+  const place = { pickupAmps: 120, frequencyHz: 50 };
+
   it('is worked through with the line’s figures', () => {
     // 2π · 50 Hz · 8.9 nF/km · 42.5 km · 220 kV/√3 = 15.09 A
-    const example = chargingExample(line(), 120)!;
+    const example = chargingExample(line(), place)!;
     const plain = (text: string) => text.replaceAll(/\s/g, ' ');
     expect([example.total, example.perEnd].map(plain)).toEqual(['15 A', '7.5 A']);
     expect(example.susceptance).toBe('2.80 µS/km');
-    expect(chargingExample(line(), 120)?.ofPickup).toBeCloseTo(0.1258, 3);
+    expect(chargingExample(line(), place)?.ofPickup).toBeCloseTo(0.1258, 3);
   });
 
   it('cannot be told without the capacitance', () => {
-    expect(chargingExample(line({ capacitanceNfPerKm: null }), 120)).toBeUndefined();
+    expect(chargingExample(line({ capacitanceNfPerKm: null }), place)).toBeUndefined();
   });
 });
 
@@ -129,6 +131,10 @@ describe('a characteristic', () => {
     if (both?.kind !== 'threshold') throw new Error('Both have thresholds.');
     expect(both.curves[0]!.pickupY).toBeGreaterThan(both.curves[1]!.pickupY);
     expect(schemeDrawing([twoSlope, alpha], box)).toBeUndefined();
+    const errors = { terminal: 'arden', errorBelow: 0.01, errorAbove: 0.05, limitAmps: 2400 };
+    const adaptive = { kind: 'adaptive', pickupAmps: 100, ctErrors: [errors], timeErrorMs: 0 } as const;
+    expect(schemeDrawing([adaptive], box)?.kind).toBe('threshold');
+    expect(schemeDrawing([twoSlope, adaptive], box)).toBeUndefined();
   });
 
   it('is not drawn while its figures are not possible', () => {

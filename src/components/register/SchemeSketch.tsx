@@ -10,6 +10,8 @@ interface SchemeSketchProps {
 }
 
 const BOX = { width: 340, height: 210, left: 6, bottom: 20 };
+/** below the pickup a label needs this much before the axis */
+const LABEL_ROOM = 18;
 const LAST = { stroke: 'var(--ink)', strokeWidth: 2 };
 const EARLIER = { stroke: 'var(--accent)', strokeWidth: 1.5, strokeDasharray: '6 4' };
 const GUIDE = { stroke: 'var(--ink-2)', strokeWidth: 0.75, strokeDasharray: '2 3' };
@@ -106,7 +108,11 @@ function Threshold({ drawing }: { drawing: Extract<SchemeDrawing, { kind: 'thres
               {...strokeOf(index, curves.length)}
             />
           ))}
-          <Label x={BOX.width - 2} y={last.pickupY + 13} anchor="end">{`pickup ${last.pickupLabel}`}</Label>
+          <Label
+            x={BOX.width - 2}
+            y={last.pickupY + (last.pickupY > floor - LABEL_ROOM ? -5 : 13)}
+            anchor="end"
+          >{`pickup ${last.pickupLabel}`}</Label>
           <Label x={BOX.left} y={BOX.height - 5}>
             0
           </Label>
@@ -129,6 +135,7 @@ function Region({ drawing }: { drawing: Exclude<SchemeDrawing, { kind: 'threshol
   const { centre, unit, regions } = drawing;
   const [x, y] = centre;
   const isAlpha = drawing.kind === 'alpha-plane';
+  const last = regions[regions.length - 1]!;
   const what = isAlpha ? 'Ratio of the two ends’ currents' : 'Angle between the two ends’ currents';
   return (
     <Frame label={`${what}. Restrains ${regions.map(({ label }) => label).join('; then ')}.`}>
@@ -164,18 +171,47 @@ function Region({ drawing }: { drawing: Exclude<SchemeDrawing, { kind: 'threshol
               −1
             </Label>
           )}
-          <Label x={6} y={16}>
-            {isAlpha ? 'operates' : '180°'}
-          </Label>
-          <Label
-            x={isAlpha ? BOX.width - 4 : x + unit / 2}
-            y={isAlpha ? y - 6 : y - 8}
-            anchor={isAlpha ? 'end' : 'middle'}
-          >
-            {isAlpha ? 'real' : 'operates'}
+          {isAlpha ? <AlphaLabels x={x} y={y} /> : <SectorLabels x={x} y={y} unit={unit} />}
+          <Label x={last.mark.at[0] - 5} y={isAlpha ? y - 5 : y + 14} anchor="end">
+            {last.mark.text}
           </Label>
         </>
       )}
     </Frame>
+  );
+}
+
+function AlphaLabels({ x, y }: { x: number; y: number }) {
+  return (
+    <>
+      <Label x={6} y={16}>
+        operates
+      </Label>
+      <Label x={BOX.width - 4} y={y - 5} anchor="end">
+        real
+      </Label>
+      <Label x={x + 5} y={13}>
+        imaginary
+      </Label>
+    </>
+  );
+}
+
+function SectorLabels({ x, y, unit }: { x: number; y: number; unit: number }) {
+  return (
+    <>
+      <Label x={x + unit / 2} y={y - 8} anchor="middle">
+        operates
+      </Label>
+      <Label x={x - unit / 2} y={y - 8} anchor="middle">
+        restrains
+      </Label>
+      <Label x={x - unit - 5} y={y - 5} anchor="end">
+        180°
+      </Label>
+      <Label x={x + unit + 5} y={y - 5}>
+        0°
+      </Label>
+    </>
   );
 }

@@ -20,7 +20,7 @@ export function AsTyped({ replay: { state, busy }, settings, inForce }: Props) {
       <p className="mt-0.5 text-caption text-ink-2" role="status">
         {statusWords(state?.state, busy)} {state?.problem}
       </p>
-      <div className="mt-3 max-w-[40rem]">
+      <div className="mt-3 max-w-[32rem]">
         <CharacteristicPicture
           replayed={settings && { characteristic: settings.characteristic, points: [] }}
           recorded={inForce && { characteristic: inForce.characteristic, points: [] }}

@@ -14,7 +14,7 @@ interface Props {
   readonly recorded: SideDrawn | undefined;
 }
 
-const ROOM: DrawingRoom = { width: 460, height: 260, left: 44, bottom: 34, top: 14 };
+const ROOM: DrawingRoom = { width: 400, height: 250, left: 38, bottom: 34, top: 16 };
 const HALF: DrawingRoom = { width: 240, height: 240, left: 4, bottom: 4, top: 4 };
 
 /** Both characteristics: over one pair of axes where both have a threshold, else each in its own plane. */
@@ -26,7 +26,11 @@ export function CharacteristicPicture({ replayed, recorded }: Props) {
     return (
       <figure className="m-0">
         <ThresholdDrawing picture={together} tried={replayed !== undefined} />
-        <Key tried={replayed !== undefined} recorded={recorded !== undefined} />
+        <Key
+          tried={replayed !== undefined}
+          recorded={recorded !== undefined}
+          marks={sides.some(({ points }) => points.length > 0)}
+        />
       </figure>
     );
   return (
@@ -103,11 +107,12 @@ function ThresholdDrawing({ picture, tried }: { picture: ThresholdPicture; tried
             strokeDasharray={isTried(index) ? undefined : '6 4'}
           />
         ))}
-        {picture.points.map((points, index) => (
+        {/* the recorded marks lie below and are larger: where both stand in one place, both are seen */}
+        {[...picture.points.entries()].reverse().map(([index, points]) => (
           <g key={index} color={isTried(index) ? 'var(--accent)' : 'var(--ink)'}>
             {points.map(({ phase, at: [x, y] }) => (
               <g key={phase} transform={`translate(${x} ${y})`}>
-                <PhaseMarker phase={phase} size={4.5} hollow={!isTried(index)} />
+                <PhaseMarker phase={phase} size={isTried(index) ? 3.5 : 6} hollow={!isTried(index)} />
               </g>
             ))}
           </g>
@@ -168,12 +173,16 @@ function RegionDrawing({ picture, tried }: { picture: RegionPicture; tried: bool
   );
 }
 
-function Key({ tried, recorded }: { tried: boolean; recorded: boolean }) {
+function Key({ tried, recorded, marks }: { tried: boolean; recorded: boolean; marks: boolean }) {
   return (
     <figcaption className="mt-1 flex flex-wrap gap-x-5 text-caption text-ink-2">
-      {tried && <Entry colour="var(--accent)" words="these settings, filled marks" />}
-      {recorded && <Entry colour="var(--ink)" dash="6 4" words="recorded, outlined marks" />}
-      <span>marks: each phase where it came nearest</span>
+      {tried && (
+        <Entry colour="var(--accent)" words={marks ? 'these settings, filled marks' : 'these settings'} />
+      )}
+      {recorded && (
+        <Entry colour="var(--ink)" dash="6 4" words={marks ? 'recorded, outlined marks' : 'recorded'} />
+      )}
+      {marks && <span>each phase where it came nearest to its threshold</span>}
     </figcaption>
   );
 }

@@ -22,7 +22,7 @@ const FORMS: readonly { value: DistributionForm; label: string }[] = [
 ];
 const CAPTIONS: Readonly<Record<DistributionForm, string>> = {
   'at or above':
-    'Share of the evaluated snapshots at or above each utilisation, on a logarithmic scale; solid these settings, dashed the recorded',
+    'Share of the evaluated snapshots at or above each utilisation, on a logarithmic scale; solid these settings, dashed the recorded; dotted the near mark, heavy 100 %',
   histogram: 'Share of the evaluated snapshots by utilisation; solid these settings, dashed the recorded',
 };
 

@@ -22,6 +22,8 @@ interface Props {
   readonly inForce: SettingsVersion | undefined;
   readonly site: SiteCustom;
   readonly mayKeep: boolean;
+  /** the form still holds what was tried */
+  readonly isOfForm: boolean;
   readonly nowMs: number;
   readonly onKept: (proposal: Proposal) => void;
 }
@@ -30,7 +32,7 @@ const INK = { settled: '', near: 'text-near', over: 'text-over' } as const;
 
 /** The answer: a sentence, the figures of both sides, how they are distributed, and the way to keep it. */
 export function ReplayAnswer(props: Props) {
-  const { id, result, versions, inForce, site, mayKeep, nowMs, onKept } = props;
+  const { id, result, versions, inForce, site, mayKeep, isOfForm, nowMs, onKept } = props;
   const { phaseLetters: letters, timeZone } = site;
   const worst = worstOf(result.replayed);
   const state = worst === undefined ? 'settled' : utilisationState(worst.point.utilisation, result.nearRatio);
@@ -38,6 +40,11 @@ export function ReplayAnswer(props: Props) {
   return (
     <>
       <section aria-live="polite">
+        {!isOfForm && (
+          <p className="mt-0 mb-1.5 border-l-4 border-accent bg-panel py-1 pl-3">
+            The form has been changed since. This answer is of what was tried; run it again for yours.
+          </p>
+        )}
         <p className="m-0 max-w-[46ch] text-[1.375rem] leading-tight font-medium text-pretty">
           {resultSentence(result, letters)}
         </p>
@@ -57,7 +64,7 @@ export function ReplayAnswer(props: Props) {
               version in force at its snapshot, with the terminals that the register holds in service today
             </p>
             <SidesTable summary={result} letters={letters} timeZone={timeZone} />
-            <div className="mt-4 max-w-[40rem]">
+            <div className="mt-4 max-w-[32rem]">
               <CharacteristicPicture {...sidesDrawn(result, versions, inForce)} />
             </div>
           </section>

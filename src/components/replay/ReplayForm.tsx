@@ -91,7 +91,11 @@ export function ReplayForm(props: Props) {
       </div>
       <PeriodFields {...props} />
       <div>
-        <button type="submit" className="button button-first" disabled={busy || !mayReplay}>
+        <button
+          type="submit"
+          className={`button ${busy || !mayReplay ? '' : 'button-first'}`}
+          disabled={busy || !mayReplay}
+        >
           {busy ? 'Running …' : 'Run the replay'}
         </button>
         {!mayReplay && (

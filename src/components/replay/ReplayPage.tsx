@@ -1,5 +1,5 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
-import type { Proposal, ReplayRequest } from '../../contract/replay';
+import type { Proposal, ReplayRequest, ReplaySettings } from '../../contract/replay';
 import type { SettingsVersion } from '../../contract/settings-version';
 import type { ReplayLine } from '../../view/replay-problems';
 import { periodOf, type PeriodChoice, type TypedPeriod } from '../../view/replay-period';
@@ -53,6 +53,12 @@ export function ReplayPage(props: ReplayPageProps) {
     }
   };
   const result = replay.state?.state === 'done' ? replay.state.result : null;
+  const isPossible = Object.keys(meant.problems).length === 0;
+  useFormOf(result?.settings, {
+    isFromAddress: replay.state?.id === address.replay,
+    line,
+    onTyped: setTyped,
+  });
   return (
     <div className="grid gap-4">
       <header>
@@ -100,17 +106,35 @@ export function ReplayPage(props: ReplayPageProps) {
               inForce={inForce}
               site={site}
               mayKeep={mayKeep}
+              isOfForm={JSON.stringify(meant.settings) === JSON.stringify(result.settings)}
               nowMs={nowMs}
               onKept={(proposal) => setProposals((kept) => [proposal, ...kept])}
             />
           ) : (
-            <AsTyped replay={replay} settings={meant.settings} inForce={inForce} />
+            <AsTyped replay={replay} settings={isPossible ? meant.settings : undefined} inForce={inForce} />
           )}
         </div>
       </div>
       <ProposalList proposals={proposals} site={site} />
     </div>
   );
+}
+
+/** After a reload the form holds what the replay of the address tried. */
+function useFormOf(
+  settings: ReplaySettings | undefined,
+  {
+    isFromAddress,
+    line,
+    onTyped,
+  }: { isFromAddress: boolean; line: ReplayLine; onTyped: (typed: ReplayTyped) => void },
+): void {
+  const taken = useRef(false);
+  useEffect(() => {
+    if (taken.current || settings === undefined || !isFromAddress) return;
+    taken.current = true;
+    onTyped(typedSettings(settings, line));
+  }, [settings, isFromAddress, line, onTyped]);
 }
 
 /** Brings the answer into sight on a narrow screen, where it lies below the form. */

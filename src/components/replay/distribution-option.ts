@@ -5,6 +5,7 @@ import { PHASES, type PhaseName } from '../../view/phase';
 import {
   histogramOutline,
   lastBin,
+  total,
   shareAtOrAbove,
   spanOf,
   type SharePoint,
@@ -24,8 +25,11 @@ interface Drawing {
   readonly narrow: boolean;
 }
 
-/** Least share that the logarithmic scale shows, in per cent: about one snapshot in a month at 2 s. */
-const SHARE_LEAST = 0.0001;
+/** Where the logarithmic scale begins, in per cent: the power of ten below the share of one snapshot. */
+function leastShare({ recorded, replayed }: Distribution): number {
+  const most = Math.max(...PHASES.flatMap((phase) => [total(recorded[phase]), total(replayed[phase])]), 1);
+  return 10 ** Math.floor(Math.log10(100 / most));
+}
 
 /** One small chart a phase, over the same scale: side by side, or one below the other on a narrow screen. */
 export function distributionOption(drawing: Drawing): EChartsCoreOption {
@@ -47,7 +51,7 @@ export function distributionOption(drawing: Drawing): EChartsCoreOption {
 function gridPlace(index: number, narrow: boolean) {
   const inner = { outerBoundsMode: 'none' as const };
   if (narrow) return { ...inner, left: 44, right: 14, top: `${index * 33.3 + 5}%`, height: '22%' };
-  return { ...inner, left: `${index * 33.3 + 3.6}%`, width: '28.4%', top: 34, bottom: 40 };
+  return { ...inner, left: `${index * 33.3 + 4}%`, width: '28%', top: 34, bottom: 40 };
 }
 
 function utilisationAxis(index: number, { ink, distribution, form }: Drawing) {
@@ -76,9 +80,14 @@ function utilisationAxis(index: number, { ink, distribution, form }: Drawing) {
   };
 }
 
-const powerText = (share: number): string => String(Number(share.toPrecision(2)));
+const POWERS = ['10⁻³', '10⁻⁴', '10⁻⁵'];
 
-function shareAxis(phase: PhaseName, index: number, { ink, letters, form }: Drawing) {
+function powerText(share: number): string {
+  const power = Math.round(Math.log10(share));
+  return power <= -3 ? (POWERS[-3 - power] ?? '') : String(Number(share.toPrecision(2)));
+}
+
+function shareAxis(phase: PhaseName, index: number, { ink, distribution, letters, form }: Drawing) {
   const shared = {
     ...axisBase(ink),
     gridIndex: index,
@@ -91,7 +100,7 @@ function shareAxis(phase: PhaseName, index: number, { ink, letters, form }: Draw
   return {
     ...shared,
     type: 'log',
-    min: SHARE_LEAST,
+    min: leastShare(distribution),
     max: 100,
     axisLabel: { ...shared.axisLabel, formatter: powerText },
   };
@@ -116,7 +125,7 @@ function phaseSeries(phase: PhaseName, index: number, drawing: Drawing): LineSer
       which === 'replayed' ? { color: ink.accent, width: 2 } : { color: ink.ink, width: 1.5, type: [5, 4] },
     z: which === 'replayed' ? 4 : 3,
   });
-  const floor = form === 'at or above' ? SHARE_LEAST : 0;
+  const floor = form === 'at or above' ? leastShare(distribution) : 0;
   const mark = (atPercent: number, width: number, type: 'dotted' | 'solid'): LineSeriesOption => ({
     ...shared,
     id: `${phase}-mark-${atPercent}`,
@@ -138,7 +147,7 @@ function pointsOf(counts: readonly number[], { distribution, form }: Drawing): S
   if (form === 'histogram') return histogramOutline(counts, { binRatio, span: spanOf(distribution) });
   const points = shareAtOrAbove(counts, binRatio);
   const end = (lastBin([counts]) + 1) * binRatio * 100;
-  return points.length === 0 ? [] : [...points, [Number(end.toPrecision(10)), SHARE_LEAST]];
+  return points.length === 0 ? [] : [...points, [Number(end.toPrecision(10)), leastShare(distribution)]];
 }
 
 interface Pointed {
