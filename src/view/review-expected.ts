@@ -132,7 +132,9 @@ function verdictWords(
     return `No verdict: ${missing.map((cause) => MISSING[cause]).join(', ')} not known.`;
   switch (judgement) {
     case 'within':
-      return `Within what is expected, ${ampsText(leastAmps)} to ${ampsText(worstCaseAmps)}.`;
+      return leastAmps === 0
+        ? `Within what is expected, up to ${ampsText(worstCaseAmps)}.`
+        : `Within what is expected, ${ampsText(leastAmps)} to ${ampsText(worstCaseAmps)}.`;
     case 'above':
       return `Above all that is expected together, ${ampsText(worstCaseAmps)}: something adds to it.`;
     case 'far below':

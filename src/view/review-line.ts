@@ -57,3 +57,15 @@ export function reviewZone(
 export function reviewScheme(line: ReviewLine, { characteristic, restraint }: RecordedScheme): Scheme {
   return schemeAtTerminals({ characteristic, restraint }, terminalsInService(line));
 }
+
+/** What is done to the measured currents before they add up, in words; undefined where they add up as measured. */
+export function broughtBy(
+  { inZoneTransformer }: Pick<ReviewLine, 'inZoneTransformer'>,
+  recorded: Pick<RecordedScheme, 'chargingCompensation'> | undefined,
+): string | undefined {
+  const done = [
+    ...(inZoneTransformer === null ? [] : ['brought to the line’s side of the transformer']),
+    ...(recorded?.chargingCompensation === true ? ['each terminal’s share of the charging taken out'] : []),
+  ];
+  return done.length === 0 ? undefined : done.join(', ');
+}

@@ -39,12 +39,25 @@ function placeWords(kind: 'alpha-plane' | 'phase-comparison', { x, y }: ReviewPl
   return `${y.toFixed(2)}° from opposition, smaller current ${ampsText(x)}`;
 }
 
-/** The predicted way from no load to emergency rating; the through current stands for the smaller end's current. */
-export function pathPlaces({ path }: Pick<Loadability, 'path'>, plane: PolarPlane): DiscPlace[] {
-  return path.flatMap((point) => {
-    const place = predictedPlace(point);
-    return place === undefined ? [] : [plane.place(place)];
-  });
+/** Predictions farther apart than this share of the disc's radius are not joined: the way between is not known. */
+const JOINED_MOST = 0.3;
+
+/**
+ * The predicted way from no load to emergency rating in pieces that can be drawn as lines. At no load the charging
+ * alone flows in at all ends, so that the first step out of it may be a leap across the plane. The through current
+ * stands for the smaller end's current.
+ */
+export function pathPieces({ path }: Pick<Loadability, 'path'>, plane: PolarPlane): DiscPlace[][] {
+  const pieces: DiscPlace[][] = [];
+  for (const point of path) {
+    const found = predictedPlace(point);
+    if (found === undefined) continue;
+    const place = plane.place(found);
+    const last = pieces.at(-1)?.at(-1);
+    if (last === undefined || Math.hypot(place.x - last.x, place.y - last.y) > JOINED_MOST) pieces.push([]);
+    pieces.at(-1)!.push(place);
+  }
+  return pieces;
 }
 
 function predictedPlace(point: PredictedPoint): ReviewPlace | undefined {

@@ -131,6 +131,9 @@ async function row(name: string, brokerUrl: string, database: PrivateDatabase): 
 console.log('Full evaluation of a snapshot, one core:');
 printEvaluationRates();
 
+// an end from outside stops the database too, by its own exit handler
+for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => process.exit(1));
+
 const dir = await mkdtemp(join(tmpdir(), 'tareline-bench-'));
 const database = await startDatabase({ dir, port: 0 });
 console.log(

@@ -23,13 +23,15 @@ interface Props {
   readonly unit: CurrentUnit;
   readonly faded: boolean;
   readonly initialPhase: PhaseName;
+  /** what was done to the measured currents before, in words */
+  readonly broughtBy?: string | undefined;
 }
 
 const BOX = { width: 300, height: 132, margin: 16 } as const;
 
 /** How the terminals' currents of one phase add up, laid head to tail, and what they leave over. */
 export function CurrentSumPanel(props: Props) {
-  const { line, site, initialPhase } = props;
+  const { line, site, initialPhase, broughtBy } = props;
   const [phase, setPhase] = useState(initialPhase);
   const options = PHASES.map((each) => ({ value: each, label: site.phaseLetters[each] }));
   const byPhasors = line.goesBy === 'phasors';
@@ -41,7 +43,8 @@ export function CurrentSumPanel(props: Props) {
             How the currents of phase {site.phaseLetters[phase]} add up
           </h2>
           <p className="mt-0.5 text-caption text-ink-2">
-            Head to tail, positive into the line, turned so that the greatest points right
+            Head to tail, positive into the line{broughtBy === undefined ? '' : `, ${broughtBy}`}, turned so
+            that the greatest points right
           </p>
         </div>
         {byPhasors && (
@@ -63,7 +66,7 @@ function NoPhasors() {
 }
 
 function Sum({ line, inService, result, site, unit, faded, phase }: Props & { phase: PhaseName }) {
-  // Where no differential is computed, by a transformer in the zone or a broken clock, the plain sum is none either.
+  // Where no differential is computed, as with a broken clock, the plain sum is none either.
   const told = line.phases[phase].differentialAmps !== null;
   const sum = result === undefined || !told ? undefined : phasorSum(result.terminals, { phase, inService });
   if (sum === undefined)

@@ -4,12 +4,15 @@ import type { LineDetail } from '../../contract/lines';
 import type { CurrentUnit } from '../../view/line-unit';
 import type { PhaseName } from '../../view/phase';
 import { TAIL_MS } from '../../view/plane-tail';
+import { broughtBy } from '../../view/review-line';
+import type { ReviewLine } from '../../view/review-line';
 import type { SiteCustom } from '../../view/site-custom';
 import { worstStandingPhase } from '../../view/trend-phase';
 import type { TrendPhase } from '../../view/trend-phase';
 import { versionInForce } from '../../view/trend-pickup';
 import { spanInAddress } from '../../view/trend-span';
 import type { TrendSpan } from '../../view/trend-span';
+import { resultOnLineSide, useLiveSnapshot } from '../review/use-live-snapshot';
 import { CurrentSumPanel } from './CurrentSumPanel';
 import { LineHeader } from './LineHeader';
 import { OperatingPlane } from './OperatingPlane';
@@ -25,6 +28,8 @@ import { WarningsPanel } from './WarningsPanel';
 export interface LinePageProps {
   /** what the server knew when it made the page */
   readonly detail: LineDetail;
+  /** the line's constants, by which its currents are brought to one side */
+  readonly review: ReviewLine;
   readonly site: SiteCustom;
   readonly mayAcknowledge: boolean;
   /** the switches as the address had them */
@@ -49,7 +54,7 @@ const unitInAddress = (unit: CurrentUnit) => (unit === 'per unit' ? 'pu' : undef
 const spanKept = (span: TrendSpan) => (span === 'two months' ? undefined : spanInAddress(span));
 const phaseKept = (phase: TrendPhase) => phase;
 
-function LineView({ detail: initial, site, mayAcknowledge, address }: LinePageProps) {
+function LineView({ detail: initial, review, site, mayAcknowledge, address }: LinePageProps) {
   const client = useQueryClient();
   const { detail, line, result, warnings, nowMs, faded } = useLine(initial);
   const [unit, setUnit] = useAddressSwitch('unit', address.unit, unitInAddress);
@@ -60,6 +65,7 @@ function LineView({ detail: initial, site, mayAcknowledge, address }: LinePagePr
   const recent = useRecentReadings(line.key, live, { nowMs, windowMs: TAIL_MS, enabled: true });
   const minuteMs = Math.floor(nowMs / 60_000) * 60_000;
   const inForce = useMemo(() => versionInForce(detail.settings, minuteMs), [detail.settings, minuteMs]);
+  const snapshot = useLiveSnapshot(review, inForce, result);
   const inService = detail.terminals.filter((terminal) => terminal.inService).map(({ key }) => key);
   const shared = { line, site, nowMs, faded };
   return (
@@ -80,15 +86,17 @@ function LineView({ detail: initial, site, mayAcknowledge, address }: LinePagePr
           readings={recent.readings}
           tailError={recent.error}
           unit={unit}
+          live={snapshot}
         />
         <div className="grid min-w-0 content-start gap-4">
           <PhasesPanel {...shared} unit={unit} restraint={inForce?.restraint} />
           <CurrentSumPanel
             {...shared}
             inService={inService}
-            result={result}
+            result={resultOnLineSide(result, snapshot)}
             unit={unit}
             initialPhase={worst}
+            broughtBy={broughtBy(review, inForce)}
           />
         </div>
       </div>

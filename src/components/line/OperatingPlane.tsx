@@ -2,6 +2,9 @@ import { useMemo, useState } from 'react';
 import type { LineSummary } from '../../contract/lines';
 import type { SettingsVersion } from '../../contract/settings-version';
 import { isThresholdCharacteristic } from '../../protection/characteristic';
+import type { ThresholdCharacteristic } from '../../protection/characteristic';
+import { isComputable } from '../../protection/evaluation';
+import type { NotComputable } from '../../protection/evaluation';
 import { restraintConvention } from '../../protection/restraint';
 import type { Reading } from '../../view/line-readings';
 import { missingFiguresReason, phaseRows } from '../../view/line-phase-rows';
@@ -12,12 +15,15 @@ import { csvName } from '../../view/line-csv';
 import { planeShape } from '../../view/plane-shape';
 import { planeSentence, planeTable } from '../../view/plane-table';
 import type { PlaneExtent } from '../../view/plane-window';
+import { conventionWords } from '../../view/review-words';
 import type { SiteCustom } from '../../view/site-custom';
 import type { ChartInk } from '../charts/chart-ink';
 import { ChartPanel } from '../charts/ChartPanel';
 import { ChartPlace } from '../charts/ChartPlace';
 import { Choice } from '../charts/Choice';
 import { useChartInk } from '../charts/use-chart-ink';
+import { RegionPlane } from '../review/RegionPlane';
+import type { LiveSnapshot } from '../review/use-live-snapshot';
 import { phaseColour } from './phase-colour';
 import { planeOption } from './plane-option';
 
@@ -32,6 +38,8 @@ interface Props {
   readonly site: SiteCustom;
   readonly faded: boolean;
   readonly nowMs: number;
+  /** the newest snapshot as the scheme sees it */
+  readonly live: LiveSnapshot | NotComputable | undefined;
 }
 
 const EXTENTS: readonly { value: PlaneExtent; label: string }[] = [
@@ -43,27 +51,41 @@ const EXTENTS: readonly { value: PlaneExtent; label: string }[] = [
 export function OperatingPlane(props: Props) {
   const { inForce } = props;
   if (inForce !== undefined && !isThresholdCharacteristic(inForce.characteristic)) {
-    return <RegionInstead {...props} inForce={inForce} />;
+    return <OwnPlane {...props} inForce={inForce} characteristic={inForce.characteristic} />;
   }
   return <ThresholdPlane {...props} />;
 }
 
-/** A scheme that weighs no differential against a restraint has a plane of its own, on the Review page. */
-function RegionInstead({ line, inForce }: Props & { inForce: SettingsVersion }) {
+type Region = Exclude<SettingsVersion['characteristic'], ThresholdCharacteristic>;
+
+/** A scheme that weighs no differential against a restraint has a plane of its own; the cloud over it is on the Review page. */
+function OwnPlane({
+  characteristic,
+  ...props
+}: Props & { inForce: SettingsVersion; characteristic: Region }) {
+  const { line, inForce, live } = props;
   return (
     <section className="panel min-w-0 p-4 sm:p-[1.125rem]" aria-labelledby="plane-title">
       <h2 id="plane-title" className="m-0 text-body font-semibold">
         Operating point
       </h2>
-      <p className="mt-0.5 text-caption text-ink-2">{missingFiguresReason(line) ?? 'Judged by region'}</p>
-      <p className="mt-3 max-w-[60ch] text-pretty">
-        This line’s scheme is {inForce.characteristic.kind === 'alpha-plane' ? 'an' : 'a'}{' '}
-        {characteristicName(inForce.characteristic.kind)}: it operates outside a region and has no threshold
-        over restraint.{' '}
+      <p className="mt-0.5 text-caption text-ink-2">
+        {missingFiguresReason(line) ?? `Now, by ${characteristicName(characteristic.kind)}`}
+      </p>
+      {live !== undefined && !isComputable(live) && <p className="mt-2 text-ink-2">{live.notComputable}</p>}
+      <RegionPlane
+        {...props}
+        characteristic={characteristic}
+        convention={conventionWords(inForce)}
+        cloud={undefined}
+        extent="whole characteristic"
+        shown="all"
+        worst={undefined}
+      />
+      <p className="mt-2">
         <a className="link" href={`/lines/${line.key}/review`}>
-          Its plane is on the Review page
+          Where it has stood, and where load would take it
         </a>
-        .
       </p>
     </section>
   );

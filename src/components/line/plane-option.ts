@@ -158,8 +158,8 @@ function pathSeries({ ink, path }: PlaneDrawing): LineSeriesOption[] {
         label: {
           show: index === end,
           formatter: path.label,
-          position: 'left' as const,
-          distance: 8,
+          position: 'bottom' as const,
+          distance: 6,
           ...CHART_TYPE,
           color: ink.accent,
           textBorderColor: ink.panel,

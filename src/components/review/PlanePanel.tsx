@@ -20,7 +20,8 @@ import { Choice } from '../charts/Choice';
 import { FetchState } from '../charts/FetchState';
 import { RegionPlane } from './RegionPlane';
 import { RestraintPlane } from './RestraintPlane';
-import type { LiveSnapshot, ReviewFigures } from './use-review';
+import type { LiveSnapshot } from './use-live-snapshot';
+import type { ReviewFigures } from './use-review';
 
 export interface PlanePanelProps {
   readonly line: LineSummary;

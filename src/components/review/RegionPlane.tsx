@@ -12,12 +12,12 @@ import { cloudCells } from '../../view/review-cloud';
 import type { worstLoadability } from '../../view/review-margins';
 import { alphaPolar, cellOutline, discWindow, sectorPolar, WHOLE_DISC } from '../../view/review-polar';
 import type { DiscPlace, DiscWindow } from '../../view/review-polar';
-import { pathPlaces, regionMarks, regionSentence, regionSpan } from '../../view/review-region';
+import { pathPieces, regionMarks, regionSentence, regionSpan } from '../../view/review-region';
 import type { RegionMark } from '../../view/review-region';
 import { PhaseMarker } from '../marks/PhaseMarker';
 import type { PlanePanelProps } from './PlanePanel';
 
-interface Props extends PlanePanelProps {
+interface Props extends Pick<PlanePanelProps, 'line' | 'site' | 'faded' | 'convention' | 'live' | 'cloud'> {
   readonly characteristic: AlphaPlane | PhaseComparison;
   readonly extent: PlaneExtent;
   readonly shown: PhaseName | 'all';
@@ -69,17 +69,7 @@ export function RegionPlane(props: Props) {
             opacity={0.12 + 0.6 * density}
           />
         ))}
-        {worst !== undefined && (
-          <polyline
-            points={pathPlaces(worst.load, plane)
-              .map((place) => pair(at(place)))
-              .join(' ')}
-            fill="none"
-            stroke="var(--accent)"
-            strokeWidth={1.5}
-            strokeDasharray="5 4"
-          />
-        )}
+        {worst !== undefined && <Path pieces={pathPieces(worst.load, plane)} at={at} />}
         <Marks {...props} marks={marks} at={at} height={height} />
       </svg>
       <figcaption className="mt-1 text-caption text-ink-2">
@@ -113,6 +103,27 @@ const hundredths = (pixels: number): number => Math.round(pixels * 100) / 100;
 const pair = ({ x, y }: DiscPlace): string => `${x},${y}`;
 const outline = (places: readonly DiscPlace[], at: At): string =>
   places.length === 0 ? '' : `M${places.map((place) => pair(at(place))).join('L')}Z`;
+
+/** The predicted way: dashed, a lone prediction as a dot, a ring where the emergency rating is. */
+function Path({ pieces, at }: { pieces: readonly (readonly DiscPlace[])[]; at: At }) {
+  const end = pieces.at(-1)?.at(-1);
+  return (
+    <g fill="none" stroke="var(--accent)" strokeWidth={1.5}>
+      {pieces.map((piece, index) =>
+        piece.length === 1 ? (
+          <circle key={index} cx={at(piece[0]!).x} cy={at(piece[0]!).y} r={2.5} fill="var(--accent)" />
+        ) : (
+          <polyline
+            key={index}
+            points={piece.map((place) => pair(at(place))).join(' ')}
+            strokeDasharray="5 4"
+          />
+        ),
+      )}
+      {end !== undefined && <circle cx={at(end).x} cy={at(end).y} r={4} fill="var(--panel)" />}
+    </g>
+  );
+}
 
 interface GroundProps extends Props {
   readonly plane: ReturnType<typeof alphaPolar>;

@@ -4,7 +4,7 @@ import type { LineDetail } from '../../contract/lines';
 import { isComputable } from '../../protection/evaluation';
 import type { PhaseName } from '../../view/phase';
 import type { ReviewLine } from '../../view/review-line';
-import { terminalsInService } from '../../view/review-line';
+import { broughtBy, terminalsInService } from '../../view/review-line';
 import { reviewPickupWindow } from '../../view/review-margins';
 import type { MismatchBasis } from '../../view/review-model';
 import type { LagChoice } from '../../view/review-number';
@@ -23,7 +23,8 @@ import { PlanePanel } from './PlanePanel';
 import { ReviewHeader } from './ReviewHeader';
 import { SensitivityPanel } from './SensitivityPanel';
 import { SequencePanel } from './SequencePanel';
-import { useCloud, useFigures, useLiveSnapshot, usePeriod } from './use-review';
+import { resultOnLineSide, useLiveSnapshot } from './use-live-snapshot';
+import { useCloud, useFigures, usePeriod } from './use-review';
 
 export interface ReviewPageProps {
   /** what the server knew when it made the page */
@@ -82,24 +83,33 @@ function ReviewView({ detail: initial, review, site, address }: ReviewPageProps)
   const told = { ...shared, convention };
   const { expected } = figures;
   const uncompensatedAmps = isComputable(expected) ? expected.uncompensatedAmps : undefined;
-  const onLineSide =
-    result !== undefined && live !== undefined && isComputable(live)
-      ? { ...result, terminals: live.terminals }
-      : result;
+  const onLineSide = resultOnLineSide(result, live);
   return (
     <div className="grid gap-4">
       {header}
-      <div className="grid gap-4 lg:grid-cols-[minmax(0,1.05fr)_minmax(0,1fr)] lg:gap-x-6">
-        <PlanePanel
-          {...told}
-          inForce={inForce}
-          period={period}
-          cloud={cloud.data}
-          cloudError={cloud.error}
-          onTryAgain={() => void cloud.refetch()}
-          live={live}
-          load={figures.load}
-        />
+      <div className="grid gap-4 lg:grid-cols-2 lg:gap-x-6">
+        <div className="grid min-w-0 content-start gap-4">
+          <PlanePanel
+            {...told}
+            inForce={inForce}
+            period={period}
+            cloud={cloud.data}
+            cloudError={cloud.error}
+            onTryAgain={() => void cloud.refetch()}
+            live={live}
+            load={figures.load}
+          />
+          <ExpectedPanel {...told} expected={expected} />
+          <PickupWindowPanel
+            {...told}
+            window={reviewPickupWindow(
+              { line: review, recorded: inForce },
+              { multiple: Number(multiple), uncompensatedAmps },
+            )}
+            multiple={multiple}
+            onMultiple={setMultiple}
+          />
+        </div>
         <div className="grid min-w-0 content-start gap-4">
           <CurrentSumPanel
             {...shared}
@@ -107,31 +117,20 @@ function ReviewView({ detail: initial, review, site, address }: ReviewPageProps)
             result={onLineSide}
             unit="amperes"
             initialPhase={worst}
+            broughtBy={broughtBy(review, inForce)}
           />
+          <LoadPanel
+            {...told}
+            load={figures.load}
+            basis={basis}
+            onBasis={setBasis}
+            lag={lag}
+            onLag={setLag}
+            hasTransformer={review.inZoneTransformer !== null}
+          />
+          <SensitivityPanel {...told} seen={figures.seen} />
           <SequencePanel {...told} live={live} />
         </div>
-      </div>
-      <div className="grid items-start gap-4 lg:grid-cols-2 lg:gap-x-6">
-        <ExpectedPanel {...told} expected={expected} />
-        <LoadPanel
-          {...told}
-          load={figures.load}
-          basis={basis}
-          onBasis={setBasis}
-          lag={lag}
-          onLag={setLag}
-          hasTransformer={review.inZoneTransformer !== null}
-        />
-        <SensitivityPanel {...told} seen={figures.seen} />
-        <PickupWindowPanel
-          {...told}
-          window={reviewPickupWindow(
-            { line: review, recorded: inForce },
-            { multiple: Number(multiple), uncompensatedAmps },
-          )}
-          multiple={multiple}
-          onMultiple={setMultiple}
-        />
       </div>
     </div>
   );

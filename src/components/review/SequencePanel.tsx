@@ -7,7 +7,7 @@ import { DASH } from '../../view/line-figures';
 import { sequenceTable } from '../../view/review-tables';
 import type { SiteCustom } from '../../view/site-custom';
 import { ChartPanel } from '../charts/ChartPanel';
-import type { LiveSnapshot } from './use-review';
+import type { LiveSnapshot } from './use-live-snapshot';
 
 interface Props {
   readonly line: LineSummary;

@@ -1,19 +1,14 @@
 import { useQuery } from '@tanstack/react-query';
 import { useCallback, useMemo, useState } from 'react';
 import type { LineDetail } from '../../contract/lines';
-import type { Result } from '../../contract/result';
 import type { SettingsVersion } from '../../contract/settings-version';
 import { expectedLevels } from '../../view/review-expected';
 import type { ReviewLine } from '../../view/review-line';
 import { INFEEDS, reviewLoadability, reviewSensitivity } from '../../view/review-margins';
 import type { MismatchBasis } from '../../view/review-model';
-import { reviewPoints, reviewSequences, reviewSnapshot, terminalsOnLineSide } from '../../view/review-now';
-import type { ReviewSnapshot } from '../../view/review-now';
+import { reviewSnapshot } from '../../view/review-now';
 import { periodInAddress, periodWindow } from '../../view/review-period';
 import type { ReviewPeriod } from '../../view/review-period';
-import { isComputable } from '../../protection/evaluation';
-import type { Evaluation, NotComputable } from '../../protection/evaluation';
-import type { PerPhase } from '../../protection/phase';
 import { fetchReviewCloud } from '../line/line-requests';
 
 /** The period of the page, kept in its address. */
@@ -38,34 +33,6 @@ export function useCloud(key: string, period: ReviewPeriod, nowMs: number) {
     queryFn: ({ signal }) => fetchReviewCloud({ key, signal }, periodWindow(period, nowMs)),
     staleTime: 5 * 60_000,
   });
-}
-
-/** The newest snapshot with what the recorded scheme makes of it. */
-export interface LiveSnapshot {
-  readonly snapshot: ReviewSnapshot;
-  readonly points: PerPhase<Evaluation>;
-  readonly sequences: ReturnType<typeof reviewSequences>;
-  /** currents on the line's side, as the scheme judges them */
-  readonly terminals: Result['terminals'];
-}
-
-/** The newest snapshot as the recorded scheme sees it; moves with the stream. */
-export function useLiveSnapshot(
-  review: ReviewLine,
-  inForce: SettingsVersion | undefined,
-  result: Result | undefined,
-): LiveSnapshot | NotComputable | undefined {
-  return useMemo(() => {
-    if (inForce === undefined || result === undefined) return undefined;
-    const snapshot = reviewSnapshot(review, inForce, result.terminals);
-    if (!isComputable(snapshot)) return snapshot;
-    return {
-      snapshot,
-      points: reviewPoints(review, inForce, snapshot),
-      sequences: reviewSequences(review, inForce, snapshot),
-      terminals: terminalsOnLineSide(result.terminals, snapshot),
-    };
-  }, [review, inForce, result]);
 }
 
 interface MarginChoices {
