@@ -2,6 +2,7 @@ import { hashPassword } from '../src/auth/passwords';
 import type { Measurement } from '../src/contract/feed';
 import { computedSnapshot, type ComputedSnapshot } from '../src/ingest/computed-snapshot';
 import { roster, type RosterLine } from '../src/ingest/roster';
+import { rowsByWindow, summedBelow, windowRows } from '../src/ingest/window-rows';
 import { RUNG_MS, rungRows, rungStart } from '../src/ingest/rung';
 import { snapshotRow } from '../src/ingest/snapshot-row';
 import { inTransaction, type Store } from '../src/store/client';
@@ -92,13 +93,15 @@ async function loadHistory(
       const snapshot = demoSnapshot(line, atMs, measurements);
       if (snapshot !== undefined) rows.push(snapshotRow(snapshot));
     }
-    for (const hourRows of byHour(rows)) {
-      const start = new Date(rungStart('hour', hourRows[0]!.at.getTime()));
-      hours.push(...rungRows({ lineId: line.id, start, ratingAmps: line.ratingAmps }, hourRows, before));
+    const ofDay: LevelRow[] = [];
+    for (const hourRows of rowsByWindow('hour', rows)) {
+      ofDay.push(...windowRows(line, { rung: 'hour', rows: hourRows }, before));
       before = hourRows.at(-1);
     }
+    hours.push(...ofDay);
+    const day = { lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps };
     days.push(
-      ...rungRows({ lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps }, rows, undefined),
+      ...rungRows(day, rows, undefined).map((row) => ({ ...row, sums: summedBelow(ofDay, row.phase) })),
     );
     if (dayMs >= rawFromMs) await writeRaw(store, rows);
   }
@@ -129,17 +132,6 @@ function demoSnapshot(
     measurements(line.key, atMs).map(({ terminal, measurement }) => [terminal, measurement]),
   );
   return sent.size === 0 ? undefined : computedSnapshot({ line, atMs, measurements: sent }, CLOCK_LIMIT_US);
-}
-
-function byHour(rows: readonly SnapshotRow[]): SnapshotRow[][] {
-  const hours: SnapshotRow[][] = [];
-  for (const row of rows) {
-    const last = hours.at(-1)?.[0];
-    if (last !== undefined && rungStart('hour', last.at.getTime()) === rungStart('hour', row.at.getTime()))
-      hours.at(-1)!.push(row);
-    else hours.push([row]);
-  }
-  return hours;
 }
 
 async function writeRaw(store: Store, rows: readonly SnapshotRow[]): Promise<void> {

@@ -1,31 +1,73 @@
-import type { Rung } from '../contract/lines';
 import { inTransaction, type Store } from '../store/client';
-import { dropStaleHour, readNewestHour, readStaleHours, type StaleHour, writeLevels } from '../store/levels';
-import { readNewestInstants, readSnapshotBefore, readSnapshotFigures } from '../store/snapshots';
+import {
+  dropStaleHour,
+  readLevels,
+  readNewestHour,
+  readStaleHours,
+  type StaleHour,
+  writeLevels,
+} from '../store/levels';
+import {
+  readNewestInstants,
+  readSnapshotBefore,
+  readSnapshotFigures,
+  readSnapshots,
+} from '../store/snapshots';
+import { minuteRows, summedBelow } from './window-rows';
+import type { RosterLine } from './roster';
 import { RUNG_MS, rungRows, rungStart } from './rung';
 
-export interface RatedLine {
-  readonly id: number;
-  readonly ratingAmps: number;
-}
+/** Minutes of the current hour that are built again at every look: what comes late comes within them, or waits for the hour to close. */
+const MINUTES_AGAIN_MS = 3 * 60_000;
 
-/** Builds the level rows of one line and window from its raw rows; a window without any is left as it is. */
+/**
+ * Builds the level rows of one line and window again; a window without raw rows is left as it is. Spread and counts
+ * come from the raw rows, the composition's sums from the rung below, where they add.
+ */
 export async function rebuildRung(
   store: Store,
-  line: RatedLine,
-  { rung, startMs }: { rung: Rung; startMs: number },
+  line: RosterLine,
+  { rung, startMs }: { rung: 'hour' | 'day'; startMs: number },
+): Promise<void> {
+  if (rung === 'hour') await rebuildMinutes(store, line, { fromMs: startMs, toMs: startMs + RUNG_MS.hour });
+  await rebuildFromFigures(store, line, { rung, startMs });
+}
+
+/** Builds the minute rows of a window from its raw rows, phasors and all. */
+export async function rebuildMinutes(
+  store: Store,
+  line: RosterLine,
+  { fromMs, toMs }: { fromMs: number; toMs: number },
+): Promise<void> {
+  const from = new Date(fromMs);
+  const rows = await readSnapshots(store, line.id, {
+    from,
+    to: new Date(toMs),
+    most: Number.MAX_SAFE_INTEGER,
+  });
+  if (rows.length === 0) return;
+  await writeLevels(store, 'minute', minuteRows(line, rows, await readSnapshotBefore(store, line.id, from)));
+}
+
+async function rebuildFromFigures(
+  store: Store,
+  line: RosterLine,
+  { rung, startMs }: { rung: 'hour' | 'day'; startMs: number },
 ): Promise<void> {
   const start = new Date(startMs);
-  const figures = await readSnapshotFigures(store, line.id, {
-    from: start,
-    to: new Date(startMs + RUNG_MS[rung]),
-  });
+  const window = { from: start, to: new Date(startMs + RUNG_MS[rung]) };
+  const figures = await readSnapshotFigures(store, line.id, window);
   if (figures.length === 0) return;
   const before = await readSnapshotBefore(store, line.id, start);
+  const below = await readLevels(store, rung === 'hour' ? 'minute' : 'hour', {
+    lineIds: [line.id],
+    ...window,
+  });
+  const built = rungRows({ lineId: line.id, start, ratingAmps: line.ratingAmps }, figures, before);
   await writeLevels(
     store,
     rung,
-    rungRows({ lineId: line.id, start, ratingAmps: line.ratingAmps }, figures, before),
+    built.map((row) => ({ ...row, sums: summedBelow(below, row.phase) })),
   );
 }
 
@@ -36,14 +78,20 @@ export async function rebuildRung(
  */
 export async function catchUpRungs(
   store: Store,
-  line: RatedLine,
+  line: RosterLine,
   { nowMs, rawReachMs, caughtUpMs }: { nowMs: number; rawReachMs: number; caughtUpMs: number | undefined },
 ): Promise<{ hourClosed: boolean; caughtUpMs: number }> {
   const currentMs = rungStart('hour', nowMs);
   const reachMs = rungStart('hour', nowMs - rawReachMs) + RUNG_MS.hour;
   const hours =
     caughtUpMs === currentMs ? [currentMs] : await hoursToBuild(store, line, { currentMs, reachMs });
-  for (const startMs of hours) await rebuildRung(store, line, { rung: 'hour', startMs });
+  for (const startMs of hours) {
+    // the older minutes of the current hour have been built before, and are again when it closes
+    const isUnderWay = caughtUpMs === currentMs;
+    const fromMs = isUnderWay ? Math.max(startMs, rungStart('minute', nowMs) - MINUTES_AGAIN_MS) : startMs;
+    await rebuildMinutes(store, line, { fromMs, toMs: startMs + RUNG_MS.hour });
+    await rebuildFromFigures(store, line, { rung: 'hour', startMs });
+  }
   const closed = hours.filter((startMs) => startMs < currentMs);
   for (const stale of await readStaleHours(store, [line.id])) {
     const isWhole = stale.start.getTime() >= reachMs;
@@ -61,7 +109,7 @@ export async function catchUpRungs(
 /** From the newest hour row, which may have been built before its hour was over, to the newest raw row. */
 async function hoursToBuild(
   store: Store,
-  line: RatedLine,
+  line: RosterLine,
   { currentMs, reachMs }: { currentMs: number; reachMs: number },
 ): Promise<number[]> {
   const newestRaw = (await readNewestInstants(store, [line.id])).get(line.id);
@@ -78,7 +126,7 @@ async function hoursToBuild(
  * In one transaction: a worker that dies in between leaves the mark, and what changes the hour meanwhile waits to
  * mark it again until this is done.
  */
-async function rebuildStale(store: Store, line: RatedLine, stale: StaleHour): Promise<void> {
+async function rebuildStale(store: Store, line: RosterLine, stale: StaleHour): Promise<void> {
   await inTransaction(store, async (_connection, db) => {
     const inside = { ...store, db };
     await dropStaleHour(inside, stale);

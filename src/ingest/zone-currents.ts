@@ -24,10 +24,15 @@ function measuredCurrents(sent: readonly Measurement[]): PerPhase<Phasor[]> {
   return perPhase((phase) => sent.map(({ current }) => phasorOf(current!, phase)));
 }
 
-function terminalPhasors({ current, voltage, validity }: Measurement): TerminalPhasors {
-  const currents = perPhase((phase) => phasorOf(current!, phase));
-  const isUsable = voltage !== undefined && validity === 'good';
-  return { currents, voltagesKv: isUsable ? perPhase((phase) => phasorOf(voltage, phase)) : undefined };
+function terminalPhasors(measurement: Measurement): TerminalPhasors {
+  const currents = perPhase((phase) => phasorOf(measurement.current!, phase));
+  return { currents, voltagesKv: voltagePhasors(measurement) };
+}
+
+/** A terminal's voltages where it sent them and calls them good. */
+export function voltagePhasors({ voltage, validity }: Measurement): PerPhase<Phasor> | undefined {
+  if (voltage === undefined || validity !== 'good') return undefined;
+  return perPhase((phase) => phasorOf(voltage, phase));
 }
 
 function phasorOf(polar: PolarPerPhase, phase: keyof PolarPerPhase): Phasor {

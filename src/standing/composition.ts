@@ -3,6 +3,7 @@ import type { Complex } from './complex';
 import { compositionFit, fittedCoefficients } from './composition-fit';
 import type { CompositionFit } from './composition-fit';
 import {
+  addSums,
   crossProduct,
   normalProduct,
   shapeOf,
@@ -78,12 +79,17 @@ const CONFIDENCE = 0.95;
 const DAYS_LEAST = 7;
 const CONDITION_MOST = 1000;
 
+/** Blocks cover what days have in common with the next; fewer than this leave too little to tell the spread by. */
+const BLOCKS_LEAST = 9;
+const BLOCK_DAYS_MOST = 4;
+
 /**
  * The composition of one phase from its day rows. Complex least squares over their sum; 95 % intervals by the
- * delete-one-day jackknife (J. W. Tukey, 1958) with Student's t for days − 1 degrees of freedom, since residuals
- * stay alike for hours and the textbook standard error would be several times too small. The coefficients E_k
- * belong to measured currents, hence e_k = E_k/(1 − E_k). Days without snapshots count for nothing. Throws for
- * rows of different shapes.
+ * delete-one-day jackknife (J. W. Tukey, 1958) with Student's t, since residuals stay alike for hours and the
+ * textbook standard error would be several times too small; where there are days enough, blocks of up to four
+ * days are left out together, since some residuals stay alike for days. The coefficients E_k belong to measured
+ * currents, hence e_k = E_k/(1 − E_k). Days without snapshots count for nothing. Throws for rows of different
+ * shapes.
  */
 export function composition(daySums: readonly CompositionSums[], plan: CompositionPlan): Composition {
   const days = daySums.filter((sums) => snapshotCount(sums) > 0);
@@ -98,14 +104,25 @@ export function composition(daySums: readonly CompositionSums[], plan: Compositi
     obstacleOfWindow(days, daysLeast);
   if (fit === undefined || reason !== undefined) return refusal(total, { reason, days: days.length });
   const replicates: Complex[][] = [];
-  for (const day of days) {
-    const without = fittedCoefficients(subtractSums(total, day));
+  for (const block of blocksOf(days)) {
+    const without = fittedCoefficients(subtractSums(total, block));
     if (without === undefined) {
       return refusal(total, { reason: { kind: 'one day decides' }, days: days.length });
     }
     replicates.push(without);
   }
-  return separated(total, { fit, replicates, frequencyHz: plan.frequencyHz });
+  return separated(total, { fit, replicates, days: days.length, frequencyHz: plan.frequencyHz });
+}
+
+/** The days in blocks of one to four neighbours, nine blocks or more where there are as many days. */
+function blocksOf(days: readonly CompositionSums[]): CompositionSums[] {
+  const length = Math.min(BLOCK_DAYS_MOST, Math.max(1, Math.floor(days.length / BLOCKS_LEAST)));
+  const count = Math.max(1, Math.floor(days.length / length));
+  return Array.from({ length: count }, (_, index) => {
+    // what does not come out even goes to the last block
+    const to = index === count - 1 ? days.length : (index + 1) * length;
+    return days.slice(index * length + 1, to).reduce(addSums, days[index * length]!);
+  });
 }
 
 function refusal(
@@ -129,9 +146,17 @@ function lumpedMismatch(total: CompositionSums): Complex | undefined {
   return scaled(crossProduct(total, second), 1 / squares);
 }
 
+interface Replicated {
+  readonly fit: CompositionFit;
+  /** The coefficients without each block. */
+  readonly replicates: readonly (readonly Complex[])[];
+  readonly days: number;
+  readonly frequencyHz: number;
+}
+
 function separated(
   total: CompositionSums,
-  { fit, replicates, frequencyHz }: { fit: CompositionFit; replicates: Complex[][]; frequencyHz: number },
+  { fit, replicates, days, frequencyHz }: Replicated,
 ): SeparatedComposition {
   const { hasVoltage, terminalCount } = fit.shape;
   const estimate = (figure: (coefficients: readonly Complex[]) => number): Estimate =>
@@ -151,7 +176,7 @@ function separated(
   return {
     kind: 'separated',
     ...fit,
-    days: replicates.length,
+    days,
     susceptanceMillisiemens: hasVoltage ? estimate((coefficients) => coefficients[0]!.im) : undefined,
     conductanceMillisiemens: hasVoltage ? estimate((coefficients) => coefficients[0]!.re) : undefined,
     voltageKv: hasVoltage ? Math.sqrt(normalProduct(total, 0, 0).re / fit.count) : undefined,

@@ -1,7 +1,7 @@
 import { direction, minus, plus, scaled, squared, times, ZERO } from './complex';
 import type { Complex } from './complex';
 import { mismatchFrom } from './composition';
-import { residualProducts, residualRmsAmps } from './composition-fit';
+import { residualRmsAmps } from './composition-fit';
 import {
   crossProduct,
   differentialSquares,

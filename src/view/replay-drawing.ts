@@ -111,8 +111,8 @@ export function regionPicture(
   { characteristic, points }: SideDrawn,
   room: DrawingRoom,
 ): RegionPicture | undefined {
-  const radius = (Math.min(room.width - room.left, room.height - room.bottom - room.top) - 24) / 2;
-  const centre: Pixel = [(room.left + room.width) / 2, room.top + 12 + radius];
+  const radius = (Math.min(room.width - room.left, room.height - room.bottom - room.top) - 60) / 2;
+  const centre: Pixel = [(room.left + room.width) / 2, room.top + 30 + radius];
   const place = (share: number, angleDeg: number): Pixel => {
     const angle = (angleDeg * Math.PI) / 180;
     return [centre[0] + share * radius * Math.cos(angle), centre[1] - share * radius * Math.sin(angle)];
@@ -132,8 +132,8 @@ export function regionPicture(
         region?.kind === 'alpha-plane' ? [{ phase, at: place(share(region.ratio), region.angleDeg) }] : [],
       ),
       labels: [
-        { at: place(1.1, 180), text: '180°' },
-        { at: place(1.08, 0), text: '0°' },
+        { at: place(1.17, 180), text: '180°' },
+        { at: place(1.12, 0), text: '0°' },
       ],
       words:
         'ratio of the ends’ currents, distance from the centre logarithmic; inside the outline it restrains',
@@ -147,8 +147,8 @@ export function regionPicture(
         region?.kind === 'phase-comparison' ? [{ phase, at: place(0.8, 180 - region.deviationDeg) }] : [],
       ),
       labels: [
-        { at: place(1.1, 180), text: '180°' },
-        { at: place(1.08, 0), text: '0°' },
+        { at: place(1.17, 180), text: '180°' },
+        { at: place(1.12, 0), text: '0°' },
       ],
       words: 'angle between the ends’ currents; inside the outline it restrains',
     };

@@ -15,6 +15,8 @@ export interface FromTyped {
   readonly problems: Readonly<Record<string, string>>;
 }
 
+/** As it was typed: a division by a hundred leaves dust in the last digit. */
+const ratioOf = (percent: number): number => Number((percent / 100).toPrecision(12));
 const plain = (value: number): string => String(Number(value.toPrecision(10)));
 
 /** Settings as the form shows them. Fields of the other kinds start empty: no figure is suggested. */
@@ -46,7 +48,7 @@ export function settingsFromTyped(typed: ReplayTyped, line: ReplayLine): FromTyp
   for (const { name, missing } of replayFields(kind, line)) {
     const value = figureOf(typed[name]);
     if (value === undefined) problems[name] = `Give ${missing}.`;
-    else figures[name] = ratioFields.has(lastPart(name)) ? value / 100 : value;
+    else figures[name] = ratioFields.has(lastPart(name)) ? ratioOf(value) : value;
   }
   const factor = figureOf(typed.factor);
   if (kind === 'two-slope' && typed.restraintKind === 'scaled-sum' && factor === undefined)

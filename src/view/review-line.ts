@@ -1,3 +1,4 @@
+import type { CompensationOnWire } from '../contract/compensation';
 import type { RegisterLine } from '../contract/register';
 import type { SettingsVersion } from '../contract/settings-version';
 import type { Scheme } from '../protection/scheme';
@@ -61,11 +62,11 @@ export function reviewScheme(line: ReviewLine, { characteristic, restraint }: Re
 /** What is done to the measured currents before they add up, in words; undefined where they add up as measured. */
 export function broughtBy(
   { inZoneTransformer }: Pick<ReviewLine, 'inZoneTransformer'>,
-  recorded: Pick<RecordedScheme, 'chargingCompensation'> | undefined,
+  compensation: CompensationOnWire,
 ): string | undefined {
   const done = [
     ...(inZoneTransformer === null ? [] : ['brought to the line’s side of the transformer']),
-    ...(recorded?.chargingCompensation === true ? ['each terminal’s share of the charging taken out'] : []),
+    ...(compensation === 'applied' ? ['each terminal’s share of the charging taken out'] : []),
   ];
   return done.length === 0 ? undefined : done.join(', ');
 }

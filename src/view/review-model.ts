@@ -2,7 +2,7 @@ import type { SettingsVersion } from '../contract/settings-version';
 import { isComputable } from '../protection/evaluation';
 import type { NotComputable } from '../protection/evaluation';
 import { classLimitModel, measuredModel } from '../protection/line-model';
-import type { LineModel, LineUnderLoad } from '../protection/line-model';
+import type { LineModel } from '../protection/line-model';
 import type { PhaseName } from '../protection/phase';
 import { conjugate, magnitude, multiply, phasor, scale, sum } from '../protection/phasor';
 import type { Phasor } from '../protection/phasor';
@@ -37,7 +37,12 @@ export function reviewModel(
 ): ReviewModel | NotComputable {
   const susceptance = susceptanceMillisiemens(line);
   if (susceptance === undefined) return { notComputable: NO_CAPACITANCE };
-  const under = lineUnderLoad(line, recorded, susceptance);
+  const compensated = recorded.chargingCompensation && !hasFallenBack(snapshot);
+  const under = {
+    terminalCount: terminalsInService(line).length,
+    voltageKv: line.voltageKv,
+    compensatedMillisiemens: compensated ? susceptance : 0,
+  };
   if (under.terminalCount < 2) return { notComputable: 'A through current needs two terminals in service.' };
   const why = basis === 'class limits' ? undefined : snapshotObstacle(line, snapshot);
   if (basis === 'snapshot' && why === undefined && isComputable(snapshot)) {
@@ -65,16 +70,9 @@ export function reviewModel(
 export const NO_CAPACITANCE =
   'The register does not hold the line’s capacitance, so its charging current can’t be told.';
 
-function lineUnderLoad(
-  line: ReviewLine,
-  { chargingCompensation }: Recorded,
-  susceptance: number,
-): LineUnderLoad {
-  return {
-    terminalCount: terminalsInService(line).length,
-    voltageKv: line.voltageKv,
-    compensatedMillisiemens: chargingCompensation ? susceptance : 0,
-  };
+/** Whether the compensation that is recorded was left out of this snapshot, for want of voltages. */
+function hasFallenBack(snapshot: Snapshot): boolean {
+  return isComputable(snapshot) && snapshot.zone.a.compensation?.state === 'fallback';
 }
 
 /** Why the present snapshot does not give the mismatch, in the middle of a sentence; undefined when it does. */

@@ -1,6 +1,7 @@
 import { beforeEach, describe, expect, it } from 'vitest';
 import { commitBatch } from '../../src/ingest/commit';
 import { catchUpRungs, rebuildRung } from '../../src/ingest/rebuild';
+import { type RosterLine, rosterLine } from '../../src/ingest/roster';
 import {
   type LevelRow,
   readLevels,
@@ -8,7 +9,6 @@ import {
   writeLevels,
   writeStaleHours,
 } from '../../src/store/levels';
-import type { RegisteredLine } from '../../src/store/register';
 import { staleHour } from '../../src/store/schema/levels';
 import { dayLevel, hourLevel } from '../../src/store/schema/levels';
 import { line as lineTable } from '../../src/store/schema/register';
@@ -24,10 +24,10 @@ const RAW_REACH_MS = 14 * DAY_MS;
 const ALL = { from: new Date(0), to: new Date(DAY + 30 * DAY_MS) };
 
 const store = await testStore();
-let line: RegisteredLine;
+let line: RosterLine;
 beforeEach(async () => {
   for (const table of [snapshot, hourLevel, dayLevel, staleHour, lineTable]) await store.db.delete(table);
-  line = await storedLine(store);
+  line = rosterLine(await storedLine(store), 50);
 });
 
 const levels = (rung: 'hour' | 'day'): Promise<LevelRow[]> =>

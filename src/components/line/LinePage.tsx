@@ -96,7 +96,7 @@ function LineView({ detail: initial, review, site, mayAcknowledge, address }: Li
             result={resultOnLineSide(result, snapshot)}
             unit={unit}
             initialPhase={worst}
-            broughtBy={broughtBy(review, inForce)}
+            broughtBy={broughtBy(review, line.compensation)}
           />
         </div>
       </div>

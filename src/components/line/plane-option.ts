@@ -80,6 +80,9 @@ export function planeOption(drawing: PlaneDrawing): EChartsCoreOption {
       nameGap: 12,
       nameTextStyle: { ...CHART_TYPE, color: ink.ink2, align: 'left' },
       splitNumber: 4,
+      // the window ends at a round figure that need not be one of the ticks
+      axisLabel: { ...axisBase(ink).axisLabel, showMaxLabel: false },
+      splitLine: { ...axisBase(ink).splitLine, showMaxLine: false },
     },
     series: [
       ...thresholdSeries(drawing),
@@ -158,8 +161,8 @@ function pathSeries({ ink, path }: PlaneDrawing): LineSeriesOption[] {
         label: {
           show: index === end,
           formatter: path.label,
-          position: 'bottom' as const,
-          distance: 6,
+          position: 'top' as const,
+          distance: 5,
           ...CHART_TYPE,
           color: ink.accent,
           textBorderColor: ink.panel,

@@ -171,7 +171,7 @@ function Region({ drawing }: { drawing: Exclude<SchemeDrawing, { kind: 'threshol
               −1
             </Label>
           )}
-          {isAlpha ? <AlphaLabels x={x} y={y} /> : <SectorLabels x={x} y={y} unit={unit} />}
+          {isAlpha ? <AlphaLabels y={y} /> : <SectorLabels x={x} y={y} unit={unit} />}
           <Label x={last.mark.at[0] - 5} y={isAlpha ? y - 5 : y + 14} anchor="end">
             {last.mark.text}
           </Label>
@@ -181,7 +181,7 @@ function Region({ drawing }: { drawing: Exclude<SchemeDrawing, { kind: 'threshol
   );
 }
 
-function AlphaLabels({ x, y }: { x: number; y: number }) {
+function AlphaLabels({ y }: { y: number }) {
   return (
     <>
       <Label x={6} y={16}>
@@ -189,9 +189,6 @@ function AlphaLabels({ x, y }: { x: number; y: number }) {
       </Label>
       <Label x={BOX.width - 4} y={y - 5} anchor="end">
         real
-      </Label>
-      <Label x={x + 5} y={13}>
-        imaginary
       </Label>
     </>
   );

@@ -15,7 +15,8 @@ interface Props {
 }
 
 const ROOM: DrawingRoom = { width: 400, height: 250, left: 38, bottom: 34, top: 16 };
-const HALF: DrawingRoom = { width: 240, height: 240, left: 4, bottom: 4, top: 4 };
+const HALF: DrawingRoom = { width: 260, height: 240, left: 0, bottom: 0, top: 0 };
+const HALF_AXES: DrawingRoom = { width: 260, height: 240, left: 34, bottom: 34, top: 16 };
 
 /** Both characteristics: over one pair of axes where both have a threshold, else each in its own plane. */
 export function CharacteristicPicture({ replayed, recorded }: Props) {
@@ -25,7 +26,7 @@ export function CharacteristicPicture({ replayed, recorded }: Props) {
   if (together !== undefined)
     return (
       <figure className="m-0">
-        <ThresholdDrawing picture={together} tried={replayed !== undefined} />
+        <ThresholdDrawing picture={together} room={ROOM} tried={replayed !== undefined} />
         <Key
           tried={replayed !== undefined}
           recorded={recorded !== undefined}
@@ -43,12 +44,12 @@ export function CharacteristicPicture({ replayed, recorded }: Props) {
 
 function OwnPlane({ side, title, tried = false }: { side: SideDrawn; title: string; tried?: boolean }) {
   const region = regionPicture(side, HALF);
-  const threshold = thresholdPicture([side], ROOM);
+  const threshold = thresholdPicture([side], HALF_AXES);
   return (
     <figure className="m-0 min-w-0 flex-1 basis-56">
       <figcaption className="text-caption text-ink-2">{title}</figcaption>
       {region && <RegionDrawing picture={region} tried={tried} />}
-      {threshold && <ThresholdDrawing picture={threshold} tried={tried} />}
+      {threshold && <ThresholdDrawing picture={threshold} room={HALF_AXES} tried={tried} />}
     </figure>
   );
 }
@@ -57,9 +58,17 @@ const path = (points: readonly (readonly [number, number])[]): string =>
   `M${points.map(([x, y]) => `${x.toFixed(1)} ${y.toFixed(1)}`).join('L')}`;
 
 /** The first curve is that of the settings tried, unless there are none. */
-function ThresholdDrawing({ picture, tried }: { picture: ThresholdPicture; tried: boolean }) {
+function ThresholdDrawing({
+  picture,
+  room,
+  tried,
+}: {
+  picture: ThresholdPicture;
+  room: DrawingRoom;
+  tried: boolean;
+}) {
   const clip = useId();
-  const { width, height, left, bottom, top } = ROOM;
+  const { width, height, left, bottom, top } = room;
   const isTried = (index: number) => tried && index === 0;
   return (
     <svg

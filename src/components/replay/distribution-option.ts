@@ -67,7 +67,7 @@ function utilisationAxis(index: number, { ink, distribution, form }: Drawing) {
     splitNumber: 5,
     splitLine: { show: false },
     axisLine: { show: true, onZero: false, lineStyle: { color: ink.rule, width: 1 } },
-    axisLabel: { ...axisBase(ink).axisLabel, hideOverlap: true },
+    axisLabel: { ...axisBase(ink).axisLabel, hideOverlap: true, showMaxLabel: !isShare },
     name: 'utilisation, %',
     nameLocation: 'end',
     nameGap: 0,

@@ -98,7 +98,9 @@ function LoadFigures({ line, site, load, convention }: Props) {
         {
           head: 'reaches 100 % at',
           title: `Smallest through current at which the scheme would operate. ${convention}`,
-          of: of((each) => (each.limitAmps === undefined ? 'not reached' : ampsText(each.limitAmps))),
+          of: of(({ limitAmps }) =>
+            limitAmps === undefined ? `> ${ampsText(2 * line.emergencyRatingAmps)}` : ampsText(limitAmps),
+          ),
         },
       ]}
     />
@@ -111,7 +113,7 @@ function assumptions({ line, load, hasTransformer }: Props): string[] {
   ];
   return [
     ...words,
-    `“Not reached” means: not up to twice the emergency rating, ${ampsText(2 * line.emergencyRatingAmps)}. Voltage is nominal; the through current enters at the first terminal and leaves by the others in equal shares.`,
+    `Looked for up to twice the emergency rating, ${ampsText(2 * line.emergencyRatingAmps)}. Voltage is nominal; the through current enters at the first terminal and leaves by the others in equal shares.`,
     ...(hasTransformer ? ['Magnetising and tap changing of the transformer in the zone are left out.'] : []),
   ];
 }

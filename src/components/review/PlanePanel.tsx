@@ -107,8 +107,8 @@ export function PlanePanel(props: PlanePanelProps) {
         {missing !== undefined && <p className="text-ink-2">No operating point now: {missing}</p>}
         {worst !== undefined && (
           <p className="text-caption text-ink-2">
-            Dashed: predicted from no load to emergency rating, phase {site.phaseLetters[worst.phase]}, the
-            worst of the angles chosen. {worst.load.words}
+            Dashed: predicted from no load to emergency rating, phase {site.phaseLetters[worst.phase]}, each
+            step at its worst angle. {worst.load.words}
           </p>
         )}
       </div>

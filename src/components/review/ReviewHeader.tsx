@@ -1,7 +1,7 @@
 import type { LineSummary } from '../../contract/lines';
 import type { SettingsVersion } from '../../contract/settings-version';
 import { ageText, dateText } from '../../view/figures';
-import { buildWords, loadWords } from '../../view/line-words';
+import { lineWords } from '../../view/line-words';
 import { characteristicName } from '../../view/line-settings-rows';
 import { PRESET_WORDS, REVIEW_PRESETS } from '../../view/review-period';
 import type { ReviewPeriod, ReviewPreset } from '../../view/review-period';
@@ -31,8 +31,7 @@ const PERIODS: readonly { value: PeriodChoice; label: string }[] = [
 export function ReviewHeader({ line, inForce, site, nowMs, faded, period, onPeriod }: Props) {
   const atMs = line.at === null ? undefined : Date.parse(line.at);
   const facts = [
-    buildWords(line),
-    loadWords(line),
+    lineWords(line),
     ...(inForce === undefined
       ? ['no settings recorded']
       : [

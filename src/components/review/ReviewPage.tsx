@@ -65,7 +65,7 @@ function ReviewView({ detail: initial, review, site, address }: ReviewPageProps)
   const inForce = useMemo(() => versionInForce(detail.settings, minuteMs), [detail.settings, minuteMs]);
   const cloud = useCloud(line.key, period, nowMs);
   const live = useLiveSnapshot(review, inForce, result);
-  const figures = useFigures(review, detail, inForce, { basis, lagDeg: Number(lag) });
+  const figures = useFigures({ review, detail, inForce }, { basis, lagDeg: Number(lag) });
   const shared = { line, site, nowMs, faded };
   const header = <ReviewHeader {...shared} inForce={inForce} period={period} onPeriod={setPeriod} />;
   if (inForce === undefined || figures === undefined) {
@@ -117,7 +117,7 @@ function ReviewView({ detail: initial, review, site, address }: ReviewPageProps)
             result={onLineSide}
             unit="amperes"
             initialPhase={worst}
-            broughtBy={broughtBy(review, inForce)}
+            broughtBy={broughtBy(review, line.compensation)}
           />
           <LoadPanel
             {...told}

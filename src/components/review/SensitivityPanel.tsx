@@ -23,7 +23,7 @@ interface Props {
 
 const ASSUMPTIONS = [
   'Fault current adds to the currents before it, at the worst angle to them and, fed from one end, at the worst end; that a fault draws load and voltage down is left out.',
-  'Fault resistance: nominal voltage to earth over that current, without impedance of sources and line. Greatest current tried: 63 kA.',
+  'Fault resistance: nominal voltage to earth over that current, without impedance of sources and line. Looked for up to 63 kA.',
 ];
 
 /** The smallest fault inside the zone that the present threshold sees, and the resistance it may have. */
@@ -93,7 +93,7 @@ function Row({ names, found }: { names: readonly [string, string]; found: Found 
       {isComputable(found) ? (
         <>
           <td className="figure">
-            {found.faultAmps === undefined ? 'not up to 63 kA' : ampsText(found.faultAmps)}
+            {found.faultAmps === undefined ? '> 63\u00a0kA' : ampsText(found.faultAmps)}
           </td>
           <td className="figure">{ohmsText(found.faultResistanceOhm)}</td>
         </>

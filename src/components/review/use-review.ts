@@ -35,18 +35,19 @@ export function useCloud(key: string, period: ReviewPeriod, nowMs: number) {
   });
 }
 
+interface Reviewed {
+  readonly review: ReviewLine;
+  readonly detail: LineDetail;
+  readonly inForce: SettingsVersion | undefined;
+}
+
 interface MarginChoices {
   readonly basis: MismatchBasis;
   readonly lagDeg: number;
 }
 
 /** What follows from constants and one snapshot: of the minute, since it takes a while to compute. */
-export function useFigures(
-  review: ReviewLine,
-  detail: LineDetail,
-  inForce: SettingsVersion | undefined,
-  { basis, lagDeg }: MarginChoices,
-) {
+export function useFigures({ review, detail, inForce }: Reviewed, { basis, lagDeg }: MarginChoices) {
   const standing = useMemo(() => {
     if (inForce === undefined) return undefined;
     const results = detail.result?.terminals ?? [];

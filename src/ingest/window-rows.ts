@@ -1,0 +1,64 @@
+import type { PhaseName } from '../protection/phase';
+import { shapeOf, totalOf } from '../standing/composition-sums';
+import { packSums, unpackSums } from '../store/composition-packing';
+import type { LevelRow } from '../store/levels';
+import type { SnapshotRow } from '../store/snapshots';
+import type { RosterLine } from './roster';
+import { qualification, rungRows, rungStart } from './rung';
+import { snapshotSums } from './snapshot-sums';
+
+/** Raw rows in ascending order, parted where the window of their rung changes. */
+export function rowsByWindow(rung: 'minute' | 'hour', rows: readonly SnapshotRow[]): SnapshotRow[][] {
+  const windows: SnapshotRow[][] = [];
+  let startMs: number | undefined;
+  for (const row of rows) {
+    const rowStartMs = rungStart(rung, row.at.getTime());
+    if (rowStartMs === startMs) windows.at(-1)!.push(row);
+    else windows.push([row]);
+    startMs = rowStartMs;
+  }
+  return windows;
+}
+
+/** The rows of one window of a line, its composition's sums with them, from raw rows with their phasors. */
+export function windowRows(
+  line: RosterLine,
+  { rung, rows }: { rung: 'minute' | 'hour'; rows: readonly SnapshotRow[] },
+  before: SnapshotRow | Parameters<typeof rungRows>[2],
+): LevelRow[] {
+  const start = new Date(rungStart(rung, rows[0]!.at.getTime()));
+  const { qualified } = qualification(rows, before, line.ratingAmps);
+  const sums = snapshotSums(line, qualified);
+  return rungRows({ lineId: line.id, start, ratingAmps: line.ratingAmps }, rows, before).map((row) => ({
+    ...row,
+    sums: sums === undefined ? null : packSums(sums[row.phase]),
+  }));
+}
+
+/** The minute rows of a stretch of raw rows. */
+export function minuteRows(
+  line: RosterLine,
+  rows: readonly SnapshotRow[],
+  before: Parameters<typeof rungRows>[2],
+): LevelRow[] {
+  let previous = before;
+  return rowsByWindow('minute', rows).flatMap((window) => {
+    const built = windowRows(line, { rung: 'minute', rows: window }, previous);
+    previous = window.at(-1);
+    return built;
+  });
+}
+
+/** The sums of one phase's rows of the rung below; those of another set of terminals than the newest row's are left out. */
+export function summedBelow(below: readonly LevelRow[], phase: PhaseName): Buffer | null {
+  const sums = below.flatMap((row) => (row.phase === phase ? (unpackSums(row.sums) ?? []) : []));
+  const newest = sums.at(-1);
+  if (newest === undefined) return null;
+  const { terminalCount, hasVoltage } = shapeOf(newest);
+  const total = totalOf(
+    sums.filter(
+      (each) => shapeOf(each).terminalCount === terminalCount && shapeOf(each).hasVoltage === hasVoltage,
+    ),
+  );
+  return total === undefined ? null : packSums(total);
+}

@@ -1,0 +1,84 @@
+import { describe, expect, test } from 'vitest';
+import { composition } from '../../../src/standing/composition';
+import type { Estimate, SeparatedComposition } from '../../../src/standing/composition';
+import { daySumsOf } from './line-sums';
+import { measuredHours, uniform } from './seeded-line';
+import type { LineTruth } from './seeded-line';
+
+const CASES = 200;
+const DAYS = 28;
+
+/** A line drawn by its number: 110 to 400 kV, overhead or cable, any load, mismatch within class and beyond. */
+function drawnTruth(seed: number): LineTruth {
+  const random = uniform(seed * 7919 + 11);
+  const between = (low: number, high: number) => low + (high - low) * random();
+  const ratingAmps = between(400, 2000);
+  const voltageKv = [110, 220, 380][Math.floor(3 * random())]! / Math.sqrt(3);
+  return {
+    seed,
+    ratingAmps,
+    voltageKv,
+    susceptanceMillisiemens: (ratingAmps * between(0.01, 0.12)) / voltageKv,
+    mismatch: { re: between(-0.02, 0.02), im: between(-0.03, 0.03) },
+    loadShare: between(0.25, 0.6),
+    daySwing: between(0.2, 0.4),
+    seasonShare: between(0, 0.3),
+    growthShareAYear: between(0, 0.1),
+    noiseShare: between(0.0003, 0.0012),
+  };
+}
+
+function separatedOf(truth: LineTruth): SeparatedComposition {
+  const found = composition(daySumsOf(measuredHours(truth, DAYS * 24)), { frequencyHz: 50 });
+  if (found.kind !== 'separated') throw new Error(`Seed ${truth.seed}: ${JSON.stringify(found.reason)}`);
+  return found;
+}
+
+const holds = ({ low, high }: Estimate, value: number): boolean => low <= value && value <= high;
+const percent = (share: number): string => `${(100 * share).toFixed(1)} %`;
+
+describe(`the composition of ${CASES} lines over ${DAYS} days, with noise that remembers hours`, () => {
+  const cases = Array.from({ length: CASES }, (_, index) => {
+    const truth = drawnTruth(index + 1);
+    return { truth, found: separatedOf(truth) };
+  });
+  const shares = {
+    charging: cases.map(({ truth, found }) =>
+      holds(found.susceptanceMillisiemens!, truth.susceptanceMillisiemens),
+    ),
+    leakage: cases.map(({ found }) => holds(found.conductanceMillisiemens!, 0)),
+    ratio: cases.map(({ truth, found }) => holds(found.mismatches[0]!.ratio, truth.mismatch.re)),
+    angle: cases.map(({ truth, found }) => holds(found.mismatches[0]!.angleRad, truth.mismatch.im)),
+  };
+  const coverage = Object.entries(shares).map(
+    ([cause, inside]) => [cause, inside.filter(Boolean).length / CASES] as const,
+  );
+
+  test('has what was put in inside its 95 % intervals in at least 88 % of them, and not in all', () => {
+    console.table(Object.fromEntries(coverage.map(([cause, share]) => [cause, { inside: percent(share) }])));
+    for (const [cause, share] of coverage) {
+      expect(share, cause).toBeGreaterThanOrEqual(0.88);
+      expect(share, cause).toBeLessThan(1);
+    }
+  });
+});
+
+test('transformer errors that grow at small current bend the charging by a few per cent, which is reported', () => {
+  const rows = [0, 0.0005, 0.001, 0.002].map((smallCurrentError) => {
+    const errors = Array.from({ length: 40 }, (_, index) => {
+      const truth = { ...drawnTruth(index + 1001), smallCurrentError };
+      const found = separatedOf(truth);
+      const charging = found.susceptanceMillisiemens!.value / truth.susceptanceMillisiemens - 1;
+      return { charging, inside: holds(found.susceptanceMillisiemens!, truth.susceptanceMillisiemens) };
+    });
+    const sorted = errors.map(({ charging }) => Math.abs(charging)).sort((a, b) => a - b);
+    return {
+      'error at 10 % of rating': percent(smallCurrentError),
+      'median error of charging': percent(sorted[20]!),
+      greatest: percent(sorted[39]!),
+      'inside the interval': percent(errors.filter(({ inside }) => inside).length / 40),
+    };
+  });
+  console.table(rows);
+  expect(rows).toHaveLength(4);
+});
