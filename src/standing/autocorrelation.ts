@@ -7,9 +7,9 @@ export interface FirstOrder {
 }
 
 /**
- * Lag-1 autocorrelation of values in order of time, deviations from their mean taken; the estimate is biased
- * towards −1/n and corrected to (r·n + 1)/(n − 4) as Kendall's formula has it (van Giezen, 1950s practice in
- * hydrology), within ±0.99. `undefined` for fewer than six values or values all alike.
+ * Lag-1 autocorrelation of values in order of time, deviations from their mean taken. Of a short series it comes
+ * out too small, on average ρ − (1 + 4ρ)/n (M. G. Kendall, Biometrika 41, 1954, 403–404); that is corrected for,
+ * within ±0.99. `undefined` for fewer than six values or values all alike.
  */
 export function firstOrder(values: readonly number[]): FirstOrder | undefined {
   const n = values.length;

@@ -1,8 +1,9 @@
+import { firstOrder, varianceRatioOfAr1 } from './autocorrelation';
 import { forecastDates } from './forecast';
 import type { Drift, ForecastDates } from './forecast';
 import { hamedRao } from './hamed-rao';
-import { mannKendall } from './mann-kendall';
-import { senSlope } from './sen-slope';
+import { mannKendall, mannKendallFrom } from './mann-kendall';
+import { detrended, senSlope } from './sen-slope';
 import type { SeriesPoint } from './sen-slope';
 
 /** The standing level of one phase on one day, amperes rms primary. Days may be missing in between. */
@@ -50,7 +51,7 @@ const LIMITS_DAYS_LEAST = 5;
 
 /**
  * Whether the daily levels of one phase, in ascending order of days, creep towards the pickup: Mann–Kendall
- * with Hamed–Rao's correction for the significance, Theil–Sen with Gilbert's 95 % limits for the drift.
+ * with allowance for autocorrelation for the significance, Theil–Sen with Gilbert's 95 % limits for the drift.
  * Throws for a level that is not a number and for days out of order.
  */
 export function creepVerdict(levels: readonly DailyLevel[], limits: CreepLimits): CreepVerdict {
@@ -66,7 +67,7 @@ export function creepVerdict(levels: readonly DailyLevel[], limits: CreepLimits)
     slopeLowAmpsPerDay: line.limits.low,
     slopeHighAmpsPerDay: line.limits.high,
   };
-  const pTwoSided = cautiousP(series);
+  const pTwoSided = cautiousP(series, line.slope);
   const isRising = line.slope > 0 && pTwoSided < (limits.pMost ?? 0.01);
   const levelNowAmps = line.intercept + line.slope * last.day;
   const forecast = (targetAmps: number) =>
@@ -82,12 +83,17 @@ function kindOfRise(near: ForecastDates, horizonDay: number): 'creep' | 'within 
 }
 
 /**
- * Two-sided p of the series: the corrected one, unless the plain one is greater. The correction may take
- * evidence away and never add any: on uncorrelated noise it would else find a trend about three times as often
- * as p says, since some lags look negatively correlated by chance.
+ * Two-sided p of the series: the greatest of the plain one, the one after Hamed and Rao, and the one that takes the
+ * detrended series for first-order autoregressive. A correction may take evidence away and never add any: on
+ * uncorrelated noise Hamed and Rao's alone would find a trend about three times as often as p says, since some lags
+ * look negatively correlated by chance; and on noise that lasts for days it leaves out lags that a short series
+ * can't show to be significant, which the first-order model carries on.
  */
-function cautiousP(series: readonly SeriesPoint[]): number {
+function cautiousP(series: readonly SeriesPoint[], slope: number): number {
   const plain = mannKendall(series.map((point) => point.value));
-  const corrected = hamedRao(series);
-  return Math.max(plain?.pTwoSided ?? 1, corrected?.pTwoSided ?? 0);
+  if (plain === undefined) return 1;
+  const rho = firstOrder(detrended(series, slope))?.rho ?? 0;
+  const varianceS = plain.varianceS * varianceRatioOfAr1(rho, plain.count);
+  const firstOrderP = mannKendallFrom({ ...plain, varianceS }).pTwoSided;
+  return Math.max(plain.pTwoSided, firstOrderP, hamedRao(series)?.pTwoSided ?? 0);
 }

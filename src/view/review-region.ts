@@ -8,10 +8,11 @@ import type { PhaseComparison } from '../protection/phase-comparison';
 import { ampsText, percentOfMarkText } from './figures';
 import { PHASES } from './phase';
 import type { PhaseName } from './phase';
+import type { CloudCell } from './review-cloud';
 import type { ReviewSnapshot } from './review-now';
 import { reviewPlace } from './review-place';
 import type { ReviewPlace } from './review-place';
-import type { DiscPlace, DiscWindow, PolarPlane } from './review-polar';
+import type { DiscPlace, PolarPlane } from './review-polar';
 import type { PhaseLetters } from './site-custom';
 
 /** A live point on a scheme's region, with its two measures in words. */
@@ -66,12 +67,22 @@ function predictedPlace(point: PredictedPoint): ReviewPlace | undefined {
   return reviewPlace(point, [through]);
 }
 
-/** How much of the plane a window around the points shows, in words. */
-export function regionSpan(kind: 'alpha-plane' | 'phase-comparison', { half }: DiscWindow): string {
-  const share = `${(100 * half).toPrecision(2)} % of the plane’s width`;
-  return kind === 'alpha-plane'
-    ? `Around the points: ${share}; the region’s border lies outside unless it is seen`
-    : `Around the points: ${share}`;
+/** What a window around the points shows, in the plane's own measures. */
+export function regionSpan(
+  kind: 'alpha-plane' | 'phase-comparison',
+  cells: readonly Pick<CloudCell, 'from' | 'to'>[],
+): string {
+  if (cells.length === 0) return 'Around the points of now';
+  const least = (of: (cell: (typeof cells)[number]) => number) =>
+    cells.reduce((found, cell) => Math.min(found, of(cell)), Infinity);
+  const most = (of: (cell: (typeof cells)[number]) => number) => -least((cell) => -of(cell));
+  const x = [least(({ from }) => from.x), most(({ to }) => to.x)] as const;
+  const y = [least(({ from }) => from.y), most(({ to }) => to.y)] as const;
+  if (kind === 'alpha-plane') {
+    const [low, high] = x.map((ln) => Math.exp(ln).toFixed(3));
+    return `Around the points: |k| from ${low} to ${high}, arg k from ${(180 + y[0]).toFixed(1)}° to ${(180 + y[1]).toFixed(1)}°`;
+  }
+  return `Around the points: smaller current from ${ampsText(x[0])} to ${ampsText(x[1])}, ${y[0].toFixed(1)}° to ${y[1].toFixed(1)}° from opposition`;
 }
 
 /** The plane in a sentence, for whoever does not see it. */

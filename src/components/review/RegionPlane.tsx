@@ -73,7 +73,7 @@ export function RegionPlane(props: Props) {
         <Marks {...props} marks={marks} at={at} height={height} />
       </svg>
       <figcaption className="mt-1 text-caption text-ink-2">
-        {near ? regionSpan(characteristic.kind, window) : REGION_WORDS[characteristic.kind]}
+        {near ? regionSpan(characteristic.kind, cells) : REGION_WORDS[characteristic.kind]}
         {characteristic.kind === 'alpha-plane' &&
           `. Operates on the hatched side, and only with a differential of ${ampsText(characteristic.pickupAmps)} or more`}
         .
@@ -138,6 +138,8 @@ function Ground({ characteristic, plane, window, at, half }: GroundProps) {
   const centre = at({ x: 0, y: 0 });
   const edge = SIDE / 2 / window.half;
   const whole = window === WHOLE_DISC;
+  // which end leads does not matter to a phase comparison: there is nothing below the line of opposition
+  const upperOnly = characteristic.kind === 'phase-comparison';
   return (
     <>
       <defs>
@@ -145,7 +147,7 @@ function Ground({ characteristic, plane, window, at, half }: GroundProps) {
           <path d="M-1 1 1 -1M0 8 8 0M7 9 9 7" stroke="var(--rule)" strokeWidth="0.8" opacity="0.55" />
         </pattern>
         <clipPath id={`${id}-clip`}>
-          <rect x="0" y="0" width={SIDE} height={half ? centre.y : SIDE} />
+          <rect x="0" y="0" width={SIDE} height={upperOnly ? Math.max(0, centre.y) : SIDE} />
         </clipPath>
       </defs>
       <g clipPath={`url(#${id}-clip)`}>
@@ -176,7 +178,7 @@ function Ground({ characteristic, plane, window, at, half }: GroundProps) {
           stroke="var(--hairline)"
         />
       </g>
-      {half && (
+      {upperOnly && (
         <line x1={centre.x - edge} x2={centre.x + edge} y1={centre.y} y2={centre.y} stroke="var(--rule)" />
       )}
       {whole && <Words characteristic={characteristic} plane={plane} at={at} half={half} />}

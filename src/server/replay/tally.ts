@@ -108,8 +108,10 @@ function createSide(limits: TallyLimits) {
 
 type JudgedByPoints = Exclude<Judged, { notComputable: string }>;
 
-function createPhase({ nearRatio, binRatio, binsEndRatio }: TallyLimits) {
-  const bins = new Array<number>(Math.round(binsEndRatio / binRatio) + 1).fill(0);
+function createPhase(limits: TallyLimits) {
+  const { nearRatio } = limits;
+  const edges = binEdges(limits);
+  const bins = new Array<number>(edges.length).fill(0);
   const near = { snapshots: 0, durationMs: 0 };
   const over = { snapshots: 0, durationMs: 0 };
   let evaluated = 0;
@@ -122,7 +124,7 @@ function createPhase({ nearRatio, binRatio, binsEndRatio }: TallyLimits) {
     ): void {
       const point = points[phase];
       evaluated += 1;
-      bins[binOf(point.utilisation, binRatio, bins.length - 1)]! += 1;
+      bins[binOf(point.utilisation, edges)]! += 1;
       if (greatest === undefined || point.utilisation > greatest.point.utilisation)
         greatest = { point, atMs, settingsVersion };
       if (point.utilisation >= nearRatio) extend(near, durationMs);
@@ -138,14 +140,22 @@ function createPhase({ nearRatio, binRatio, binsEndRatio }: TallyLimits) {
   };
 }
 
-/**
- * The bin whose lower edge a utilisation has reached. Edges are multiples of the width and as such not exact, so
- * a utilisation at an edge, as 0.29 in bins of 0.005, is held against the edge as it is written.
- */
-export function binOf(utilisation: number, binRatio: number, last: number): number {
-  const near = Math.floor(utilisation / binRatio);
-  const reachesNext = utilisation >= Number(((near + 1) * binRatio).toPrecision(12));
-  return Math.min(reachesNext ? near + 1 : near, last);
+/** Lower edges of the bins as they are written: multiples of a width alone are not exact. */
+export const binEdges = ({
+  binRatio,
+  binsEndRatio,
+}: Pick<TallyLimits, 'binRatio' | 'binsEndRatio'>): number[] =>
+  Array.from({ length: Math.round(binsEndRatio / binRatio) + 1 }, (_, bin) =>
+    Number((bin * binRatio).toPrecision(12)),
+  );
+
+/** The bin whose lower edge a utilisation has reached; the last one has no upper edge. */
+export function binOf(utilisation: number, edges: readonly number[]): number {
+  const last = edges.length - 1;
+  const near = Math.min(Math.floor(utilisation / edges[1]!), last);
+  // a division can end on the wrong side of an edge
+  if (near < last && utilisation >= edges[near + 1]!) return near + 1;
+  return near > 0 && utilisation < edges[near]! ? near - 1 : near;
 }
 
 function extend(mark: AtMark, durationMs: number): void {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { perPhase } from '../../../src/protection/phase';
-import { binOf, createReplayTally, type Judged } from '../../../src/server/replay/tally';
+import { binEdges, binOf, createReplayTally, type Judged } from '../../../src/server/replay/tally';
 
 const LIMITS = { nearRatio: 0.7, periodMs: 2_000, spacingPeriodsMost: 3, binRatio: 0.005, binsEndRatio: 2 };
 const T0 = Date.parse('2026-03-02T10:00:00.000Z');
@@ -120,9 +120,9 @@ describe('the greatest', () => {
 
 describe('the distribution', () => {
   it('puts each utilisation into the bin whose lower edge it has reached', () => {
-    expect([0, 0.004999, 0.005, 0.57, 0.285, 1, 1.9999, 2, 40].map((u) => binOf(u, 0.005, 400))).toEqual([
-      0, 0, 1, 114, 57, 200, 399, 400, 400,
-    ]);
+    expect(
+      [0, 0.004999, 0.005, 0.57, 0.285, 1, 1.9999, 2, 40].map((u) => binOf(u, binEdges(LIMITS))),
+    ).toEqual([0, 0, 1, 114, 57, 200, 399, 400, 400]);
   });
 
   it('holds every evaluated snapshot once, on each side', () => {

@@ -1,0 +1,144 @@
+import { z } from 'zod';
+import { compositionSchema } from './composition';
+import { keySchema } from './key';
+import { phaseNameSchema } from './phase';
+import { creepSchema, forecastDatesSchema } from './warning';
+
+export const CAUSES = ['charging', 'ratio mismatch', 'angle mismatch', 'rest', 'not told'] as const;
+export const causeSchema = z.enum(CAUSES);
+export type Cause = z.infer<typeof causeSchema>;
+
+/** A sudden change of a standing level. */
+export const stepSchema = z.object({
+  /** start of the hour in which it came */
+  at: z.iso.datetime(),
+  fromAmps: z.number(),
+  toAmps: z.number(),
+  /** the term of the composition that moved */
+  cause: causeSchema,
+  /** where a mismatch moved, against the first */
+  terminal: keySchema.nullable(),
+  /** the path of a channel changed at the same time: an angle step then points to the channel */
+  channelPathChanged: z.boolean(),
+});
+export type StepOnWire = z.infer<typeof stepSchema>;
+
+/** The drift of the level at one and the same load: load cycle, seasons and growth of load are not in it. */
+export const creepAtReferenceSchema = z.object({
+  creep: creepSchema,
+  referenceThroughAmps: z.number(),
+});
+
+/** What the worker last found of one phase's standing level: renewed every hour. */
+export const standingVerdictSchema = z.object({
+  line: keySchema,
+  phase: phaseNameSchema,
+  computedAt: z.iso.datetime(),
+  /** 24-hour standing level */
+  levelAmps: z.number().nullable(),
+  pickupAmps: z.number().nullable(),
+  shareOfPickup: z.number().nullable(),
+  /** expected by line constants, class budget and channel, taken as independent */
+  expectedAmps: z.number().nullable(),
+  utilisationP95: z.number().nullable(),
+  /** worst over power-factor angles within ±30°, from the composition; null where it is not separable */
+  emergencyUtilisation: z.number().nullable(),
+  /** the last 30 days, and the 30 days that ended 60 days before */
+  composition: compositionSchema,
+  compositionBefore: compositionSchema.nullable(),
+  creep: creepSchema.nullable(),
+  creepAtReference: creepAtReferenceSchema.nullable(),
+  step: stepSchema.nullable(),
+  /** the term that is growing, or else the largest one */
+  likelyCause: causeSchema,
+  causeTerminal: keySchema.nullable(),
+  /** the forecast that counts: by the level at reference load where there is one */
+  near: forecastDatesSchema.nullable(),
+  pickup: forecastDatesSchema.nullable(),
+});
+export type StandingVerdict = z.infer<typeof standingVerdictSchema>;
+
+/** One row of the fleet's lists: GET /api/margins */
+export const marginRowSchema = standingVerdictSchema
+  .omit({ composition: true, compositionBefore: true, creep: true, creepAtReference: true })
+  .extend({
+    lineName: z.string(),
+    voltageKv: z.number(),
+    substations: z.array(z.object({ key: keySchema, name: z.string() })),
+    utilisation: z.number().nullable(),
+    chargingAmps: z.number().nullable(),
+    mismatchAmps: z.number().nullable(),
+    restAmps: z.number().nullable(),
+    creepAmpsPerMonth: z.number().nullable(),
+    creepVerdict: z.enum(['creep', 'within margin']).nullable(),
+  });
+export type MarginRow = z.infer<typeof marginRowSchema>;
+
+export const MARGIN_SORTS = [
+  'shareOfPickup',
+  'levelAmps',
+  'utilisation',
+  'utilisationP95',
+  'emergencyUtilisation',
+  'creepAmpsPerMonth',
+  'nearLikely',
+  'chargingAmps',
+  'mismatchAmps',
+  'lineName',
+] as const;
+export const marginSortSchema = z.enum(MARGIN_SORTS);
+export type MarginSort = z.infer<typeof marginSortSchema>;
+
+/** A page of the fleet; `next` is asked for with ?after= */
+export const marginListSchema = z.object({
+  at: z.iso.datetime(),
+  total: z.int(),
+  rows: z.array(marginRowSchema),
+  next: z.int().nullable(),
+});
+export type MarginList = z.infer<typeof marginListSchema>;
+
+/** A planner's piece of work for a line, kept simply. */
+export const followUpSchema = z.object({
+  id: z.int(),
+  line: keySchema,
+  lineName: z.string(),
+  phase: phaseNameSchema.nullable(),
+  cause: causeSchema,
+  due: z.iso.date().nullable(),
+  note: z.string(),
+  state: z.enum(['open', 'done']),
+  openedBy: z.string(),
+  openedAt: z.iso.datetime(),
+  doneAt: z.iso.datetime().nullable(),
+});
+export type FollowUp = z.infer<typeof followUpSchema>;
+export const newFollowUpSchema = z.object({
+  line: keySchema,
+  phase: phaseNameSchema.nullable().default(null),
+  cause: causeSchema.default('not told'),
+  due: z.iso.date().nullable().default(null),
+  note: z.string().trim().min(1, 'Say what is to be done.').max(1000, 'A note has at most 1000 characters.'),
+});
+
+/** GET /api/lines/<key>/comparison?at: both sides of a date, for each phase. */
+export const comparisonSchema = z.object({
+  line: keySchema,
+  at: z.iso.date(),
+  phases: z.array(
+    z.object({
+      phase: phaseNameSchema,
+      before: z.object({ days: z.int(), medianAmps: z.number().nullable(), composition: compositionSchema }),
+      after: z.object({ days: z.int(), medianAmps: z.number().nullable(), composition: compositionSchema }),
+      /** Mann–Whitney on daily levels; null with too few days on a side */
+      test: z
+        .object({
+          pTwoSided: z.number(),
+          /** Hodges–Lehmann shift, after less before */
+          shiftAmps: z.object({ value: z.number(), low: z.number(), high: z.number() }),
+        })
+        .nullable(),
+    }),
+  ),
+});
+export type Comparison = z.infer<typeof comparisonSchema>;

@@ -1,0 +1,124 @@
+import { describe, expect, test } from 'vitest';
+import { fittedCoefficients } from '../../../src/standing/composition-fit';
+import { totalOf } from '../../../src/standing/composition-sums';
+import type { CompositionSums } from '../../../src/standing/composition-sums';
+import type { DailyLevel } from '../../../src/standing/creep';
+import { watchedCreep } from '../../../src/standing/creep-watch';
+import { levelAtPointAmps, typicalPoint } from '../../../src/standing/operating-point';
+import { levelsAtReferenceLoad } from '../../../src/standing/reference-level';
+import { daySumsOf } from './line-sums';
+import { measuredHours, uniform } from './seeded-line';
+import type { LineTruth } from './seeded-line';
+
+const NEAR_RATIO = 0.7;
+const HORIZON_DAYS = 365;
+const LEARNING_DAYS = 60;
+const HISTORY_DAYS_MOST = 365;
+
+/** Daily levels at the typical load of the first two months, by the composition of those. */
+function referenceLevels(days: readonly CompositionSums[]): {
+  levels: DailyLevel[];
+  levelAmps: number;
+} {
+  const first = totalOf(days.slice(0, LEARNING_DAYS))!;
+  const fit = { shape: { terminalCount: 2, hasVoltage: true }, coefficients: fittedCoefficients(first)! };
+  const point = typicalPoint(first)!;
+  const dated = days.map((sums, day) => ({ day, sums }));
+  return { levels: levelsAtReferenceLoad(dated, fit, point), levelAmps: levelAtPointAmps(fit, point) };
+}
+
+/** The first day on which the history up to it is called creep; `undefined` for never. */
+function firstCreepDay(
+  levels: readonly DailyLevel[],
+  { pickupAmps, fromDay, everyDays }: { pickupAmps: number; fromDay: number; everyDays: number },
+): number | undefined {
+  for (let count = fromDay; count <= levels.length; count += everyDays) {
+    const history = levels.slice(Math.max(0, count - HISTORY_DAYS_MOST), count);
+    const { verdict } = watchedCreep(history, {
+      pickupAmps,
+      nearRatio: NEAR_RATIO,
+      horizonDays: HORIZON_DAYS,
+      markDays: [],
+    });
+    if (verdict.kind === 'creep') return count - 1;
+  }
+  return undefined;
+}
+
+function settledTruth(seed: number): LineTruth {
+  const random = uniform(seed * 104729 + 5);
+  const between = (low: number, high: number) => low + (high - low) * random();
+  const ratingAmps = between(400, 2000);
+  const voltageKv = [110, 220, 380][Math.floor(3 * random())]! / Math.sqrt(3);
+  return {
+    seed,
+    ratingAmps,
+    voltageKv,
+    susceptanceMillisiemens: (ratingAmps * between(0.01, 0.1)) / voltageKv,
+    mismatch: { re: between(-0.015, 0.015), im: between(-0.02, 0.02) },
+    loadShare: between(0.25, 0.55),
+    seasonShare: between(0, 0.35),
+    growthShareAYear: between(0, 0.12),
+    noiseShare: between(0.0003, 0.0012),
+    smallCurrentError: between(0, 0.001),
+  };
+}
+
+describe('creep', () => {
+  test('is raised wrongly on at most 1 in 200 settled line-phases over two years, at reference load', () => {
+    const LINES = 200;
+    let wrong = 0;
+    for (let seed = 1; seed <= LINES; seed++) {
+      const { levels, levelAmps } = referenceLevels(daySumsOf(measuredHours(settledTruth(seed), 730 * 24)));
+      const pickupAmps = levelAmps / (0.1 + 0.55 * uniform(seed + 31)());
+      if (firstCreepDay(levels, { pickupAmps, fromDay: 30, everyDays: 1 }) !== undefined) wrong++;
+    }
+    console.table({
+      'settled line-phases, two years, judged daily': { lines: LINES, 'raised wrongly': wrong },
+    });
+    expect(wrong).toBeLessThanOrEqual(LINES / 200);
+  });
+
+  test('of 1 A a month on a 400 A line is raised within 60 days in at least 95 % of the lines', () => {
+    const LINES = 200;
+    const delays: (number | undefined)[] = [];
+    for (let seed = 1; seed <= LINES; seed++) {
+      const random = uniform(seed * 15485863 + 3);
+      const between = (low: number, high: number) => low + (high - low) * random();
+      const onsetDay = Math.round(between(LEARNING_DAYS, 300));
+      const loadShare = between(0.3, 0.55);
+      const truth: LineTruth = {
+        seed: seed + 5000,
+        ratingAmps: 400,
+        voltageKv: 110 / Math.sqrt(3),
+        susceptanceMillisiemens: between(0.02, 0.06),
+        mismatch: { re: between(0.005, 0.015), im: between(-0.01, 0.01) },
+        loadShare,
+        seasonShare: between(0, 0.3),
+        growthShareAYear: between(0, 0.1),
+        noiseShare: between(0.0003, 0.0012),
+        mismatchChange: (hour) => ({
+          re: Math.max(0, hour / 24 - onsetDay) / (365.25 / 12) / (loadShare * 400 * 0.93),
+          im: 0,
+        }),
+      };
+      const days = daySumsOf(measuredHours(truth, (onsetDay + 61) * 24));
+      const { levels, levelAmps } = referenceLevels(days);
+      // at 1 A a month the near mark is met 4 to 12 months after the onset
+      const pickupAmps = (levelAmps + between(4, 12)) / NEAR_RATIO;
+      const raised = firstCreepDay(levels, { pickupAmps, fromDay: onsetDay, everyDays: 1 });
+      delays.push(raised === undefined ? undefined : raised - onsetDay);
+    }
+    const within = delays.filter((delay) => delay !== undefined && delay <= 60).length;
+    const sorted = delays.map((delay) => delay ?? Infinity).sort((a, b) => a - b);
+    console.table({
+      '1 A a month from an unknown day on': {
+        lines: LINES,
+        'within 60 days': `${(100 * within) / LINES} %`,
+        'median days': sorted[LINES / 2],
+        '95th percentile': sorted[LINES * 0.95],
+      },
+    });
+    expect(within / LINES).toBeGreaterThanOrEqual(0.95);
+  });
+});
