@@ -9,6 +9,9 @@ const HOLDERS = {
   'record settings': ['engineer', 'admin'],
   'replay settings': ['engineer'],
   'keep proposals': ['engineer'],
+  'see margins': ['engineer', 'planner', 'admin'],
+  'see forecast': ['planner', 'engineer'],
+  'keep follow-ups': ['planner', 'engineer'],
   'see feeds': ['admin'],
 } as const satisfies Readonly<Record<string, readonly Role[]>>;
 

@@ -29,6 +29,8 @@ const RULES: readonly RouteRule[] = [
   { under: '/register/new', methods: FORM, need: 'edit the register' },
   { under: '/feeds', methods: READ, need: 'see feeds' },
   { under: '/proposals', methods: READ, need: 'see lines' },
+  { under: '/margins', methods: READ, need: 'see margins' },
+  { under: '/forecast', methods: READ, need: 'see forecast' },
 
   { under: '/api/lines', methods: READ, need: 'see lines' },
   { under: '/api/warnings', methods: READ, need: 'see lines' },
@@ -38,6 +40,9 @@ const RULES: readonly RouteRule[] = [
   { under: '/api/replays', methods: READ, need: 'see lines' },
   { under: '/api/replays', methods: ['DELETE'], need: 'replay settings' },
   { under: '/api/proposals', methods: READ, need: 'see lines' },
+  { under: '/api/margins', methods: READ, need: 'see margins' },
+  { under: '/api/follow-ups', methods: READ, need: 'see forecast' },
+  { under: '/api/follow-ups', methods: ['POST'], need: 'keep follow-ups' },
   { under: '/api/feed', methods: READ, need: 'see feeds' },
   { under: '/api/register', methods: READ, need: 'see the register' },
   { under: '/api/register', methods: ['POST', 'PATCH', 'DELETE'], need: 'edit the register' },

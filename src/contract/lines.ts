@@ -3,6 +3,7 @@ import { keySchema } from './key';
 import { perPhaseSchema, phaseNameSchema } from './phase';
 import { goesBySchema, inZoneTransformerSchema, lineKindSchema, terminalSchema } from './register';
 import { resultSchema } from './result';
+import { standingVerdictSchema } from './standing';
 import { settingsVersionSchema } from './settings-version';
 import { creepSchema, warningSchema } from './warning';
 
@@ -55,6 +56,8 @@ export const lineDetailSchema = z.object({
   terminals: z.array(terminalSchema),
   result: resultSchema.nullable(),
   settings: z.array(settingsVersionSchema),
+  /** the newest findings on each phase's standing level; empty until the first look */
+  standing: z.array(standingVerdictSchema),
   /** past and open, newest first */
   warnings: z.array(warningSchema),
 });
@@ -87,6 +90,8 @@ export const levelSchema = z.object({
   greatestUtilisation: z.number().nullable(),
   qualifiedCount: z.int(),
   allCount: z.int(),
+  /** how many snapshots each rule kept from counting; null on rows of before this was counted */
+  disqualified: z.record(z.string(), z.int()).nullable(),
 });
 export type Level = z.infer<typeof levelSchema>;
 export const rungSchema = z.enum(['minute', 'hour', 'day']);

@@ -77,6 +77,7 @@ export type MarginRow = z.infer<typeof marginRowSchema>;
 export const MARGIN_SORTS = [
   'shareOfPickup',
   'levelAmps',
+  'expectedAmps',
   'utilisation',
   'utilisationP95',
   'emergencyUtilisation',
@@ -84,6 +85,7 @@ export const MARGIN_SORTS = [
   'nearLikely',
   'chargingAmps',
   'mismatchAmps',
+  'restAmps',
   'lineName',
 ] as const;
 export const marginSortSchema = z.enum(MARGIN_SORTS);

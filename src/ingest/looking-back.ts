@@ -1,13 +1,13 @@
 import type { IngestSettings } from '../settings';
 import type { Store } from '../store/client';
-import { dropHourLevelsBefore, replaceCreep } from '../store/levels';
+import { dropHourLevelsBefore } from '../store/levels';
 import { dropRefusalsBefore } from '../store/feed';
 import { keepPartitions } from '../store/partitions';
 import type { WarningLimits } from '../warnings/limits';
 import { INGEST_LIMITS } from './limits';
 import { type LineWatch, type WarningChange, watchFindings } from './line-watch';
 import { catchUpRungs } from './rebuild';
-import { readStandingFindings } from './standing-findings';
+import { renewFindings } from './standing-findings';
 
 const DAY_MS = 86_400_000;
 
@@ -25,8 +25,11 @@ export async function lookBack(
   });
   watch.caughtUpMs = caughtUpMs;
   if (!hourClosed && watch.findings !== undefined) return [];
-  const findings = await readStandingFindings(store, line, { nowMs, nearRatio: settings.NEAR_RATIO });
-  await replaceCreep(store, line.id, { creep: findings.creep, computedAt: new Date(nowMs) });
+  const findings = await renewFindings(store, line, {
+    nowMs,
+    nearRatio: settings.NEAR_RATIO,
+    frequencyHz: settings.NOMINAL_FREQUENCY_HZ,
+  });
   return watchFindings(watch, findings, { atMs: nowMs, limits });
 }
 

@@ -29,6 +29,8 @@ export interface RosterLine {
   readonly id: number;
   readonly key: string;
   readonly ratingAmps: number;
+  /** the entry that this was made of, for what is looked at seldom */
+  readonly register: RegisterLine;
   readonly goesBy: 'phasors' | 'reported';
   readonly inService: boolean;
   /** why this line can't be evaluated whatever arrives; undefined when it can */
@@ -62,6 +64,7 @@ export function rosterLine(line: RegisteredLine, frequencyHz: number): RosterLin
     id: line.id,
     key: line.key,
     ratingAmps: line.ratingAmps,
+    register: line,
     goesBy: line.goesBy,
     inService: line.inService,
     obstacle: obstacle(line),

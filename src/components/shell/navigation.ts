@@ -9,6 +9,8 @@ export interface Destination {
 /** Only pages that exist. Whether a role may open a page is decided by the middleware; this only spares it dead links. */
 const DESTINATIONS: readonly (Destination & { readonly need: Ability })[] = [
   { name: 'Board', path: '/', need: 'see lines' },
+  { name: 'Margins', path: '/margins', need: 'see margins' },
+  { name: 'Forecast', path: '/forecast', need: 'see forecast' },
   { name: 'Register', path: '/register', need: 'see the register' },
   { name: 'Feeds', path: '/feeds', need: 'see feeds' },
 ];

@@ -3,6 +3,7 @@ import type { Warning } from '../../contract/warning';
 import { readCreep, readLevels } from '../../store/levels';
 import { groupedBy } from '../../store/grouped';
 import { readRegister, readRegisterLine, type RegisteredLine } from '../../store/register';
+import { readVerdictsOfLine } from '../../store/standing';
 import { readOpenWarnings, readWarningsOfLine } from '../../store/warnings';
 import { lineSummary } from '../../view/line-summary';
 import type { Site } from '../site';
@@ -35,6 +36,7 @@ export async function readLineDetail(site: Site, key: string): Promise<LineDetai
     terminals: registered.terminals,
     result: site.live.results().get(key) ?? null,
     settings: registered.settings.toReversed(),
+    standing: await readVerdictsOfLine(site.store, registered.id),
     warnings,
   };
 }

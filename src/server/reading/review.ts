@@ -68,6 +68,7 @@ function weightedMean(
 interface Window {
   readonly from: Date;
   readonly to: Date;
+  readonly recomputedMost?: number;
 }
 
 /** Where the qualified snapshots of a period lie under the conventions in force at its end. */
@@ -89,7 +90,10 @@ export async function readReviewCloud(
     window,
     take: plane === 'restraint' ? restraintTaker(places, comparableVersions(line, version)) : () => true,
   });
-  const everyNth = plane === 'restraint' ? 1 : thinning(seen.instantsMs.length);
+  const everyNth =
+    plane === 'restraint'
+      ? 1
+      : thinning(seen.instantsMs.length, window.recomputedMost ?? REVIEW_LIMITS.recomputedMost);
   const counted =
     plane === 'restraint'
       ? seen.qualifiedCount - seen.otherConventionCount
@@ -219,7 +223,7 @@ function restraintTaker(places: Places, versions: ReadonlySet<number>): (row: Op
   };
 }
 
-const thinning = (count: number): number => Math.max(1, Math.ceil(count / REVIEW_LIMITS.recomputedMost));
+const thinning = (count: number, most: number): number => Math.max(1, Math.ceil(count / most));
 
 /** Places these instants by their packed phasors; returns how many could be. */
 async function recompute(

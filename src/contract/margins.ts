@@ -1,0 +1,56 @@
+import { z } from 'zod';
+import { keySchema } from './key';
+import { phaseNameSchema } from './phase';
+import { marginSortSchema, type MarginSort } from './standing';
+
+/** Rows of one page of GET /api/margins. */
+export const MARGINS_A_PAGE = 50;
+
+/** What the drift of a standing level is filtered by: a significant one, one within margin, or none. */
+export const CREEP_FILTERS = ['creep', 'within margin', 'none'] as const;
+export type CreepFilter = (typeof CREEP_FILTERS)[number];
+
+export const marginFilterSchema = z.object({
+  /** words that all stand in the line's name, its key or the names of its substations */
+  text: z.string().trim().max(80, 'Search for at most 80 characters.').default(''),
+  substation: keySchema.optional(),
+  voltage: z.coerce.number('The voltage is a number.').positive('The voltage is above 0.').optional(),
+  creep: z.enum(CREEP_FILTERS).optional(),
+});
+export type MarginFilter = z.infer<typeof marginFilterSchema>;
+
+/** Figures are looked at from the largest down; names and dates from the first on. */
+export const isUsuallyDescending = (sort: MarginSort): boolean => sort !== 'lineName' && sort !== 'nearLikely';
+
+/** The query of GET /api/margins; without `descending` each column goes its usual way. */
+export const marginQuerySchema = marginFilterSchema
+  .extend({
+    sort: marginSortSchema.default('shareOfPickup'),
+    descending: z.enum(['true', 'false']).optional(),
+    after: z.coerce
+      .number('This is the number of rows to pass over.')
+      .int('This is a whole number of rows.')
+      .min(0, 'This is at least 0.')
+      .max(1_000_000, 'This is at most 1,000,000.')
+      .default(0),
+  })
+  .transform(({ descending, ...query }) => ({
+    ...query,
+    descending: descending === undefined ? isUsuallyDescending(query.sort) : descending === 'true',
+  }));
+export type MarginQuery = z.infer<typeof marginQuerySchema>;
+
+/** GET /api/margins/scatter: every phase whose causes are separated, as shares of its pickup. */
+export const marginScatterSchema = z.object({
+  at: z.iso.datetime(),
+  nearRatio: z.number(),
+  lines: z.array(z.tuple([keySchema, z.string()])),
+  /** place in `lines`, phase, charging share, mismatch share, share of the standing level where it is known */
+  points: z.array(z.tuple([z.int(), phaseNameSchema, z.number(), z.number(), z.number().nullable()])),
+});
+export type MarginScatter = z.infer<typeof marginScatterSchema>;
+
+export interface FleetChoices {
+  readonly substations: readonly { readonly key: string; readonly name: string }[];
+  readonly voltagesKv: readonly number[];
+}

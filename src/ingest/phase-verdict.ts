@@ -1,0 +1,154 @@
+import type { CompositionOnWire } from '../contract/composition';
+import type { StandingVerdict } from '../contract/standing';
+import { pickupAmps } from '../protection/characteristic';
+import type { PhaseName } from '../protection/phase';
+import { type Composition, composition } from '../standing/composition';
+import { totalOf, throughLoad } from '../standing/composition-sums';
+import { watchedCreep } from '../standing/creep-watch';
+import { standingLevel24h } from '../standing/level';
+import { typicalPoint } from '../standing/operating-point';
+import { ascending, quantileSorted } from '../standing/quantile';
+import { levelsAtReferenceLoad } from '../standing/reference-level';
+import { compositionOnWire } from '../view/composition-on-wire';
+import { dateOfDay, type SummedDay, summedDays } from '../view/day-sums';
+import { creepOnWire } from './creep-on-wire';
+import { likelyCause } from './likely-cause';
+import { dailyLevels, lastDayOf, type LineHistory, rowsOf } from './line-history';
+import { emergencyUtilisation, expectedLevelAmps } from './line-model-of';
+import { type RosterLine, type SchemeVersion, versionInForce } from './roster';
+
+const DAY_MS = 86_400_000;
+/** The composition of today is that of the last month; the one before is a month that ended two months ago. */
+const COMPOSED_DAYS = 30;
+const BEFORE_DAYS = 60;
+const HORIZON_DAYS = 365;
+const UTILISATION_DAYS = 7;
+
+/** What the levels of one phase say at a moment. Pure: everything comes from the rows. */
+export function phaseVerdict(
+  line: RosterLine,
+  history: LineHistory,
+  { phase, nearRatio, frequencyHz }: { phase: PhaseName; nearRatio: number; frequencyHz: number },
+): StandingVerdict {
+  const { nowMs } = history;
+  const version = versionInForce(line, nowMs);
+  const pickup = version && pickupAmps(version.scheme.characteristic);
+  const levelAmps = standingLevel24h(mediansOf(lastDayOf(history, phase)));
+  const windows = composedWindows(line, summedDays(history.days, phase), { nowMs, frequencyHz });
+  const drift = drifts(line, history, { phase, pickup, nearRatio, now: windows.now, frequencyHz });
+  const { cause, terminal } = likelyCause(windows.now.onWire, windows.before);
+  const separated = windows.now.composition.kind === 'separated' ? windows.now.composition : undefined;
+  const counted = drift.creepAtReference?.creep ?? drift.creep;
+  return {
+    line: line.key,
+    phase,
+    computedAt: new Date(nowMs).toISOString(),
+    levelAmps: levelAmps ?? null,
+    pickupAmps: pickup ?? null,
+    shareOfPickup: levelAmps === undefined || pickup === undefined ? null : levelAmps / pickup,
+    expectedAmps: expectedOf(line, history, { phase, version, frequencyHz }) ?? null,
+    utilisationP95: utilisationP95(history, phase) ?? null,
+    emergencyUtilisation:
+      (version && separated && emergencyUtilisation(line.register, version, separated)) ?? null,
+    composition: windows.now.onWire,
+    compositionBefore: windows.before,
+    creep: drift.creep,
+    creepAtReference: drift.creepAtReference,
+    step: null,
+    likelyCause: cause,
+    causeTerminal: terminal,
+    near: counted?.near ?? null,
+    pickup: counted?.pickup ?? null,
+  };
+}
+
+const mediansOf = (rows: readonly { medianAmps: number | null }[]): number[] =>
+  rows.flatMap(({ medianAmps }) => medianAmps ?? []);
+
+interface Composed {
+  readonly composition: Composition;
+  readonly onWire: CompositionOnWire;
+  readonly days: readonly SummedDay[];
+}
+
+function composedWindows(
+  line: RosterLine,
+  days: readonly SummedDay[],
+  { nowMs, frequencyHz }: { nowMs: number; frequencyHz: number },
+): { now: Composed; before: CompositionOnWire | null } {
+  const today = Math.floor(nowMs / DAY_MS);
+  const over = (from: number, to: number): Composed => {
+    const within = days.filter(({ day }) => day >= from && day < to);
+    const sums = within.map((each) => each.sums);
+    const found = composition(sums, { frequencyHz });
+    const window = { from: dateOfDay(from), to: dateOfDay(to), sums };
+    const onWire = compositionOnWire(found, window, { line: line.register, frequencyHz });
+    return { composition: found, onWire, days: within };
+  };
+  const before = over(today - BEFORE_DAYS - COMPOSED_DAYS, today - BEFORE_DAYS);
+  return {
+    now: over(today - COMPOSED_DAYS, today),
+    before: before.composition.kind === 'separated' ? before.onWire : null,
+  };
+}
+
+/** The drift as measured, and at one and the same load. A change of settings is a mark that no trend is fitted across. */
+function drifts(
+  line: RosterLine,
+  history: LineHistory,
+  known: {
+    phase: PhaseName;
+    pickup: number | undefined;
+    nearRatio: number;
+    now: Composed;
+    frequencyHz: number;
+  },
+): Pick<StandingVerdict, 'creep' | 'creepAtReference'> {
+  const { phase, pickup, nearRatio, now } = known;
+  if (pickup === undefined || line.obstacle !== undefined) return { creep: null, creepAtReference: null };
+  const markDays = line.versions.slice(1).map(({ fromMs }) => Math.floor(fromMs / DAY_MS));
+  const plan = { pickupAmps: pickup, nearRatio, horizonDays: HORIZON_DAYS, markDays };
+  const measured = watchedCreep(dailyLevels(rowsOf(history.days, phase)), plan);
+  const creep = creepOnWire(measured.verdict, phase) ?? null;
+  const total = totalOf(now.days.map(({ sums }) => sums));
+  const point = total && typicalPoint(total);
+  if (now.composition.kind !== 'separated' || total === undefined || point === undefined)
+    return { creep, creepAtReference: null };
+  const levels = levelsAtReferenceLoad(summedDays(history.days, phase), now.composition, point);
+  const atReference = creepOnWire(watchedCreep(levels, plan).verdict, phase);
+  const load = throughLoad(total);
+  return {
+    creep,
+    creepAtReference:
+      atReference === undefined || load === undefined
+        ? null
+        : { creep: atReference, referenceThroughAmps: load.meanAmps },
+  };
+}
+
+function expectedOf(
+  line: RosterLine,
+  history: LineHistory,
+  {
+    phase,
+    version,
+    frequencyHz,
+  }: { phase: PhaseName; version: SchemeVersion | undefined; frequencyHz: number },
+): number | undefined {
+  const through = lastDayOf(history, phase).flatMap(({ meanThroughAmps }) => meanThroughAmps ?? []);
+  if (through.length === 0) return undefined;
+  return expectedLevelAmps(line.register, {
+    throughAmps: through.reduce((total, amps) => total + amps, 0) / through.length,
+    isCompensated: version?.zone?.charging !== undefined,
+    frequencyHz,
+  });
+}
+
+/** The 95th percentile of the greatest utilisation of each hour in a week. */
+function utilisationP95({ hours, nowMs }: LineHistory, phase: PhaseName): number | undefined {
+  const fromMs = nowMs - UTILISATION_DAYS * DAY_MS;
+  const greatest = rowsOf(hours, phase).flatMap(({ start, greatestUtilisation }) =>
+    start.getTime() >= fromMs && greatestUtilisation !== null ? [greatestUtilisation] : [],
+  );
+  return quantileSorted(ascending(greatest), 0.95);
+}

@@ -1,0 +1,128 @@
+import type { CompositionOnWire, LineComposition } from '../../contract/composition';
+import type { Comparison } from '../../contract/standing';
+import { perPhase, PHASES, type PhaseName } from '../../protection/phase';
+import { modulus } from '../../standing/complex';
+import { composition } from '../../standing/composition';
+import { mannWhitney } from '../../standing/mann-whitney';
+import { compositionPolygon } from '../../standing/operating-point';
+import { median } from '../../standing/quantile';
+import { type LevelRow, readLevels } from '../../store/levels';
+import { readRegisterLine, type RegisteredLine } from '../../store/register';
+import { compositionOnWire } from '../../view/composition-on-wire';
+import { dateOfDay, type SummedDay, summedDays } from '../../view/day-sums';
+import type { Site } from '../site';
+
+interface Window {
+  readonly from: Date;
+  readonly to: Date;
+}
+
+const DAY_MS = 86_400_000;
+const COMPARED_DAYS = 180;
+
+/** What every phase consists of over a window of days; undefined when the register does not hold the line. */
+export async function readComposition(
+  site: Site,
+  key: string,
+  window: Window,
+): Promise<LineComposition | undefined> {
+  const line = await readRegisterLine(site.store, key);
+  if (line === undefined) return undefined;
+  const rows = await readLevels(site.store, 'day', { lineIds: [line.id], ...window });
+  const frequencyHz = site.settings.NOMINAL_FREQUENCY_HZ;
+  return {
+    line: key,
+    phases: perPhase((phase) => composed(summedDays(rows, phase), { line, window, frequencyHz })),
+    history: PHASES.flatMap((phase) => history(summedDays(rows, phase), { phase, frequencyHz })),
+  };
+}
+
+function composed(
+  days: readonly SummedDay[],
+  { line, window, frequencyHz }: { line: RegisteredLine; window: Window; frequencyHz: number },
+): CompositionOnWire {
+  const sums = days.map((each) => each.sums);
+  const dates = { from: window.from.toISOString().slice(0, 10), to: window.to.toISOString().slice(0, 10) };
+  if (line.goesBy === 'reported')
+    return {
+      kind: 'not separable',
+      ...dates,
+      days: 0,
+      snapshotCount: 0,
+      reason:
+        'This feed holds magnitudes alone; what a differential consists of can’t be told from it. Phasors of every terminal would tell.',
+    };
+  return compositionOnWire(composition(sums, { frequencyHz }), { ...dates, sums }, { line, frequencyHz });
+}
+
+/** The causes day by day, by the window's composition, so that a day with a steady load has its shares as well. */
+function history(
+  days: readonly SummedDay[],
+  { phase, frequencyHz }: { phase: PhaseName; frequencyHz: number },
+): LineComposition['history'] {
+  const whole = composition(
+    days.map(({ sums }) => sums),
+    { frequencyHz },
+  );
+  if (whole.kind === 'not separable') return [];
+  return days.flatMap(({ day, sums }) => {
+    const polygon = compositionPolygon(sums, whole);
+    if (polygon === undefined) return [];
+    return [
+      {
+        day: dateOfDay(day),
+        phase,
+        chargingAmps: modulus(polygon.chargingAmps),
+        ratioAmps: modulus(polygon.ratioAmps),
+        angleAmps: modulus(polygon.angleAmps),
+        restAmps: modulus(polygon.restAmps),
+        differentialAmps: modulus(polygon.differentialAmps),
+      },
+    ];
+  });
+}
+
+/** Both sides of a date, half a year at the most on each; the day itself belongs to neither. */
+export async function readComparison(site: Site, key: string, at: string): Promise<Comparison | undefined> {
+  const line = await readRegisterLine(site.store, key);
+  if (line === undefined) return undefined;
+  const atMs = Date.parse(`${at}T00:00:00Z`);
+  const frequencyHz = site.settings.NOMINAL_FREQUENCY_HZ;
+  const side = async (window: Window) => ({
+    window,
+    rows: await readLevels(site.store, 'day', { lineIds: [line.id], ...window }),
+  });
+  const before = await side({ from: new Date(atMs - COMPARED_DAYS * DAY_MS), to: new Date(atMs) });
+  const after = await side({ from: new Date(atMs + DAY_MS), to: new Date(atMs + COMPARED_DAYS * DAY_MS) });
+  return {
+    line: key,
+    at,
+    phases: PHASES.map((phase) => {
+      const [earlier, later] = [before, after].map(({ rows, window }) => ({
+        levels: levelsOf(rows, phase),
+        composition: composed(summedDays(rows, phase), { line, window, frequencyHz }),
+      }));
+      return {
+        phase,
+        before: summary(earlier!),
+        after: summary(later!),
+        test: shiftTest(earlier!.levels, later!.levels),
+      };
+    }),
+  };
+}
+
+const levelsOf = (rows: readonly LevelRow[], phase: PhaseName): number[] =>
+  rows.flatMap((row) => (row.phase === phase && row.medianAmps !== null ? [row.medianAmps] : []));
+
+const summary = ({ levels, composition: told }: { levels: number[]; composition: CompositionOnWire }) => ({
+  days: levels.length,
+  medianAmps: median(levels) ?? null,
+  composition: told,
+});
+
+function shiftTest(before: number[], after: number[]): Comparison['phases'][number]['test'] {
+  const found = mannWhitney(before, after);
+  if (found?.limits === undefined) return null;
+  return { pTwoSided: found.pTwoSided, shiftAmps: { value: found.shift, ...found.limits } };
+}

@@ -1,0 +1,106 @@
+import { and, asc, desc, eq, isNotNull, isNull, sql, type SQL } from 'drizzle-orm';
+import type { z } from 'zod';
+import type { FollowUpQuery } from '../contract/follow-ups';
+import type { FollowUp, newFollowUpSchema } from '../contract/standing';
+import { insertAuditEntry } from './audit';
+import type { Store } from './client';
+import { line } from './schema/register';
+import { followUp } from './schema/standing';
+
+const FOLLOW_UPS_MOST = 500;
+
+interface Keeping {
+  readonly by: { readonly id: string; readonly name: string };
+  readonly nowMs: number;
+}
+
+/** Opens a follow-up and says so in the audit trail; undefined when the register has no such line. */
+export async function insertFollowUp(
+  store: Store,
+  { line: key, ...opened }: z.output<typeof newFollowUpSchema>,
+  { by, nowMs }: Keeping,
+): Promise<FollowUp | undefined> {
+  const [known] = await store.db.select({ id: line.id }).from(line).where(eq(line.key, key));
+  if (known === undefined) return undefined;
+  const openedAt = new Date(nowMs);
+  const [added] = await store.db
+    .insert(followUp)
+    .values({ ...opened, lineId: known.id, openedBy: by.name, openedAt })
+    .$returningId();
+  const kept = added && (await readFollowUp(store, added.id));
+  if (kept === undefined) throw new Error('The follow-up that was just opened is not there.');
+  await insertAuditEntry(store, {
+    at: openedAt,
+    person: by,
+    action: 'follow-up opened',
+    subject: key,
+    detail: { followUp: kept.id, ...opened },
+  });
+  return kept;
+}
+
+/** Ends a follow-up once: a second call says that it did nothing. */
+export async function endFollowUp(
+  store: Store,
+  id: number,
+  { by, nowMs }: Keeping,
+): Promise<'done' | 'already done' | 'unknown'> {
+  const at = new Date(nowMs);
+  const [result] = await store.db
+    .update(followUp)
+    .set({ doneAt: at })
+    .where(and(eq(followUp.id, id), isNull(followUp.doneAt)));
+  const kept = await readFollowUp(store, id);
+  if (kept === undefined) return 'unknown';
+  if (result.affectedRows === 0) return 'already done';
+  await insertAuditEntry(store, {
+    at,
+    person: by,
+    action: 'follow-up done',
+    subject: kept.line,
+    detail: { followUp: id },
+  });
+  return 'done';
+}
+
+export async function readFollowUp(store: Store, id: number): Promise<FollowUp | undefined> {
+  return (await readWhere(store, eq(followUp.id, id)))[0];
+}
+
+/** Follow-ups, open ones before done ones; among the open the one due first, those without a date last. */
+export const readFollowUps = (store: Store, asked: FollowUpQuery = {}): Promise<FollowUp[]> =>
+  readWhere(
+    store,
+    and(
+      asked.line === undefined ? undefined : eq(line.key, asked.line),
+      asked.state === undefined
+        ? undefined
+        : asked.state === 'open'
+          ? isNull(followUp.doneAt)
+          : isNotNull(followUp.doneAt),
+    ),
+  );
+
+async function readWhere(store: Store, condition: SQL | undefined): Promise<FollowUp[]> {
+  const rows = await store.db
+    .select({ followUp, key: line.key, name: line.name })
+    .from(followUp)
+    .innerJoin(line, eq(followUp.lineId, line.id))
+    .where(condition)
+    .orderBy(
+      sql`${followUp.doneAt} is not null`,
+      desc(followUp.doneAt),
+      sql`${followUp.due} is null`,
+      asc(followUp.due),
+      desc(followUp.id),
+    )
+    .limit(FOLLOW_UPS_MOST);
+  return rows.map(({ followUp: { lineId: _lineId, openedAt, doneAt, ...rest }, key, name }) => ({
+    ...rest,
+    line: key,
+    lineName: name,
+    state: doneAt === null ? 'open' : 'done',
+    openedAt: openedAt.toISOString(),
+    doneAt: doneAt?.toISOString() ?? null,
+  }));
+}

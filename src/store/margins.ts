@@ -1,0 +1,268 @@
+import { and, asc, count, eq, getTableColumns, gte, inArray, isNotNull, isNull, or, sql, type SQL } from 'drizzle-orm';
+import type { MarginFilter } from '../contract/margins';
+import type { MarginSort, StandingVerdict } from '../contract/standing';
+import type { PhaseName } from '../protection/phase';
+import type { Store } from './client';
+import { groupedBy } from './grouped';
+import { dayLevel } from './schema/levels';
+import { line, substation, terminal } from './schema/register';
+import { standingVerdict } from './schema/standing';
+
+/** One phase of one line: what a row of the fleet's list is known by. */
+export interface MarginKey {
+  readonly lineId: number;
+  readonly phase: PhaseName;
+}
+
+export interface StoredMargin extends MarginKey {
+  readonly key: string;
+  readonly lineName: string;
+  readonly voltageKv: number;
+  readonly figures: Omit<typeof standingVerdict.$inferSelect, 'verdict'>;
+  readonly verdict: StandingVerdict;
+}
+
+/** The columns that the database can sort by; utilisation of now is not in it. */
+export type StoredSort = Exclude<MarginSort, 'utilisation'>;
+
+const ORDER: Readonly<Record<StoredSort, SQL>> = {
+  shareOfPickup: sql`${standingVerdict.shareOfPickup}`,
+  levelAmps: sql`${standingVerdict.levelAmps}`,
+  expectedAmps: sql`cast(json_value(${standingVerdict.verdict}, '$.expectedAmps') as double)`,
+  utilisationP95: sql`${standingVerdict.utilisationP95}`,
+  emergencyUtilisation: sql`${standingVerdict.emergencyUtilisation}`,
+  creepAmpsPerMonth: sql`${standingVerdict.creepAmpsPerMonth}`,
+  nearLikely: sql`${standingVerdict.nearLikely}`,
+  chargingAmps: sql`${standingVerdict.chargingAmps}`,
+  mismatchAmps: sql`${standingVerdict.mismatchAmps}`,
+  restAmps: sql`${standingVerdict.restAmps}`,
+  lineName: sql`${line.name}`,
+};
+
+const { verdict: _verdict, ...FIGURES } = getTableColumns(standingVerdict);
+
+/** How many rows a filter leaves. */
+export async function countMargins(store: Store, filter: MarginFilter): Promise<number> {
+  const [row] = await store.db
+    .select({ rows: count() })
+    .from(standingVerdict)
+    .innerJoin(line, eq(standingVerdict.lineId, line.id))
+    .where(filtered(filter));
+  return row?.rows ?? 0;
+}
+
+/**
+ * The rows of one page, in order. A row without the figure stands last whichever way the order goes; rows alike stand
+ * by name and phase, so that pages neither repeat nor miss one. Only keys are sorted: with the findings themselves
+ * in the sort, the database would carry megabytes through it.
+ */
+export async function readMarginKeys(
+  store: Store,
+  filter: MarginFilter,
+  page: { sort: StoredSort; descending: boolean; after: number; limit: number },
+): Promise<MarginKey[]> {
+  const by = ORDER[page.sort];
+  return store.db
+    .select({ lineId: standingVerdict.lineId, phase: standingVerdict.phase })
+    .from(standingVerdict)
+    .innerJoin(line, eq(standingVerdict.lineId, line.id))
+    .where(filtered(filter))
+    .orderBy(
+      sql`${by} is null`,
+      page.descending ? sql`${by} desc` : sql`${by} asc`,
+      asc(line.name),
+      asc(standingVerdict.lineId),
+      asc(standingVerdict.phase),
+    )
+    .limit(page.limit)
+    .offset(page.after);
+}
+
+/** Every row that a filter leaves, by name and phase, with the line's key: for an order that the database does not know. */
+export async function readAllMarginKeys(
+  store: Store,
+  filter: MarginFilter,
+): Promise<(MarginKey & { key: string })[]> {
+  return store.db
+    .select({ lineId: standingVerdict.lineId, phase: standingVerdict.phase, key: line.key })
+    .from(standingVerdict)
+    .innerJoin(line, eq(standingVerdict.lineId, line.id))
+    .where(filtered(filter))
+    .orderBy(asc(line.name), asc(standingVerdict.lineId), asc(standingVerdict.phase));
+}
+
+/** Whole rows, in the order of their keys. */
+export async function readMargins(store: Store, keys: readonly MarginKey[]): Promise<StoredMargin[]> {
+  if (keys.length === 0) return [];
+  const rows = await store.db
+    .select({
+      figures: FIGURES,
+      verdict: standingVerdict.verdict,
+      key: line.key,
+      name: line.name,
+      kv: line.voltageKv,
+    })
+    .from(standingVerdict)
+    .innerJoin(line, eq(standingVerdict.lineId, line.id))
+    .where(inArray(standingVerdict.lineId, [...new Set(keys.map(({ lineId }) => lineId))]));
+  const found = new Map(rows.map((row) => [`${row.figures.lineId} ${row.figures.phase}`, row]));
+  return keys.flatMap(({ lineId, phase }) => {
+    const row = found.get(`${lineId} ${phase}`);
+    if (row === undefined) return [];
+    const { figures, verdict, key, name, kv } = row;
+    return [{ lineId, phase, key, lineName: name, voltageKv: kv, figures, verdict }];
+  });
+}
+
+export interface MarginPoint {
+  readonly key: string;
+  readonly lineName: string;
+  readonly phase: PhaseName;
+  readonly chargingShare: number;
+  readonly mismatchShare: number;
+  readonly shareOfPickup: number | null;
+}
+
+/** Charging and mismatch as shares of the pickup, of every row that has both: without reading the findings themselves. */
+export async function readMarginPoints(store: Store, filter: MarginFilter): Promise<MarginPoint[]> {
+  // the share is level over pickup, so the pickup is at hand without opening the JSON, save where there is no level
+  const pickupAmps = sql`coalesce(
+    ${standingVerdict.levelAmps} / nullif(${standingVerdict.shareOfPickup}, 0),
+    cast(json_value(${standingVerdict.verdict}, '$.pickupAmps') as double))`;
+  const rows = await store.db
+    .select({
+      key: line.key,
+      lineName: line.name,
+      phase: standingVerdict.phase,
+      chargingShare: sql<number | null>`${standingVerdict.chargingAmps} / nullif(${pickupAmps}, 0)`,
+      mismatchShare: sql<number | null>`${standingVerdict.mismatchAmps} / nullif(${pickupAmps}, 0)`,
+      shareOfPickup: standingVerdict.shareOfPickup,
+    })
+    .from(standingVerdict)
+    .innerJoin(line, eq(standingVerdict.lineId, line.id))
+    .where(
+      and(filtered(filter), isNotNull(standingVerdict.chargingAmps), isNotNull(standingVerdict.mismatchAmps)),
+    )
+    .orderBy(asc(line.name), asc(standingVerdict.lineId), asc(standingVerdict.phase));
+  return rows.flatMap(({ chargingShare, mismatchShare, ...row }) =>
+    chargingShare === null || mismatchShare === null ? [] : [{ ...row, chargingShare, mismatchShare }],
+  );
+}
+
+/** Rows that rise, whether to the near mark or within their margin, and rows that stand beyond it; most urgent first. */
+export async function readForecastKeys(store: Store, nearRatio: number, most: number): Promise<MarginKey[]> {
+  return store.db
+    .select({ lineId: standingVerdict.lineId, phase: standingVerdict.phase })
+    .from(standingVerdict)
+    .where(or(isNotNull(standingVerdict.creepVerdict), gte(standingVerdict.shareOfPickup, nearRatio)))
+    .orderBy(
+      sql`coalesce(${standingVerdict.shareOfPickup} >= ${nearRatio}, false) desc`,
+      sql`coalesce(${standingVerdict.creepVerdict} = 'creep', false) desc`,
+      sql`${standingVerdict.nearLikely} is null`,
+      asc(standingVerdict.nearLikely),
+      asc(standingVerdict.lineId),
+      asc(standingVerdict.phase),
+    )
+    .limit(most);
+}
+
+/** How many lines have findings, how many of them rise or stand beyond, and how many in service have none yet. */
+export async function countForecastLines(
+  store: Store,
+  nearRatio: number,
+): Promise<{ found: number; listed: number; unknown: number }> {
+  const listed = sql`${standingVerdict.creepVerdict} is not null or ${standingVerdict.shareOfPickup} >= ${nearRatio}`;
+  const [[known], [without]] = await Promise.all([
+    store.db
+      .select({
+        found: sql<number>`count(distinct ${standingVerdict.lineId})`.mapWith(Number),
+        listed:
+          sql<number>`count(distinct case when ${listed} then ${standingVerdict.lineId} end)`.mapWith(Number),
+      })
+      .from(standingVerdict)
+      .innerJoin(line, eq(standingVerdict.lineId, line.id)),
+    store.db
+      .select({ lines: sql<number>`count(distinct ${line.id})`.mapWith(Number) })
+      .from(line)
+      .leftJoin(standingVerdict, eq(standingVerdict.lineId, line.id))
+      .where(and(eq(line.inService, true), isNull(standingVerdict.lineId))),
+  ]);
+  return { found: known?.found ?? 0, listed: known?.listed ?? 0, unknown: without?.lines ?? 0 };
+}
+
+/** Daily standing levels of these lines, oldest first: without the sums, which are most of a day row. */
+export async function readDailyLevels(
+  store: Store,
+  lineIds: readonly number[],
+  from: Date,
+): Promise<(MarginKey & { start: Date; medianAmps: number | null })[]> {
+  if (lineIds.length === 0) return [];
+  return store.db
+    .select({
+      lineId: dayLevel.lineId,
+      phase: dayLevel.phase,
+      start: dayLevel.start,
+      medianAmps: dayLevel.medianAmps,
+    })
+    .from(dayLevel)
+    .where(and(inArray(dayLevel.lineId, [...lineIds]), gte(dayLevel.start, from)))
+    .orderBy(asc(dayLevel.start));
+}
+
+export type LineEnds = ReadonlyMap<number, readonly { readonly key: string; readonly name: string }[]>;
+
+/** The substations at the ends of these lines, in the terminals' order, each once. */
+export async function readLineEnds(store: Store, lineIds: readonly number[]): Promise<LineEnds> {
+  if (lineIds.length === 0) return new Map();
+  const rows = await store.db
+    .select({ lineId: terminal.lineId, key: substation.key, name: substation.name })
+    .from(terminal)
+    .innerJoin(substation, eq(terminal.substation, substation.key))
+    .where(inArray(terminal.lineId, [...new Set(lineIds)]))
+    .orderBy(asc(terminal.position));
+  return new Map(
+    [...groupedBy(rows, ({ lineId }) => lineId)].map(([lineId, ends]) => [
+      lineId,
+      [...new Map(ends.map(({ key, name }) => [key, { key, name }])).values()],
+    ]),
+  );
+}
+
+/** What the fleet's filters can offer: substations by name, voltages from high to low. */
+export async function readFleetChoices(store: Store): Promise<{
+  substations: { key: string; name: string }[];
+  voltagesKv: number[];
+}> {
+  const [substations, voltages] = await Promise.all([
+    store.db.select().from(substation).orderBy(asc(substation.name)),
+    store.db.selectDistinct({ kv: line.voltageKv }).from(line),
+  ]);
+  return { substations, voltagesKv: voltages.map(({ kv }) => kv).sort((one, other) => other - one) };
+}
+
+function filtered({ text, substation: at, voltage, creep }: MarginFilter): SQL | undefined {
+  return and(
+    ...text
+      .split(/\s+/)
+      .filter((word) => word !== '')
+      .map(namesWord),
+    at === undefined ? undefined : endsAt(sql`${terminal.substation} = ${at}`),
+    voltage === undefined ? undefined : eq(line.voltageKv, voltage),
+    creep === undefined
+      ? undefined
+      : creep === 'none'
+        ? isNull(standingVerdict.creepVerdict)
+        : eq(standingVerdict.creepVerdict, creep),
+  );
+}
+
+function namesWord(word: string): SQL {
+  const pattern = `%${word.replaceAll(/[\\%_]/g, '\\$&')}%`;
+  const atSubstation = sql`${terminal.substation} in
+    (select ${substation.key} from ${substation} where ${substation.name} like ${pattern})`;
+  return sql`(${line.name} like ${pattern} or ${line.key} like ${pattern} or ${endsAt(atSubstation)})`;
+}
+
+// by id, so that the database looks the lines up once and not once for every row
+const endsAt = (condition: SQL): SQL =>
+  sql`${line.id} in (select ${terminal.lineId} from ${terminal} where ${condition})`;

@@ -1,0 +1,235 @@
+import type { CompositionOnWire, EstimateOnWire, MismatchOnWire } from '../contract/composition';
+import type { LineSummary } from '../contract/lines';
+import type { Cause, StandingVerdict, StepOnWire } from '../contract/standing';
+import type { Creep, ForecastDatesOnWire } from '../contract/warning';
+import { dateText, timeText } from './figures';
+import { currentText } from './line-figures';
+import { inUnit, unitSign } from './line-unit';
+import type { CurrentUnit } from './line-unit';
+import { listed, terminalName } from './line-words';
+import type { SiteCustom } from './site-custom';
+
+/** What the sentences about a standing level are written with. */
+export interface StandingWordsContext {
+  readonly unit: CurrentUnit;
+  readonly ratingAmps: number;
+  readonly substations: LineSummary['substations'];
+  readonly site: SiteCustom;
+  readonly nowMs: number;
+}
+
+type AmpsContext = Pick<StandingWordsContext, 'unit' | 'ratingAmps'>;
+
+/** A cause as a name, with the terminal that it points to: "ratio mismatch of Low Pell". */
+export function causeName(
+  cause: Cause,
+  terminal: string | null,
+  substations: LineSummary['substations'],
+): string {
+  const named = terminal === null ? '' : ` of ${terminalName(terminal, substations)}`;
+  switch (cause) {
+    case 'charging':
+      return 'charging';
+    case 'ratio mismatch':
+    case 'angle mismatch':
+      return `${cause}${named}`;
+    case 'rest':
+      return 'what follows neither voltage nor load';
+    case 'not told':
+      return 'a cause that can’t be told';
+  }
+}
+
+/** Where a mismatch stands against the class limits of both transformers together. */
+export function budgetWords(verdict: MismatchOnWire['ratioBudget']): string {
+  switch (verdict) {
+    case 'within':
+      return 'within the class budget';
+    case 'beyond':
+      return 'beyond the class budget';
+    case 'undecided':
+      return 'on either side of the class budget, undecided';
+    case null:
+      return 'no class to hold it against';
+  }
+}
+
+/** A current with a tenth, as a composition needs it: "14.0 A", "104 A", "0.021 pu". */
+export function tenthsText(amps: number, { unit, ratingAmps }: AmpsContext): string {
+  if (unit === 'per unit' || !Number.isFinite(amps)) return currentText(amps, unit, ratingAmps);
+  return `${signed(amps.toFixed(Math.abs(amps) < 99.95 ? 1 : 0))}\u00a0A`;
+}
+
+/** "13.2 to 14.8": the limits of an interval, with so many decimals; their unit stands with the value. */
+export function intervalText({ low, high }: EstimateOnWire, digits: number): string {
+  return `${signed(low.toFixed(digits))} to ${signed(high.toFixed(digits))}`;
+}
+
+/** A hyphen is too short for a minus, and a zero has no sign. */
+const signed = (figure: string): string =>
+  Number(figure) === 0 ? figure.replace('-', '') : figure.replace('-', '−');
+
+/**
+ * A step as a sentence: "On 22 Nov 2026 at 14:00 the level stepped from 28 to 60 A; the angle mismatch of Low
+ * Pell moved, and the channel’s path changed at the same time."
+ */
+export function stepWords(step: StepOnWire, context: StandingWordsContext): string {
+  const { timeZone } = context.site;
+  const when = `On ${dateText(step.at, timeZone)} at ${timeText(step.at, timeZone).slice(0, 5)}`;
+  const path = step.channelPathChanged
+    ? ', and the channel’s path changed at the same time: that points to the channel'
+    : '';
+  return `${when} the level stepped from ${stepSizeWords(step, context)}; ${movedWords(step, context)}${path}.`;
+}
+
+/** "28 to 60 A" */
+export function stepSizeWords({ fromAmps, toAmps }: StepOnWire, { unit, ratingAmps }: AmpsContext): string {
+  const from = currentText(fromAmps, unit, ratingAmps).replace(/\s(A|pu)$/, '');
+  return `${from} to ${currentText(toAmps, unit, ratingAmps)}`;
+}
+
+function movedWords({ cause, terminal }: StepOnWire, { substations }: StandingWordsContext): string {
+  switch (cause) {
+    case 'charging':
+    case 'ratio mismatch':
+    case 'angle mismatch':
+      return `the ${causeName(cause, terminal, substations)} moved`;
+    case 'rest':
+      return 'what moved follows neither voltage nor load';
+    case 'not told':
+      return 'which cause moved can’t be told';
+  }
+}
+
+/**
+ * What a planner needs of a drift, in a sentence; undefined where no drift is significant. The drift at one and the
+ * same load goes first, since load cycle and season are not in it.
+ */
+export function driftWords(verdict: StandingVerdict, context: StandingWordsContext): string | undefined {
+  const { creep: drift, atReference } = driftOf(verdict);
+  if (drift === undefined) return undefined;
+  const letter = context.site.phaseLetters[verdict.phase];
+  const load = atReference
+    ? ` at one and the same load (${currentText(verdict.creepAtReference!.referenceThroughAmps, context.unit, context.ratingAmps)} through)`
+    : ' as measured, load included';
+  const parts = [
+    `Phase ${letter} ${slopeWords(drift, context)}${load}`,
+    forecastPart(verdict, drift, context),
+    causePart(verdict, context),
+  ];
+  return `${parts.filter((part) => part !== undefined).join('; ')}.`;
+}
+
+function driftOf({ creep, creepAtReference }: StandingVerdict): {
+  creep: Creep | undefined;
+  atReference: boolean;
+} {
+  if (creepAtReference !== null) return { creep: creepAtReference.creep, atReference: true };
+  return { creep: creep ?? undefined, atReference: false };
+}
+
+/** "rises 0.9 A a month, 95 % between 0.6 and 1.2" */
+function slopeWords(drift: Creep, { unit, ratingAmps }: AmpsContext): string {
+  const digits = unit === 'amperes' ? 1 : 4;
+  const falls = drift.slopeAmpsPerMonth < 0;
+  const figure = (amps: number) => signed((inUnit(amps, unit, ratingAmps) ?? 0).toFixed(digits));
+  const limits = [drift.slopeLowAmpsPerMonth, drift.slopeHighAmpsPerMonth].map((slope) =>
+    falls ? -slope : slope,
+  );
+  return (
+    `${falls ? 'falls' : 'rises'} ${figure(Math.abs(drift.slopeAmpsPerMonth))} ${unitSign(unit)} a month, ` +
+    `95 % between ${figure(Math.min(...limits))} and ${figure(Math.max(...limits))}`
+  );
+}
+
+function forecastPart(
+  verdict: StandingVerdict,
+  drift: Creep,
+  { site, nowMs }: StandingWordsContext,
+): string | undefined {
+  if (drift.slopeAmpsPerMonth <= 0) return undefined;
+  const isPast = verdict.shareOfPickup !== null && verdict.shareOfPickup >= site.nearRatio;
+  if (isPast) return `past the near mark, pickup ${monthsWords(verdict.pickup ?? drift.pickup, nowMs)}`;
+  return `near mark ${monthsWords(verdict.near ?? drift.near, nowMs)}`;
+}
+
+const MONTHS = [
+  'January',
+  'February',
+  'March',
+  'April',
+  'May',
+  'June',
+  'July',
+  'August',
+  'September',
+  'October',
+  'November',
+  'December',
+];
+
+/** "in March to June", "in December to March 2028", "from March on", "not within five years"; another year is named. */
+export function monthsWords({ earliest, latest }: ForecastDatesOnWire, nowMs: number): string {
+  if (earliest === null) return 'not within five years';
+  const from = monthOf(earliest);
+  if (latest === null) return `from ${from.month}${yearWords(from.year, nowMs)} on`;
+  const to = monthOf(latest);
+  if (from.year === to.year) {
+    const months = from.month === to.month ? from.month : `${from.month} to ${to.month}`;
+    return `in ${months}${yearWords(from.year, nowMs)}`;
+  }
+  return `in ${from.month}${yearWords(from.year, nowMs)} to ${to.month}${yearWords(to.year, nowMs)}`;
+}
+
+function monthOf(day: string): { year: number; month: string } {
+  const [year = 0, month = 1] = day.split('-').map(Number);
+  return { year, month: MONTHS[month - 1] ?? '' };
+}
+
+const yearWords = (year: number, nowMs: number): string =>
+  year === new Date(nowMs).getUTCFullYear() ? '' : ` ${year}`;
+
+function causePart(verdict: StandingVerdict, { substations }: StandingWordsContext): string {
+  const { composition, compositionBefore, likelyCause, causeTerminal } = verdict;
+  const likely =
+    likelyCause === 'not told'
+      ? 'which cause moves can’t be told'
+      : `likely ${causeName(likelyCause, causeTerminal, substations)}`;
+  if (compositionBefore === null) return likely;
+  const found = movedCauses(composition, compositionBefore, substations);
+  if (found === undefined) return likely;
+  const { moved, still } = found;
+  if (moved.length === 0) return `${likely}; no cause has moved beyond its interval in 90 days`;
+  return still.length === 0
+    ? `${listed(moved)} moved`
+    : `${listed(moved)} moved, ${listed(still)} did not`;
+}
+
+/**
+ * Which causes have moved beyond their 95 % intervals between two windows, and of charging whether it stayed.
+ * Undefined where one of them is not separable.
+ */
+export function movedCauses(
+  now: CompositionOnWire,
+  before: CompositionOnWire,
+  substations: LineSummary['substations'],
+): { moved: string[]; still: string[] } | undefined {
+  if (now.kind !== 'separated' || before.kind !== 'separated') return undefined;
+  const pairs: { name: string; one: EstimateOnWire; other: EstimateOnWire; always: boolean }[] = [];
+  if (now.chargingAmps !== null && before.chargingAmps !== null)
+    pairs.push({ name: 'charging', one: now.chargingAmps, other: before.chargingAmps, always: true });
+  for (const mismatch of now.mismatches) {
+    const earlier = before.mismatches.find(({ terminal }) => terminal === mismatch.terminal);
+    if (earlier === undefined) continue;
+    const name = (cause: Cause) => causeName(cause, mismatch.terminal, substations);
+    pairs.push(
+      { name: name('ratio mismatch'), one: mismatch.ratio, other: earlier.ratio, always: false },
+      { name: name('angle mismatch'), one: mismatch.angleDeg, other: earlier.angleDeg, always: false },
+    );
+  }
+  const isMoved = ({ one, other }: (typeof pairs)[number]) => one.low > other.high || one.high < other.low;
+  return {
+    moved: pairs.filter(isMoved).map(({ name }) => name),
+    still: pairs.filter((pair) => pair.always && !isMoved(pair)).map(({ name }) => name),
+  };
+}

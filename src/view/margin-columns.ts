@@ -1,0 +1,168 @@
+import type { MarginRow, MarginSort } from '../contract/standing';
+import { ampsText, dateText, NOT_COMPUTABLE, percentOfMarkText, percentText } from './figures';
+import type { CsvCell } from './line-csv';
+
+/** Columns of the fleet's list beside the line itself, in the order in which they stand. */
+export const MARGIN_COLUMNS = [
+  'share',
+  'level',
+  'expected',
+  'now',
+  'p95',
+  'emergency',
+  'charging',
+  'mismatch',
+  'rest',
+  'creep',
+  'forecast',
+] as const;
+export type MarginColumn = (typeof MARGIN_COLUMNS)[number];
+
+export interface MarginColumnFacts {
+  readonly head: string;
+  /** what the column says, in full */
+  readonly meaning: string;
+  readonly sort: MarginSort;
+  readonly unit: string;
+  /** the figure in the saved file: amperes, per cent, a day */
+  readonly saved: (row: MarginRow) => CsvCell;
+}
+
+const tenth = (value: number | null): CsvCell => (value === null ? null : Math.round(value * 10) / 10);
+const perCent = (ratio: number | null): CsvCell => (ratio === null ? null : Math.round(ratio * 1000) / 10);
+
+export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = {
+  share: {
+    head: 'share of pickup',
+    meaning: '24-hour standing level as a share of the recorded pickup',
+    sort: 'shareOfPickup',
+    unit: '%',
+    saved: (row) => perCent(row.shareOfPickup),
+  },
+  level: {
+    head: 'standing',
+    meaning: '24-hour standing level',
+    sort: 'levelAmps',
+    unit: 'A',
+    saved: (row) => tenth(row.levelAmps),
+  },
+  expected: {
+    head: 'expected',
+    meaning: 'What line constants, transformer classes and channel let expect',
+    sort: 'expectedAmps',
+    unit: 'A',
+    saved: (row) => tenth(row.expectedAmps),
+  },
+  now: {
+    head: 'utilisation now',
+    meaning: 'Differential over threshold at the present restraint',
+    sort: 'utilisation',
+    unit: '%',
+    saved: (row) => perCent(row.utilisation),
+  },
+  p95: {
+    head: '95 % of time',
+    meaning: 'Utilisation that is not passed for 95 % of the time',
+    sort: 'utilisationP95',
+    unit: '%',
+    saved: (row) => perCent(row.utilisationP95),
+  },
+  emergency: {
+    head: 'at emergency',
+    meaning: 'Utilisation at emergency rating, worst power factor, from the composition',
+    sort: 'emergencyUtilisation',
+    unit: '%',
+    saved: (row) => perCent(row.emergencyUtilisation),
+  },
+  charging: {
+    head: 'charging',
+    meaning: 'The part of the standing level that follows the voltage',
+    sort: 'chargingAmps',
+    unit: 'A',
+    saved: (row) => tenth(row.chargingAmps),
+  },
+  mismatch: {
+    head: 'mismatch',
+    meaning: 'The part that follows the load: ratio and angle mismatch together',
+    sort: 'mismatchAmps',
+    unit: 'A',
+    saved: (row) => tenth(row.mismatchAmps),
+  },
+  rest: {
+    head: 'rest',
+    meaning: 'The part that follows neither voltage nor load',
+    sort: 'restAmps',
+    unit: 'A',
+    saved: (row) => tenth(row.restAmps),
+  },
+  creep: {
+    head: 'a month',
+    meaning: 'Significant rise of the standing level a month',
+    sort: 'creepAmpsPerMonth',
+    unit: 'A',
+    saved: (row) =>
+      row.creepAmpsPerMonth === null ? null : Math.round(row.creepAmpsPerMonth * 100) / 100,
+  },
+  forecast: {
+    head: 'near mark',
+    meaning: 'Likely day on which the standing level reaches the near mark',
+    sort: 'nearLikely',
+    unit: 'day',
+    saved: (row) => row.near?.likely ?? null,
+  },
+};
+
+/** The columns of an address; all of them when it names none that there is. */
+export function marginColumnsOf(asked: string | null): readonly MarginColumn[] {
+  const named = (asked ?? '').split(',');
+  const chosen = MARGIN_COLUMNS.filter((column) => named.includes(column));
+  return chosen.length === 0 ? MARGIN_COLUMNS : chosen;
+}
+
+/** A dash on the screen where there is no figure: the row has many, and the head says what is missing. */
+const orDash = (text: string): string => (text === NOT_COMPUTABLE ? '–' : text);
+
+/** A row's figures as they stand in the list. */
+export function marginText(row: MarginRow, column: MarginColumn): string {
+  switch (column) {
+    case 'share':
+      return orDash(percentOfMarkText(row.shareOfPickup));
+    case 'level':
+      return orDash(ampsText(row.levelAmps));
+    case 'expected':
+      return orDash(ampsText(row.expectedAmps));
+    case 'now':
+      return orDash(percentOfMarkText(row.utilisation));
+    case 'p95':
+      return orDash(percentOfMarkText(row.utilisationP95));
+    case 'emergency':
+      return orDash(percentOfMarkText(row.emergencyUtilisation));
+    case 'charging':
+      return orDash(ampsText(row.chargingAmps));
+    case 'mismatch':
+      return orDash(ampsText(row.mismatchAmps));
+    case 'rest':
+      return orDash(ampsText(row.restAmps));
+    case 'creep':
+      return creepText(row);
+    case 'forecast':
+      return forecastText(row);
+  }
+}
+
+function creepText({ creepAmpsPerMonth }: MarginRow): string {
+  if (creepAmpsPerMonth === null) return '–';
+  return `${creepAmpsPerMonth >= 0 ? '+' : ''}${ampsText(creepAmpsPerMonth)}`;
+}
+
+/** "12 Feb 2027"; what rises and does not get there within five years says so. */
+function forecastText({ near, creepVerdict }: MarginRow): string {
+  if (near?.likely != null) return dateText(`${near.likely}T12:00:00Z`, 'UTC');
+  return creepVerdict === null ? '–' : 'beyond 5 years';
+}
+
+/** "of the pickup, near mark at 70 %": what a strip of one phase says to whoever does not see it. */
+export const shareWords = (row: MarginRow, nearRatio: number): string =>
+  row.shareOfPickup === null
+    ? 'The standing level or the pickup is not known.'
+    : `${percentOfMarkText(row.shareOfPickup)} of the pickup; near mark at ${percentText(nearRatio)}.`;

@@ -1,0 +1,113 @@
+import { describe, expect, it } from 'vitest';
+import { isComputable } from '../../src/protection/evaluation';
+import {
+  reviewLoadability,
+  reviewPickupWindow,
+  reviewSensitivity,
+  worstLoadability,
+} from '../../src/view/review-margins';
+import { reviewModel } from '../../src/view/review-model';
+import { reviewSnapshot } from '../../src/view/review-now';
+import { COMPARISON, reviewLine, terminalSaying, TWO_SLOPE } from './sample-review';
+
+const line = reviewLine();
+const susceptanceMs = (2 * Math.PI * 50 * 9 * 71) / 1e6;
+/** charging of the whole line leads the voltage by 90° and stands in terminal 1 alone here */
+const chargingAmps = (susceptanceMs * 110) / Math.sqrt(3);
+const LOADED = [terminalSaying('skelder', [400, 0]), terminalSaying('hask', [400, 180])];
+const input = { line, recorded: TWO_SLOPE, snapshot: reviewSnapshot(line, TWO_SLOPE, LOADED) };
+
+const model = (change: Parameters<typeof reviewModel>[2]) => {
+  const found = reviewModel(line, TWO_SLOPE, change);
+  if (!isComputable(found)) throw new Error(found.notComputable);
+  return found;
+};
+
+describe('what a prediction takes its mismatches from', () => {
+  it('a loaded line of two terminals with voltages gives them by its present snapshot', () => {
+    const found = model({ phase: 'a', snapshot: input.snapshot, basis: 'snapshot' });
+    expect(found.basis).toBe('snapshot');
+    // nothing is left over, though charging should be: the mismatch has to account for just that
+    const [[mismatch]] = found.model.mismatchSets as [[{ re: number; im: number }]];
+    expect(Math.hypot(mismatch.re, mismatch.im)).toBeCloseTo(chargingAmps / 400, 6);
+  });
+
+  it.each([
+    [
+      'without voltages',
+      LOADED.map((each) => ({ ...each, voltage: null })),
+      'no terminal gives a valid voltage',
+    ],
+    [
+      'under little load',
+      [terminalSaying('skelder', [60, 0]), terminalSaying('hask', [60, 180])],
+      'the line carries under 20 % of its rating now',
+    ],
+    ['without a snapshot', [], 'there is no snapshot with phasors of all ends now'],
+  ])('%s the class limits stand in, and it is said why', (_name, sent, why) => {
+    const found = model({ phase: 'a', snapshot: reviewSnapshot(line, TWO_SLOPE, sent), basis: 'snapshot' });
+    expect(found.basis).toBe('class limits');
+    expect(found.words).toContain(why);
+  });
+
+  it('a terminal without a class leaves no class limits, and is named', () => {
+    const unknown = reviewLine({ terminals: line.terminals.map((each) => ({ ...each, ctClass: '' })) });
+    const found = reviewModel(unknown, TWO_SLOPE, {
+      phase: 'a',
+      snapshot: input.snapshot,
+      basis: 'class limits',
+    });
+    expect(found).toMatchObject({ notComputable: expect.stringContaining('at Skelder and Hask') as string });
+  });
+
+  it('a line without a recorded capacitance has no prediction, and says so', () => {
+    const bare = reviewLine({ capacitanceNfPerKm: null });
+    const found = reviewLoadability({ ...input, line: bare }, { basis: 'class limits', lagDeg: 30 });
+    expect(found.a).toMatchObject({ notComputable: expect.stringContaining('capacitance') as string });
+    expect(worstLoadability(found)).toBeUndefined();
+  });
+});
+
+describe('the margins of a line', () => {
+  it('utilisation at emergency rating by class limits is that of the worst corner, the same for all phases', () => {
+    const found = reviewLoadability(input, { basis: 'class limits', lagDeg: 30 });
+    if (!isComputable(found.a) || !isComputable(found.c)) throw new Error('not computable');
+    expect(found.a.atEmergency).toEqual(found.c.atEmergency);
+    expect(found.a.atEmergency.differentialAmps).toBeGreaterThan(0.03 * 960);
+    expect(found.a.limitAmps).toBeUndefined();
+  });
+
+  it('with no load a fault beyond the pickup by what charging opposes is seen', () => {
+    const found = reviewSensitivity(input, 'all ends');
+    if (!isComputable(found.noLoad)) throw new Error(found.noLoad.notComputable);
+    expect(found.noLoad.faultAmps).toBeCloseTo(60 + chargingAmps, 1);
+    expect(found.noLoad.faultResistanceOhm).toBeCloseTo(110_000 / Math.sqrt(3) / (60 + chargingAmps), 0);
+  });
+
+  it('over the present load a line by magnitudes says why nothing can be told', () => {
+    const reported = reviewLine({ goesBy: 'reported' });
+    const snapshot = reviewSnapshot(reported, TWO_SLOPE, LOADED);
+    const found = reviewSensitivity({ line: reported, recorded: TWO_SLOPE, snapshot }, 'one end');
+    expect(isComputable(found.noLoad)).toBe(true);
+    expect(found.presentLoad.b).toMatchObject({
+      notComputable: expect.stringContaining('can’t be told from this feed') as string,
+    });
+  });
+
+  it('the pickup window goes from the owner’s multiple to the recorded least fault', () => {
+    expect(reviewPickupWindow(input, { multiple: 2.5, uncompensatedAmps: 20 })).toEqual({
+      lowerAmps: 50,
+      upperAmps: 620,
+      pickupLies: 'within',
+      pickupAmps: 60,
+    });
+  });
+
+  it('a phase comparison has no pickup, and says so', () => {
+    const found = reviewPickupWindow(
+      { line, recorded: COMPARISON },
+      { multiple: 2.5, uncompensatedAmps: 20 },
+    );
+    expect(found).toMatchObject({ notComputable: expect.stringContaining('release current') as string });
+  });
+});
