@@ -209,6 +209,36 @@ export async function readDailyLevels(
     .orderBy(asc(dayLevel.start));
 }
 
+export interface FleetCounts {
+  readonly phases: number;
+  readonly beyond: number;
+  readonly creeping: number;
+  readonly withinMargin: number;
+  readonly newest: Date | undefined;
+}
+
+/** How the fleet stands as a whole. */
+export async function readFleetCounts(store: Store, nearRatio: number): Promise<FleetCounts> {
+  const held = (condition: SQL) => sql<number>`coalesce(sum(${condition}), 0)`.mapWith(Number);
+  const [row] = await store.db
+    .select({
+      phases: count(),
+      beyond: held(sql`${standingVerdict.shareOfPickup} >= ${nearRatio}`),
+      creeping: held(sql`${standingVerdict.creepVerdict} = 'creep'`),
+      withinMargin: held(sql`${standingVerdict.creepVerdict} = 'within margin'`),
+      newest: sql<Date | null>`max(${standingVerdict.computedAt})`.mapWith(standingVerdict.computedAt),
+    })
+    .from(standingVerdict)
+    .innerJoin(line, eq(standingVerdict.lineId, line.id));
+  return {
+    phases: row?.phases ?? 0,
+    beyond: row?.beyond ?? 0,
+    creeping: row?.creeping ?? 0,
+    withinMargin: row?.withinMargin ?? 0,
+    newest: row?.newest ?? undefined,
+  };
+}
+
 export type LineEnds = ReadonlyMap<number, readonly { readonly key: string; readonly name: string }[]>;
 
 /** The substations at the ends of these lines, in the terminals' order, each once. */

@@ -24,6 +24,8 @@ export interface ComposedWindow {
 type ComposedLine = Pick<RegisterLine, 'goesBy' | 'terminals' | 'capacitanceNfPerKm' | 'lengthKm'>;
 
 const DEGREES = 180 / Math.PI;
+const NO_VOLTAGE =
+  'This feed carries no voltage, so charging can’t be told from the transformers’ mismatch. Voltages in the feed would tell.';
 
 /** A composition as it is published: terminals by their keys, angles in degrees, and against the line's register. */
 export function compositionOnWire(
@@ -48,6 +50,7 @@ export function compositionOnWire(
     conductanceMillisiemens: conductance,
     voltageKv,
   } = composition;
+  if (susceptance === undefined) return { kind: 'not separable', ...counted, reason: NO_VOLTAGE };
   const expected = lineSusceptanceMillisiemens(line, frequencyHz);
   return {
     kind: 'separated',

@@ -1,4 +1,4 @@
-import type { CompositionOnWire, EstimateOnWire, MismatchOnWire } from '../contract/composition';
+import type { CompositionOnWire, EstimateOnWire } from '../contract/composition';
 import type { LineSummary } from '../contract/lines';
 import type { Cause, StandingVerdict, StepOnWire } from '../contract/standing';
 import type { Creep, ForecastDatesOnWire } from '../contract/warning';
@@ -8,6 +8,9 @@ import { inUnit, unitSign } from './line-unit';
 import type { CurrentUnit } from './line-unit';
 import { listed, terminalName } from './line-words';
 import type { SiteCustom } from './site-custom';
+
+export type SeparatedOnWire = Extract<CompositionOnWire, { kind: 'separated' }>;
+export type MismatchOnWire = SeparatedOnWire['mismatches'][number];
 
 /** What the sentences about a standing level are written with. */
 export interface StandingWordsContext {

@@ -19,7 +19,11 @@ export const MARGIN_COLUMNS = [
 export type MarginColumn = (typeof MARGIN_COLUMNS)[number];
 
 export interface MarginColumnFacts {
+  /** the name in full, for the saved file, the choices and a narrow screen */
+  readonly name: string;
+  /** what stands at the column's head, under its group's name where it has one */
   readonly head: string;
+  readonly group?: 'utilisation' | 'composition';
   /** what the column says, in full */
   readonly meaning: string;
   readonly sort: MarginSort;
@@ -33,6 +37,7 @@ const perCent = (ratio: number | null): CsvCell => (ratio === null ? null : Math
 
 export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = {
   share: {
+    name: 'share of pickup',
     head: 'share of pickup',
     meaning: '24-hour standing level as a share of the recorded pickup',
     sort: 'shareOfPickup',
@@ -40,13 +45,15 @@ export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = 
     saved: (row) => perCent(row.shareOfPickup),
   },
   level: {
-    head: 'standing',
+    name: 'standing level',
+    head: 'measured',
     meaning: '24-hour standing level',
     sort: 'levelAmps',
     unit: 'A',
     saved: (row) => tenth(row.levelAmps),
   },
   expected: {
+    name: 'expected level',
     head: 'expected',
     meaning: 'What line constants, transformer classes and channel let expect',
     sort: 'expectedAmps',
@@ -54,48 +61,61 @@ export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = 
     saved: (row) => tenth(row.expectedAmps),
   },
   now: {
-    head: 'utilisation now',
+    name: 'utilisation now',
+    head: 'now',
+    group: 'utilisation',
     meaning: 'Differential over threshold at the present restraint',
     sort: 'utilisation',
     unit: '%',
     saved: (row) => perCent(row.utilisation),
   },
   p95: {
-    head: '95 % of time',
-    meaning: 'Utilisation that is not passed for 95 % of the time',
+    name: 'utilisation, 95th percentile',
+    head: '95th',
+    group: 'utilisation',
+    meaning: 'The 95th percentile of utilisation: passed for one twentieth of the time',
     sort: 'utilisationP95',
     unit: '%',
     saved: (row) => perCent(row.utilisationP95),
   },
   emergency: {
-    head: 'at emergency',
+    name: 'utilisation at emergency rating',
+    head: 'emergency',
+    group: 'utilisation',
     meaning: 'Utilisation at emergency rating, worst power factor, from the composition',
     sort: 'emergencyUtilisation',
     unit: '%',
     saved: (row) => perCent(row.emergencyUtilisation),
   },
   charging: {
+    name: 'charging',
     head: 'charging',
+    group: 'composition',
     meaning: 'The part of the standing level that follows the voltage',
     sort: 'chargingAmps',
     unit: 'A',
     saved: (row) => tenth(row.chargingAmps),
   },
   mismatch: {
+    name: 'mismatch',
     head: 'mismatch',
+    group: 'composition',
     meaning: 'The part that follows the load: ratio and angle mismatch together',
     sort: 'mismatchAmps',
     unit: 'A',
     saved: (row) => tenth(row.mismatchAmps),
   },
   rest: {
+    name: 'rest',
     head: 'rest',
+    group: 'composition',
     meaning: 'The part that follows neither voltage nor load',
     sort: 'restAmps',
     unit: 'A',
     saved: (row) => tenth(row.restAmps),
   },
   creep: {
+    name: 'change a month',
     head: 'a month',
     meaning: 'Significant rise of the standing level a month',
     sort: 'creepAmpsPerMonth',
@@ -104,6 +124,7 @@ export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = 
       row.creepAmpsPerMonth === null ? null : Math.round(row.creepAmpsPerMonth * 100) / 100,
   },
   forecast: {
+    name: 'near mark, likely',
     head: 'near mark',
     meaning: 'Likely day on which the standing level reaches the near mark',
     sort: 'nearLikely',
@@ -161,8 +182,8 @@ function forecastText({ near, creepVerdict }: MarginRow): string {
   return creepVerdict === null ? '–' : 'beyond 5 years';
 }
 
-/** "of the pickup, near mark at 70 %": what a strip of one phase says to whoever does not see it. */
-export const shareWords = (row: MarginRow, nearRatio: number): string =>
-  row.shareOfPickup === null
+/** What a strip of one phase says to whoever does not see it. */
+export const shareWords = (shareOfPickup: number | null, nearRatio: number): string =>
+  shareOfPickup === null
     ? 'The standing level or the pickup is not known.'
-    : `${percentOfMarkText(row.shareOfPickup)} of the pickup; near mark at ${percentText(nearRatio)}.`;
+    : `${percentOfMarkText(shareOfPickup)} of the pickup; near mark at ${percentText(nearRatio)}.`;

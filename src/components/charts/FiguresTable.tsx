@@ -44,7 +44,7 @@ export function FiguresTable({ table, timeZone }: Props) {
       </table>
       {table.rows.length > ROWS_MOST && (
         <p className="py-2 text-caption text-ink-2">
-          The newest {ROWS_MOST} of {table.rows.length} rows; Save as CSV has them all.
+          The first {ROWS_MOST} of {table.rows.length} rows; Save as CSV has them all.
         </p>
       )}
     </div>

@@ -1,0 +1,180 @@
+import type { CompositionOnWire } from '../contract/composition';
+import type { LineSummary } from '../contract/lines';
+import { causeAmps, leakageMatters } from './composition-polygon';
+import type { PolygonCause } from './composition-polygon';
+import { budgetWords, causeName, intervalText, tenthsText } from './composition-words';
+import type { MismatchOnWire, SeparatedOnWire } from './composition-words';
+import { DASH } from './line-figures';
+import { inUnit } from './line-unit';
+import type { CurrentUnit } from './line-unit';
+import { terminalName } from './line-words';
+
+/** A figure of one window, and its 95 % interval where it has one. */
+export interface CauseCell {
+  readonly figure: string;
+  readonly interval: string | undefined;
+}
+
+/** One line of a table of causes over two windows; undefined where a window can't tell. */
+export interface CauseRow {
+  readonly id: PolygonCause | 'differential';
+  readonly name: string;
+  readonly now: CauseCell | undefined;
+  readonly before: CauseCell | undefined;
+}
+
+export interface CauseContext {
+  readonly unit: CurrentUnit;
+  readonly ratingAmps: number;
+  readonly substations: LineSummary['substations'];
+}
+
+type Window = CompositionOnWire | null;
+
+/** The causes of a standing level and their sum, in two windows. Magnitudes: they add up as phasors, not as figures. */
+export function causeRows(now: Window, before: Window, context: CauseContext): CauseRow[] {
+  const causes: (PolygonCause | 'differential')[] = ['charging', 'leakage', 'ratio', 'angle', 'rest'];
+  const told = [now, before].filter(isSeparated);
+  const shown = causes.filter((cause) => cause !== 'leakage' || told.some(leaks));
+  return [...shown, 'differential' as const].map((id) => ({
+    id,
+    name: rowName(id, told, context),
+    now: causeCell(now, id, context),
+    before: causeCell(before, id, context),
+  }));
+}
+
+const isSeparated = (window: Window): window is SeparatedOnWire => window?.kind === 'separated';
+
+const leaks = ({ polygon, leakageAmps }: SeparatedOnWire): boolean =>
+  polygon !== null && leakageMatters(polygon, leakageAmps);
+
+function rowName(
+  id: CauseRow['id'],
+  told: readonly SeparatedOnWire[],
+  { substations }: CauseContext,
+): string {
+  // With several ends the polygon adds their mismatches up; each stands by itself further down.
+  const mismatches = told[0]?.mismatches ?? [];
+  const terminal = mismatches.length === 1 ? mismatches[0]!.terminal : null;
+  switch (id) {
+    case 'charging':
+      return 'charging';
+    case 'leakage':
+      return 'leakage or tapped load';
+    case 'ratio':
+      return causeName('ratio mismatch', terminal, substations);
+    case 'angle':
+      return causeName('angle mismatch', terminal, substations);
+    case 'rest':
+      return 'rest';
+    case 'differential':
+      return 'differential, their sum as phasors';
+  }
+}
+
+function causeCell(window: Window, id: CauseRow['id'], context: CauseContext): CauseCell | undefined {
+  if (!isSeparated(window) || window.polygon === null) return undefined;
+  if (id === 'charging' && window.chargingAmps === null)
+    return { figure: 'not told', interval: 'held in the mismatches: no voltage in the feed' };
+  const estimate =
+    id === 'charging' ? window.chargingAmps : id === 'leakage' ? window.leakageAmps : undefined;
+  return {
+    figure: tenthsText(causeAmps(window.polygon, id), context),
+    interval: estimate == null ? undefined : `${ampsInterval(estimate, context)}`,
+  };
+}
+
+function ampsInterval(
+  { value, low, high }: { value: number; low: number; high: number },
+  { unit, ratingAmps }: CauseContext,
+): string {
+  const shown = (amps: number) => inUnit(amps, unit, ratingAmps) ?? 0;
+  const limits = { value: shown(value), low: shown(low), high: shown(high) };
+  return intervalText(limits, unit === 'amperes' ? 1 : 4);
+}
+
+/** What was measured held against what the register leads one to expect. */
+export interface AgainstRow {
+  readonly name: string;
+  readonly now: string;
+  readonly before: string;
+  /** the whole interval now lies outside of what is expected */
+  readonly beyond: boolean;
+}
+
+/** Charging against the line's constants, each end's mismatch against the class budget, and its angle as channel asymmetry. */
+export function againstRows(now: Window, before: Window, context: CauseContext): AgainstRow[] {
+  const told = [now, before].filter(isSeparated);
+  const terminals = [...new Set(told.flatMap(({ mismatches }) => mismatches.map((each) => each.terminal)))];
+  const mismatchOf = (window: Window, terminal: string) =>
+    isSeparated(window) ? window.mismatches.find((each) => each.terminal === terminal) : undefined;
+  const row = (name: string, of: (mismatch: MismatchOnWire) => string, terminal: string) => {
+    const [one, other] = [mismatchOf(now, terminal), mismatchOf(before, terminal)];
+    return { name, now: one === undefined ? DASH : of(one), before: other === undefined ? DASH : of(other) };
+  };
+  return [
+    ...chargingRow(now, before, context),
+    ...terminals.flatMap((terminal) => {
+      const end = terminalName(terminal, context.substations);
+      const present = mismatchOf(now, terminal);
+      return [
+        { ...row(`ratio of ${end}`, ratioWords, terminal), beyond: present?.ratioBudget === 'beyond' },
+        { ...row(`angle of ${end}`, angleWords, terminal), beyond: present?.angleBudget === 'beyond' },
+        { ...row('that angle as channel asymmetry', asymmetryWords, terminal), beyond: false },
+      ];
+    }),
+  ];
+}
+
+const ratioWords = ({ ratio, ratioBudget }: MismatchOnWire): string => {
+  const percent = { value: 100 * ratio.value, low: 100 * ratio.low, high: 100 * ratio.high };
+  return `${signedText(percent.value, 2)}\u00a0% (${intervalText(percent, 2)}), ${budgetWords(ratioBudget)}`;
+};
+
+const angleWords = ({ angleDeg, angleBudget }: MismatchOnWire): string =>
+  `${signedText(angleDeg.value, 2)}° (${intervalText(angleDeg, 2)}), ${budgetWords(angleBudget)}`;
+
+const asymmetryWords = ({ asymmetryMs }: MismatchOnWire): string =>
+  `${signedText(asymmetryMs.value, 3)}\u00a0ms (${intervalText(asymmetryMs, 3)})`;
+
+const signedText = (value: number, digits: number): string => {
+  const text = value.toFixed(digits);
+  return Number(text) === 0 ? text.replace('-', '') : text.replace('-', '−');
+};
+
+function chargingRow(now: Window, before: Window, context: CauseContext): AgainstRow[] {
+  const words = (window: Window): string | undefined => {
+    if (!isSeparated(window) || window.chargingAmps === null) return undefined;
+    const measured = `${tenthsText(window.chargingAmps.value, context)} (${ampsInterval(window.chargingAmps, context)})`;
+    return window.expectedChargingAmps === null
+      ? `${measured}; a line constant is missing, so nothing is expected`
+      : `${measured}, expected ${tenthsText(window.expectedChargingAmps, context)}${offWords(window)}`;
+  };
+  const [one, other] = [words(now), words(before)];
+  if (one === undefined && other === undefined) return [];
+  return [{ name: 'charging', now: one ?? DASH, before: other ?? DASH, beyond: false }];
+}
+
+/** How far measured charging is from the expected one, said only where its interval leaves no doubt. */
+function offWords({ chargingAmps, expectedChargingAmps }: SeparatedOnWire): string {
+  if (chargingAmps === null || expectedChargingAmps === null || expectedChargingAmps <= 0) return '';
+  if (chargingAmps.low <= expectedChargingAmps && expectedChargingAmps <= chargingAmps.high) return '';
+  const percent = Math.round(100 * Math.abs(chargingAmps.value / expectedChargingAmps - 1));
+  if (percent === 0) return '';
+  return `: ${percent}\u00a0% ${chargingAmps.value > expectedChargingAmps ? 'more' : 'less'}`;
+}
+
+/** "30 days, 1,980 snapshots; residual 0.8 A rms; condition number 12" */
+export function qualityWords(window: CompositionOnWire, context: CauseContext): string {
+  const counted = countedWords(window);
+  if (window.kind !== 'separated') return counted;
+  const condition = window.condition < 99.5 ? window.condition.toFixed(1) : Math.round(window.condition);
+  return `${counted}; residual ${tenthsText(window.residualRmsAmps, context)} rms; condition number ${condition}`;
+}
+
+/** "30 days, 1,980 qualified snapshots" */
+export function countedWords({ days, snapshotCount }: CompositionOnWire): string {
+  const snapshots = snapshotCount.toLocaleString('en-GB');
+  return `${days} ${days === 1 ? 'day' : 'days'}, ${snapshots} qualified ${snapshotCount === 1 ? 'snapshot' : 'snapshots'}`;
+}

@@ -1,0 +1,55 @@
+import type { CompositionOnWire } from '../contract/composition';
+import type { StandingVerdict } from '../contract/standing';
+import { causeAmps, leakageMatters, POLYGON_CAUSES } from './composition-polygon';
+import type { PolygonCause } from './composition-polygon';
+import { countedWords } from './composition-rows';
+import { tenthsText } from './composition-words';
+import type { SeparatedOnWire } from './composition-words';
+import { dateText } from './figures';
+import { currentText } from './line-figures';
+import type { CurrentUnit } from './line-unit';
+
+interface AmpsContext {
+  readonly unit: CurrentUnit;
+  readonly ratingAmps: number;
+}
+
+/** "Why phase B stands at 38 A" */
+export function whyTitle(
+  verdict: StandingVerdict | undefined,
+  { letter, unit, ratingAmps }: AmpsContext & { letter: string },
+): string {
+  const levelAmps = verdict?.levelAmps ?? null;
+  if (levelAmps === null) return `Why phase ${letter} stands where it does`;
+  return `Why phase ${letter} stands at ${currentText(levelAmps, unit, ratingAmps)}`;
+}
+
+/** "At the typical load of 1 Nov to 1 Dec 2026: 30 days, 1,980 qualified snapshots; separable" */
+export function whyCaption(composition: CompositionOnWire, timeZone: string): string {
+  const noon = (day: string) => dateText(`${day}T12:00:00Z`, timeZone);
+  const window = `${noon(composition.from)} to ${noon(composition.to)}`;
+  const told = composition.kind === 'separated' ? 'separable' : 'not separable';
+  const load = composition.kind === 'separated' ? 'At the typical load of ' : '';
+  return `${load}${window}: ${countedWords(composition)}, ${told}`;
+}
+
+/** The words of the sides: "ratio 27.1 A". Leakage only where it matters. */
+export function polygonWords(
+  { polygon, leakageAmps }: SeparatedOnWire,
+  context: AmpsContext,
+): Partial<Record<PolygonCause | 'differential', string>> {
+  if (polygon === null) return {};
+  const shown = POLYGON_CAUSES.filter((cause) => cause !== 'leakage' || leakageMatters(polygon, leakageAmps));
+  return Object.fromEntries(
+    [...shown, 'differential' as const].map((cause) => [
+      cause,
+      `${cause} ${tenthsText(causeAmps(polygon, cause), context)}`,
+    ]),
+  );
+}
+
+/** The drawing in words, for whoever doesn't see it. */
+export function polygonSentence(composition: SeparatedOnWire, context: AmpsContext): string {
+  const { differential, ...causes } = polygonWords(composition, context);
+  return `Laid head to tail, ${Object.values(causes).join(', ')} lead to the ${differential ?? 'differential'}.`;
+}

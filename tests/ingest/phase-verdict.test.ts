@@ -1,0 +1,73 @@
+import { describe, expect, it } from 'vitest';
+import { phaseVerdict } from '../../src/ingest/phase-verdict';
+import { demoHistoryOf, demoRosterLine } from './demo-history';
+
+// midnight, so that the history holds whole days
+const NOW_MS = Date.UTC(2026, 2, 2);
+const plan = { nearRatio: 0.7, frequencyHz: 50 } as const;
+
+function verdictsOf(key: string) {
+  const line = demoRosterLine(key);
+  const history = demoHistoryOf(line, NOW_MS);
+  return (phase: 'a' | 'b' | 'c') => phaseVerdict(line, history, { phase, ...plan });
+}
+
+describe('the story of a slowly creeping ratio error', () => {
+  const of = verdictsOf('skelder-low-pell-2');
+
+  it('is told by phase, terminal and cause', () => {
+    const b = of('b');
+    expect(b.composition.kind).toBe('separated');
+    expect([b.likelyCause, b.causeTerminal]).toEqual(['ratio mismatch', 'low-pell']);
+    expect(b.creepAtReference?.creep).toMatchObject({ verdict: 'creep' });
+    expect(b.creepAtReference!.creep.slopeAmpsPerMonth).toBeGreaterThan(2.5);
+    expect(b.creepAtReference!.creep.slopeAmpsPerMonth).toBeLessThan(4.5);
+    expect(b.near?.likely).not.toBeNull();
+  });
+
+  it('has its mismatch beyond the class budget, while charging stays what the register expects', () => {
+    const { composition } = of('b');
+    if (composition.kind !== 'separated') throw new Error(composition.reason);
+    expect(composition.mismatches[0]).toMatchObject({ terminal: 'low-pell', ratioBudget: 'beyond' });
+    const charging = composition.chargingAmps!;
+    expect(Math.abs(charging.value - composition.expectedChargingAmps!)).toBeLessThan(1);
+  });
+
+  it('leaves the other phases alone', () => {
+    for (const phase of ['a', 'c'] as const) {
+      const verdict = of(phase);
+      expect(verdict.creepAtReference, phase).toBeNull();
+      if (verdict.composition.kind !== 'separated') throw new Error(verdict.composition.reason);
+      expect(verdict.composition.mismatches[0]?.ratioBudget, phase).toBe('within');
+    }
+  });
+});
+
+describe('a cable whose charging takes most of its pickup', () => {
+  it('is named as charging, as much as the register expects', () => {
+    const verdict = verdictsOf('hask-ostrel-cable')('a');
+    if (verdict.composition.kind !== 'separated') throw new Error(verdict.composition.reason);
+    const { chargingAmps, expectedChargingAmps } = verdict.composition;
+    expect(verdict.likelyCause).toBe('charging');
+    expect(Math.abs(chargingAmps!.value / expectedChargingAmps! - 1)).toBeLessThan(0.01);
+    expect(verdict.shareOfPickup).toBeGreaterThan(0.55);
+    expect(verdict.shareOfPickup).toBeLessThan(0.7);
+  });
+});
+
+describe('what can’t be told', () => {
+  it.each([
+    ['brindle-skelder', /magnitudes alone|No snapshot/],
+    ['fennick-ostrel', /no voltage/],
+    ['low-pell-skelder-hask', /always loaded alike/],
+    ['low-pell-quillby', /load hardly changes/],
+    ['hask-marrow-gate', /No snapshot of this window counts/],
+  ])('is said in words for %s, without a number', (key, reason) => {
+    const { composition, likelyCause, emergencyUtilisation } = verdictsOf(key)('a');
+    expect(composition).toMatchObject({
+      kind: 'not separable',
+      reason: expect.stringMatching(reason) as string,
+    });
+    expect([likelyCause, emergencyUtilisation]).toEqual(['not told', null]);
+  });
+});
