@@ -2,7 +2,7 @@ import { hashPassword } from '../src/auth/passwords';
 import type { Measurement } from '../src/contract/feed';
 import { computedSnapshot, type ComputedSnapshot } from '../src/ingest/computed-snapshot';
 import { roster, type RosterLine } from '../src/ingest/roster';
-import { rowsByWindow, summedBelow, windowRows } from '../src/ingest/window-rows';
+import { minuteRows, rowsByWindow, summedBelow, windowRows } from '../src/ingest/window-rows';
 import { RUNG_MS, rungRows, rungStart } from '../src/ingest/rung';
 import { snapshotRow } from '../src/ingest/snapshot-row';
 import { inTransaction, type Store } from '../src/store/client';
@@ -94,19 +94,32 @@ async function loadHistory(
       if (snapshot !== undefined) rows.push(snapshotRow(snapshot));
     }
     const ofDay: LevelRow[] = [];
+    const beforeDay = before;
     for (const hourRows of rowsByWindow('hour', rows)) {
-      ofDay.push(...windowRows(line, { rung: 'hour', rows: hourRows }, before));
+      ofDay.push(...hourRowsOf(line, hourRows, { before, isRaw: dayMs >= rawFromMs }));
       before = hourRows.at(-1);
     }
     hours.push(...ofDay);
     const day = { lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps };
     days.push(
-      ...rungRows(day, rows, undefined).map((row) => ({ ...row, sums: summedBelow(ofDay, row.phase) })),
+      ...rungRows(day, rows, beforeDay).map((row) => ({ ...row, sums: summedBelow(ofDay, row.phase) })),
     );
     if (dayMs >= rawFromMs) await writeRaw(store, rows);
   }
   await writeLevels(store, 'hour', hours);
   await writeLevels(store, 'day', days);
+}
+
+/** As the worker builds them, over their minutes, where raw rows are kept: so that a rebuild gives the same numbers. */
+function hourRowsOf(
+  line: RosterLine,
+  rows: readonly SnapshotRow[],
+  { before, isRaw }: { before: SnapshotRow | undefined; isRaw: boolean },
+): LevelRow[] {
+  const hour = windowRows(line, { rung: 'hour', rows }, before);
+  if (!isRaw) return hour;
+  const minutes = minuteRows(line, rows, before);
+  return hour.map((row) => ({ ...row, sums: summedBelow(minutes, row.phase) }));
 }
 
 /** The instants of one day that are loaded, up to the moment the site came up. */

@@ -46,6 +46,7 @@ const judgement = {
 };
 
 const databaseSchema = z.object(database);
+const rebuildSchema = z.object({ ...database, NOMINAL_FREQUENCY_HZ: judgement.NOMINAL_FREQUENCY_HZ });
 const ingestSchema = z
   .object({
     ...database,
@@ -109,6 +110,8 @@ function parse<T extends z.ZodType>(schema: T, environment: Environment): z.infe
 
 export const databaseSettings = (environment: Environment = process.env): DatabaseSettings =>
   parse(databaseSchema, environment);
+export const rebuildSettings = (environment: Environment = process.env): z.infer<typeof rebuildSchema> =>
+  parse(rebuildSchema, environment);
 export const ingestSettings = (environment: Environment = process.env): IngestSettings =>
   parse(ingestSchema, environment);
 export const webSettings = (environment: Environment = process.env): WebSettings =>

@@ -20,7 +20,8 @@ export const marginFilterSchema = z.object({
 export type MarginFilter = z.infer<typeof marginFilterSchema>;
 
 /** Figures are looked at from the largest down; names and dates from the first on. */
-export const isUsuallyDescending = (sort: MarginSort): boolean => sort !== 'lineName' && sort !== 'nearLikely';
+export const isUsuallyDescending = (sort: MarginSort): boolean =>
+  sort !== 'lineName' && sort !== 'nearLikely';
 
 /** The query of GET /api/margins; without `descending` each column goes its usual way. */
 export const marginQuerySchema = marginFilterSchema

@@ -38,20 +38,40 @@ const P_OF_ONE_LOOK = 2e-5;
  * verdict; with none, the longest does. A trend is never fitted across a known step.
  */
 export function watchedCreep(levels: readonly DailyLevel[], plan: CreepWatchPlan): WatchedCreep {
-  const { levels: sinceMark, markDay } = levelsSinceMark(levels, plan.markDays);
+  const { levels: since, markDay } = levelsSinceMark(levels, plan.markDays);
   const limits = { ...plan, pMost: plan.pMost ?? P_OF_ONE_LOOK };
-  const spans = spansOf(sinceMark, plan.spansDays ?? SPANS_DAYS);
-  const rising = spans
-    .filter((span) => mayRise(span, limits.pMost))
-    .map((span) => ({ span, verdict: creepVerdict(span, limits) }))
-    .filter(({ verdict }) => verdict.kind === 'creep' || verdict.kind === 'within margin');
-  const surest = rising.reduce<(typeof rising)[number] | undefined>(
-    (best, each) => (best === undefined || pOf(each.verdict) < pOf(best.verdict) ? each : best),
-    undefined,
-  );
-  const longest = spans[0] ?? sinceMark;
-  const { span, verdict } = surest ?? { span: longest, verdict: creepVerdict(longest, limits) };
-  return { verdict, fromDay: span[0]?.day, toDay: span.at(-1)?.day, markDay };
+  return surestRise(since, { ...limits, markDay }) ?? watched(since, { limits, markDay });
+}
+
+/**
+ * The rise of the levels that is surest over all spans, as `watchedCreep` has it; `undefined` for no significant
+ * one. Cheap where nothing rises, so that a fleet can be searched.
+ */
+export function surestRise(
+  levels: readonly DailyLevel[],
+  plan: Omit<CreepWatchPlan, 'markDays'> & { readonly markDay: number | undefined },
+): WatchedCreep | undefined {
+  const limits = { ...plan, pMost: plan.pMost ?? P_OF_ONE_LOOK };
+  let surest: WatchedCreep | undefined;
+  for (const span of spansOf(levels, plan.spansDays ?? SPANS_DAYS)) {
+    if (!mayRise(span, limits.pMost)) continue;
+    const found = watched(span, { limits, markDay: plan.markDay });
+    const isRise = found.verdict.kind === 'creep' || found.verdict.kind === 'within margin';
+    if (isRise && (surest === undefined || pOf(found.verdict) < pOf(surest.verdict))) surest = found;
+  }
+  return surest;
+}
+
+function watched(
+  span: readonly DailyLevel[],
+  { limits, markDay }: { limits: CreepLimits; markDay: number | undefined },
+): WatchedCreep {
+  return {
+    verdict: creepVerdict(span, limits),
+    fromDay: span[0]?.day,
+    toDay: span.at(-1)?.day,
+    markDay,
+  };
 }
 
 const pOf = (verdict: CreepVerdict): number => (verdict.kind === 'too few days' ? 1 : verdict.pTwoSided);

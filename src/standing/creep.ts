@@ -95,5 +95,5 @@ function cautiousP(series: readonly SeriesPoint[], slope: number): number {
   const rho = firstOrder(detrended(series, slope))?.rho ?? 0;
   const varianceS = plain.varianceS * varianceRatioOfAr1(rho, plain.count);
   const firstOrderP = mannKendallFrom({ ...plain, varianceS }).pTwoSided;
-  return Math.max(plain.pTwoSided, firstOrderP, hamedRao(series)?.pTwoSided ?? 0);
+  return Math.max(plain.pTwoSided, firstOrderP, hamedRao(series, slope)?.pTwoSided ?? 0);
 }

@@ -20,14 +20,17 @@ const ROUNDING = 1e-12;
 /**
  * Mann–Kendall test corrected for autocorrelation. K. H. Hamed and A. R. Rao, Journal of Hydrology 204, 1998,
  * 182–196: autocorrelation of the ranks of the Sen-detrended series, lags that are not significant left out.
- * Lags count points, so a gap in the times is taken as one step. `undefined` for fewer than three points, and
+ * Lags count points, so a gap in the times is taken as one step. A caller that knows the Sen slope of the series
+ * hands it over: it takes the longest. `undefined` for fewer than three points, and
  * where strong negative autocorrelation leaves no positive variance; throws as `senSlope` does.
  */
-export function hamedRao(series: readonly SeriesPoint[]): HamedRao | undefined {
+export function hamedRao(
+  series: readonly SeriesPoint[],
+  slope: number | undefined = senSlope(series)?.slope,
+): HamedRao | undefined {
   const plain = mannKendall(series.map((point) => point.value));
-  const line = senSlope(series);
-  if (plain === undefined || line === undefined || plain.count < 3) return undefined;
-  const ratio = varianceRatio(residualRanks(series, line.slope));
+  if (plain === undefined || slope === undefined || plain.count < 3) return undefined;
+  const ratio = varianceRatio(residualRanks(series, slope));
   if (ratio <= 0) return undefined;
   return { ...mannKendallFrom({ ...plain, varianceS: plain.varianceS * ratio }), varianceRatio: ratio };
 }
@@ -58,11 +61,12 @@ function varianceRatio(ranks: readonly number[]): number {
 function autocorrelations(values: readonly number[]): number[] {
   const mean = values.reduce((total, value) => total + value, 0) / values.length;
   const deviations = values.map((value) => value - mean);
-  const byLag: number[] = [];
-  deviations.forEach((earlier, index) => {
-    deviations.slice(index).forEach((later, lag) => {
-      byLag[lag] = (byLag[lag] ?? 0) + earlier * later;
-    });
+  const byLag = deviations.map((_, lag) => {
+    let covariance = 0;
+    for (let later = lag; later < deviations.length; later++) {
+      covariance += deviations[later - lag]! * deviations[later]!;
+    }
+    return covariance;
   });
   const variance = byLag[0] ?? 0;
   return variance > 0 ? byLag.map((covariance) => covariance / variance) : [];

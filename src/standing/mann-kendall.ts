@@ -1,4 +1,5 @@
 import { normalCdf } from './normal';
+import { ascending } from './quantile';
 
 /** A Mann–Kendall test of a series against having no trend; every figure is dimensionless. */
 export interface MannKendall {
@@ -46,10 +47,21 @@ export function tieCorrectedVariance(values: readonly number[]): number {
   return total / 18;
 }
 
+/** Σ sign(later − earlier) over all pairs, counted by ranks in a binary indexed tree: n·log n steps instead of n². */
 function risesLessFalls(values: readonly number[]): number {
+  const ranks = new Map<number, number>();
+  for (const value of ascending(values)) if (!ranks.has(value)) ranks.set(value, ranks.size + 1);
+  const tree = new Int32Array(ranks.size + 1);
+  const earlierUpTo = (rank: number): number => {
+    let count = 0;
+    for (let at = rank; at > 0; at -= at & -at) count += tree[at]!;
+    return count;
+  };
   let s = 0;
-  values.forEach((earlier, index) => {
-    for (const later of values.slice(index + 1)) s += Math.sign(later - earlier);
+  values.forEach((value, earlier) => {
+    const rank = ranks.get(value)!;
+    s += earlierUpTo(rank - 1) - (earlier - earlierUpTo(rank));
+    for (let at = rank; at < tree.length; at += at & -at) tree[at]! += 1;
   });
   return s;
 }

@@ -1,5 +1,5 @@
 /** The values in ascending order. Throws for a NaN, which has no place in an order. */
-export function ascending(values: readonly number[]): Float64Array {
+export function ascending(values: ArrayLike<number>): Float64Array {
   const sorted = Float64Array.from(values).sort();
   // A typed array sorts NaN to its end.
   if (Number.isNaN(sorted.at(-1))) throw new RangeError('A value that is not a number has no rank.');

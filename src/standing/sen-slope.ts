@@ -48,10 +48,17 @@ export function detrended(series: readonly SeriesPoint[], slope: number): number
   return series.map((point) => point.value - slope * point.time);
 }
 
-function pairSlopes(series: readonly SeriesPoint[]): number[] {
-  return series.flatMap((from, index) =>
-    series.slice(index + 1).map((to) => (to.value - from.value) / (to.time - from.time)),
-  );
+function pairSlopes(series: readonly SeriesPoint[]): Float64Array {
+  const n = series.length;
+  const slopes = new Float64Array((n * (n - 1)) / 2);
+  let at = 0;
+  series.forEach((from, index) => {
+    for (let later = index + 1; later < n; later++) {
+      const to = series[later]!;
+      slopes[at++] = (to.value - from.value) / (to.time - from.time);
+    }
+  });
+  return slopes;
 }
 
 /**

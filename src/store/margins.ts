@@ -1,4 +1,17 @@
-import { and, asc, count, eq, getTableColumns, gte, inArray, isNotNull, isNull, or, sql, type SQL } from 'drizzle-orm';
+import {
+  and,
+  asc,
+  count,
+  eq,
+  getTableColumns,
+  gte,
+  inArray,
+  isNotNull,
+  isNull,
+  or,
+  sql,
+  type SQL,
+} from 'drizzle-orm';
 import type { MarginFilter } from '../contract/margins';
 import type { MarginSort, StandingVerdict } from '../contract/standing';
 import type { PhaseName } from '../protection/phase';
@@ -176,8 +189,9 @@ export async function countForecastLines(
     store.db
       .select({
         found: sql<number>`count(distinct ${standingVerdict.lineId})`.mapWith(Number),
-        listed:
-          sql<number>`count(distinct case when ${listed} then ${standingVerdict.lineId} end)`.mapWith(Number),
+        listed: sql<number>`count(distinct case when ${listed} then ${standingVerdict.lineId} end)`.mapWith(
+          Number,
+        ),
       })
       .from(standingVerdict)
       .innerJoin(line, eq(standingVerdict.lineId, line.id)),

@@ -96,3 +96,14 @@ export async function readNewestInstants(
     .groupBy(snapshot.lineId);
   return new Map(rows.map((row) => [row.lineId, row.at]));
 }
+
+/** The oldest stored instant of a line, if there is one. */
+export async function readOldestInstant(store: Store, lineId: number): Promise<Date | undefined> {
+  const [row] = await store.db
+    .select({ at: snapshot.at })
+    .from(snapshot)
+    .where(eq(snapshot.lineId, lineId))
+    .orderBy(asc(snapshot.at))
+    .limit(1);
+  return row?.at;
+}

@@ -203,9 +203,7 @@ function causePart(verdict: StandingVerdict, { substations }: StandingWordsConte
   if (found === undefined) return likely;
   const { moved, still } = found;
   if (moved.length === 0) return `${likely}; no cause has moved beyond its interval in 90 days`;
-  return still.length === 0
-    ? `${listed(moved)} moved`
-    : `${listed(moved)} moved, ${listed(still)} did not`;
+  return still.length === 0 ? `${listed(moved)} moved` : `${listed(moved)} moved, ${listed(still)} did not`;
 }
 
 /**

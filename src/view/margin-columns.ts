@@ -120,8 +120,7 @@ export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = 
     meaning: 'Significant rise of the standing level a month',
     sort: 'creepAmpsPerMonth',
     unit: 'A',
-    saved: (row) =>
-      row.creepAmpsPerMonth === null ? null : Math.round(row.creepAmpsPerMonth * 100) / 100,
+    saved: (row) => (row.creepAmpsPerMonth === null ? null : Math.round(row.creepAmpsPerMonth * 100) / 100),
   },
   forecast: {
     name: 'near mark, likely',

@@ -9,7 +9,11 @@ const LAST = ['likely cause', 'computed at (UTC)'];
 
 export const marginCsvHead = (columns: readonly MarginColumn[]): string =>
   csvText(
-    [...OWN, ...columns.map((column) => `${MARGIN_COLUMN[column].name} (${MARGIN_COLUMN[column].unit})`), ...LAST],
+    [
+      ...OWN,
+      ...columns.map((column) => `${MARGIN_COLUMN[column].name} (${MARGIN_COLUMN[column].unit})`),
+      ...LAST,
+    ],
     [],
   );
 

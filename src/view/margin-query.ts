@@ -77,7 +77,14 @@ export function marginSearch(address: MarginAddress): string {
 }
 
 /** The same as the reading of a page takes it. */
-export const marginQueryOf = ({ text, substation, voltageKv, creep, sort, descending }: MarginAddress): MarginQuery => ({
+export const marginQueryOf = ({
+  text,
+  substation,
+  voltageKv,
+  creep,
+  sort,
+  descending,
+}: MarginAddress): MarginQuery => ({
   text: text.trim(),
   ...(substation === undefined ? {} : { substation }),
   ...(voltageKv === undefined ? {} : { voltage: voltageKv }),
@@ -94,5 +101,4 @@ export const sortedBy = (address: MarginAddress, sort: MarginSort): MarginAddres
   descending: address.sort === sort ? !address.descending : isUsuallyDescending(sort),
 });
 
-export const isFleetNarrowed = (address: MarginAddress): boolean =>
-  marginFilterParameters(address).size > 0;
+export const isFleetNarrowed = (address: MarginAddress): boolean => marginFilterParameters(address).size > 0;

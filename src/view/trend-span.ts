@@ -1,7 +1,7 @@
 import type { Rung } from '../contract/lines';
 
 /** How far back the standing trend looks. */
-export const TREND_SPANS = ['hour', 'day', 'week', 'two months'] as const;
+export const TREND_SPANS = ['hour', 'day', 'week', 'two months', 'two years'] as const;
 export type TrendSpan = (typeof TREND_SPANS)[number];
 
 /** What a span is drawn from: raw snapshots, or the rows of a rung. */
@@ -15,6 +15,7 @@ const SPANS: Record<TrendSpan, { lengthMs: number; source: TrendSource; address:
   day: { lengthMs: DAY_MS, source: 'hour', address: 'day' },
   week: { lengthMs: 7 * DAY_MS, source: 'hour', address: 'week' },
   'two months': { lengthMs: 61 * DAY_MS, source: 'day', address: 'months' },
+  'two years': { lengthMs: 731 * DAY_MS, source: 'day', address: 'years' },
 };
 
 export const spanLengthMs = (span: TrendSpan): number => SPANS[span].lengthMs;

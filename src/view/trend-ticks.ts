@@ -22,6 +22,9 @@ const STEPS = [
   7 * DAY_MINUTES,
   14 * DAY_MINUTES,
 ];
+/** Beyond days a reader counts in months. */
+const MONTH_STEPS = [1, 2, 3, 6, 12];
+const MONTH_MINUTES = 30.4 * DAY_MINUTES;
 
 interface WallTime {
   readonly year: number;
@@ -33,14 +36,15 @@ interface WallTime {
 
 /**
  * Ticks at round times of the site's day, at most `most` of them, the closest spacing that allows that. Days
- * begin at the site's midnight, also in the week in which the clocks change.
+ * begin at the site's midnight, also in the week in which the clocks change; months on their first day.
  */
 export function timeTicks(
   { fromMs, toMs }: { fromMs: number; toMs: number },
   { timeZone, most }: { timeZone: string; most: number },
 ): TimeTick[] {
   const minutes = (toMs - fromMs) / MINUTE_MS;
-  const step = STEPS.find((each) => minutes / each <= most) ?? STEPS[STEPS.length - 1]!;
+  const step = STEPS.find((each) => minutes / each <= most);
+  if (step === undefined) return monthTicks({ fromMs, toMs }, { timeZone, most });
   const instants =
     step < DAY_MINUTES
       ? hourTicks(fromMs, toMs, { step, timeZone })
@@ -78,6 +82,27 @@ function dayTicks(
     found.push(atMs);
   }
 }
+
+function monthTicks(
+  { fromMs, toMs }: { fromMs: number; toMs: number },
+  { timeZone, most }: { timeZone: string; most: number },
+): TimeTick[] {
+  const months = (toMs - fromMs) / MINUTE_MS / MONTH_MINUTES;
+  const step = MONTH_STEPS.find((each) => months / each <= most) ?? MONTH_STEPS[MONTH_STEPS.length - 1]!;
+  const first = wallTime(fromMs, timeZone);
+  const found: TimeTick[] = [];
+  for (let month = first.month; ; month += 1) {
+    const wall = { year: first.year + Math.floor((month - 1) / 12), month: ((month - 1) % 12) + 1 };
+    const atMs = instantOf({ ...wall, day: 1, hour: 0, minute: 0 }, timeZone);
+    if (atMs > toMs) return found;
+    if (atMs < fromMs || (wall.month - 1) % step !== 0) continue;
+    found.push({ atMs, label: monthLabel(wall, found.length === 0) });
+  }
+}
+
+/** The year where it begins, and on the first tick, which would hang in the air without it. */
+const monthLabel = ({ year, month }: { year: number; month: number }, isFirst: boolean): string =>
+  month === 1 || isFirst ? `${MONTHS[month - 1]} ${year}` : MONTHS[month - 1]!;
 
 function tickLabel(atMs: number, timeZone: string): string {
   const { day, month, hour, minute } = wallTime(atMs, timeZone);

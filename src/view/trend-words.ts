@@ -16,6 +16,7 @@ export function spanWords(span: TrendSpan, { several }: { several: boolean }): s
     case 'week':
       return `Hourly median${band}, qualified snapshots`;
     case 'two months':
+    case 'two years':
       return `Daily median${band}, qualified snapshots`;
   }
 }

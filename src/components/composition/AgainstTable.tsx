@@ -24,15 +24,13 @@ export function AgainstTable({ rows, heads }: Props) {
       <tbody className="max-sm:block">
         {rows.map((row) => (
           <tr key={row.name} className="max-sm:block max-sm:border-b max-sm:border-hairline max-sm:py-1.5">
-            <th scope="row" className="max-sm:block max-sm:border-0! max-sm:p-0!">
+            <th scope="row" className="max-sm:block max-sm:border-0 max-sm:p-0">
               {row.name}
             </th>
-            <td
-              className={`max-sm:block max-sm:border-0! max-sm:p-0! ${row.beyond ? 'font-semibold' : ''}`}
-            >
+            <td className={`max-sm:block max-sm:border-0 max-sm:p-0 ${row.beyond ? 'font-semibold' : ''}`}>
               {row.now}
             </td>
-            <td className="text-ink-2 max-sm:block max-sm:border-0! max-sm:p-0!">
+            <td className="text-ink-2 max-sm:block max-sm:border-0 max-sm:p-0">
               <span className="sm:hidden">{heads[1]}: </span>
               {row.before}
             </td>

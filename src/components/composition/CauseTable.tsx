@@ -29,7 +29,7 @@ export function CauseTable({ rows, heads, caption, ink, marked }: Props) {
       <tbody>
         {rows.map((row) => (
           <tr key={row.id} className={row.id === 'differential' ? 'font-medium' : ''}>
-            <th scope="row" className={row.id === marked ? `!${ink}` : '!text-ink'}>
+            <th scope="row" className="text-ink">
               <span className="flex items-center gap-2">
                 <StrokeOfCause cause={row.id} ink={row.id === marked ? ink : 'text-ink'} />
                 <span className={row.id === marked ? ink : ''}>{row.name}</span>

@@ -12,15 +12,7 @@ export function StrokeOfCause({ cause, ink }: { cause: PolygonCause | 'different
       aria-hidden="true"
       className={`inline-block shrink-0 ${ink}`}
     >
-      <line
-        x1="0"
-        y1="4"
-        x2="26"
-        y2="4"
-        stroke="currentColor"
-        strokeWidth={width}
-        strokeDasharray={dash}
-      />
+      <line x1="0" y1="4" x2="26" y2="4" stroke="currentColor" strokeWidth={width} strokeDasharray={dash} />
     </svg>
   );
 }

@@ -53,7 +53,13 @@ export function WhyPanel(props: Props) {
             {verdict !== undefined && whyCaption(verdict.composition, site.timeZone)}
           </p>
         </div>
-        <Choice legend="Phase explained" name="why-phase" value={phase} options={options} onChoose={onPhase} />
+        <Choice
+          legend="Phase explained"
+          name="why-phase"
+          value={phase}
+          options={options}
+          onChoose={onPhase}
+        />
       </div>
       <Why {...props} verdict={verdict} />
     </section>
@@ -85,8 +91,8 @@ function Magnitudes() {
   return (
     <p className="mt-3 max-w-[60ch] text-ink-2">
       This line goes by reported magnitudes: its feed holds only what one terminal computed for itself. What a
-      standing level consists of can’t be told from this feed; the currents of every terminal, as phasors, would
-      tell.
+      standing level consists of can’t be told from this feed; the currents of every terminal, as phasors,
+      would tell.
     </p>
   );
 }

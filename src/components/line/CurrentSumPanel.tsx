@@ -1,4 +1,3 @@
-import { useState } from 'react';
 import type { LineSummary } from '../../contract/lines';
 import type { Result } from '../../contract/result';
 import { CONDITION_INK } from '../../view/condition-words';
@@ -22,7 +21,8 @@ interface Props {
   readonly site: SiteCustom;
   readonly unit: CurrentUnit;
   readonly faded: boolean;
-  readonly initialPhase: PhaseName;
+  readonly phase: PhaseName;
+  readonly onPhase: (phase: PhaseName) => void;
   /** what was done to the measured currents before, in words */
   readonly broughtBy?: string | undefined;
 }
@@ -31,8 +31,7 @@ const BOX = { width: 300, height: 132, margin: 16 } as const;
 
 /** How the terminals' currents of one phase add up, laid head to tail, and what they leave over. */
 export function CurrentSumPanel(props: Props) {
-  const { line, site, initialPhase, broughtBy } = props;
-  const [phase, setPhase] = useState(initialPhase);
+  const { line, site, phase, onPhase, broughtBy } = props;
   const options = PHASES.map((each) => ({ value: each, label: site.phaseLetters[each] }));
   const byPhasors = line.goesBy === 'phasors';
   return (
@@ -48,10 +47,10 @@ export function CurrentSumPanel(props: Props) {
           </p>
         </div>
         {byPhasors && (
-          <Choice legend="Phase drawn" name="sum-phase" value={phase} options={options} onChoose={setPhase} />
+          <Choice legend="Phase drawn" name="sum-phase" value={phase} options={options} onChoose={onPhase} />
         )}
       </div>
-      {byPhasors ? <Sum {...props} phase={phase} /> : <NoPhasors />}
+      {byPhasors ? <Sum {...props} /> : <NoPhasors />}
     </section>
   );
 }
@@ -65,7 +64,7 @@ function NoPhasors() {
   );
 }
 
-function Sum({ line, inService, result, site, unit, faded, phase }: Props & { phase: PhaseName }) {
+function Sum({ line, inService, result, site, unit, faded, phase }: Props) {
   // Where no differential is computed, as with a broken clock, the plain sum is none either.
   const told = line.phases[phase].differentialAmps !== null;
   const sum = result === undefined || !told ? undefined : phasorSum(result.terminals, { phase, inService });

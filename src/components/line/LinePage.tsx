@@ -1,6 +1,8 @@
 import { QueryClient, QueryClientProvider, useQueryClient } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import type { LineDetail } from '../../contract/lines';
+import { causeSpanInAddress } from '../../view/composition-history';
+import type { CauseSpan } from '../../view/composition-history';
 import type { CurrentUnit } from '../../view/line-unit';
 import type { PhaseName } from '../../view/phase';
 import { TAIL_MS } from '../../view/plane-tail';
@@ -12,6 +14,8 @@ import type { TrendPhase } from '../../view/trend-phase';
 import { versionInForce } from '../../view/trend-pickup';
 import { spanInAddress } from '../../view/trend-span';
 import type { TrendSpan } from '../../view/trend-span';
+import { CauseHistory } from '../composition/CauseHistory';
+import { WhyPanel } from '../composition/WhyPanel';
 import { resultOnLineSide, useLiveSnapshot } from '../review/use-live-snapshot';
 import { CurrentSumPanel } from './CurrentSumPanel';
 import { LineHeader } from './LineHeader';
@@ -36,6 +40,7 @@ export interface LinePageProps {
   readonly address: {
     readonly unit: CurrentUnit;
     readonly span: TrendSpan;
+    readonly causes: CauseSpan;
     readonly phase: TrendPhase | undefined;
   };
 }
@@ -61,6 +66,8 @@ function LineView({ detail: initial, review, site, mayAcknowledge, address }: Li
   const [span, setSpan] = useAddressSwitch('span', address.span, spanKept);
   const [worst] = useState<PhaseName>(() => worstStandingPhase(initial.line, site.nearRatio));
   const [phase, setPhase] = useAddressSwitch<TrendPhase>('phase', address.phase ?? worst, phaseKept);
+  const [causes, setCauses] = useAddressSwitch('causes', address.causes, causeSpanInAddress);
+  const one = phase === 'all' ? worst : phase;
   const live = useLiveReadings(result);
   const recent = useRecentReadings(line.key, live, { nowMs, windowMs: TAIL_MS, enabled: true });
   const minuteMs = Math.floor(nowMs / 60_000) * 60_000;
@@ -80,35 +87,56 @@ function LineView({ detail: initial, review, site, mayAcknowledge, address }: Li
         onUnit={setUnit}
       />
       <div className="grid gap-4 lg:grid-cols-[minmax(0,0.87fr)_minmax(0,1fr)] lg:gap-x-6">
-        <OperatingPlane
-          {...shared}
-          inForce={inForce}
-          readings={recent.readings}
-          tailError={recent.error}
-          unit={unit}
-          live={snapshot}
-        />
         <div className="grid min-w-0 content-start gap-4">
-          <PhasesPanel {...shared} unit={unit} restraint={inForce?.restraint} />
+          <OperatingPlane
+            {...shared}
+            inForce={inForce}
+            readings={recent.readings}
+            tailError={recent.error}
+            unit={unit}
+            live={snapshot}
+          />
           <CurrentSumPanel
             {...shared}
             inService={inService}
             result={resultOnLineSide(result, snapshot)}
             unit={unit}
-            initialPhase={worst}
+            phase={one}
+            onPhase={setPhase}
             broughtBy={broughtBy(review, line.compensation)}
           />
+        </div>
+        <div className="grid min-w-0 content-start gap-4">
+          <WhyPanel
+            line={line}
+            standing={detail.standing}
+            site={site}
+            unit={unit}
+            phase={one}
+            onPhase={setPhase}
+          />
+          <PhasesPanel {...shared} unit={unit} restraint={inForce?.restraint} />
         </div>
       </div>
       <StandingTrend
         {...shared}
         settings={detail.settings}
+        standing={detail.standing}
         live={live}
         unit={unit}
         span={span}
         onSpan={setSpan}
         phase={phase}
         onPhase={setPhase}
+      />
+      <CauseHistory
+        line={line}
+        site={site}
+        nowMs={minuteMs}
+        unit={unit}
+        phase={one}
+        span={causes}
+        onSpan={setCauses}
       />
       <TerminalsPanel {...shared} terminals={detail.terminals} result={result} />
       <div className="grid gap-4 lg:grid-cols-2 lg:gap-x-6">

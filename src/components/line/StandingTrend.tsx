@@ -1,15 +1,21 @@
 import { useMemo } from 'react';
 import type { LineSummary } from '../../contract/lines';
 import type { SettingsVersion } from '../../contract/settings-version';
+import type { StandingVerdict } from '../../contract/standing';
+import type { Creep } from '../../contract/warning';
+import { stepSizeWords } from '../../view/composition-words';
 import { csvName } from '../../view/line-csv';
 import type { Reading } from '../../view/line-readings';
+import { uncounted, uncountedWords } from '../../view/line-disqualified';
 import type { CurrentUnit } from '../../view/line-unit';
 import { PHASES } from '../../view/phase';
+import type { PhaseName } from '../../view/phase';
 import { phaseCondition } from '../../view/phase-condition';
 import type { SiteCustom } from '../../view/site-custom';
+import { trendMarks } from '../../view/trend-marks';
 import type { TrendPhase } from '../../view/trend-phase';
 import { TREND_SPANS } from '../../view/trend-span';
-import type { TrendSpan } from '../../view/trend-span';
+import type { TrendSpan, TrendWindow } from '../../view/trend-span';
 import { trendTable } from '../../view/trend-table';
 import { creepWords, spanWords } from '../../view/trend-words';
 import { ChartPanel } from '../charts/ChartPanel';
@@ -17,14 +23,17 @@ import { ChartPlace } from '../charts/ChartPlace';
 import { Choice } from '../charts/Choice';
 import { FetchState } from '../charts/FetchState';
 import { useChartInk } from '../charts/use-chart-ink';
+import { TrendFindings } from './TrendFindings';
 import { useNarrow } from './use-narrow';
 import { useTrend } from './use-trend';
+import type { Trend } from './use-trend';
 import { useTrendOption } from './use-trend-option';
 import type { DrawnPhase } from './use-trend-option';
 
 interface Props {
   readonly line: LineSummary;
   readonly settings: readonly SettingsVersion[];
+  readonly standing: readonly StandingVerdict[];
   readonly live: readonly Reading[];
   readonly unit: CurrentUnit;
   readonly site: SiteCustom;
@@ -43,19 +52,22 @@ const SPANS = TREND_SPANS.map((span) => ({
 
 /** The standing differential over time, against the recorded pickup. */
 export function StandingTrend(props: Props) {
-  const { line, settings, live, unit, site, faded, nowMs, span, phase } = props;
+  const { line, settings, standing, live, unit, site, faded, nowMs, span, phase } = props;
   const trend = useTrend(line.key, span, { live, nowMs });
   const ink = useChartInk();
   const narrow = useNarrow();
   const drawn = useDrawnPhases(line, phase, site.nearRatio);
   const phases = drawn.map((each) => each.phase);
-  const daysShown = span === 'week' || span === 'two months';
+  const daysShown = span !== 'hour' && span !== 'day';
   const found = [...trend.creep, ...line.creep].find((each) => each.phase === phase);
+  const creep = daysShown ? found : undefined;
+  const verdicts = standing.filter((each) => phases.includes(each.phase));
   const option = useTrendOption({
     settings,
     trend,
     drawn,
-    creep: daysShown ? found : undefined,
+    creep,
+    marks: useMarks(props, trend.window, phase),
     unit,
     ratingAmps: line.ratingAmps,
     site,
@@ -63,19 +75,9 @@ export function StandingTrend(props: Props) {
     faded,
     narrow,
   });
-  const words = spanWords(span, { several: phase === 'all' });
-  const context = { unit, ratingAmps: line.ratingAmps, timeZone: site.timeZone };
-  const caption = found === undefined || !daysShown ? words : `${words}; ${creepWords(found, context)}`;
-  const title =
-    phase === 'all' ? 'Standing differential' : `Standing differential, phase ${site.phaseLetters[phase]}`;
+  const { caption, title, table } = toldTrend(props, { trend, phases, creep });
   const empty = phases.every((each) => trend.series[each].every((point) => point.medianAmps === null));
-  const table = trendTable(trend.series, {
-    source: trend.source,
-    phases,
-    letters: site.phaseLetters,
-    caption: title,
-    ...context,
-  });
+  const rung = trend.source === 'day' ? 'day' : 'hour';
   return (
     <ChartPanel
       title={title}
@@ -85,22 +87,72 @@ export function StandingTrend(props: Props) {
       fileName={csvName([line.key, 'standing', span], nowMs)}
       timeZone={site.timeZone}
     >
-      {trend.error !== null || trend.waiting || empty ? (
-        <div className={trend.waiting ? 'h-64 py-6' : 'py-6'}>
-          {trend.error === null && !trend.waiting ? (
-            <p className="text-ink-2">
-              No differential could be told in this time
-              {trend.source === 'snapshots' ? '' : ': no snapshot qualified'}.
-            </p>
-          ) : (
-            <FetchState what={`the last ${span}`} error={trend.error} onTryAgain={trend.tryAgain} />
-          )}
-        </div>
-      ) : (
-        <ChartPlace option={option} label={`${title}. ${caption}.`} className="h-64" />
-      )}
+      <div className="min-w-0">
+        {trend.error !== null || trend.waiting || empty ? (
+          <NothingDrawn trend={trend} span={span} />
+        ) : (
+          <ChartPlace option={option} label={`${title}. ${caption}.`} className="h-64" />
+        )}
+        <TrendFindings
+          verdicts={verdicts}
+          creep={creep}
+          context={{ unit, ratingAmps: line.ratingAmps, substations: line.substations, site, nowMs }}
+          missing={uncountedWords(uncounted(trend.levels, phases[0] ?? 'a', trend.window), rung)}
+        />
+      </div>
     </ChartPanel>
   );
+}
+
+/** The trend in words and figures. */
+function toldTrend(
+  { line, unit, site, span, phase }: Props,
+  { trend, phases, creep }: { trend: Trend; phases: readonly PhaseName[]; creep: Creep | undefined },
+) {
+  const words = spanWords(span, { several: phase === 'all' });
+  const context = { unit, ratingAmps: line.ratingAmps, timeZone: site.timeZone };
+  const caption = creep === undefined ? words : `${words}; ${creepWords(creep, context)}`;
+  const title =
+    phase === 'all' ? 'Standing differential' : `Standing differential, phase ${site.phaseLetters[phase]}`;
+  const table = trendTable(trend.series, {
+    source: trend.source,
+    phases,
+    letters: site.phaseLetters,
+    caption: title,
+    ...context,
+  });
+  return { caption, title, table };
+}
+
+function NothingDrawn({ trend, span }: { trend: Trend; span: TrendSpan }) {
+  return (
+    <div className={trend.waiting ? 'h-64 py-6' : 'py-6'}>
+      {trend.error === null && !trend.waiting ? (
+        <p className="text-ink-2">
+          No differential could be told in this time
+          {trend.source === 'snapshots' ? '' : ': no snapshot qualified'}.
+        </p>
+      ) : (
+        <FetchState what={`the last ${span}`} error={trend.error} onTryAgain={trend.tryAgain} />
+      )}
+    </div>
+  );
+}
+
+/** What is marked on the drawing; the same array while nothing of it changes. */
+function useMarks({ standing, settings, line, unit, site }: Props, window: TrendWindow, phase: TrendPhase) {
+  const { ratingAmps } = line;
+  const { phaseLetters } = site;
+  return useMemo(() => {
+    const steps = standing.flatMap(({ phase: of, step }) =>
+      step === null || (phase !== 'all' && phase !== of) ? [] : [{ letter: phaseLetters[of], step }],
+    );
+    const named = steps.map(({ letter, step }) => ({
+      step,
+      words: `${phase === 'all' ? `${letter}: ` : ''}step ${stepSizeWords(step, { unit, ratingAmps })}`,
+    }));
+    return trendMarks({ steps: named, settings }, window);
+  }, [standing, settings, unit, ratingAmps, phaseLetters, phase, window]);
 }
 
 /** The phases shown with their conditions; the same array while nothing of it changes. */

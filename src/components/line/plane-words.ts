@@ -20,13 +20,22 @@ export function planeWordsSeries(drawing: PlaneDrawing): CustomSeriesOption {
         name: mark.letter,
         ...at(mark.restraint, mark.differential),
       }));
-      return { type: 'group', children: [...letters(drawing, marks, at), ...sides(drawing, marks, at)] };
+      const taken = [...marks, ...pathWord(drawing, at)];
+      return { type: 'group', children: [...letters(drawing, marks, at), ...sides(drawing, taken, at)] };
     },
   };
 }
 
 type At = (restraint: number, differential: number) => { x: number; y: number };
 type Mark = { name: string; x: number; y: number };
+
+/** The word at the end of a predicted path takes room, too. */
+function pathWord({ path }: PlaneDrawing, at: At): Mark[] {
+  const end = path?.places.at(-1);
+  if (end === undefined) return [];
+  const { x, y } = at(end.restraint, end.differential);
+  return [-30, 0, 30].map((beside) => ({ name: '', x: x + beside, y: y - 10 }));
+}
 
 function letters({ ink, window, points }: PlaneDrawing, marks: readonly Mark[], at: At) {
   const topRight = at(window.restraintMax, window.differentialMax);

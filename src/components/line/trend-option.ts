@@ -1,5 +1,6 @@
 import type { EChartsCoreOption } from 'echarts/core';
 import type { PhaseName } from '../../protection/phase';
+import type { PlacedMark } from '../../view/trend-marks';
 import type { PickupStep } from '../../view/trend-pickup';
 import type { TrendPoint } from '../../view/trend-points';
 import type { SenPoint } from '../../view/trend-sen';
@@ -7,6 +8,7 @@ import type { TrendWindow } from '../../view/trend-span';
 import type { TimeTick } from '../../view/trend-ticks';
 import { axisBase, chartBase, tooltipBase, tooltipLines } from '../charts/chart-axes';
 import type { ChartInk } from '../charts/chart-ink';
+import { changeSeries, stripHeight } from './trend-changes';
 import { bandSeries, levelSeries, markSeries, senSeries } from './trend-series';
 import { trendWordsSeries } from './trend-words';
 
@@ -20,6 +22,8 @@ export interface TrendDrawing {
   readonly pickup: readonly PickupStep[];
   readonly nearRatio: number;
   readonly sen: readonly SenPoint[];
+  /** steps and changes of the settings, named in a strip above the plot */
+  readonly changes: readonly PlacedMark[];
   readonly levelName: string;
   /** a level as a figure with its unit */
   levelText(level: number): string;
@@ -45,7 +49,7 @@ export function trendOption(drawing: TrendDrawing): EChartsCoreOption {
     grid: {
       left: 8,
       right: 24,
-      top: 30,
+      top: 30 + stripHeight(drawing.changes),
       bottom: 6,
       outerBoundsMode: 'same',
       outerBoundsContain: 'axisLabel',
@@ -75,7 +79,7 @@ export function trendOption(drawing: TrendDrawing): EChartsCoreOption {
       max: drawing.levelMax,
       name: drawing.levelName,
       nameLocation: 'end',
-      nameGap: 12,
+      nameGap: 12 + stripHeight(drawing.changes),
       nameTextStyle: { ...axisBase(ink).nameTextStyle, align: 'left' },
       splitNumber: 4,
       axisLabel: { ...axisBase(ink).axisLabel, showMaxLabel: false },
@@ -86,6 +90,7 @@ export function trendOption(drawing: TrendDrawing): EChartsCoreOption {
       ...markSeries(drawing),
       ...senSeries(drawing),
       ...drawing.lines.map(levelSeries),
+      changeSeries(drawing),
       trendWordsSeries(drawing),
     ],
   };

@@ -7,6 +7,8 @@ import { unitWords } from '../../view/line-unit';
 import type { CurrentUnit } from '../../view/line-unit';
 import type { PhaseName } from '../../view/phase';
 import type { SiteCustom } from '../../view/site-custom';
+import { placedMarks } from '../../view/trend-marks';
+import type { TrendMark } from '../../view/trend-marks';
 import { pickupSteps } from '../../view/trend-pickup';
 import { senPoints } from '../../view/trend-sen';
 import { shownStretches, trendLevelMax } from '../../view/trend-shape';
@@ -31,6 +33,8 @@ export interface TrendInput {
   readonly drawn: readonly DrawnPhase[];
   /** the drift to draw; undefined where there is none or several phases are shown */
   readonly creep: Creep | undefined;
+  /** keeps its identity while it says the same */
+  readonly marks: readonly TrendMark[];
   readonly unit: CurrentUnit;
   readonly ratingAmps: number;
   readonly site: SiteCustom;
@@ -39,9 +43,13 @@ export interface TrendInput {
   readonly narrow: boolean;
 }
 
+/** The plot is at least this wide: words that keep apart here keep apart on any wider one. */
+const PLOT_PX = 560;
+const NARROW_PLOT_PX = 270;
+
 /** The trend's drawing; undefined until the theme's colours are known. */
 export function useTrendOption(input: TrendInput) {
-  const { settings, trend, drawn, creep, unit, ratingAmps, site, ink, faded, narrow } = input;
+  const { settings, trend, drawn, creep, marks, unit, ratingAmps, site, ink, faded, narrow } = input;
   const { window, series, source } = trend;
   return useMemo(() => {
     if (ink === undefined) return undefined;
@@ -70,11 +78,12 @@ export function useTrendOption(input: TrendInput) {
       pickup,
       nearRatio,
       sen,
+      changes: placedMarks(marks, window, narrow ? NARROW_PLOT_PX : PLOT_PX),
       levelName: `differential, ${unitWords(unit, ratingAmps)}`,
       levelText: (level) => currentText(level * unitAmps, unit, ratingAmps),
       tooltip: (atMs) => trendTooltip(told, atMs, { source, unit, ratingAmps, nowMs: window.toMs, timeZone }),
     });
-  }, [settings, window, series, source, drawn, creep, unit, ratingAmps, site, ink, faded, narrow]);
+  }, [settings, window, series, source, drawn, creep, marks, unit, ratingAmps, site, ink, faded, narrow]);
 }
 
 type LineLook = Pick<TrendDrawing['lines'][number], 'colour' | 'dash'>;

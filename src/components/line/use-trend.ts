@@ -19,6 +19,8 @@ export interface Trend {
   readonly source: TrendSource;
   readonly window: TrendWindow;
   readonly series: PerPhase<readonly TrendPoint[]>;
+  /** the rows it is made of; none for snapshots */
+  readonly levels: readonly Level[];
   readonly creep: readonly Creep[];
   readonly waiting: boolean;
   readonly error: Error | null;
@@ -53,6 +55,7 @@ export function useTrend(
     source,
     window,
     series,
+    levels: rows,
     creep: levels.data?.creep ?? NO_CREEP,
     waiting: raw ? recent.waiting : levels.isPending,
     error: raw ? recent.error : levels.error,

@@ -31,7 +31,14 @@ export function scatterOption(drawing: Drawing): EChartsCoreOption {
   const name = { ...CHART_TYPE, color: ink.ink2 };
   return {
     ...chartBase(ink),
-    grid: { left: 8, right: 16, top: 30, bottom: 26, outerBoundsMode: 'same', outerBoundsContain: 'axisLabel' },
+    grid: {
+      left: 8,
+      right: 16,
+      top: 30,
+      bottom: 26,
+      outerBoundsMode: 'same',
+      outerBoundsContain: 'axisLabel',
+    },
     tooltip: { ...tooltipBase(ink), trigger: 'item' },
     xAxis: {
       ...axis,

@@ -17,13 +17,10 @@ export function useMarginAddress(initialSearch: string): MarginAddressState {
     window.addEventListener('popstate', follow);
     return () => window.removeEventListener('popstate', follow);
   }, []);
-  const change = useCallback(
-    (next: MarginAddress, write: 'pushState' | 'replaceState') => {
-      setAddress(next);
-      window.history[write](null, '', `${window.location.pathname}${marginSearch(next)}`);
-    },
-    [],
-  );
+  const change = useCallback((next: MarginAddress, write: 'pushState' | 'replaceState') => {
+    setAddress(next);
+    window.history[write](null, '', `${window.location.pathname}${marginSearch(next)}`);
+  }, []);
   const choose = useCallback(
     (part: Partial<MarginAddress>) => change({ ...address, ...part }, 'pushState'),
     [address, change],

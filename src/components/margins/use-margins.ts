@@ -60,7 +60,8 @@ export function useScatter(address: MarginAddress): {
   const asked = marginFilterParameters(address).toString();
   const { data, error, refetch } = useQuery({
     queryKey: ['margin-scatter', asked],
-    queryFn: ({ signal }) => apiRequest(`/api/margins/scatter?${asked}`, { answer: marginScatterSchema, signal }),
+    queryFn: ({ signal }) =>
+      apiRequest(`/api/margins/scatter?${asked}`, { answer: marginScatterSchema, signal }),
     placeholderData: keepPreviousData,
     staleTime: FRESH_MS,
     retry: false,

@@ -25,9 +25,11 @@ export function ExpectedStrip({ levels, letters }: Props) {
       ))}
       <div className="mt-0.5 ml-7 flex justify-between text-caption text-ink-2">
         <span>0</span>
-        <span>band: least to worst expected; hairline: causes independent</span>
         <span>{ampsText(mostAmps)}</span>
       </div>
+      <p className="ml-7 text-caption text-ink-2">
+        Band: least to worst expected; hairline: causes as independent; mark: measured
+      </p>
     </div>
   );
 }

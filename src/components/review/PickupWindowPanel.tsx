@@ -21,11 +21,12 @@ interface Props {
   readonly window: (PickupWindow & { readonly pickupAmps: number }) | NotComputable;
   readonly multiple: string;
   readonly onMultiple: (multiple: string) => void;
+  readonly mayRegister: boolean;
 }
 
 /** Between which bounds a pickup makes sense here, and where the recorded one lies. */
 export function PickupWindowPanel(props: Props) {
-  const { line, site, nowMs, convention, window, multiple, onMultiple } = props;
+  const { line, site, nowMs, convention, window, multiple, onMultiple, mayRegister } = props;
   return (
     <ChartPanel
       title="Pickup window"
@@ -43,9 +44,13 @@ export function PickupWindowPanel(props: Props) {
             <p className="mt-1 text-pretty">
               The upper bound is not recorded: enter the least internal fault current of the owner’s
               short-circuit study, in amperes primary, with the line in the{' '}
-              <a className="link" href={`/register/${line.key}`}>
-                register
-              </a>
+              {mayRegister ? (
+                <a className="link" href={`/register/${line.key}`}>
+                  register
+                </a>
+              ) : (
+                'register'
+              )}
               .
             </p>
           )}
@@ -109,14 +114,14 @@ function Strip({ window }: { window: PickupWindow & { readonly pickupAmps: numbe
         )}
         <span className="absolute -inset-y-1 w-[3px] bg-ink" style={{ left: percent(pickup) }} />
       </div>
-      <div className="relative mt-1.5 flex justify-between text-caption text-ink-2">
+      <div className="mt-1.5 flex justify-between text-caption text-ink-2">
         <span>0</span>
-        <span>
-          heavy line: recorded pickup {ampsText(window.pickupAmps)}; band: {ampsText(window.lowerAmps)}
-          {window.upperAmps === undefined ? ' and up' : ` to ${ampsText(window.upperAmps)}`}
-        </span>
         <span>{ampsText(mostAmps)}</span>
       </div>
+      <p className="text-caption text-ink-2">
+        Heavy line: recorded pickup {ampsText(window.pickupAmps)}; band: {ampsText(window.lowerAmps)}
+        {window.upperAmps === undefined ? ' and up' : ` to ${ampsText(window.upperAmps)}`}
+      </p>
     </div>
   );
 }

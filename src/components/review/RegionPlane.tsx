@@ -107,6 +107,8 @@ const outline = (places: readonly DiscPlace[], at: At): string =>
 /** The predicted way: dashed, a lone prediction as a dot, a ring where the emergency rating is. */
 function Path({ pieces, at }: { pieces: readonly (readonly DiscPlace[])[]; at: At }) {
   const end = pieces.at(-1)?.at(-1);
+  const alone = pieces[0]?.length === 1 ? pieces[0][0] : undefined;
+  const start = alone && at(alone);
   return (
     <g fill="none" stroke="var(--accent)" strokeWidth={1.5}>
       {pieces.map((piece, index) =>
@@ -119,6 +121,11 @@ function Path({ pieces, at }: { pieces: readonly (readonly DiscPlace[])[]; at: A
             strokeDasharray="5 4"
           />
         ),
+      )}
+      {start !== undefined && (
+        <text x={start.x} y={start.y + 16} textAnchor="middle" {...WORD} fill="var(--accent)">
+          no load
+        </text>
       )}
       {end !== undefined && <circle cx={at(end).x} cy={at(end).y} r={4} fill="var(--panel)" />}
     </g>

@@ -31,6 +31,8 @@ export interface ReviewPageProps {
   readonly detail: LineDetail;
   readonly review: ReviewLine;
   readonly site: SiteCustom;
+  /** whether this person may open the register */
+  readonly mayRegister: boolean;
   /** the switches as the address had them */
   readonly address: {
     readonly period: ReviewPeriod;
@@ -54,7 +56,7 @@ const basisKept = (basis: MismatchBasis) => (basis === 'class limits' ? 'class' 
 const lagKept = (lag: LagChoice) => (lag === '30' ? undefined : lag);
 const multipleKept = (multiple: string) => (multiple === '2.5' ? undefined : multiple);
 
-function ReviewView({ detail: initial, review, site, address }: ReviewPageProps) {
+function ReviewView({ detail: initial, review, site, mayRegister, address }: ReviewPageProps) {
   const { detail, line, result, nowMs, faded } = useLine(initial);
   const [period, setPeriod] = usePeriod(address.period);
   const [basis, setBasis] = useAddressSwitch('mismatch', address.basis, basisKept);
@@ -108,6 +110,7 @@ function ReviewView({ detail: initial, review, site, address }: ReviewPageProps)
             )}
             multiple={multiple}
             onMultiple={setMultiple}
+            mayRegister={mayRegister}
           />
         </div>
         <div className="grid min-w-0 content-start gap-4">

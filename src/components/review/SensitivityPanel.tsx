@@ -88,7 +88,7 @@ function loadRows(found: ReviewFigures['seen'][number]['figures']['presentLoad']
 function Row({ names, found }: { names: readonly [string, string]; found: Found }) {
   return (
     <tr>
-      <td>{names[0]}</td>
+      <td className="whitespace-nowrap">{names[0]}</td>
       <td>{names[1]}</td>
       {isComputable(found) ? (
         <>

@@ -3,7 +3,7 @@ import { fittedCoefficients } from '../../../src/standing/composition-fit';
 import { totalOf } from '../../../src/standing/composition-sums';
 import type { CompositionSums } from '../../../src/standing/composition-sums';
 import type { DailyLevel } from '../../../src/standing/creep';
-import { watchedCreep } from '../../../src/standing/creep-watch';
+import { surestRise } from '../../../src/standing/creep-watch';
 import { levelAtPointAmps, typicalPoint } from '../../../src/standing/operating-point';
 import { levelsAtReferenceLoad } from '../../../src/standing/reference-level';
 import { daySumsOf } from './line-sums';
@@ -34,13 +34,13 @@ function firstCreepDay(
 ): number | undefined {
   for (let count = fromDay; count <= levels.length; count += everyDays) {
     const history = levels.slice(Math.max(0, count - HISTORY_DAYS_MOST), count);
-    const { verdict } = watchedCreep(history, {
+    const rise = surestRise(history, {
       pickupAmps,
       nearRatio: NEAR_RATIO,
       horizonDays: HORIZON_DAYS,
-      markDays: [],
+      markDay: undefined,
     });
-    if (verdict.kind === 'creep') return count - 1;
+    if (rise?.verdict.kind === 'creep') return count - 1;
   }
   return undefined;
 }
