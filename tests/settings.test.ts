@@ -34,7 +34,10 @@ describe('the worker’s settings', () => {
       WORKER_INDEX: 0,
       WORKER_COUNT: 1,
       LATENESS_MS: 2_000,
+      NOMINAL_FREQUENCY_HZ: 50,
       RAW_DAYS: 14,
+      MINUTE_DAYS: 90,
+      HOUR_DAYS: 3_650,
       CLOCK_LIMIT_US: 100,
       MQTT_VERSION: '4',
     });

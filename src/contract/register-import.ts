@@ -30,3 +30,15 @@ export const importReportSchema = z.object({
   problems: z.array(rowProblemSchema),
 });
 export type ImportReport = z.infer<typeof importReportSchema>;
+
+/** One file that was written into the register: by whom, and what of it was new, changed, or already so. */
+export interface ImportBatch {
+  readonly id: number;
+  readonly importedAt: Date;
+  readonly importedBy: string;
+  readonly kind: ImportKind;
+  readonly fileName: string;
+  readonly addedCount: number;
+  readonly changedCount: number;
+  readonly leftCount: number;
+}

@@ -162,19 +162,28 @@ export function subtractSums(whole: CompositionSums, part: CompositionSums): Com
 }
 
 function combined(a: CompositionSums, b: CompositionSums, sign: 1 | -1): CompositionSums {
-  if (a.values[AT.terminals] !== b.values[AT.terminals] || a.values[AT.voltage] !== b.values[AT.voltage]) {
-    throw new RangeError('Sums of lines with different regressors do not add.');
-  }
+  assertSameShape(a.values, b.values);
   const values = a.values.slice();
   for (let at = AT.count; at < values.length; at++) values[at]! += sign * b.values[at]!;
   return { values };
+}
+
+function assertSameShape(a: Float64Array, b: Float64Array): void {
+  if (a[AT.terminals] !== b[AT.terminals] || a[AT.voltage] !== b[AT.voltage]) {
+    throw new RangeError('Sums of lines with different regressors do not add.');
+  }
 }
 
 /** The sum over all rows; `undefined` for none. Throws for rows of different shapes. */
 export function totalOf(rows: readonly CompositionSums[]): CompositionSums | undefined {
   const [first, ...others] = rows;
   if (first === undefined) return undefined;
-  return others.reduce(addSums, first);
+  const values = first.values.slice();
+  for (const { values: row } of others) {
+    assertSameShape(values, row);
+    for (let at = AT.count; at < values.length; at++) values[at]! += row[at]!;
+  }
+  return { values };
 }
 
 /** The sums as plain numbers, in the order that `CompositionSums` gives. */

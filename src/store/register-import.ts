@@ -1,5 +1,11 @@
 import { desc, eq } from 'drizzle-orm';
-import type { ImportKind, ImportReport, ImportRow, RowProblem } from '../contract/register-import';
+import type {
+  ImportBatch,
+  ImportKind,
+  ImportReport,
+  ImportRow,
+  RowProblem,
+} from '../contract/register-import';
 import type { LinePatch, NewLine, NewSettingsVersion, NewTerminal } from '../contract/register';
 import { insertAuditEntry } from './audit';
 import type { Store } from './client';
@@ -38,7 +44,6 @@ export interface PlannedImport {
 }
 
 export type Plan = (register: readonly RegisteredLine[]) => PlannedImport;
-export type ImportBatch = typeof importBatch.$inferSelect;
 
 /** What a file would do; nothing is written. */
 export async function dryImport(store: Store, plan: Plan): Promise<ImportReport> {

@@ -25,8 +25,8 @@ export interface PolygonPicture {
 
 const START: Phasor = { re: 0, im: 0 };
 /** Room for labels beside what is drawn. */
-const MARGIN = 26;
-const SIDE_ROOM = 44;
+const MARGIN = 24;
+const SIDE_ROOM = 22;
 /** A side shorter than this is not named: its figure stands in the table. */
 const NAMED_PX = 3;
 /** Leakage under this share of the differential, or not told from nothing, is drawn and not named. */

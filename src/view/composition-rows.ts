@@ -69,14 +69,14 @@ function rowName(
     case 'rest':
       return 'rest';
     case 'differential':
-      return 'differential, their sum as phasors';
+      return 'differential';
   }
 }
 
 function causeCell(window: Window, id: CauseRow['id'], context: CauseContext): CauseCell | undefined {
   if (!isSeparated(window) || window.polygon === null) return undefined;
   if (id === 'charging' && window.chargingAmps === null)
-    return { figure: 'not told', interval: 'held in the mismatches: no voltage in the feed' };
+    return { figure: 'not told', interval: 'no voltage' };
   const estimate =
     id === 'charging' ? window.chargingAmps : id === 'leakage' ? window.leakageAmps : undefined;
   return {

@@ -1,5 +1,5 @@
 import type { CompositionOnWire } from '../contract/composition';
-import type { StandingVerdict } from '../contract/standing';
+import type { StandingVerdict, StepOnWire } from '../contract/standing';
 import { causeAmps, leakageMatters, POLYGON_CAUSES } from './composition-polygon';
 import type { PolygonCause } from './composition-polygon';
 import { countedWords } from './composition-rows';
@@ -31,6 +31,16 @@ export function whyCaption(composition: CompositionOnWire, timeZone: string): st
   const told = composition.kind === 'separated' ? 'separable' : 'not separable';
   const load = composition.kind === 'separated' ? 'At the typical load of ' : '';
   return `${load}${window}: ${countedWords(composition)}, ${told}`;
+}
+
+/** A window that reaches across a step mixes what was before with what came after, and has to say so. */
+export function stepInWindowWords(
+  composition: CompositionOnWire,
+  step: StepOnWire | null,
+  timeZone: string,
+): string | undefined {
+  if (step === null || step.at < composition.from || step.at.slice(0, 10) >= composition.to) return undefined;
+  return `This window reaches across the step of ${dateText(step.at, timeZone)}: what was before it and what came after are mixed here. Compare before and after keeps them apart.`;
 }
 
 /** The words of the sides: "ratio 27.1 A". Leakage only where it matters. */

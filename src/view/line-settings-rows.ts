@@ -1,5 +1,6 @@
 import type { CharacteristicOnWire, SettingsVersion } from '../contract/settings-version';
 import { restraintConvention } from '../protection/restraint';
+import { comparedDay } from './line-comparison';
 import { ampsText, dateText, percentText, timeText } from './figures';
 import { versionInForce } from './trend-pickup';
 
@@ -8,6 +9,8 @@ export interface SettingsRow {
   readonly id: number;
   readonly state: 'in force' | 'past' | 'not yet';
   readonly validFrom: string;
+  /** the site's day from which it was valid, as an address wants it */
+  readonly day: string;
   readonly values: readonly { readonly name: string; readonly value: string }[];
   readonly recorded: string;
   readonly note: string;
@@ -25,6 +28,7 @@ export function settingsRows(
       id: version.id,
       state: stateOf(version, inForce, nowMs),
       validFrom: `${dateText(version.validFrom, timeZone)}, ${timeText(version.validFrom, timeZone).slice(0, 5)}`,
+      day: comparedDay(version.validFrom, timeZone),
       values: values(version),
       recorded: `${version.recordedBy}, ${dateText(version.recordedAt, timeZone)}`,
       note: version.note,

@@ -177,7 +177,7 @@ function creepText({ creepAmpsPerMonth }: MarginRow): string {
 
 /** "12 Feb 2027"; what rises and does not get there within five years says so. */
 function forecastText({ near, creepVerdict }: MarginRow): string {
-  if (near?.likely != null) return dateText(`${near.likely}T12:00:00Z`, 'UTC');
+  if (near !== null && near.likely !== null) return dateText(`${near.likely}T12:00:00Z`, 'UTC');
   return creepVerdict === null ? '–' : 'beyond 5 years';
 }
 

@@ -4,6 +4,7 @@ import { isStale } from './staleness';
 
 /** A phase's utilisation now, as a ratio; null when nothing fresh has been heard or it cannot be computed. */
 export function liveUtilisation(result: Result | undefined, phase: PhaseName, nowMs: number): number | null {
-  if (result?.at == null || isStale(Date.parse(result.at), nowMs)) return null;
+  if (result === undefined || result.at === null) return null;
+  if (isStale(Date.parse(result.at), nowMs)) return null;
   return result.phases[phase].utilisation;
 }

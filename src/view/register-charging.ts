@@ -1,6 +1,10 @@
 import type { RegisterLine } from '../contract/register';
+import type { SettingsVersion } from '../contract/settings-version';
+import { pickupAmps } from '../protection/characteristic';
 import { chargingAmps, chargingMva, susceptanceMicrosiemensPerKm } from '../protection/charging';
 import { ampsText, kilometresText, kilovoltsText } from './figures';
+
+type RecordedSettings = Pick<SettingsVersion, 'characteristic'>;
 
 /** The expected charging current, worked through with the line's own figures. */
 export interface ChargingExample {
@@ -16,7 +20,7 @@ export interface ChargingExample {
 /** Undefined when the capacitance is not known: nothing can be expected then. */
 export function chargingExample(
   line: Pick<RegisterLine, 'capacitanceNfPerKm' | 'lengthKm' | 'voltageKv'>,
-  { pickupAmps, frequencyHz }: { pickupAmps: number | undefined; frequencyHz: number },
+  { inForce, frequencyHz }: { inForce: RecordedSettings | undefined; frequencyHz: number },
 ): ChargingExample | undefined {
   if (line.capacitanceNfPerKm === null) return undefined;
   const susceptance = susceptanceMicrosiemensPerKm(line.capacitanceNfPerKm, frequencyHz);
@@ -25,6 +29,7 @@ export function chargingExample(
     lengthKm: line.lengthKm,
     voltageKv: line.voltageKv,
   };
+  const pickup = inForce && pickupAmps(inForce.characteristic);
   const totalAmps = chargingAmps(charged);
   const figures = [
     `2π · ${frequencyHz} Hz`,
@@ -38,6 +43,6 @@ export function chargingExample(
     total: ampsText(totalAmps),
     perEnd: ampsText(totalAmps / 2),
     power: `${chargingMva(charged).toPrecision(3)} Mvar`,
-    ofPickup: pickupAmps === undefined ? undefined : totalAmps / pickupAmps,
+    ofPickup: pickup === undefined ? undefined : totalAmps / pickup,
   };
 }

@@ -34,7 +34,7 @@ export const MAY_IMPORT = {
   view: ['warnings', 'store', ...PURE],
   warnings: ['store', ...PURE],
   auth: ['store', 'contract', 'settings'],
-  store: ['contract', 'protection', 'settings'],
+  store: [...PURE, 'settings'],
   // What crosses a process is said without knowing who says it; what is pure knows nothing at all.
   contract: [],
   standing: [],

@@ -78,7 +78,17 @@ describe('the list of lines', () => {
 });
 
 describe('the expected charging current', () => {
-  const place = { pickupAmps: 120, frequencyHz: 50 };
+  const inForce = {
+    characteristic: {
+      kind: 'two-slope',
+      pickupAmps: 120,
+      slope1: 0.3,
+      kneeAmps: 900,
+      slope2: 0.6,
+      slopeStart: 'from-zero',
+    },
+  } as const;
+  const place = { inForce, frequencyHz: 50 };
 
   it('is worked through with the line’s figures', () => {
     // 2π · 50 Hz · 8.9 nF/km · 42.5 km · 220 kV/√3 = 15.09 A

@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useMemo } from 'react';
 import type { LineComposition } from '../../contract/composition';
 import type { LineSummary } from '../../contract/lines';
+import type { StandingVerdict } from '../../contract/standing';
 import {
   CAUSE_SPANS,
   causeTable,
@@ -10,6 +11,7 @@ import {
   stackedDays,
 } from '../../view/composition-history';
 import type { CauseSpan, StackedCause, StackedDay } from '../../view/composition-history';
+import { stepInWindowWords } from '../../view/composition-why';
 import { countedWords } from '../../view/composition-rows';
 import { tenthsText } from '../../view/composition-words';
 import { dateText } from '../../view/figures';
@@ -31,6 +33,7 @@ import { historyOption } from './history-option';
 
 interface Props {
   readonly line: LineSummary;
+  readonly standing: readonly StandingVerdict[];
   readonly site: SiteCustom;
   readonly unit: CurrentUnit;
   readonly phase: PhaseName;
@@ -55,7 +58,7 @@ const CAUSE_NAMES: Readonly<Record<StackedCause, string>> = {
 
 /** The causes of one phase's standing level day by day, stacked. */
 export function CauseHistory(props: Props) {
-  const { line, site, unit, phase, nowMs, span, onSpan } = props;
+  const { line, standing, site, unit, phase, nowMs, span, onSpan } = props;
   const today = Math.floor(nowMs / DAY_MS);
   const window = useMemo(() => causeWindow(span, today * DAY_MS), [span, today]);
   const byPhasors = line.goesBy === 'phasors';
@@ -68,6 +71,8 @@ export function CauseHistory(props: Props) {
   });
   const history = query.data?.history ?? NO_HISTORY;
   const composition = query.data?.phases[phase];
+  const step = standing.find((each) => each.phase === phase)?.step ?? null;
+  const mixed = composition && stepInWindowWords(composition, step, site.timeZone);
   const title = `The causes by day, phase ${site.phaseLetters[phase]}`;
   const table = causeTable(history, phase, {
     caption: title,
@@ -109,7 +114,10 @@ export function CauseHistory(props: Props) {
           <strong className="font-semibold">Not separable in this window.</strong> {composition.reason}
         </p>
       ) : (
-        <Stack {...props} window={window} history={history} label={`${title}. ${caption}.`} />
+        <>
+          {mixed !== undefined && <p className="mb-2 max-w-[110ch] text-pretty">{mixed}</p>}
+          <Stack {...props} window={window} history={history} label={`${title}. ${caption}.`} />
+        </>
       )}
     </ChartPanel>
   );

@@ -49,9 +49,7 @@ function Cell({ cell, ink }: { cell: CauseCell | undefined; ink: string }) {
   return (
     <td className={`figure ${ink}`} title={cell.interval && `95 %: ${cell.interval}`}>
       {cell.figure}
-      {cell.interval !== undefined && (
-        <span className="block text-caption whitespace-normal text-ink-2">{cell.interval}</span>
-      )}
+      {cell.interval !== undefined && <span className="block text-caption text-ink-2">{cell.interval}</span>}
     </td>
   );
 }

@@ -5,7 +5,13 @@ import { CONDITION_INK } from '../../view/condition-words';
 import { polygonFit, polygonPicture } from '../../view/composition-polygon';
 import type { PolygonCause } from '../../view/composition-polygon';
 import { againstRows, causeRows, countedWords, qualityWords } from '../../view/composition-rows';
-import { polygonWords, polygonSentence, whyCaption, whyTitle } from '../../view/composition-why';
+import {
+  polygonWords,
+  polygonSentence,
+  stepInWindowWords,
+  whyCaption,
+  whyTitle,
+} from '../../view/composition-why';
 import type { SeparatedOnWire } from '../../view/composition-words';
 import type { CurrentUnit } from '../../view/line-unit';
 import { PHASES } from '../../view/phase';
@@ -106,9 +112,11 @@ function Told({ line, site, unit, phase, verdict, composition }: ToldProps) {
   const coloured = condition === 'over' || condition === 'near' || condition === 'rising';
   const ink = coloured ? CONDITION_INK[condition] : 'text-ink';
   const marked = SIDES[verdict.likelyCause];
+  const mixed = stepInWindowWords(composition, verdict.step, site.timeZone);
   return (
     <>
-      <div className="mt-2 grid items-center gap-x-6 gap-y-3 sm:grid-cols-[minmax(0,1fr)_minmax(0,1.1fr)]">
+      {mixed !== undefined && <p className="mt-2 max-w-[80ch] text-pretty">{mixed}</p>}
+      <div className="mt-2 grid items-center gap-x-6 gap-y-3 sm:grid-cols-[minmax(0,0.85fr)_minmax(0,1fr)]">
         <Polygon {...{ composition, phase, ink, marked }} context={context} />
         <CauseTable
           rows={causeRows(composition, before, context)}

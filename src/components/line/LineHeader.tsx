@@ -64,6 +64,9 @@ export function LineHeader(props: Props) {
         <a className="link" href={`/lines/${line.key}/review`}>
           Review
         </a>
+        <a className="link" href={`/lines/${line.key}/compare`}>
+          Compare before and after
+        </a>
         {line.goesBy === 'phasors' && inForce !== undefined && (
           <a className="link" href={`/lines/${line.key}/replay`}>
             What would other settings have done?

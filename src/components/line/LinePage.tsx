@@ -131,6 +131,7 @@ function LineView({ detail: initial, review, site, mayAcknowledge, address }: Li
       />
       <CauseHistory
         line={line}
+        standing={detail.standing}
         site={site}
         nowMs={minuteMs}
         unit={unit}
@@ -140,7 +141,7 @@ function LineView({ detail: initial, review, site, mayAcknowledge, address }: Li
       />
       <TerminalsPanel {...shared} terminals={detail.terminals} result={result} />
       <div className="grid gap-4 lg:grid-cols-2 lg:gap-x-6">
-        <SettingsPanel settings={detail.settings} nowMs={minuteMs} timeZone={site.timeZone} />
+        <SettingsPanel line={line.key} settings={detail.settings} nowMs={minuteMs} timeZone={site.timeZone} />
         <WarningsPanel {...shared} warnings={warnings} />
       </div>
     </div>

@@ -3,13 +3,15 @@ import { settingsRows } from '../../view/line-settings-rows';
 import type { SettingsRow } from '../../view/line-settings-rows';
 
 interface Props {
+  /** the line's key */
+  readonly line: string;
   readonly settings: readonly SettingsVersion[];
   readonly nowMs: number;
   readonly timeZone: string;
 }
 
 /** The versions of the recorded settings: copies to compare with, never sent to a device. */
-export function SettingsPanel({ settings, nowMs, timeZone }: Props) {
+export function SettingsPanel({ line, settings, nowMs, timeZone }: Props) {
   const rows = settingsRows(settings, { nowMs, timeZone });
   return (
     <section className="panel min-w-0 p-4 sm:p-[1.125rem]" aria-labelledby="settings-title">
@@ -26,7 +28,7 @@ export function SettingsPanel({ settings, nowMs, timeZone }: Props) {
       ) : (
         <ol className="m-0 mt-2 list-none p-0">
           {rows.map((row) => (
-            <Version key={row.id} row={row} />
+            <Version key={row.id} row={row} line={line} />
           ))}
         </ol>
       )}
@@ -40,7 +42,7 @@ const STATES: Readonly<Record<SettingsRow['state'], string>> = {
   'not yet': 'not yet in force',
 };
 
-function Version({ row }: { row: SettingsRow }) {
+function Version({ row, line }: { row: SettingsRow; line: string }) {
   const inForce = row.state === 'in force';
   return (
     <li
@@ -61,6 +63,15 @@ function Version({ row }: { row: SettingsRow }) {
       <p className="mt-1 text-pretty">
         {row.note} <span className="whitespace-nowrap text-ink-2">({row.recorded})</span>
       </p>
+      {row.state !== 'not yet' && (
+        <a
+          className="link text-caption"
+          href={`/lines/${line}/compare?at=${row.day}`}
+          aria-label={`Compare before and after ${row.validFrom}`}
+        >
+          Compare before and after
+        </a>
+      )}
     </li>
   );
 }

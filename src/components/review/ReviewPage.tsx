@@ -62,7 +62,7 @@ function ReviewView({ detail: initial, review, site, mayRegister, address }: Rev
   const [basis, setBasis] = useAddressSwitch('mismatch', address.basis, basisKept);
   const [lag, setLag] = useAddressSwitch('angle', address.lag, lagKept);
   const [multiple, setMultiple] = useAddressSwitch('multiple', String(address.multiple), multipleKept);
-  const [worst] = useState<PhaseName>(() => worstStandingPhase(initial.line, site.nearRatio));
+  const [summed, setSummed] = useState<PhaseName>(() => worstStandingPhase(initial.line, site.nearRatio));
   const minuteMs = Math.floor(nowMs / 60_000) * 60_000;
   const inForce = useMemo(() => versionInForce(detail.settings, minuteMs), [detail.settings, minuteMs]);
   const cloud = useCloud(line.key, period, nowMs);
@@ -119,7 +119,8 @@ function ReviewView({ detail: initial, review, site, mayRegister, address }: Rev
             inService={terminalsInService(review)}
             result={onLineSide}
             unit="amperes"
-            initialPhase={worst}
+            phase={summed}
+            onPhase={setSummed}
             broughtBy={broughtBy(review, line.compensation)}
           />
           <LoadPanel

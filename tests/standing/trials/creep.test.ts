@@ -8,7 +8,7 @@ import { levelAtPointAmps, typicalPoint } from '../../../src/standing/operating-
 import { levelsAtReferenceLoad } from '../../../src/standing/reference-level';
 import { daySumsOf } from './line-sums';
 import { measuredHours, uniform } from './seeded-line';
-import type { LineTruth } from './seeded-line';
+import type { LineTruth, Pair } from './seeded-line';
 
 const NEAR_RATIO = 0.7;
 const HORIZON_DAYS = 365;
@@ -64,6 +64,19 @@ function settledTruth(seed: number): LineTruth {
   };
 }
 
+/** The change of e that raises the differential at mean load by 1 A: along D, whichever way D points. */
+function mismatchPerAmp({ loadShare, ratingAmps, mismatch: e, ...truth }: LineTruth): Pair {
+  const amps = 0.95 * loadShare * ratingAmps;
+  const charging = truth.susceptanceMillisiemens * truth.voltageKv;
+  const second = { re: -amps * Math.cos(0.2), im: charging + amps * Math.sin(0.2) };
+  const d = { re: e.re * second.re - e.im * second.im, im: charging + e.re * second.im + e.im * second.re };
+  const size = Math.hypot(d.re, d.im) * (second.re ** 2 + second.im ** 2);
+  return {
+    re: (d.re * second.re + d.im * second.im) / size,
+    im: (d.im * second.re - d.re * second.im) / size,
+  };
+}
+
 describe('creep', () => {
   test('is raised wrongly on at most 1 in 200 settled line-phases over two years, at reference load', () => {
     const LINES = 200;
@@ -87,20 +100,24 @@ describe('creep', () => {
       const between = (low: number, high: number) => low + (high - low) * random();
       const onsetDay = Math.round(between(LEARNING_DAYS, 300));
       const loadShare = between(0.3, 0.55);
-      const truth: LineTruth = {
+      const settled: LineTruth = {
         seed: seed + 5000,
         ratingAmps: 400,
         voltageKv: 110 / Math.sqrt(3),
         susceptanceMillisiemens: between(0.02, 0.06),
-        mismatch: { re: between(0.005, 0.015), im: between(-0.01, 0.01) },
+        mismatch: { re: between(-0.015, 0.015), im: between(-0.01, 0.01) },
         loadShare,
         seasonShare: between(0, 0.3),
         growthShareAYear: between(0, 0.1),
         noiseShare: between(0.0003, 0.0012),
-        mismatchChange: (hour) => ({
-          re: Math.max(0, hour / 24 - onsetDay) / (365.25 / 12) / (loadShare * 400 * 0.93),
-          im: 0,
-        }),
+      };
+      const perAmp = mismatchPerAmp(settled);
+      const truth: LineTruth = {
+        ...settled,
+        mismatchChange: (hour) => {
+          const amps = Math.max(0, hour / 24 - onsetDay) / (365.25 / 12);
+          return { re: perAmp.re * amps, im: perAmp.im * amps };
+        },
       };
       const days = daySumsOf(measuredHours(truth, (onsetDay + 61) * 24));
       const { levels, levelAmps } = referenceLevels(days);

@@ -1,0 +1,57 @@
+import type { ForecastLine, ForecastList } from '../../contract/forecast-list';
+import { groupedBy } from '../../store/grouped';
+import { readFollowUps } from '../../store/follow-ups';
+import {
+  countForecastLines,
+  readDailyLevels,
+  readForecastKeys,
+  readLineEnds,
+  readMargins,
+} from '../../store/margins';
+import type { Site } from '../site';
+
+const DAY_MS = 86_400_000;
+const HISTORY_DAYS = 60;
+/** More phases than this are no work list any more, and their histories would make the page heavy. */
+const PHASES_MOST = 600;
+
+/** Lines that rise or stand beyond the near mark, most urgent first, with what is kept to be done about them. */
+export async function readForecastList({ store, settings, now }: Site): Promise<ForecastList> {
+  const nowMs = now();
+  const { NEAR_RATIO } = settings;
+  const [keys, counts, followUps] = await Promise.all([
+    readForecastKeys(store, NEAR_RATIO, PHASES_MOST),
+    countForecastLines(store, NEAR_RATIO),
+    readFollowUps(store, { state: 'open' }),
+  ]);
+  const lineIds = [...new Set(keys.map(({ lineId }) => lineId))];
+  const [margins, ends, days] = await Promise.all([
+    readMargins(store, keys),
+    readLineEnds(store, lineIds),
+    readDailyLevels(store, lineIds, new Date(nowMs - HISTORY_DAYS * DAY_MS)),
+  ]);
+  const daysOf = groupedBy(days, ({ lineId, phase }) => `${lineId} ${phase}`);
+  const lines = [...groupedBy(margins, ({ lineId }) => lineId)].map(
+    ([lineId, own]): ForecastLine => ({
+      key: own[0]!.key,
+      name: own[0]!.lineName,
+      voltageKv: own[0]!.voltageKv,
+      substations: ends.get(lineId) ?? [],
+      phases: own.map(({ phase, verdict }) => ({
+        verdict,
+        dailyLevels: (daysOf.get(`${lineId} ${phase}`) ?? []).map(({ start, medianAmps }) => ({
+          day: start.toISOString().slice(0, 10),
+          levelAmps: medianAmps,
+        })),
+      })),
+    }),
+  );
+  return {
+    at: new Date(nowMs).toISOString(),
+    lines,
+    steadyCount: counts.found - counts.listed,
+    unknownCount: counts.unknown,
+    leftOutCount: counts.listed - lines.length,
+    followUps,
+  };
+}

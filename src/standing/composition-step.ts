@@ -1,0 +1,152 @@
+import type { Complex } from './complex';
+import { fittedCoefficients, residualProducts, residualSquares, shrunkCoefficients } from './composition-fit';
+import { normalProduct, regressorCount, shapeOf, snapshotCount, totalOf } from './composition-sums';
+import type { CompositionSums } from './composition-sums';
+import { stepVerdict } from './step';
+import type { HourlyValue, Step, StepPlan } from './step';
+
+/** The sums of one hour, hours counted from the epoch. */
+export interface HourSums {
+  readonly hour: number;
+  readonly sums: CompositionSums;
+}
+
+/** One term of the composition as an explanation of a step. */
+export interface MovedTerm {
+  readonly term: 'charging' | 'leakage' | 'ratio' | 'angle';
+  /** Place of the terminal whose mismatch it is, from 0; `undefined` for charging and leakage. */
+  readonly terminal: number | undefined;
+  /** Change were it this term alone: siemens/1000 for charging and leakage, per unit for ratio, radians for angle. */
+  readonly change: number;
+  /** Share of what the composition before leaves over of the hours after, that this change takes away; 0 to 1. */
+  readonly explains: number;
+}
+
+/** A step of the composition. */
+export interface CompositionStep extends Step {
+  /** The term in which it was seen first and the unit of `size` and `spread`; for the cause see `terms`. */
+  readonly seenIn: 'charging' | 'ratio' | 'angle';
+  /** Explanations, the best first. */
+  readonly terms: readonly MovedTerm[];
+  /** The best one, where it leaves clearly less over than the next; `undefined` where two do as well. */
+  readonly moved: MovedTerm | undefined;
+  /** The angle moved when the channel took another path. */
+  readonly pointsToChannel: boolean;
+}
+
+export type CompositionStepVerdict =
+  | { readonly kind: 'too few hours'; readonly hours: number; readonly hoursNeeded: number }
+  | { readonly kind: 'no step' }
+  | CompositionStep;
+
+export interface CompositionStepPlan extends StepPlan {
+  /** When the channel changed its path, hours since the epoch with a fraction. */
+  readonly pathChangeHours?: readonly number[];
+}
+
+const WATCHED_HOURS = 96;
+const BASELINE_HOURS = 336;
+
+/** A path change this near to an angle step is taken for its cause. */
+const PATH_HOURS = 1.5;
+
+/** The second best explanation leaves at least so many times more over, or the best one is not said to be it. */
+const DECIDED_RATIO = 1.5;
+
+/** For a baseline whose load is too constant to tell causes apart: then the smallest coefficients that fit. */
+const RIDGE = 0.003;
+
+/**
+ * The step in the last hours of one phase: deviations of every hour from the composition of the hours before, along
+ * the second terminal's current (ratio), across it (angle) and across the voltage (charging), each watched by
+ * `stepVerdict`; the one with most evidence is told. Which term moved is judged by all hours after: each term's own
+ * best change, by least squares, against what it leaves over. Unlike the level itself, deviations see a change at
+ * right angles to the differential too. Hours without snapshots are left out; throws for hours out of order.
+ */
+export function compositionStep(
+  hours: readonly HourSums[],
+  plan: CompositionStepPlan = {},
+): CompositionStepVerdict {
+  const counted = hours.filter(({ sums }) => snapshotCount(sums) > 0);
+  const watchedFrom = (counted.at(-1)?.hour ?? 0) - (plan.watchedHours ?? WATCHED_HOURS) + 1;
+  const from = watchedFrom - (plan.baselineHours ?? BASELINE_HOURS);
+  const within = counted.filter(({ hour }) => hour >= from);
+  const before = coefficientsOf(within.filter(({ hour }) => hour < watchedFrom));
+  if (before === undefined) return stepVerdict([], plan) as CompositionStepVerdict;
+  const verdicts = (['ratio', 'angle', 'charging'] as const).flatMap((seenIn) => {
+    const series = deviationsIn(within, { seenIn, coefficients: before });
+    return series.length === 0 ? [] : [{ seenIn, verdict: stepVerdict(series, plan) }];
+  });
+  let surest: { seenIn: CompositionStep['seenIn']; step: Step } | undefined;
+  for (const { seenIn, verdict } of verdicts) {
+    if (verdict.kind === 'too few hours') return verdict;
+    if (verdict.kind === 'step' && !(surest && surest.step.evidence >= verdict.evidence)) {
+      surest = { seenIn, step: verdict };
+    }
+  }
+  if (surest === undefined) return { kind: 'no step' };
+  return explained(within, surest, plan.pathChangeHours ?? []);
+}
+
+function coefficientsOf(hours: readonly HourSums[]): Complex[] | undefined {
+  const total = totalOf(hours.map(({ sums }) => sums));
+  if (total === undefined) return undefined;
+  const none = Array.from({ length: regressorCount(total) }, () => ({ re: 0, im: 0 }));
+  return fittedCoefficients(total) ?? shrunkCoefficients(total, { prior: none, weight: RIDGE });
+}
+
+/** Σ conj(x)·residue/Σ|x|² of every hour, with x the second terminal's current or the voltage. */
+function deviationsIn(
+  hours: readonly HourSums[],
+  { seenIn, coefficients }: { seenIn: CompositionStep['seenIn']; coefficients: readonly Complex[] },
+): HourlyValue[] {
+  return hours.flatMap(({ hour, sums }) => {
+    const { hasVoltage } = shapeOf(sums);
+    if (seenIn === 'charging' && !hasVoltage) return [];
+    const place = seenIn === 'charging' || !hasVoltage ? 0 : 1;
+    const squares = normalProduct(sums, place, place).re;
+    if (squares === 0) return [];
+    const product = residualProducts(sums, coefficients)[place]!;
+    return [{ hour, value: (seenIn === 'ratio' ? product.re : product.im) / squares }];
+  });
+}
+
+function explained(
+  hours: readonly HourSums[],
+  { seenIn, step }: { seenIn: CompositionStep['seenIn']; step: Step },
+  pathChangeHours: readonly number[],
+): CompositionStep {
+  const coefficients = coefficientsOf(hours.filter(({ hour }) => hour + 1 <= step.atHour))!;
+  const after = totalOf(hours.filter(({ hour }) => hour >= step.atHour).map(({ sums }) => sums))!;
+  const terms = explanations(after, coefficients);
+  const [first, second] = terms;
+  const isDecided =
+    first !== undefined &&
+    (second === undefined || 1 - second.explains >= DECIDED_RATIO * (1 - first.explains));
+  const moved = isDecided ? first : undefined;
+  const isPathNear = pathChangeHours.some((hour) => Math.abs(hour - step.atHour) <= PATH_HOURS);
+  return { ...step, seenIn, terms, moved, pointsToChannel: moved?.term === 'angle' && isPathNear };
+}
+
+/** What each term alone would have to change, and how much that explains, the best first. */
+function explanations(after: CompositionSums, coefficients: readonly Complex[]): MovedTerm[] {
+  const { hasVoltage } = shapeOf(after);
+  const leftOver = residualSquares(after, coefficients);
+  const terms = residualProducts(after, coefficients).flatMap((product, place): MovedTerm[] => {
+    const squares = normalProduct(after, place, place).re;
+    if (squares === 0 || leftOver <= 0) return [];
+    const isVoltage = hasVoltage && place === 0;
+    const terminal = isVoltage ? undefined : place + (hasVoltage ? 0 : 1);
+    const term = (name: MovedTerm['term'], along: number): MovedTerm => ({
+      term: name,
+      terminal,
+      change: along / squares,
+      explains: Math.min(1, along ** 2 / squares / leftOver),
+    });
+    return [
+      term(isVoltage ? 'leakage' : 'ratio', product.re),
+      term(isVoltage ? 'charging' : 'angle', product.im),
+    ];
+  });
+  return terms.sort((a, b) => b.explains - a.explains);
+}

@@ -1,0 +1,120 @@
+import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
+import type { Cause } from '../contract/standing';
+import type { ForecastAddress } from './forecast-query';
+
+/** Where a line stands: beyond the near mark, on its way there, or rising without getting near it. */
+export type ForecastPlace = 'beyond' | 'coming' | 'within margin';
+
+export interface ForecastRow {
+  readonly line: ForecastLine;
+  readonly place: ForecastPlace;
+  /** the phase that decides, and the others that rise or stand beyond as well */
+  readonly phase: ForecastPhase;
+  readonly others: readonly ForecastPhase[];
+}
+
+const RANK: Readonly<Record<ForecastPlace, number>> = { beyond: 0, coming: 1, 'within margin': 2 };
+
+export function phasePlace({ verdict }: ForecastPhase, nearRatio: number): ForecastPlace {
+  if (verdict.shareOfPickup !== null && verdict.shareOfPickup >= nearRatio) return 'beyond';
+  return creepOf(verdict)?.verdict === 'creep' ? 'coming' : 'within margin';
+}
+
+/** The drift that counts: at reference load where there is one, so that load and season are not in it. */
+export const creepOf = ({
+  creep,
+  creepAtReference,
+}: ForecastPhase['verdict']): ForecastPhase['verdict']['creep'] => creepAtReference?.creep ?? creep;
+
+/** A line by its most urgent phase. */
+export function forecastRow(line: ForecastLine, nearRatio: number): ForecastRow {
+  const [phase, ...others] = line.phases.toSorted(
+    (one, other) =>
+      RANK[phasePlace(one, nearRatio)] - RANK[phasePlace(other, nearRatio)] ||
+      byDate(one, other) ||
+      byShare(one, other),
+  );
+  return { line, place: phasePlace(phase!, nearRatio), phase: phase!, others };
+}
+
+/** A date that is not within reach stands behind every one that is. */
+const far = (day: string | null | undefined): string => day ?? '9999';
+
+function byDate(one: ForecastPhase, other: ForecastPhase): number {
+  const [left, right] = [one.verdict.near, other.verdict.near];
+  return (
+    far(left?.likely).localeCompare(far(right?.likely)) ||
+    far(left?.earliest).localeCompare(far(right?.earliest))
+  );
+}
+
+const byShare = (one: ForecastPhase, other: ForecastPhase): number =>
+  (other.verdict.shareOfPickup ?? 0) - (one.verdict.shareOfPickup ?? 0);
+
+const byName = (one: ForecastRow, other: ForecastRow): number =>
+  one.line.name.localeCompare(other.line.name, 'en', { numeric: true });
+
+/** Beyond the mark the pickup comes next, so the highest stands first; on the way there the date decides. */
+const byUrgency = (one: ForecastRow, other: ForecastRow): number =>
+  one.place === 'beyond' ? byShare(one.phase, other.phase) : byDate(one.phase, other.phase);
+
+const ORDERS: Readonly<Record<ForecastAddress['sort'], (one: ForecastRow, other: ForecastRow) => number>> = {
+  date: byUrgency,
+  share: (one, other) => byShare(one.phase, other.phase),
+  name: byName,
+};
+
+function fits({ line, phase }: ForecastRow, { text, substation, cause }: ForecastAddress): boolean {
+  if (substation !== undefined && !line.substations.some(({ key }) => key === substation)) return false;
+  if (cause !== undefined && phase.verdict.likelyCause !== cause) return false;
+  const haystack = [line.name, line.key, ...line.substations.map(({ name }) => name)].join(' ').toLowerCase();
+  return text
+    .toLowerCase()
+    .split(/\s+/)
+    .every((word) => haystack.includes(word));
+}
+
+export type ForecastSections = Readonly<Record<ForecastPlace, readonly ForecastRow[]>>;
+
+/** The page's three sections, filtered and in order. */
+export function forecastSections(rows: readonly ForecastRow[], address: ForecastAddress): ForecastSections {
+  const shown = rows
+    .filter((row) => fits(row, address))
+    .toSorted(
+      (one, other) =>
+        RANK[one.place] - RANK[other.place] || ORDERS[address.sort](one, other) || byName(one, other),
+    );
+  const at = (place: ForecastPlace) => shown.filter((row) => row.place === place);
+  return { beyond: at('beyond'), coming: at('coming'), 'within margin': at('within margin') };
+}
+
+export interface ForecastGroup {
+  readonly key: string;
+  readonly name: string;
+  readonly rows: readonly ForecastRow[];
+}
+
+/** One group without a name, or one a substation (a line stands under each of its ends), or one a cause. */
+export function forecastGroups(
+  rows: readonly ForecastRow[],
+  grouping: ForecastAddress['group'],
+): ForecastGroup[] {
+  if (grouping === 'none') return [{ key: '', name: '', rows }];
+  const groups = new Map<string, { name: string; rows: ForecastRow[] }>();
+  for (const row of rows)
+    for (const { key, name } of grouping === 'substation' ? row.line.substations : [causeGroup(row)]) {
+      const group = groups.get(key) ?? { name, rows: [] };
+      group.rows.push(row);
+      groups.set(key, group);
+    }
+  return [...groups]
+    .map(([key, group]) => ({ key, ...group }))
+    .sort((one, other) => one.name.localeCompare(other.name, 'en', { numeric: true }));
+}
+
+const causeGroup = ({ phase }: ForecastRow): { key: Cause; name: string } => ({
+  key: phase.verdict.likelyCause,
+  name: causeName(phase.verdict.likelyCause),
+});
+
+export const causeName = (cause: Cause): string => (cause === 'not told' ? 'cause not told' : cause);

@@ -1,0 +1,168 @@
+import type { CompositionOnWire, EstimateOnWire } from '../contract/composition';
+import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
+import type { StandingVerdict, StepOnWire } from '../contract/standing';
+import { ampsText, dateText, percentText, timeText } from './figures';
+import { forecastWords, slopeWords } from './forecast';
+import { creepOf, phasePlace, type ForecastSections } from './forecast-list';
+import { listed, terminalName } from './line-words';
+import { capital, countWords } from './margin-sentence';
+import type { SiteCustom } from './site-custom';
+
+export interface ForecastContext {
+  readonly site: SiteCustom;
+  readonly nowMs: number;
+  readonly substations: ForecastLine['substations'];
+}
+
+/** What a planner needs of one phase: how it rises, when it gets there, and what has moved. */
+export interface ForecastWords {
+  readonly lead: string;
+  readonly when: string;
+  /** undefined when the causes cannot be told */
+  readonly why: string | undefined;
+}
+
+export function phaseWords(phase: ForecastPhase, context: ForecastContext): ForecastWords {
+  const { verdict } = phase;
+  return {
+    lead: leadWords(phase, context),
+    when: whenWords(phase, context),
+    why: [stepWords(verdict.step, context), causeMovedWords(verdict, context)].filter(Boolean).join(' '),
+  };
+}
+
+function leadWords({ verdict }: ForecastPhase, { site }: ForecastContext): string {
+  const phase = `Phase ${site.phaseLetters[verdict.phase]}`;
+  const creep = creepOf(verdict);
+  if (creep !== null) return `${phase} rises ${slopeWords(creep)}${atReference(verdict)}.`;
+  return `${phase} stands at ${percentText(verdict.shareOfPickup)} of the pickup.`;
+}
+
+const atReference = ({ creepAtReference }: StandingVerdict): string =>
+  creepAtReference === null ? '' : ` at a load of ${ampsText(creepAtReference.referenceThroughAmps)}`;
+
+function whenWords(phase: ForecastPhase, { site, nowMs }: ForecastContext): string {
+  const { verdict } = phase;
+  const rises = creepOf(verdict) !== null;
+  if (phasePlace(phase, site.nearRatio) !== 'beyond')
+    return `Near mark ${verdict.near === null ? 'not within five years' : forecastWords(verdict.near, nowMs)}.`;
+  const level = `${ampsText(verdict.levelAmps)} of ${ampsText(verdict.pickupAmps)}, ${percentText(verdict.shareOfPickup)}`;
+  if (!rises || verdict.pickup === null) return `Beyond the near mark: ${level}; it does not rise further.`;
+  return `Beyond the near mark: ${level}; pickup ${forecastWords(verdict.pickup, nowMs)}.`;
+}
+
+/** "Stepped from 12 A to 21 A on 4 Nov 2026, 13:00: angle mismatch; the channel’s path changed at the same time." */
+function stepWords(step: StepOnWire | null, { site, substations }: ForecastContext): string | undefined {
+  if (step === null) return undefined;
+  const at = `${dateText(step.at, site.timeZone)}, ${timeText(step.at, site.timeZone).slice(0, 5)}`;
+  const where = step.terminal === null ? '' : ` at ${terminalName(step.terminal, substations)}`;
+  const cause = step.cause === 'not told' ? 'its cause is not told' : `${step.cause}${where}`;
+  const channel = step.channelPathChanged ? '; the channel’s path changed at the same time' : '';
+  return `It stepped from ${ampsText(step.fromAmps)} to ${ampsText(step.toAmps)} on ${at}: ${cause}${channel}.`;
+}
+
+/**
+ * What moved between the composition of 90 to 60 days ago and the last 30 days: a cause whose two 95 % intervals
+ * do not meet has moved. Without both compositions, what is the likely cause alone.
+ */
+function causeMovedWords(verdict: StandingVerdict, context: ForecastContext): string | undefined {
+  const moves = causeMoves(verdict.composition, verdict.compositionBefore, context);
+  if (moves === undefined) return likelyCauseWords(verdict, context);
+  const moved = moves.filter((one) => one.moved);
+  const still = moves.filter((one) => !one.moved);
+  const names = (some: typeof moves) => listed(some.map(({ name }) => name));
+  if (moved.length === 0) return likelyCauseWords(verdict, context);
+  const lead = `${capital(names(moved))} moved`;
+  if (still.length === 0) return `${lead}.`;
+  return `${lead}, ${listed([...new Set(still.map(({ short }) => short))])} did not.`;
+}
+
+function likelyCauseWords(verdict: StandingVerdict, { substations }: ForecastContext): string | undefined {
+  const { likelyCause, causeTerminal, composition } = verdict;
+  if (likelyCause === 'not told')
+    return composition.kind === 'not separable'
+      ? `The causes can’t be told apart: ${lowered(composition.reason)}`
+      : 'The causes can’t be told apart.';
+  const at = causeTerminal === null ? '' : ` at ${terminalName(causeTerminal, substations)}`;
+  return `Likely cause: ${likelyCause}${at}.`;
+}
+
+const lowered = (words: string): string => words.charAt(0).toLowerCase() + words.slice(1);
+
+interface CauseMove {
+  readonly name: string;
+  readonly short: string;
+  readonly moved: boolean;
+}
+
+function causeMoves(
+  now: CompositionOnWire,
+  before: CompositionOnWire | null,
+  { substations }: ForecastContext,
+): CauseMove[] | undefined {
+  if (now.kind !== 'separated' || before?.kind !== 'separated') return undefined;
+  const moves: CauseMove[] = [];
+  if (now.chargingAmps !== null && before.chargingAmps !== null)
+    moves.push({ name: 'charging', short: 'charging', moved: !meet(now.chargingAmps, before.chargingAmps) });
+  for (const mismatch of now.mismatches) {
+    const then = before.mismatches.find(({ terminal }) => terminal === mismatch.terminal);
+    if (then === undefined) continue;
+    const at = terminalName(mismatch.terminal, substations);
+    moves.push(
+      {
+        name: `ratio mismatch at ${at}`,
+        short: 'ratio mismatch',
+        moved: !meet(mismatch.ratio, then.ratio),
+      },
+      {
+        name: `angle mismatch at ${at}`,
+        short: 'angle mismatch',
+        moved: !meet(mismatch.angleDeg, then.angleDeg),
+      },
+    );
+  }
+  return moves.length === 0 ? undefined : moves;
+}
+
+const meet = (one: EstimateOnWire, other: EstimateOnWire): boolean =>
+  one.low <= other.high && other.low <= one.high;
+
+/** The head of the page: who is beyond, who is coming within a year, and who stays within margin. */
+export function forecastSentence(sections: ForecastSections) {
+  const { beyond, coming, 'within margin': within } = sections;
+  const lines = (count: number) => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
+  return {
+    beyond:
+      beyond.length === 0
+        ? undefined
+        : capital(`${lines(beyond.length)} ${beyond.length === 1 ? 'stands' : 'stand'} beyond the near mark`),
+    coming: coming.length === 0 ? undefined : capital(`${lines(coming.length)} on the way there`),
+    rest:
+      beyond.length + coming.length > 0
+        ? undefined
+        : within.length === 0
+          ? 'No line rises, and none stands beyond the near mark'
+          : 'No line is on its way to the near mark',
+  };
+}
+
+/** What the list does not show: lines that are steady, not known yet, or left out. */
+export function unlistedWords(counts: {
+  readonly steadyCount: number;
+  readonly unknownCount: number;
+  readonly leftOutCount: number;
+}): string[] {
+  const { steadyCount, unknownCount, leftOutCount } = counts;
+  const lines = (count: number) => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
+  return [
+    steadyCount === 0
+      ? undefined
+      : `${capital(lines(steadyCount))} ${steadyCount === 1 ? 'shows' : 'show'} no significant rise`,
+    unknownCount === 0
+      ? undefined
+      : `of ${lines(unknownCount)} nothing has been computed yet`,
+    leftOutCount === 0
+      ? undefined
+      : `${lines(leftOutCount)} less urgent than these ${leftOutCount === 1 ? 'is' : 'are'} left out here: Margins has all`,
+  ].filter((words) => words !== undefined);
+}

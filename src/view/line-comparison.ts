@@ -1,0 +1,134 @@
+import type { CompositionOnWire } from '../contract/composition';
+import type { SettingsVersion } from '../contract/settings-version';
+import type { Comparison, StandingVerdict } from '../contract/standing';
+import { causeAmps } from './composition-polygon';
+import type { PolygonCause } from './composition-polygon';
+import { intervalText } from './composition-words';
+import { ampsText, dateText } from './figures';
+import type { LineTable, TableColumn } from './line-table';
+import { wallTimeTyped } from './register-instant';
+import type { PhaseLetters, SiteCustom } from './site-custom';
+
+/** The date as the page's address holds it; what is no date of the calendar is told from what is not there. */
+export type ComparedDate =
+  | { readonly kind: 'none' }
+  | { readonly kind: 'no date'; readonly typed: string }
+  | { readonly kind: 'date'; readonly day: string };
+
+export function comparedDate(value: string | null): ComparedDate {
+  if (value === null || value.trim() === '') return { kind: 'none' };
+  const typed = value.trim();
+  const atMs = /^\d{4}-\d{2}-\d{2}$/.test(typed) ? Date.parse(`${typed}T00:00:00Z`) : Number.NaN;
+  const isDay = Number.isFinite(atMs) && new Date(atMs).toISOString().startsWith(typed);
+  return isDay ? { kind: 'date', day: typed } : { kind: 'no date', typed };
+}
+
+/** The site's day of an instant, as the address of a comparison wants it. */
+export const comparedDay = (instant: string, timeZone: string): string =>
+  wallTimeTyped(instant, timeZone).slice(0, 10);
+
+/** A date that something is known of, worth comparing across. */
+export interface KnownChange {
+  readonly day: string;
+  readonly words: string;
+}
+
+/** Changes of the recorded settings and steps of a level, newest first; the first version changed nothing. */
+export function knownChanges(
+  settings: readonly SettingsVersion[],
+  standing: readonly StandingVerdict[],
+  { timeZone, phaseLetters }: SiteCustom,
+): KnownChange[] {
+  const versions = [...settings].sort(
+    (one, other) => Date.parse(one.validFrom) - Date.parse(other.validFrom),
+  );
+  const changes = versions
+    .slice(1)
+    .map(({ validFrom }) => ({ instant: validFrom, words: 'settings changed' }));
+  const steps = standing.flatMap(({ phase, step }) =>
+    step === null ? [] : [{ instant: step.at, words: `phase ${phaseLetters[phase]} stepped` }],
+  );
+  return [...changes, ...steps]
+    .sort((one, other) => Date.parse(other.instant) - Date.parse(one.instant))
+    .map(({ instant, words }) => ({ day: comparedDay(instant, timeZone), words }));
+}
+
+export const dayText = (day: string): string => dateText(`${day}T12:00:00Z`, 'UTC');
+
+type ComparedPhase = Comparison['phases'][number];
+
+/** What changed across the date, in a sentence with its interval and p; or why that can't be told. */
+export function comparisonSentence(
+  { phase, before, after, test }: ComparedPhase,
+  { day, letters }: { day: string; letters: PhaseLetters },
+): string {
+  const name = `phase ${letters[phase]}`;
+  if (test === null)
+    return `For ${name} there are ${daysWords(before.days)} with a standing level before ${dayText(day)} and ${daysWords(after.days)} after it: too few to tell whether it has changed.`;
+  const { value, low, high } = test.shiftAmps;
+  const medians = `median ${ampsText(before.medianAmps)} on ${daysWords(before.days)} before, ${ampsText(after.medianAmps)} on ${daysWords(after.days)} after`;
+  if (low <= 0 && high >= 0)
+    return `After ${dayText(day)} no shift of the standing level of ${name} can be told: ${signedAmps(value)} (95 %: ${intervalText(test.shiftAmps, 1)}), ${pWords(test.pTwoSided)}; ${medians}.`;
+  const sizes = { value: Math.abs(value), low: Math.abs(low), high: Math.abs(high) };
+  const limits = { ...sizes, low: Math.min(sizes.low, sizes.high), high: Math.max(sizes.low, sizes.high) };
+  return (
+    `After ${dayText(day)} the standing level of ${name} is ${value < 0 ? 'lower' : 'higher'} by ` +
+    `${ampsText(sizes.value)} (95 %: ${intervalText(limits, digitsOf(sizes.value))}), ${pWords(test.pTwoSided)}; ${medians}.`
+  );
+}
+
+const daysWords = (days: number): string => `${days} ${days === 1 ? 'day' : 'days'}`;
+const digitsOf = (amps: number): number => (amps < 9.95 ? 1 : 0);
+const signedAmps = (amps: number): string => `${amps < 0 ? '−' : '+'}${Math.abs(amps).toFixed(1)}\u00a0A`;
+const pWords = (p: number): string => (p < 0.0001 ? 'p < 0.0001' : `p = ${p.toFixed(4)}`);
+
+const CAUSES = ['charging', 'ratio', 'angle', 'rest'] as const satisfies readonly PolygonCause[];
+
+/** Both sides of every phase in figures; empty where a side can't tell. */
+export function comparisonTable(
+  { phases, at }: Comparison,
+  { letters, name }: { letters: PhaseLetters; name: string },
+): LineTable {
+  const amps = (head: string): TableColumn => ({ kind: 'figure', head: `${head}, A`, digits: 2 });
+  const count = (head: string): TableColumn => ({ kind: 'figure', head, digits: 0 });
+  return {
+    caption: `${name} before and after ${dayText(at)}`,
+    columns: [
+      { kind: 'text', head: 'phase' },
+      count('days before'),
+      count('days after'),
+      amps('median before'),
+      amps('median after'),
+      amps('shift'),
+      amps('shift from'),
+      amps('shift to'),
+      { kind: 'figure', head: 'p', digits: 5 },
+      ...CAUSES.flatMap((cause) => [amps(`${cause} before`), amps(`${cause} after`)]),
+    ],
+    rows: phases.map(({ phase, before, after, test }) => [
+      letters[phase],
+      before.days,
+      after.days,
+      before.medianAmps,
+      after.medianAmps,
+      test?.shiftAmps.value ?? null,
+      test?.shiftAmps.low ?? null,
+      test?.shiftAmps.high ?? null,
+      test?.pTwoSided ?? null,
+      ...CAUSES.flatMap((cause) => [sideAmps(before.composition, cause), sideAmps(after.composition, cause)]),
+    ]),
+  };
+}
+
+/** Null where the side is not separable, and for charging that no voltage tells. */
+function sideAmps(composition: CompositionOnWire, cause: PolygonCause): number | null {
+  if (composition.kind !== 'separated' || composition.polygon === null) return null;
+  if (cause === 'charging' && composition.chargingAmps === null) return null;
+  return causeAmps(composition.polygon, cause);
+}
+
+/** The phase worth looking at first: the one with the greatest shift, where any was tested. */
+export function mostMovedPhase({ phases }: Comparison): ComparedPhase['phase'] {
+  const size = ({ test }: ComparedPhase) => Math.abs(test?.shiftAmps.value ?? 0);
+  return phases.reduce((most, each) => (size(each) > size(most) ? each : most), phases[0]!).phase;
+}
