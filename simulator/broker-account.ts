@@ -1,6 +1,7 @@
 import { timingSafeEqual, createHash, randomBytes } from 'node:crypto';
 import { z } from 'zod';
 import { measurementTopic, presenceTopic } from '../src/contract/feed';
+import type { NewLine } from '../src/contract/register';
 import { demoLines } from './network/demo-lines';
 
 /** Who may come to the broker, and as what. A terminal's user name is `<line>/<terminal>`. */
@@ -56,17 +57,20 @@ const digest = (secret: string | Uint8Array): Buffer => createHash('sha256').upd
 
 export const newPassword = (): string => randomBytes(18).toString('base64url');
 
-/** An account for every terminal of the demo network that publishes, and one each for the two processes. */
-export function newDemoAccounts(): BrokerAccount[] {
-  const terminals = demoLines.flatMap((line) =>
+/** An account for every terminal of these lines that publishes. */
+export const newTerminalAccounts = (lines: readonly NewLine[]): BrokerAccount[] =>
+  lines.flatMap((line) =>
     line.terminals.slice(0, line.goesBy === 'reported' ? 1 : undefined).map((terminal): BrokerAccount => ({
       username: `${line.key}/${terminal.key}`,
       password: newPassword(),
       kind: 'terminal',
     })),
   );
+
+/** An account for every terminal of the demo network that publishes, and one each for the two processes. */
+export function newDemoAccounts(): BrokerAccount[] {
   return [
-    ...terminals,
+    ...newTerminalAccounts(demoLines),
     { username: 'ingest', password: newPassword(), kind: 'ingest' },
     { username: 'web', password: newPassword(), kind: 'web' },
   ];

@@ -169,6 +169,9 @@ async function endForgottenServer(dataDir: string): Promise<void> {
   }
 }
 
+/** The process that holds the data of a folder, if one does. */
+export const databasePid = (dir: string): number | undefined => forgottenPid(join(resolve(dir), 'data'));
+
 function forgottenPid(dataDir: string): number | undefined {
   try {
     const pid = Number(readFileSync(join(dataDir, 'server.pid'), 'utf8'));

@@ -1,9 +1,11 @@
 import { measurementTopic, type Measurement, type PolarPerPhase } from '../src/contract/feed';
 import { demoLines, demoTruths } from './network/demo-lines';
 import { add, angleRad, type Complex, magnitude, type Three } from './plant/complex';
+import { isInGap } from './plant/gap';
 import { hashed, seedOf } from './plant/noise';
 import { createPlant, type LineState, type TerminalState } from './plant/plant';
 import type { LineTruth, TerminalTruth } from './plant/truth';
+import { storyLines, storyTruths } from './stories/story-lines';
 
 /** What one terminal publishes for an instant. */
 export type DemoMeasurement = {
@@ -31,24 +33,22 @@ type SendingLine = {
 };
 
 /**
- * The demo network's feed as a pure function of seed, epoch, line and instant. It throws for a line that the
- * network does not have. Instants are multiples of 2 s, though any whole millisecond is answered.
+ * The feed of the demo network and of the story lines as a pure function of seed, epoch, line and instant. It throws
+ * for a line that neither has. Instants are multiples of 2 s, though any whole millisecond is answered.
  */
 export function createDemoMeasurements(site: {
   readonly seed: number;
   readonly epochMs: number;
 }): DemoMeasurements {
-  const plant = createPlant(demoTruths, site);
-  const lines = new Map(
-    demoLines.map((line, index) => [line.key, sendingLine(line, demoTruths[index]!, site.seed)]),
-  );
+  const plant = createPlant(TRUTHS, site);
+  const lines = new Map(LINES.map((line, index) => [line.key, sendingLine(line, TRUTHS[index]!, site.seed)]));
   return (key, atMs) => {
     const line = lines.get(key);
     if (line === undefined) throw new RangeError(`The demo network has no line ${key}.`);
     const state = plant.state(key, atMs);
     const sample = { at: new Date(atMs).toISOString(), seq: Math.floor(atMs / SAMPLE_MS) - SEQ_ORIGIN };
     return line.senders
-      .filter((sender) => !goesMissing(sender, sample.seq))
+      .filter((sender) => !goesMissing(sender, { seq: sample.seq, sinceEpochMs: atMs - site.epochMs }))
       .map((sender) => ({
         terminal: sender.truth.key,
         topic: sender.topic,
@@ -60,7 +60,10 @@ export function createDemoMeasurements(site: {
 /** 2024-01-01T00:00:00Z in samples: counting from there keeps numbers short and needs no memory between starts. */
 const SEQ_ORIGIN = Date.UTC(2024, 0, 1) / SAMPLE_MS;
 
-function sendingLine(line: (typeof demoLines)[number], truth: LineTruth, seed: number): SendingLine {
+const LINES = [...demoLines, ...storyLines];
+const TRUTHS = [...demoTruths, ...storyTruths];
+
+function sendingLine(line: (typeof LINES)[number], truth: LineTruth, seed: number): SendingLine {
   const publishing = line.goesBy === 'reported' ? truth.terminals.slice(0, 1) : truth.terminals;
   return {
     truth,
@@ -75,8 +78,13 @@ function sendingLine(line: (typeof demoLines)[number], truth: LineTruth, seed: n
   };
 }
 
-const goesMissing = (sender: Sender, seq: number): boolean =>
-  sender.truth.missingShare > 0 && hashed(sender.seed, seq) < sender.truth.missingShare;
+function goesMissing(
+  { truth, seed }: Sender,
+  { seq, sinceEpochMs }: { readonly seq: number; readonly sinceEpochMs: number },
+): boolean {
+  if (truth.gaps !== undefined && isInGap(truth.gaps, sinceEpochMs)) return true;
+  return truth.missingShare > 0 && hashed(seed, seq) < truth.missingShare;
+}
 
 function measurementOf(
   line: SendingLine,

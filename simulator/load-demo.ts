@@ -14,12 +14,15 @@ import { insertLine } from '../src/store/register-edit';
 import { type SnapshotRow, writeSnapshots } from '../src/store/snapshots';
 import { createDemoMeasurements, type DemoMeasurements, SAMPLE_MS } from './demo-history';
 import { demoPeople } from './demo-people';
+import type { NewLine } from '../src/contract/register';
 import { demoLines } from './network/demo-lines';
 
-/** How far back the demo's history reaches, and how closely it is sampled: the nearer, the closer. */
+/** How far back the demo's history reaches unless told, and how closely it is sampled: the nearer, the closer. */
 export const HISTORY = {
   days: 60,
   sampleMs: 300_000,
+  /** beyond the preset's reach */
+  oldSampleMs: 15 * 60_000,
   /** raw rows are kept from the start of the day before, at this spacing */
   rawSampleMs: 60_000,
   /** the last minutes are as close as the feed itself, for the operating plane's tails */
@@ -32,13 +35,28 @@ const CLOCK_LIMIT_US = 100;
 const FREQUENCY_HZ = 50;
 const RECORDED_BY = 'Jonas Wehrli';
 const ROWS_A_WRITE = 1_000;
+/** level rows are written, and progress is told, after as many days */
+const DAYS_A_WRITE = 30;
 
 type Site = { readonly seed: number; readonly epochMs: number };
 
-/** Loads the demo's people, register and history; the history passes through the product's own evaluation. */
-export async function loadDemo(store: Store, site: Site, progress: (share: number) => void): Promise<void> {
+/** What is loaded: which lines, and how many days of them. */
+export type DemoPlan = { readonly days: number; readonly lines: readonly NewLine[] };
+
+const PRESET: DemoPlan = { days: HISTORY.days, lines: demoLines };
+
+/**
+ * Loads the demo's people, register and history; the history passes through the product's own evaluation. A
+ * progress that throws breaks the load off.
+ */
+export async function loadDemo(
+  store: Store,
+  site: Site,
+  progress: (share: number) => void,
+  { days, lines: entries }: DemoPlan = PRESET,
+): Promise<void> {
   await loadPeople(store, site);
-  await loadRegister(store, site);
+  await loadRegister(store, site, entries);
   await keepPartitions(store, { table: 'snapshot', now: site.epochMs, days: RAW_DAYS });
   await keepPartitions(store, { table: 'minute_level', now: site.epochMs, days: MINUTE_DAYS });
   const lines = [
@@ -50,8 +68,8 @@ export async function loadDemo(store: Store, site: Site, progress: (share: numbe
   ];
   const measurements = createDemoMeasurements(site);
   for (const [index, line] of lines.entries()) {
-    await loadHistory(store, line, { measurements, epochMs: site.epochMs });
-    progress((index + 1) / lines.length);
+    const done = (share: number): void => progress((index + share) / lines.length);
+    await loadHistory(store, line, { measurements, epochMs: site.epochMs, days, done });
   }
 }
 
@@ -66,48 +84,73 @@ async function loadPeople(store: Store, { epochMs }: Site): Promise<void> {
     });
 }
 
-async function loadRegister(store: Store, { epochMs }: Site): Promise<void> {
+async function loadRegister(store: Store, { epochMs }: Site, lines: readonly NewLine[]): Promise<void> {
   const engineer = { id: 'demo', name: RECORDED_BY };
-  for (const line of demoLines) {
+  for (const line of lines) {
     const edit = await insertLine(store, line, { by: engineer, nowMs: epochMs });
     if (!edit.ok) throw new Error(`The demo line ${line.key} is refused: ${JSON.stringify(edit.problem)}`);
   }
 }
 
-async function loadHistory(
-  store: Store,
-  line: RosterLine,
-  { measurements, epochMs }: { measurements: DemoMeasurements; epochMs: number },
-): Promise<void> {
-  const hours: LevelRow[] = [];
-  const days: LevelRow[] = [];
-  const rawFromMs = rungStart('day', epochMs) - RUNG_MS.day;
+type Load = {
+  readonly measurements: DemoMeasurements;
+  readonly epochMs: number;
+  readonly days: number;
+  readonly done: (share: number) => void;
+};
+
+async function loadHistory(store: Store, line: RosterLine, load: Load): Promise<void> {
+  const { epochMs } = load;
+  const written = { hour: [] as LevelRow[], day: [] as LevelRow[] };
+  const write = async (): Promise<void> => {
+    await writeLevels(store, 'hour', written.hour.splice(0));
+    await writeLevels(store, 'day', written.day.splice(0));
+  };
+  const today = rungStart('day', epochMs);
+  const rawFromMs = today - RUNG_MS.day;
   let before: SnapshotRow | undefined;
-  for (
-    let dayMs = rungStart('day', epochMs) - HISTORY.days * RUNG_MS.day;
-    dayMs < epochMs;
-    dayMs += RUNG_MS.day
-  ) {
-    const rows: SnapshotRow[] = [];
-    for (const atMs of instants(dayMs, { epochMs, rawFromMs })) {
-      const snapshot = demoSnapshot(line, atMs, measurements);
-      if (snapshot !== undefined) rows.push(snapshotRow(snapshot));
-    }
-    const ofDay: LevelRow[] = [];
-    const beforeDay = before;
-    for (const hourRows of rowsByWindow('hour', rows)) {
-      ofDay.push(...hourRowsOf(line, hourRows, { before, isRaw: dayMs >= rawFromMs }));
-      before = hourRows.at(-1);
-    }
-    hours.push(...ofDay);
-    const day = { lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps };
-    days.push(
-      ...rungRows(day, rows, beforeDay).map((row) => ({ ...row, sums: summedBelow(ofDay, row.phase) })),
-    );
-    if (dayMs >= rawFromMs) await writeRaw(store, rows);
+  for (let back = load.days; back >= 0; back--) {
+    const dayMs = today - back * RUNG_MS.day;
+    const rows = dayRows(line, dayMs, load);
+    const isRaw = dayMs >= rawFromMs;
+    const levels = levelsOfDay(line, { dayMs, rows, isRaw }, before);
+    before = rows.at(-1) ?? before;
+    written.hour.push(...levels.hours);
+    written.day.push(...levels.days);
+    if (isRaw) await writeRaw(store, rows);
+    if (back % DAYS_A_WRITE !== 0) continue;
+    await write();
+    load.done(1 - back / (load.days + 1));
   }
-  await writeLevels(store, 'hour', hours);
-  await writeLevels(store, 'day', days);
+  load.done(1);
+}
+
+function dayRows(line: RosterLine, dayMs: number, { measurements, epochMs }: Load): SnapshotRow[] {
+  const rows: SnapshotRow[] = [];
+  for (const atMs of instants(dayMs, epochMs)) {
+    const snapshot = demoSnapshot(line, atMs, measurements);
+    if (snapshot !== undefined) rows.push(snapshotRow(snapshot));
+  }
+  return rows;
+}
+
+function levelsOfDay(
+  line: RosterLine,
+  { dayMs, rows, isRaw }: { dayMs: number; rows: readonly SnapshotRow[]; isRaw: boolean },
+  beforeDay: SnapshotRow | undefined,
+): { hours: LevelRow[]; days: LevelRow[] } {
+  const hours: LevelRow[] = [];
+  let before = beforeDay;
+  for (const hourRows of rowsByWindow('hour', rows)) {
+    hours.push(...hourRowsOf(line, hourRows, { before, isRaw }));
+    before = hourRows.at(-1);
+  }
+  const day = { lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps };
+  const days = rungRows(day, rows, beforeDay).map((row) => ({
+    ...row,
+    sums: summedBelow(hours, row.phase),
+  }));
+  return { hours, days };
 }
 
 /** As the worker builds them, over their minutes, where raw rows are kept: so that a rebuild gives the same numbers. */
@@ -123,17 +166,19 @@ function hourRowsOf(
 }
 
 /** The instants of one day that are loaded, up to the moment the site came up. */
-function* instants(
-  dayMs: number,
-  { epochMs, rawFromMs }: { epochMs: number; rawFromMs: number },
-): Generator<number> {
+function* instants(dayMs: number, epochMs: number): Generator<number> {
   const endMs = Math.min(dayMs + RUNG_MS.day, Math.floor(epochMs / SAMPLE_MS) * SAMPLE_MS);
-  const spacingMs = dayMs >= rawFromMs ? HISTORY.rawSampleMs : HISTORY.sampleMs;
+  const spacingMs = spacingOf(rungStart('day', epochMs) - dayMs);
   let atMs = dayMs;
   while (atMs < endMs) {
     yield atMs;
     atMs += atMs >= epochMs - HISTORY.closeMs ? SAMPLE_MS : spacingMs;
   }
+}
+
+function spacingOf(ageMs: number): number {
+  if (ageMs <= RUNG_MS.day) return HISTORY.rawSampleMs;
+  return ageMs <= HISTORY.days * RUNG_MS.day ? HISTORY.sampleMs : HISTORY.oldSampleMs;
 }
 
 function demoSnapshot(

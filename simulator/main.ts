@@ -1,13 +1,13 @@
 import { existsSync } from 'node:fs';
-import { rm, writeFile } from 'node:fs/promises';
+import { writeFile } from 'node:fs/promises';
 import { join, resolve } from 'node:path';
-import { createConnection } from 'mysql2/promise';
 import { createStore } from '../src/store/client';
 import { migrateStore } from '../src/store/migrate';
 import { buildWhenNeeded } from './build';
 import { type Child, startChild } from './child';
 import { type PrivateDatabase, startDatabase } from './database';
 import { demoPeople } from './demo-people';
+import { emptyDatabase } from './empty-database';
 import { loadDemo } from './load-demo';
 import { freePortFrom } from './ports';
 import { createProgress } from './progress';
@@ -90,14 +90,6 @@ async function fillDatabase({ url, adminUrl }: PrivateDatabase, site: Site): Pro
   } finally {
     await store.close();
   }
-}
-
-async function emptyDatabase(adminUrl: string): Promise<void> {
-  const connection = await createConnection(adminUrl);
-  await connection.query('DROP DATABASE IF EXISTS tareline');
-  await connection.query('CREATE DATABASE tareline');
-  await connection.end();
-  await rm(LOADED, { force: true });
 }
 
 async function startProcesses(site: Site, databaseUrl: string): Promise<void> {

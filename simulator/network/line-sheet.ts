@@ -3,8 +3,10 @@ import type { ChannelTruth } from '../plant/channel';
 import type { ClockLoss } from '../plant/clock';
 import { eachPhase, type Three } from '../plant/complex';
 import type { LoadProfile } from '../plant/load';
+import type { Gap } from '../plant/gap';
 import { hashed, seedOf } from '../plant/noise';
-import type { Branch, CtError, LineTruth, RatioDrift } from '../plant/truth';
+import type { Ramp } from '../plant/ramp';
+import type { Branch, CapacitanceDrift, CtError, LineTruth, RatioDrift } from '../plant/truth';
 import type { Stretch } from './conductors';
 import { type SubstationKey, substations } from './substations';
 
@@ -34,6 +36,18 @@ export type LineSheet = {
   readonly ctErrors?: { readonly [terminal: string]: Three<readonly [percent: number, minutes: number]> };
   readonly ctSpread?: number;
   readonly ratioDrift?: RatioDrift;
+  readonly capacitanceDrift?: CapacitanceDrift;
+  /** by terminal: which phase's transformer gave way on which day to one of which error, in percent and minutes */
+  readonly replaced?: {
+    readonly [terminal: string]: {
+      readonly phase: 0 | 1 | 2;
+      readonly atDay: number;
+      readonly error: readonly [percent: number, minutes: number];
+    };
+  };
+  /** by terminal, microseconds a day */
+  readonly clockDrift?: { readonly [terminal: string]: Ramp };
+  readonly gaps?: { readonly [terminal: string]: readonly Gap[] };
   readonly channel?: ChannelTruth;
   readonly timeFrom?: 'satellite' | 'channel';
   readonly clockLoss?: { readonly [terminal: string]: ClockLoss };
@@ -107,6 +121,7 @@ function lineTruth(sheet: LineSheet): LineTruth {
       },
     }),
     ...(sheet.ratioDrift && { ratioDrift: sheet.ratioDrift }),
+    ...(sheet.capacitanceDrift && { capacitanceDrift: sheet.capacitanceDrift }),
     channel: sheet.channel ?? QUIET_CHANNEL,
     breakers: sheet.breakers ?? 'closed',
     hasVoltage: sheet.hasVoltage ?? true,
@@ -116,6 +131,9 @@ function lineTruth(sheet: LineSheet): LineTruth {
 
 function terminalTruth(sheet: LineSheet, key: string): LineTruth['terminals'][number] {
   const loss = sheet.clockLoss?.[key];
+  const drift = sheet.clockDrift?.[key];
+  const replaced = sheet.replaced?.[key];
+  const gaps = sheet.gaps?.[key];
   const known = sheet.ctErrors?.[key];
   return {
     key,
@@ -124,6 +142,9 @@ function terminalTruth(sheet: LineSheet, key: string): LineTruth['terminals'][nu
     ),
     timeFrom: sheet.timeFrom ?? 'satellite',
     ...(loss && { clockLoss: loss }),
+    ...(drift && { clockDrift: drift }),
+    ...(replaced && { replaced: { ...replaced, error: ctError(...replaced.error) } }),
+    ...(gaps && { gaps }),
     missingShare: sheet.missingShare?.[key] ?? 0,
   };
 }

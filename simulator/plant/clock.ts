@@ -1,4 +1,5 @@
 import { hashed } from './noise';
+import { type Ramp, ramped } from './ramp';
 
 /** Where a terminal's time comes from as long as nothing is wrong. */
 export type TimeFrom = 'satellite' | 'channel';
@@ -16,18 +17,24 @@ export type ClockState = {
 const RUNS_OFF_US_PER_S = 2.1;
 
 export function clockState(
-  clock: { readonly timeFrom: TimeFrom; readonly loss?: ClockLoss | undefined; readonly seed: number },
+  clock: {
+    readonly timeFrom: TimeFrom;
+    readonly loss?: ClockLoss | undefined;
+    readonly drift?: Ramp | undefined;
+    readonly seed: number;
+  },
   { atMs, epochMs }: { readonly atMs: number; readonly epochMs: number },
 ): ClockState {
+  const driftUs = clock.drift === undefined ? 0 : ramped(clock.drift, atMs - epochMs);
   const lostMs = clock.loss === undefined ? undefined : lostForMs(clock.loss, atMs - epochMs);
   if (lostMs !== undefined) {
     const offUs = 2 + (RUNS_OFF_US_PER_S * lostMs) / 1000;
-    return { source: 'free', errorUs: offUs, trueOffsetUs: offUs };
+    return { source: 'free', errorUs: offUs, trueOffsetUs: offUs + driftUs };
   }
   const spread = hashed(clock.seed, Math.floor(atMs / 2000));
   return clock.timeFrom === 'satellite'
-    ? { source: 'satellite', errorUs: 1 + Math.floor(3 * spread), trueOffsetUs: 0 }
-    : { source: 'channel', errorUs: 18 + Math.floor(14 * spread), trueOffsetUs: 0 };
+    ? { source: 'satellite', errorUs: 1 + Math.floor(3 * spread), trueOffsetUs: driftUs }
+    : { source: 'channel', errorUs: 18 + Math.floor(14 * spread), trueOffsetUs: driftUs };
 }
 
 function lostForMs(loss: ClockLoss, sinceEpochMs: number): number | undefined {

@@ -1,9 +1,8 @@
 import type { Complex } from './complex';
 import { multiply, polar, scale } from './complex';
 import { jitter } from './noise';
-import type { CtError, RatioDrift } from './truth';
+import type { CtError } from './truth';
 
-const DAY_MS = 86_400_000;
 /** noise of a measured current: a share of it, and a floor in amperes */
 const NOISE_SHARE = 0.0001;
 const NOISE_AMPS = 0.02;
@@ -11,12 +10,6 @@ const VOLTAGE_NOISE_SHARE = 0.0002;
 
 /** One sample of one phase: its time error as an angle, and which noise it draws. */
 export type Sampling = { readonly timeAngleRad: number; readonly seed: number; readonly index: number };
-
-/** What has been added to a ratio error by an instant, per unit. */
-export function driftedRatio(drift: RatioDrift, sinceEpochMs: number): number {
-  const days = Math.min(drift.toDay, Math.max(drift.fromDay, sinceEpochMs / DAY_MS));
-  return drift.perDay * (days - drift.fromDay);
-}
 
 /** A true primary current as a terminal gives it: transformer error, time error as an angle, noise. */
 export function measuredAmps(

@@ -13,15 +13,29 @@ export type LoadProfile = {
   readonly tanPhi: number;
   /** terminal from which the power flows: 'first' or 'last' */
   readonly from: 'first' | 'last';
+  /** half the swing between summer and winter */
+  readonly yearlySwing?: number;
+  /** growth a year, compounded; `meanShare` is the mean at the site's epoch */
+  readonly growthPerYear?: number;
 };
 
 const HOUR_MS = 3_600_000;
 const DAY_HOURS = 24;
+const YEAR_HOURS = 365.25 * DAY_HOURS;
+/** the coldest weeks are in the middle of January */
+const PEAK_HOURS = 15 * DAY_HOURS;
 /** the network's people live an hour ahead of UTC */
 const LOCAL_HOURS = 1;
 
-/** The share of its rating that a line carries at an instant: weekly shape, and noise that remembers hours. */
-export function loadShare(profile: LoadProfile, seed: number, atMs: number): number {
+/**
+ * The share of its rating that a line carries at an instant: yearly and weekly shape, growth over the years, and
+ * noise that remembers hours.
+ */
+export function loadShare(
+  profile: LoadProfile,
+  seed: number,
+  { atMs, epochMs }: { readonly atMs: number; readonly epochMs: number },
+): number {
   const hours = atMs / HOUR_MS + LOCAL_HOURS;
   const wander =
     0.5 * smoothNoise(seed, hours / 11) +
@@ -30,7 +44,18 @@ export function loadShare(profile: LoadProfile, seed: number, atMs: number): num
     0.05 * smoothNoise(seed ^ 3, hours * 200);
   const shape =
     1 + profile.dailySwing * dayCurve(hours) - profile.weekendDip * weekend(hours) + profile.wander * wander;
-  return Math.max(0.04, profile.meanShare * shape);
+  return Math.max(
+    0.04,
+    profile.meanShare * shape * overYears(profile, { hours, sinceEpochMs: atMs - epochMs }),
+  );
+}
+
+function overYears(
+  { yearlySwing = 0, growthPerYear = 0 }: LoadProfile,
+  { hours, sinceEpochMs }: { readonly hours: number; readonly sinceEpochMs: number },
+): number {
+  const season = 1 + yearlySwing * Math.cos((2 * Math.PI * (hours - PEAK_HOURS)) / YEAR_HOURS);
+  return season * (1 + growthPerYear) ** (sinceEpochMs / HOUR_MS / YEAR_HOURS);
 }
 
 /** Low before dawn, a shoulder in the morning, the peak in the evening; within about −1 to 1. */

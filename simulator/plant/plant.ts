@@ -2,10 +2,11 @@ import { type Busbar, busbarOf, busbarVolts, networkHz } from './busbar';
 import { channelAngleRad, type ChannelState, channelState } from './channel';
 import { type ClockState, clockState } from './clock';
 import { type Complex, complex, eachPhase, multiply, polar, scale, type Three } from './complex';
-import { driftedRatio, measuredAmps, measuredVolts } from './instrument';
+import { measuredAmps, measuredVolts } from './instrument';
 import { type PiSection, teeFlow, type TerminalFlow, twoTerminalFlow } from './line-flow';
 import { loadShare } from './load';
 import { seedOf } from './noise';
+import { ramped } from './ramp';
 import { farSide } from './transformer';
 import type { CtError, LineTruth, TerminalTruth } from './truth';
 
@@ -40,6 +41,7 @@ type CompiledLine = {
 type Site = { readonly seed: number; readonly epochMs: number };
 
 const SAMPLE_MS = 2_000;
+const DAY_MS = 86_400_000;
 
 /** `epochMs` is when the demo site first came up: the stories are told around it. */
 export function createPlant(truths: readonly LineTruth[], { seed, epochMs }: Site): Plant {
@@ -50,7 +52,7 @@ export function createPlant(truths: readonly LineTruth[], { seed, epochMs }: Sit
       const line = lines.get(key);
       if (line === undefined) throw new RangeError(`The plant has no line ${key}.`);
       const frequencyHz = networkHz(frequencySeed, atMs);
-      const flows = trueFlows(line, frequencyHz, atMs);
+      const flows = trueFlows(line, frequencyHz, { atMs, epochMs });
       const seen = channelState(line.truth.channel, line.channelSeed, { atMs, epochMs });
       const terminals = line.truth.terminals.map((terminal, position) =>
         terminalState(
@@ -81,17 +83,20 @@ function compiled(truth: LineTruth, seed: number): CompiledLine {
 }
 
 /** Flows by terminal, then by phase. */
-function trueFlows(line: CompiledLine, frequencyHz: number, atMs: number): readonly Three<TerminalFlow>[] {
+function trueFlows(
+  line: CompiledLine,
+  frequencyHz: number,
+  at: { readonly atMs: number; readonly epochMs: number },
+): readonly Three<TerminalFlow>[] {
   const { truth } = line;
   if (truth.breakers === 'open') return truth.terminals.map(() => eachPhase(() => DEAD));
-  const volts = busbarVolts(line.busbar, atMs);
+  const volts = busbarVolts(line.busbar, at.atMs);
   const towards = truth.load.from === 'first' ? 1 : -1;
-  const throughAmps = towards * truth.ratingAmps * loadShare(truth.load, line.loadSeed, atMs);
+  const throughAmps = towards * truth.ratingAmps * loadShare(truth.load, line.loadSeed, at);
   const lag = polar(throughAmps / line.busbar.phaseVolts, -Math.atan(truth.load.tanPhi));
-  const sections = truth.branches.map((branch) => piSection(branch, frequencyHz));
   // A light unbalance between the phases, the same at every terminal, as an untransposed load has it.
   const byPhase = eachPhase((phase) =>
-    phaseFlow(truth, sections, {
+    phaseFlow(truth, sectionsOf(truth, frequencyHz, { phase, sinceEpochMs: at.atMs - at.epochMs }), {
       volts: volts[phase],
       throughAmps: multiply(volts[phase], scale(lag, UNBALANCE[phase])),
     }),
@@ -105,10 +110,17 @@ function trueFlows(line: CompiledLine, frequencyHz: number, atMs: number): reado
 const DEAD: TerminalFlow = { amps: complex(0, 0), volts: complex(0, 0) };
 const UNBALANCE: Three<number> = [1.004, 0.995, 1.001];
 
-const piSection = (branch: LineTruth['branches'][number], frequencyHz: number): PiSection => ({
-  impedanceOhm: complex(branch.resistanceOhm, (branch.reactanceOhm * frequencyHz) / 50),
-  susceptanceS: 2 * Math.PI * frequencyHz * branch.capacitanceNf * 1e-9,
-});
+function sectionsOf(
+  { branches, capacitanceDrift }: LineTruth,
+  frequencyHz: number,
+  { phase, sinceEpochMs }: { readonly phase: 0 | 1 | 2; readonly sinceEpochMs: number },
+): readonly PiSection[] {
+  const grown = capacitanceDrift?.phase === phase ? 1 + ramped(capacitanceDrift, sinceEpochMs) : 1;
+  return branches.map((branch) => ({
+    impedanceOhm: complex(branch.resistanceOhm, (branch.reactanceOhm * frequencyHz) / 50),
+    susceptanceS: 2 * Math.PI * frequencyHz * branch.capacitanceNf * grown * 1e-9,
+  }));
+}
 
 function phaseFlow(
   truth: LineTruth,
@@ -142,7 +154,7 @@ function terminalState(
 ): TerminalState {
   const seed = line.terminalSeeds[position]!;
   const clock = clockState(
-    { timeFrom: terminal.timeFrom, loss: terminal.clockLoss, seed },
+    { timeFrom: terminal.timeFrom, loss: terminal.clockLoss, drift: terminal.clockDrift, seed },
     { atMs, epochMs },
   );
   // The first terminal is the others' time reference.
@@ -170,8 +182,10 @@ function ctErrorAt(
   terminal: TerminalTruth,
   { phase, sinceEpochMs }: { readonly phase: 0 | 1 | 2; readonly sinceEpochMs: number },
 ): CtError {
-  const error = terminal.ctErrors[phase];
+  const replaced = terminal.replaced?.phase === phase ? terminal.replaced : undefined;
+  const isReplaced = replaced !== undefined && sinceEpochMs >= replaced.atDay * DAY_MS;
+  const error = isReplaced ? replaced.error : terminal.ctErrors[phase];
   if (ratioDrift === undefined || ratioDrift.terminal !== terminal.key || ratioDrift.phase !== phase)
     return error;
-  return { ...error, ratio: error.ratio + driftedRatio(ratioDrift, sinceEpochMs) };
+  return { ...error, ratio: error.ratio + ramped(ratioDrift, sinceEpochMs) };
 }

@@ -1,7 +1,9 @@
 import type { ChannelTruth } from './channel';
 import type { ClockLoss, TimeFrom } from './clock';
 import type { Three } from './complex';
+import type { Gap } from './gap';
 import type { LoadProfile } from './load';
+import type { Ramp } from './ramp';
 import type { TransformerTruth } from './transformer';
 
 /** A stretch of line, whole: ohms and nanofarads of the stretch, positive sequence. */
@@ -19,18 +21,23 @@ export type TerminalTruth = {
   readonly ctErrors: Three<CtError>;
   readonly timeFrom: TimeFrom;
   readonly clockLoss?: ClockLoss;
+  /** microseconds that its clock runs ahead, while it takes itself for right */
+  readonly clockDrift?: Ramp;
+  readonly replaced?: Replacement;
+  /** stretches of days without a message */
+  readonly gaps?: readonly Gap[];
   /** share of its messages that are lost before the broker */
   readonly missingShare: number;
 };
 
-/** A ratio error that grows evenly from one day to another, both counted from the site’s epoch. */
-export type RatioDrift = {
-  readonly terminal: string;
-  readonly phase: 0 | 1 | 2;
-  readonly perDay: number;
-  readonly fromDay: number;
-  readonly toDay: number;
-};
+/** A ratio error, per unit, that grows. */
+export type RatioDrift = Ramp & { readonly terminal: string; readonly phase: 0 | 1 | 2 };
+
+/** The capacitance of one phase that grows, per unit of what it was. */
+export type CapacitanceDrift = Ramp & { readonly phase: 0 | 1 | 2 };
+
+/** One phase's current transformer that gave way to another, on a day counted from the site’s epoch. */
+export type Replacement = { readonly phase: 0 | 1 | 2; readonly atDay: number; readonly error: CtError };
 
 /** All that is physically so about one line, and that no register records. */
 export type LineTruth = {
@@ -46,6 +53,7 @@ export type LineTruth = {
   readonly secondShare: number;
   readonly transformer?: TransformerTruth;
   readonly ratioDrift?: RatioDrift;
+  readonly capacitanceDrift?: CapacitanceDrift;
   readonly channel: ChannelTruth;
   readonly breakers: 'closed' | 'open';
   readonly hasVoltage: boolean;

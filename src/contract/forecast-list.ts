@@ -1,8 +1,11 @@
-import type { FollowUp, StandingVerdict } from './standing';
+import type { LineSummary } from './lines';
+import type { FollowUp, MarginRow, StandingVerdict } from './standing';
 
 /** One phase whose standing level rises, or stands beyond the near mark already. */
 export interface ForecastPhase {
   readonly verdict: StandingVerdict;
+  /** of the drift that counts; null where the level stands beyond the mark and does not rise */
+  readonly creepVerdict: MarginRow['creepVerdict'];
   /** daily standing levels of this phase, oldest first; null for days without */
   readonly dailyLevels: readonly { readonly day: string; readonly levelAmps: number | null }[];
 }
@@ -11,7 +14,7 @@ export interface ForecastLine {
   readonly key: string;
   readonly name: string;
   readonly voltageKv: number;
-  readonly substations: readonly { readonly key: string; readonly name: string }[];
+  readonly substations: LineSummary['substations'];
   readonly phases: readonly ForecastPhase[];
 }
 

@@ -7,7 +7,7 @@ import { RUNG_MS, rungStart } from './rung';
 const DAY_MS = RUNG_MS.day;
 
 /** How far back a look at the standing levels reaches. */
-export const HISTORY_DAYS = { drift: 365, step: 21 } as const;
+export const HISTORY_DAYS = { drift: 365, step: 60 } as const;
 
 /** The level rows that a look at a line's standing levels goes by. */
 export interface LineHistory {

@@ -25,6 +25,8 @@ export type WarningChange =
 export interface StandingFindings {
   readonly levelAmps: PerPhase<number | undefined>;
   readonly creep: readonly Creep[];
+  /** a step up that is recent and large enough to be told, if there is one */
+  readonly step: WarningCause | undefined;
 }
 
 /** Keeps watch over one line: the newest snapshot, the judgement, and the warnings that stand. */
@@ -105,7 +107,7 @@ export function watchFindings(
   const creep = findings.creep.find(({ verdict }) => verdict === 'creep');
   return turns(watch, atMs, {
     near: () => standingNear(watch, atMs, limits),
-    rising: () => creep && { basis: 'creep', creep },
+    rising: () => (creep === undefined ? findings.step : { basis: 'creep', creep }),
   });
 }
 

@@ -1,5 +1,5 @@
 import type { CompositionOnWire } from '../contract/composition';
-import type { StandingVerdict } from '../contract/standing';
+import type { StandingVerdict, StepOnWire } from '../contract/standing';
 import { pickupAmps } from '../protection/characteristic';
 import type { PhaseName } from '../protection/phase';
 import { type Composition, composition } from '../standing/composition';
@@ -15,6 +15,7 @@ import { creepOnWire } from './creep-on-wire';
 import { likelyCause } from './likely-cause';
 import { dailyLevels, lastDayOf, type LineHistory, rowsOf } from './line-history';
 import { emergencyUtilisation, expectedLevelAmps } from './line-model-of';
+import { phaseStep } from './phase-step';
 import { type RosterLine, type SchemeVersion, versionInForce } from './roster';
 
 const DAY_MS = 86_400_000;
@@ -24,18 +25,25 @@ const BEFORE_DAYS = 60;
 const HORIZON_DAYS = 365;
 const UTILISATION_DAYS = 7;
 
+/** Which phase is looked at, by what marks, and the step that an earlier look found: undefined when there was none. */
+export interface PhaseLook {
+  readonly phase: PhaseName;
+  readonly nearRatio: number;
+  readonly frequencyHz: number;
+  readonly knownStep: StepOnWire | null | undefined;
+}
+
 /** What the levels of one phase say at a moment. Pure: everything comes from the rows. */
-export function phaseVerdict(
-  line: RosterLine,
-  history: LineHistory,
-  { phase, nearRatio, frequencyHz }: { phase: PhaseName; nearRatio: number; frequencyHz: number },
-): StandingVerdict {
+export function phaseVerdict(line: RosterLine, history: LineHistory, look: PhaseLook): StandingVerdict {
+  const { phase, nearRatio, frequencyHz } = look;
   const { nowMs } = history;
   const version = versionInForce(line, nowMs);
   const pickup = version && pickupAmps(version.scheme.characteristic);
   const levelAmps = standingLevel24h(mediansOf(lastDayOf(history, phase)));
-  const windows = composedWindows(line, summedDays(history.days, phase), { nowMs, frequencyHz });
-  const drift = drifts(line, history, { phase, pickup, nearRatio, now: windows.now, frequencyHz });
+  const step = phaseStep(line, history, { phase, known: look.knownStep });
+  const markDays = knownMarks(line, step);
+  const windows = composedWindows(line, summedDays(history.days, phase), { nowMs, frequencyHz, markDays });
+  const drift = drifts(line, history, { phase, pickup, nearRatio, now: windows.now, markDays });
   const { cause, terminal } = likelyCause(windows.now.onWire, windows.before);
   const separated = windows.now.composition.kind === 'separated' ? windows.now.composition : undefined;
   const counted = drift.creepAtReference?.creep ?? drift.creep;
@@ -54,7 +62,7 @@ export function phaseVerdict(
     compositionBefore: windows.before,
     creep: drift.creep,
     creepAtReference: drift.creepAtReference,
-    step: null,
+    step,
     likelyCause: cause,
     causeTerminal: terminal,
     near: counted?.near ?? null,
@@ -74,7 +82,7 @@ interface Composed {
 function composedWindows(
   line: RosterLine,
   days: readonly SummedDay[],
-  { nowMs, frequencyHz }: { nowMs: number; frequencyHz: number },
+  { nowMs, frequencyHz, markDays }: { nowMs: number; frequencyHz: number; markDays: readonly number[] },
 ): { now: Composed; before: CompositionOnWire | null } {
   const today = Math.floor(nowMs / DAY_MS);
   const over = (from: number, to: number): Composed => {
@@ -85,14 +93,22 @@ function composedWindows(
     const onWire = compositionOnWire(found, window, { line: line.register, frequencyHz });
     return { composition: found, onWire, days: within };
   };
+  // a mark of the last month parts what it was from what it is: the composition of today begins after it
+  const newestMark = Math.max(-Infinity, ...markDays.filter((day) => day < today));
   const before = over(today - BEFORE_DAYS - COMPOSED_DAYS, today - BEFORE_DAYS);
   return {
-    now: over(today - COMPOSED_DAYS, today),
+    now: over(Math.max(today - COMPOSED_DAYS, newestMark + 1), today),
     before: before.composition.kind === 'separated' ? before.onWire : null,
   };
 }
 
-/** The drift as measured, and at one and the same load. A change of settings is a mark that no trend is fitted across. */
+/** Days that no trend and no composition is fitted across: a step, and a change of what the scheme does with its currents. */
+function knownMarks(line: RosterLine, step: StepOnWire | null): number[] {
+  const changes = line.versions.slice(1).map(({ fromMs }) => Math.floor(fromMs / DAY_MS));
+  return step === null ? changes : [...changes, Math.floor(Date.parse(step.at) / DAY_MS)];
+}
+
+/** The drift as measured, and at one and the same load. */
 function drifts(
   line: RosterLine,
   history: LineHistory,
@@ -101,12 +117,11 @@ function drifts(
     pickup: number | undefined;
     nearRatio: number;
     now: Composed;
-    frequencyHz: number;
+    markDays: readonly number[];
   },
 ): Pick<StandingVerdict, 'creep' | 'creepAtReference'> {
-  const { phase, pickup, nearRatio, now } = known;
+  const { phase, pickup, nearRatio, now, markDays } = known;
   if (pickup === undefined || line.obstacle !== undefined) return { creep: null, creepAtReference: null };
-  const markDays = line.versions.slice(1).map(({ fromMs }) => Math.floor(fromMs / DAY_MS));
   const plan = { pickupAmps: pickup, nearRatio, horizonDays: HORIZON_DAYS, markDays };
   const measured = watchedCreep(dailyLevels(rowsOf(history.days, phase)), plan);
   const creep = creepOnWire(measured.verdict, phase) ?? null;

@@ -13,7 +13,7 @@ import {
   readSnapshotFigures,
   readSnapshots,
 } from '../store/snapshots';
-import { minuteRows, summedBelow } from './window-rows';
+import { channelPathBelow, minuteRows, summedBelow } from './window-rows';
 import type { RosterLine } from './roster';
 import { RUNG_MS, rungRows, rungStart } from './rung';
 
@@ -67,7 +67,11 @@ async function rebuildFromFigures(
   await writeLevels(
     store,
     rung,
-    built.map((row) => ({ ...row, sums: summedBelow(below, row.phase) })),
+    built.map((row) => ({
+      ...row,
+      sums: summedBelow(below, row.phase),
+      channelPath: channelPathBelow(below, row.phase),
+    })),
   );
 }
 

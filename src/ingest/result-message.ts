@@ -73,6 +73,7 @@ function feedReason(line: RosterLine, cause: WarningCause): string | null {
     case 'utilisation':
     case 'standing level':
     case 'creep':
+    case 'step':
       return null;
   }
 }

@@ -38,6 +38,7 @@ export function rungRows(
     allCount: figures.length,
     disqualified,
     sums: null,
+    channelPath: null,
   }));
 }
 

@@ -1,10 +1,12 @@
 import type { PolygonOnWire } from '../contract/composition';
 import type { StandingVerdict } from '../contract/standing';
+import type { WarningCause } from '../contract/warning';
 import { perPhase, PHASES } from '../protection/phase';
 import type { Store } from '../store/client';
 import { replaceCreep } from '../store/levels';
-import { type VerdictRow, writeVerdicts } from '../store/standing';
+import { readVerdictsOfLine, type VerdictRow, writeVerdicts } from '../store/standing';
 import { readLineHistory } from './line-history';
+import { STEP_WARNING } from '../warnings/limits';
 import type { StandingFindings } from './line-watch';
 import { phaseVerdict } from './phase-verdict';
 import type { RosterLine } from './roster';
@@ -16,7 +18,11 @@ export async function renewFindings(
   { nowMs, nearRatio, frequencyHz }: { nowMs: number; nearRatio: number; frequencyHz: number },
 ): Promise<StandingFindings> {
   const history = await readLineHistory(store, line.id, nowMs);
-  const verdicts = perPhase((phase) => phaseVerdict(line, history, { phase, nearRatio, frequencyHz }));
+  const earlier = await readVerdictsOfLine(store, line.id);
+  const verdicts = perPhase((phase) => {
+    const knownStep = earlier.find((verdict) => verdict.phase === phase)?.step;
+    return phaseVerdict(line, history, { phase, nearRatio, frequencyHz, knownStep });
+  });
   // a drift with the growth of load counts only where the load can't be taken out of it
   const creep = PHASES.flatMap((phase) => driftThatCounts(verdicts[phase]) ?? []);
   await writeVerdicts(
@@ -24,11 +30,32 @@ export async function renewFindings(
     PHASES.map((phase) => verdictRow(line.id, verdicts[phase])),
   );
   await replaceCreep(store, line.id, { creep, computedAt: new Date(nowMs) });
-  return { levelAmps: perPhase((phase) => verdicts[phase].levelAmps ?? undefined), creep };
+  return {
+    levelAmps: perPhase((phase) => verdicts[phase].levelAmps ?? undefined),
+    creep,
+    step: stepThatCounts(
+      PHASES.map((phase) => verdicts[phase]),
+      nowMs,
+    ),
+  };
 }
 
 function driftThatCounts({ creep, creepAtReference, composition }: StandingVerdict) {
   return composition.kind === 'separated' ? creepAtReference?.creep : (creep ?? undefined);
+}
+
+/** The largest recent step up, as a cause for a warning. */
+function stepThatCounts(verdicts: readonly StandingVerdict[], nowMs: number): WarningCause | undefined {
+  const causes = verdicts.flatMap(({ phase, step, pickupAmps }) => {
+    if (step === null || pickupAmps === null) return [];
+    const { at, fromAmps, toAmps, channelPathChanged } = step;
+    const isRecent = nowMs - Date.parse(at) < STEP_WARNING.recentMs;
+    const isLarge = toAmps - fromAmps >= STEP_WARNING.leastShareOfPickup * pickupAmps;
+    return isRecent && isLarge
+      ? [{ basis: 'step', phase, at, fromAmps, toAmps, channelPathChanged } as const]
+      : [];
+  });
+  return causes.toSorted((one, other) => other.toAmps - other.fromAmps - (one.toAmps - one.fromAmps))[0];
 }
 
 function verdictRow(lineId: number, verdict: StandingVerdict): VerdictRow {

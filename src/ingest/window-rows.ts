@@ -2,6 +2,7 @@ import type { PhaseName } from '../protection/phase';
 import { shapeOf, totalOf } from '../standing/composition-sums';
 import { packSums, unpackSums } from '../store/composition-packing';
 import type { LevelRow } from '../store/levels';
+import { unpackMeasurements } from '../store/packing';
 import type { SnapshotRow } from '../store/snapshots';
 import type { RosterLine } from './roster';
 import { qualification, rungRows, rungStart } from './rung';
@@ -29,11 +30,25 @@ export function windowRows(
   const start = new Date(rungStart(rung, rows[0]!.at.getTime()));
   const { qualified } = qualification(rows, before, line.ratingAmps);
   const sums = snapshotSums(line, qualified);
+  const channelPath = channelPathOf(rows.at(-1)!);
   return rungRows({ lineId: line.id, start, ratingAmps: line.ratingAmps }, rows, before).map((row) => ({
     ...row,
     sums: sums === undefined ? null : packSums(sums[row.phase]),
+    channelPath,
   }));
 }
+
+/** The paths of the terminals' channels at an instant, in one word to compare by. */
+function channelPathOf(row: SnapshotRow): string | null {
+  const paths = unpackMeasurements(row.phasors, row.at).flatMap(({ terminalId, measurement: { channel } }) =>
+    channel === undefined ? [] : [`${terminalId}:${channel.path}`],
+  );
+  return paths.length === 0 ? null : paths.sort().join(' ');
+}
+
+/** The path that the newest row of the rung below says. */
+export const channelPathBelow = (below: readonly LevelRow[], phase: PhaseName): string | null =>
+  below.findLast((row) => row.phase === phase && row.channelPath !== null)?.channelPath ?? null;
 
 /** The minute rows of a stretch of raw rows. */
 export function minuteRows(

@@ -1,4 +1,4 @@
-import { conjugateProduct, minus, plus, scaled, times, ZERO } from './complex';
+import { conjugateProduct, plus, scaled, times, ZERO } from './complex';
 import type { Complex } from './complex';
 import {
   crossProduct,
@@ -79,12 +79,15 @@ export function shrunkCoefficients(
 
 /** Σ conj(x)·(D − fit) of every regressor: what a set of coefficients leaves over of these sums. */
 export function residualProducts(sums: CompositionSums, coefficients: readonly Complex[]): Complex[] {
-  return coefficients.map((_, i) =>
-    minus(
-      crossProduct(sums, i),
-      plus(...coefficients.map((coefficient, j) => times(normalProduct(sums, i, j), coefficient))),
-    ),
-  );
+  return coefficients.map((_, i) => {
+    let { re, im } = crossProduct(sums, i);
+    coefficients.forEach((coefficient, j) => {
+      const product = times(normalProduct(sums, i, j), coefficient);
+      re -= product.re;
+      im -= product.im;
+    });
+    return { re, im };
+  });
 }
 
 /**

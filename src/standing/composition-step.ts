@@ -25,7 +25,7 @@ export interface MovedTerm {
 /** A step of the composition. */
 export interface CompositionStep extends Step {
   /** The term in which it was seen first and the unit of `size` and `spread`; for the cause see `terms`. */
-  readonly seenIn: 'charging' | 'ratio' | 'angle';
+  readonly seenIn: 'ratio' | 'angle' | 'charging';
   /** Explanations, the best first. */
   readonly terms: readonly MovedTerm[];
   /** The best one, where it leaves clearly less over than the next; `undefined` where two do as well. */
@@ -73,10 +73,10 @@ export function compositionStep(
   const within = counted.filter(({ hour }) => hour >= from);
   const before = coefficientsOf(within.filter(({ hour }) => hour < watchedFrom));
   if (before === undefined) return stepVerdict([], plan) as CompositionStepVerdict;
-  const verdicts = (['ratio', 'angle', 'charging'] as const).flatMap((seenIn) => {
-    const series = deviationsIn(within, { seenIn, coefficients: before });
-    return series.length === 0 ? [] : [{ seenIn, verdict: stepVerdict(series, plan) }];
-  });
+  const series = deviations(within, before);
+  const verdicts = SEEN_IN.flatMap((seenIn) =>
+    series[seenIn].length === 0 ? [] : [{ seenIn, verdict: stepVerdict(series[seenIn], plan) }],
+  );
   let surest: { seenIn: CompositionStep['seenIn']; step: Step } | undefined;
   for (const { seenIn, verdict } of verdicts) {
     if (verdict.kind === 'too few hours') return verdict;
@@ -95,20 +95,30 @@ function coefficientsOf(hours: readonly HourSums[]): Complex[] | undefined {
   return fittedCoefficients(total) ?? shrunkCoefficients(total, { prior: none, weight: RIDGE });
 }
 
-/** Σ conj(x)·residue/Σ|x|² of every hour, with x the second terminal's current or the voltage. */
-function deviationsIn(
+const SEEN_IN = ['ratio', 'angle', 'charging'] as const;
+
+/**
+ * Σ conj(x)·residue/Σ|x|² of every hour: with x the second terminal's current its real and imaginary part, with x
+ * the voltage its imaginary part.
+ */
+function deviations(
   hours: readonly HourSums[],
-  { seenIn, coefficients }: { seenIn: CompositionStep['seenIn']; coefficients: readonly Complex[] },
-): HourlyValue[] {
-  return hours.flatMap(({ hour, sums }) => {
+  coefficients: readonly Complex[],
+): Record<CompositionStep['seenIn'], HourlyValue[]> {
+  const series: Record<CompositionStep['seenIn'], HourlyValue[]> = { ratio: [], angle: [], charging: [] };
+  for (const { hour, sums } of hours) {
+    const products = residualProducts(sums, coefficients);
     const { hasVoltage } = shapeOf(sums);
-    if (seenIn === 'charging' && !hasVoltage) return [];
-    const place = seenIn === 'charging' || !hasVoltage ? 0 : 1;
-    const squares = normalProduct(sums, place, place).re;
-    if (squares === 0) return [];
-    const product = residualProducts(sums, coefficients)[place]!;
-    return [{ hour, value: (seenIn === 'ratio' ? product.re : product.im) / squares }];
-  });
+    const second = hasVoltage ? 1 : 0;
+    const currents = normalProduct(sums, second, second).re;
+    if (currents > 0) {
+      series.ratio.push({ hour, value: products[second]!.re / currents });
+      series.angle.push({ hour, value: products[second]!.im / currents });
+    }
+    const voltages = hasVoltage ? normalProduct(sums, 0, 0).re : 0;
+    if (voltages > 0) series.charging.push({ hour, value: products[0]!.im / voltages });
+  }
+  return series;
 }
 
 function explained(

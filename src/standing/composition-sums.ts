@@ -60,9 +60,8 @@ export function shapeOf({ values }: CompositionSums): SumsShape {
 }
 
 /** How many regressors these sums have: V̄ where the shape has it, and every terminal but the first. */
-export function regressorCount(sums: CompositionSums): number {
-  const { terminalCount, hasVoltage } = shapeOf(sums);
-  return terminalCount - 1 + (hasVoltage ? 1 : 0);
+export function regressorCount({ values }: CompositionSums): number {
+  return values[AT.terminals]! - 1 + values[AT.voltage]!;
 }
 
 /** How many snapshots were summed. */

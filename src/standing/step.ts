@@ -40,16 +40,21 @@ export type StepVerdict =
 const WATCHED_HOURS = 96;
 const BASELINE_HOURS = 336;
 const BASELINE_LEAST = 120;
-const HOURS_AFTER_LEAST = 4;
+
+/** A change is told once so many hours have confirmed it, which also tell its cause and its hour. */
+const HOURS_AFTER_LEAST = 12;
+
+/** Below this size, in robust standard deviations, noise that lasts for days looks no different from a step. */
+const SIZE_LEAST = 5;
 
 /** Half of the least step that is looked for, in robust standard deviations. */
-const SLACK = 1;
+const SLACK = 2;
 
 /**
  * Decision limit of the sums for independent hours, in robust standard deviations. A sum of noise passes h about
  * once in e^(2·slack·h) hours; for noise that lasts, h grows by its long-run over its plain variance.
  */
-const DECISION = 9;
+const DECISION = 6;
 
 /** Makes the median absolute deviation the standard deviation of normal noise. */
 const MAD_TO_DEVIATION = 1.4826;
@@ -107,7 +112,7 @@ function stepWithin(series: readonly HourlyValue[], alarm: Alarm): StepVerdict {
   const deviations = series.map(({ value }) => (value - target) / spread);
   const noiseSquares = 1 - rho * rho || 1;
   let best: { place: number; share: number; gain: number } | undefined;
-  const last = Math.min(alarm.to, series.length - HOURS_AFTER_LEAST);
+  const last = Math.min(alarm.to, series.length - 2);
   for (let place = Math.max(2, alarm.from - RUN_MARGIN_HOURS); place <= last; place++) {
     const found = changeAt(deviations, { place, rho });
     if (best === undefined || found.gain > best.gain) best = { place, ...found };
@@ -115,10 +120,12 @@ function stepWithin(series: readonly HourlyValue[], alarm: Alarm): StepVerdict {
   if (best === undefined || best.gain <= driftGain(series, deviations, rho)) return { kind: 'no step' };
   const before = series.slice(0, best.place).map(({ value }) => value);
   const after = series.slice(best.place + 1).map(({ value }) => value);
+  const size = mannWhitney(before, after)!.shift;
+  if (after.length < HOURS_AFTER_LEAST || Math.abs(size) < SIZE_LEAST * spread) return { kind: 'no step' };
   return {
     kind: 'step',
     atHour: series[best.place]!.hour + 1 - best.share,
-    size: mannWhitney(before, after)!.shift,
+    size,
     spread,
     rho,
     hoursAfter: after.length,

@@ -1,6 +1,6 @@
 import type { LineSummary } from '../contract/lines';
 import type { Warning, WarningCause } from '../contract/warning';
-import { ampsText, durationText, percentOfMarkText, percentText } from './figures';
+import { ampsText, durationText, instantText, percentOfMarkText, percentText } from './figures';
 import { creepForecastWords, slopeWords } from './forecast';
 import { listed, terminalName } from './line-words';
 import { worstPhase } from './phase-condition';
@@ -36,6 +36,11 @@ export function causeWords(cause: WarningCause, context: WordsContext): ReasonWo
       return {
         lead: `Phase ${context.site.phaseLetters[cause.creep.phase]} rises ${slopeWords(cause.creep)}.`,
         rest: ` ${creepForecastWords(cause.creep, null, context)}`,
+      };
+    case 'step':
+      return {
+        lead: `Phase ${context.site.phaseLetters[cause.phase]} stepped from ${ampsText(cause.fromAmps)} to ${ampsText(cause.toAmps)}`,
+        rest: ` at ${instantText(cause.at, context.nowMs, context.site.timeZone)}${cause.channelPathChanged ? ', when the channel took another path' : ''}.`,
       };
     case 'terminal silent':
       return ends(cause.terminals, context, { one: 'is silent', many: 'are silent' });

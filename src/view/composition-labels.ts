@@ -41,11 +41,13 @@ const HALF_HEIGHT_PX = 7.5;
 const GAP_PX = 3;
 const EDGE_PX = 2;
 /** Words further from their side than this are joined to it. */
-const LEADER_BEYOND_PX = 17;
+const LEADER_BEYOND_PX = 11;
 const ALONG = [0.5, 0.35, 0.65, 0.15, 0.85];
 const AWAY_PX = [6, 12, 22, 36, 52];
 const GRID_PX = 7;
 const CROSSING_COST = 60;
+/** Words nearer to another side than to their own would be taken for its name. */
+const CONFUSED_COST = 9;
 
 /**
  * Places for all the labels, the shortest side first since it has the least room. `kept` are rectangles that no
@@ -76,8 +78,15 @@ function bestPlace(label: SideLabel, { sides, taken, box }: Surroundings): Recta
   const rectangle = ({ x, y }: PixelPoint): Rectangle => ({ x, y, halfWidth, halfHeight: HALF_HEIGHT_PX });
   const isFree = (place: Rectangle) =>
     isInside(place, box) && taken.every((other) => !overlap(place, other, GAP_PX));
-  const cost = (place: Rectangle) =>
-    CROSSING_COST * sides.filter((side) => crosses(side, place)).length + gapTo(label.beside, place);
+  const others = sides.filter((side) => !isSame(side, label.beside));
+  const cost = (place: Rectangle) => {
+    const own = gapTo(label.beside, place);
+    return (
+      CROSSING_COST * sides.filter((side) => crosses(side, place)).length +
+      CONFUSED_COST * others.filter((side) => gapTo(side, place) < own).length +
+      own
+    );
+  };
   const near = besideSide(label.beside, halfWidth).map(rectangle).filter(isFree);
   const open = near.some((place) => sides.every((side) => !crosses(side, place)))
     ? near
@@ -148,12 +157,21 @@ function crosses({ from, to }: PixelSide, { x, y, halfWidth, halfHeight }: Recta
   return enters < leaves;
 }
 
-/** How far the nearest edge of a rectangle is from the middle of a side. */
+const isSame = (one: PixelSide, other: PixelSide): boolean =>
+  one.from.x === other.from.x &&
+  one.from.y === other.from.y &&
+  one.to.x === other.to.x &&
+  one.to.y === other.to.y;
+
+/** How far a rectangle is from a side, going by points along it. */
 function gapTo({ from, to }: PixelSide, { x, y, halfWidth, halfHeight }: Rectangle): number {
-  const middle = { x: (from.x + to.x) / 2, y: (from.y + to.y) / 2 };
-  return Math.hypot(
-    Math.max(0, Math.abs(middle.x - x) - halfWidth),
-    Math.max(0, Math.abs(middle.y - y) - halfHeight),
+  return Math.min(
+    ...ALONG.map((share) =>
+      Math.hypot(
+        Math.max(0, Math.abs(from.x + share * (to.x - from.x) - x) - halfWidth),
+        Math.max(0, Math.abs(from.y + share * (to.y - from.y) - y) - halfHeight),
+      ),
+    ),
   );
 }
 

@@ -94,49 +94,64 @@ function ampsInterval(
   return intervalText(limits, unit === 'amperes' ? 1 : 4);
 }
 
-/** What was measured held against what the register leads one to expect. */
+/** A finding of one window, and whether its whole interval lies outside of what is expected. */
+export interface AgainstCell {
+  readonly words: string;
+  readonly beyond: boolean;
+}
+
+/** What was measured in two windows, held against what the register leads one to expect. */
 export interface AgainstRow {
   readonly name: string;
-  readonly now: string;
-  readonly before: string;
-  /** the whole interval now lies outside of what is expected */
-  readonly beyond: boolean;
+  readonly now: AgainstCell;
+  readonly before: AgainstCell;
 }
 
 /** Charging against the line's constants, each end's mismatch against the class budget, and its angle as channel asymmetry. */
 export function againstRows(now: Window, before: Window, context: CauseContext): AgainstRow[] {
   const told = [now, before].filter(isSeparated);
   const terminals = [...new Set(told.flatMap(({ mismatches }) => mismatches.map((each) => each.terminal)))];
-  const mismatchOf = (window: Window, terminal: string) =>
-    isSeparated(window) ? window.mismatches.find((each) => each.terminal === terminal) : undefined;
-  const row = (name: string, of: (mismatch: MismatchOnWire) => string, terminal: string) => {
-    const [one, other] = [mismatchOf(now, terminal), mismatchOf(before, terminal)];
-    return { name, now: one === undefined ? DASH : of(one), before: other === undefined ? DASH : of(other) };
+  const row = (name: string, terminal: string, of: (mismatch: MismatchOnWire) => AgainstCell) => {
+    const cell = (window: Window) => {
+      const mismatch = isSeparated(window)
+        ? window.mismatches.find((each) => each.terminal === terminal)
+        : undefined;
+      return mismatch === undefined ? NOT_TOLD : of(mismatch);
+    };
+    return { name, now: cell(now), before: cell(before) };
   };
   return [
     ...chargingRow(now, before, context),
     ...terminals.flatMap((terminal) => {
       const end = terminalName(terminal, context.substations);
-      const present = mismatchOf(now, terminal);
       return [
-        { ...row(`ratio of ${end}`, ratioWords, terminal), beyond: present?.ratioBudget === 'beyond' },
-        { ...row(`angle of ${end}`, angleWords, terminal), beyond: present?.angleBudget === 'beyond' },
-        { ...row('that angle as channel asymmetry', asymmetryWords, terminal), beyond: false },
+        row(`ratio of ${end}`, terminal, ratioCell),
+        row(`angle of ${end}`, terminal, angleCell),
+        row('that angle as channel asymmetry', terminal, asymmetryCell),
       ];
     }),
   ];
 }
 
-const ratioWords = ({ ratio, ratioBudget }: MismatchOnWire): string => {
+const NOT_TOLD: AgainstCell = { words: DASH, beyond: false };
+
+const ratioCell = ({ ratio, ratioBudget }: MismatchOnWire): AgainstCell => {
   const percent = { value: 100 * ratio.value, low: 100 * ratio.low, high: 100 * ratio.high };
-  return `${signedText(percent.value, 2)}\u00a0% (${intervalText(percent, 2)}), ${budgetWords(ratioBudget)}`;
+  return {
+    words: `${signedText(percent.value, 2)}\u00a0% (${intervalText(percent, 2)}), ${budgetWords(ratioBudget)}`,
+    beyond: ratioBudget === 'beyond',
+  };
 };
 
-const angleWords = ({ angleDeg, angleBudget }: MismatchOnWire): string =>
-  `${signedText(angleDeg.value, 2)}° (${intervalText(angleDeg, 2)}), ${budgetWords(angleBudget)}`;
+const angleCell = ({ angleDeg, angleBudget }: MismatchOnWire): AgainstCell => ({
+  words: `${signedText(angleDeg.value, 2)}° (${intervalText(angleDeg, 2)}), ${budgetWords(angleBudget)}`,
+  beyond: angleBudget === 'beyond',
+});
 
-const asymmetryWords = ({ asymmetryMs }: MismatchOnWire): string =>
-  `${signedText(asymmetryMs.value, 3)}\u00a0ms (${intervalText(asymmetryMs, 3)})`;
+const asymmetryCell = ({ asymmetryMs }: MismatchOnWire): AgainstCell => ({
+  words: `${signedText(asymmetryMs.value, 3)}\u00a0ms (${intervalText(asymmetryMs, 3)})`,
+  beyond: false,
+});
 
 const signedText = (value: number, digits: number): string => {
   const text = value.toFixed(digits);
@@ -153,7 +168,8 @@ function chargingRow(now: Window, before: Window, context: CauseContext): Agains
   };
   const [one, other] = [words(now), words(before)];
   if (one === undefined && other === undefined) return [];
-  return [{ name: 'charging', now: one ?? DASH, before: other ?? DASH, beyond: false }];
+  const cell = (found: string | undefined) => ({ words: found ?? DASH, beyond: false });
+  return [{ name: 'charging', now: cell(one), before: cell(other) }];
 }
 
 /** How far measured charging is from the expected one, said only where its interval leaves no doubt. */

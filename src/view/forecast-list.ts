@@ -1,5 +1,6 @@
 import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
 import type { Cause } from '../contract/standing';
+import type { ForecastDatesOnWire } from '../contract/warning';
 import type { ForecastAddress } from './forecast-query';
 
 /** Where a line stands: beyond the near mark, on its way there, or rising without getting near it. */
@@ -15,9 +16,9 @@ export interface ForecastRow {
 
 const RANK: Readonly<Record<ForecastPlace, number>> = { beyond: 0, coming: 1, 'within margin': 2 };
 
-export function phasePlace({ verdict }: ForecastPhase, nearRatio: number): ForecastPlace {
+export function phasePlace({ verdict, creepVerdict }: ForecastPhase, nearRatio: number): ForecastPlace {
   if (verdict.shareOfPickup !== null && verdict.shareOfPickup >= nearRatio) return 'beyond';
-  return creepOf(verdict)?.verdict === 'creep' ? 'coming' : 'within margin';
+  return creepVerdict === 'creep' ? 'coming' : 'within margin';
 }
 
 /** The drift that counts: at reference load where there is one, so that load and season are not in it. */
@@ -36,6 +37,10 @@ export function forecastRow(line: ForecastLine, nearRatio: number): ForecastRow 
   );
   return { line, place: phasePlace(phase!, nearRatio), phase: phase!, others };
 }
+
+/** The dates that count where the line stands: of the pickup once the near mark is passed. */
+export const shownDates = ({ phase: { verdict }, place }: ForecastRow): ForecastDatesOnWire | null =>
+  place === 'beyond' ? verdict.pickup : verdict.near;
 
 /** A date that is not within reach stands behind every one that is. */
 const far = (day: string | null | undefined): string => day ?? '9999';

@@ -2,7 +2,7 @@ import type { CompositionOnWire, EstimateOnWire } from '../contract/composition'
 import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
 import type { StandingVerdict, StepOnWire } from '../contract/standing';
 import { ampsText, dateText, percentText, timeText } from './figures';
-import { forecastWords, slopeWords } from './forecast';
+import { forecastWords, halfMonthWords, slopeWords } from './forecast';
 import { creepOf, phasePlace, type ForecastSections } from './forecast-list';
 import { listed, terminalName } from './line-words';
 import { capital, countWords } from './margin-sentence';
@@ -31,11 +31,11 @@ export function phaseWords(phase: ForecastPhase, context: ForecastContext): Fore
   };
 }
 
-function leadWords({ verdict }: ForecastPhase, { site }: ForecastContext): string {
+function leadWords({ verdict, creepVerdict }: ForecastPhase, { site }: ForecastContext): string {
   const phase = `Phase ${site.phaseLetters[verdict.phase]}`;
-  const creep = creepOf(verdict);
+  const creep = creepVerdict === null ? null : creepOf(verdict);
   if (creep !== null) return `${phase} rises ${slopeWords(creep)}${atReference(verdict)}.`;
-  return `${phase} stands at ${percentText(verdict.shareOfPickup)} of the pickup.`;
+  return `${phase} stands at ${percentText(verdict.shareOfPickup)} of the pickup, beyond the near mark.`;
 }
 
 const atReference = ({ creepAtReference }: StandingVerdict): string =>
@@ -43,12 +43,13 @@ const atReference = ({ creepAtReference }: StandingVerdict): string =>
 
 function whenWords(phase: ForecastPhase, { site, nowMs }: ForecastContext): string {
   const { verdict } = phase;
-  const rises = creepOf(verdict) !== null;
+  const rises = phase.creepVerdict !== null;
   if (phasePlace(phase, site.nearRatio) !== 'beyond')
     return `Near mark ${verdict.near === null ? 'not within five years' : forecastWords(verdict.near, nowMs)}.`;
-  const level = `${ampsText(verdict.levelAmps)} of ${ampsText(verdict.pickupAmps)}, ${percentText(verdict.shareOfPickup)}`;
-  if (!rises || verdict.pickup === null) return `Beyond the near mark: ${level}; it does not rise further.`;
-  return `Beyond the near mark: ${level}; pickup ${forecastWords(verdict.pickup, nowMs)}.`;
+  const level = `${ampsText(verdict.levelAmps)} of ${ampsText(verdict.pickupAmps)}`;
+  if (!rises) return `${capital(level)}; it does not rise further.`;
+  const pickup = verdict.pickup === null ? 'not within five years' : forecastWords(verdict.pickup, nowMs);
+  return `It is beyond the near mark, at ${percentText(verdict.shareOfPickup)} of the pickup: ${level}. Pickup ${pickup}.`;
 }
 
 /** "Stepped from 12 A to 21 A on 4 Nov 2026, 13:00: angle mismatch; the channel’s path changed at the same time." */
@@ -128,15 +129,14 @@ const meet = (one: EstimateOnWire, other: EstimateOnWire): boolean =>
   one.low <= other.high && other.low <= one.high;
 
 /** The head of the page: who is beyond, who is coming within a year, and who stays within margin. */
-export function forecastSentence(sections: ForecastSections) {
+export function forecastSentence(sections: ForecastSections, nowMs: number) {
   const { beyond, coming, 'within margin': within } = sections;
-  const lines = (count: number) => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
   return {
     beyond:
       beyond.length === 0
         ? undefined
         : capital(`${lines(beyond.length)} ${beyond.length === 1 ? 'stands' : 'stand'} beyond the near mark`),
-    coming: coming.length === 0 ? undefined : capital(`${lines(coming.length)} on the way there`),
+    coming: coming.length === 0 ? undefined : capital(comingWords(coming, nowMs)),
     rest:
       beyond.length + coming.length > 0
         ? undefined
@@ -146,6 +146,17 @@ export function forecastSentence(sections: ForecastSections) {
   };
 }
 
+const lines = (count: number): string => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
+
+function comingWords(coming: ForecastSections['coming'], nowMs: number): string {
+  const first = coming
+    .flatMap(({ phase }) => phase.verdict.near?.likely ?? [])
+    .reduce((one, other) => (other < one ? other : one), '9999');
+  const many = `${lines(coming.length)} ${coming.length === 1 ? 'is' : 'are'} on the way there`;
+  if (first === '9999') return many;
+  return `${many}, ${coming.length === 1 ? 'likely' : 'the first likely'} in ${halfMonthWords(first, nowMs)}`;
+}
+
 /** What the list does not show: lines that are steady, not known yet, or left out. */
 export function unlistedWords(counts: {
   readonly steadyCount: number;
@@ -153,14 +164,11 @@ export function unlistedWords(counts: {
   readonly leftOutCount: number;
 }): string[] {
   const { steadyCount, unknownCount, leftOutCount } = counts;
-  const lines = (count: number) => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
   return [
     steadyCount === 0
       ? undefined
       : `${capital(lines(steadyCount))} ${steadyCount === 1 ? 'shows' : 'show'} no significant rise`,
-    unknownCount === 0
-      ? undefined
-      : `of ${lines(unknownCount)} nothing has been computed yet`,
+    unknownCount === 0 ? undefined : `of ${lines(unknownCount)} nothing has been computed yet`,
     leftOutCount === 0
       ? undefined
       : `${lines(leftOutCount)} less urgent than these ${leftOutCount === 1 ? 'is' : 'are'} left out here: Margins has all`,

@@ -80,7 +80,7 @@ export function comparisonSentence(
 const daysWords = (days: number): string => `${days} ${days === 1 ? 'day' : 'days'}`;
 const digitsOf = (amps: number): number => (amps < 9.95 ? 1 : 0);
 const signedAmps = (amps: number): string => `${amps < 0 ? '−' : '+'}${Math.abs(amps).toFixed(1)}\u00a0A`;
-const pWords = (p: number): string => (p < 0.0001 ? 'p < 0.0001' : `p = ${p.toFixed(4)}`);
+const pWords = (p: number): string => (p < 0.0001 ? 'p\u00a0<\u00a00.0001' : `p\u00a0=\u00a0${p.toFixed(4)}`);
 
 const CAUSES = ['charging', 'ratio', 'angle', 'rest'] as const satisfies readonly PolygonCause[];
 
@@ -102,7 +102,7 @@ export function comparisonTable(
       amps('shift'),
       amps('shift from'),
       amps('shift to'),
-      { kind: 'figure', head: 'p', digits: 5 },
+      { kind: 'text', head: 'p' },
       ...CAUSES.flatMap((cause) => [amps(`${cause} before`), amps(`${cause} after`)]),
     ],
     rows: phases.map(({ phase, before, after, test }) => [
@@ -114,7 +114,7 @@ export function comparisonTable(
       test?.shiftAmps.value ?? null,
       test?.shiftAmps.low ?? null,
       test?.shiftAmps.high ?? null,
-      test?.pTwoSided ?? null,
+      test === null ? null : String(Number(test.pTwoSided.toPrecision(2))),
       ...CAUSES.flatMap((cause) => [sideAmps(before.composition, cause), sideAmps(after.composition, cause)]),
     ]),
   };

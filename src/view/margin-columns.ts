@@ -143,7 +143,7 @@ export function marginColumnsOf(asked: string | null): readonly MarginColumn[] {
 const orDash = (text: string): string => (text === NOT_COMPUTABLE ? '–' : text);
 
 /** A row's figures as they stand in the list. */
-export function marginText(row: MarginRow, column: MarginColumn): string {
+export function marginText(row: MarginRow, column: MarginColumn, nearRatio: number): string {
   switch (column) {
     case 'share':
       return orDash(percentOfMarkText(row.shareOfPickup));
@@ -166,7 +166,7 @@ export function marginText(row: MarginRow, column: MarginColumn): string {
     case 'creep':
       return creepText(row);
     case 'forecast':
-      return forecastText(row);
+      return forecastText(row, nearRatio);
   }
 }
 
@@ -175,8 +175,9 @@ function creepText({ creepAmpsPerMonth }: MarginRow): string {
   return `${creepAmpsPerMonth >= 0 ? '+' : ''}${ampsText(creepAmpsPerMonth)}`;
 }
 
-/** "12 Feb 2027"; what rises and does not get there within five years says so. */
-function forecastText({ near, creepVerdict }: MarginRow): string {
+/** "12 Feb 2027", "passed"; what rises and does not get there within five years says so. */
+function forecastText({ near, creepVerdict, shareOfPickup }: MarginRow, nearRatio: number): string {
+  if (shareOfPickup !== null && shareOfPickup >= nearRatio) return 'passed';
   if (near !== null && near.likely !== null) return dateText(`${near.likely}T12:00:00Z`, 'UTC');
   return creepVerdict === null ? '–' : 'beyond 5 years';
 }

@@ -33,3 +33,6 @@ export function warningLimits({
     blindAfterMs: PERIODS_MISSED * periodMs + periodMs + latenessMs,
   };
 }
+
+/** A step up raises a warning while it is recent, and when it takes a noticeable share of the pickup. */
+export const STEP_WARNING = { recentMs: 7 * 86_400_000, leastShareOfPickup: 0.1 } as const;

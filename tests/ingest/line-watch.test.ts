@@ -231,7 +231,7 @@ describe('a standing level against the pickup', () => {
   const found = (levelAmps: number) =>
     watchFindings(
       watch,
-      { levelAmps: { a: 10, b: levelAmps, c: 20 }, creep: [] },
+      { levelAmps: { a: 10, b: levelAmps, c: 20 }, creep: [], step: undefined },
       { atMs: nowMs, limits: LIMITS },
     );
 
@@ -278,9 +278,23 @@ describe('creep', () => {
   const found = (...drifts: Creep[]) =>
     watchFindings(
       watch,
-      { levelAmps: { a: 10, b: 40, c: 12 }, creep: drifts },
+      { levelAmps: { a: 10, b: 40, c: 12 }, creep: drifts, step: undefined },
       { atMs: nowMs, limits: LIMITS },
     );
+
+  it('by a recent step opens rising as well, and names it', () => {
+    const step = {
+      basis: 'step',
+      phase: 'a',
+      at: '2026-03-01T10:00:00.000Z',
+      fromAmps: 25,
+      toAmps: 56,
+      channelPathChanged: true,
+    } as const;
+    const levelAmps = { a: 56, b: 40, c: 12 };
+    const changes = watchFindings(watch, { levelAmps, creep: [], step }, { atMs: nowMs, limits: LIMITS });
+    expect(changes).toEqual([{ turn: 'opens', kind: 'rising', atMs: nowMs, cause: step }]);
+  });
 
   it('opens rising, and its end returns it', () => {
     expect(found(creep('creep'))).toEqual([

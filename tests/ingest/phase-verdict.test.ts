@@ -4,7 +4,7 @@ import { demoHistoryOf, demoRosterLine } from './demo-history';
 
 // midnight, so that the history holds whole days
 const NOW_MS = Date.UTC(2026, 2, 2);
-const plan = { nearRatio: 0.7, frequencyHz: 50 } as const;
+const plan = { nearRatio: 0.7, frequencyHz: 50, knownStep: undefined } as const;
 
 function verdictsOf(key: string) {
   const line = demoRosterLine(key);
@@ -70,4 +70,37 @@ describe('what can’t be told', () => {
     });
     expect([likelyCause, emergencyUtilisation]).toEqual(['not told', null]);
   });
+});
+
+describe('the story of a channel that took another path', () => {
+  const of = verdictsOf('fennick-low-pell');
+
+  it.each(['a', 'b', 'c'] as const)(
+    'is told in phase %s: when, how much, and that the channel moved',
+    (phase) => {
+      const { step } = of(phase);
+      const nineDaysAgo = NOW_MS - 9 * 86_400_000;
+      expect(Math.abs(Date.parse(step!.at) - nineDaysAgo)).toBeLessThanOrEqual(3_600_000);
+      expect(step!.toAmps - step!.fromAmps).toBeGreaterThan(20);
+      expect(step).toMatchObject({ cause: 'angle mismatch', terminal: 'low-pell', channelPathChanged: true });
+    },
+  );
+
+  it('parts the composition: what stands now is not mixed with what stood before', () => {
+    const { composition } = of('a');
+    if (composition.kind !== 'separated') throw new Error(composition.reason);
+    expect(composition.mismatches[0]?.angleBudget).toBe('beyond');
+    expect(Math.abs(composition.chargingAmps!.value - composition.expectedChargingAmps!)).toBeLessThan(2);
+  });
+});
+
+describe('a line that stays as it is', () => {
+  it.each(['brindle-marrow-gate', 'quillby-hask-1', 'skelder-low-pell-1'])(
+    '%s has no step and no drift',
+    (key) => {
+      const of = verdictsOf(key);
+      for (const phase of ['a', 'b', 'c'] as const)
+        expect([of(phase).step, of(phase).creepAtReference], phase).toEqual([null, null]);
+    },
+  );
 });

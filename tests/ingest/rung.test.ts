@@ -60,6 +60,7 @@ describe('the level rows of a window', () => {
       allCount: 5,
       disqualified: {},
       sums: null,
+      channelPath: null,
     });
     expect([b?.medianAmps, b?.meanRestraintAmps]).toEqual([4, 410]);
     expect([c?.medianAmps, c?.greatestUtilisation]).toEqual([5, 7 / 120]);

@@ -40,11 +40,11 @@ const results = new Map(
 );
 const siteOver = (over: typeof store) =>
   ({
-  store: over,
-  now: () => NOW_MS,
-  live: { results: () => results },
-  settings: { NEAR_RATIO: 0.7, PHASE_LETTERS: 'L1,L2,L3', SITE_TIME_ZONE: 'Europe/Berlin' },
-}) as unknown as Site;
+    store: over,
+    now: () => NOW_MS,
+    live: { results: () => results },
+    settings: { NEAR_RATIO: 0.7, PHASE_LETTERS: 'L1,L2,L3', SITE_TIME_ZONE: 'Europe/Berlin' },
+  }) as unknown as Site;
 const site = siteOver(store);
 const largeSite = siteOver(largeStore);
 
@@ -53,7 +53,12 @@ beforeAll(async () => {
   await storedFleet(largeStore, MANY_LINES);
 });
 
-async function called(endpoint: typeof getMargins, query: string, role: Role | undefined = 'engineer', of = site) {
+async function called(
+  endpoint: typeof getMargins,
+  query: string,
+  role: Role | undefined = 'engineer',
+  of = site,
+) {
   const url = new URL(`https://tareline.example/api/margins${query}`);
   const person = role && { id: 'p1', email: 'mira@tareline.example', name: 'Mira Holt', role };
   return (await endpoint({ url, locals: { site: of, person } } as unknown as APIContext)) as Response;

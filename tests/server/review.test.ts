@@ -224,6 +224,7 @@ describe('what a review knows of a line', () => {
       allCount: 1_800,
       disqualified: null,
       sums: null,
+      channelPath: null,
     });
     await writeLevels(store, 'hour', [hour(0, 200, 300), hour(1, 400, 100), hour(2, null, 0)]);
     const known = await readReviewLine(site, line.key);

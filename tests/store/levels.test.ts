@@ -34,6 +34,7 @@ const level = (hour: number, phase: 'a' | 'b' | 'c', medianAmps: number | null, 
   allCount: 1_800,
   disqualified: { unsteady: 3 },
   sums: null,
+  channelPath: '1:main 2:main',
 });
 const hours = (from: number, to: number, lineIds = [7]) =>
   readLevels(store, 'hour', {

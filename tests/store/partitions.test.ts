@@ -37,6 +37,7 @@ const hold = (...days: string[]) =>
       allCount: 1,
       disqualified: {},
       sums: null,
+      channelPath: null,
     })),
   );
 

@@ -44,6 +44,7 @@ const level = (startMs: number, of: LevelRow['phase'], medianAmps: number | null
   greatestUtilisation: null,
   disqualified: {},
   sums: null,
+  channelPath: null,
   qualifiedCount: 1,
   allCount: 1,
 });

@@ -17,6 +17,7 @@ const level = (hour: number, medianAmps: number | null, phase: Level['phase'] = 
   meanThroughAmps: 500,
   greatestUtilisation: 0.3,
   qualifiedCount: medianAmps === null ? 0 : 1_700,
+  disqualified: null,
   allCount: 1_800,
 });
 const window = { fromMs: FROM_MS, toMs: FROM_MS + 10 * HOUR_MS };

@@ -1,12 +1,14 @@
-import type { AgainstRow } from '../../view/composition-rows';
+import type { AgainstCell, AgainstRow } from '../../view/composition-rows';
 
 interface Props {
   readonly rows: readonly AgainstRow[];
   readonly heads: readonly [string, string];
+  /** which of the two is history */
+  readonly past: 'first' | 'second';
 }
 
-/** What was measured held against the register. */
-export function AgainstTable({ rows, heads }: Props) {
+/** What was measured held against the register. On a narrow page each row is a small block of its own. */
+export function AgainstTable({ rows, heads, past }: Props) {
   if (rows.length === 0) return null;
   return (
     <table className="figures max-sm:block">
@@ -27,16 +29,22 @@ export function AgainstTable({ rows, heads }: Props) {
             <th scope="row" className="max-sm:block max-sm:border-0 max-sm:p-0">
               {row.name}
             </th>
-            <td className={`max-sm:block max-sm:border-0 max-sm:p-0 ${row.beyond ? 'font-semibold' : ''}`}>
-              {row.now}
-            </td>
-            <td className="text-ink-2 max-sm:block max-sm:border-0 max-sm:p-0">
-              <span className="sm:hidden">{heads[1]}: </span>
-              {row.before}
-            </td>
+            <Cell cell={row.now} head={heads[0]} isPast={past === 'first'} />
+            <Cell cell={row.before} head={heads[1]} isPast={past === 'second'} />
           </tr>
         ))}
       </tbody>
     </table>
+  );
+}
+
+function Cell({ cell, head, isPast }: { cell: AgainstCell; head: string; isPast: boolean }) {
+  return (
+    <td
+      className={`max-sm:block max-sm:border-0 max-sm:p-0 ${isPast ? 'text-ink-2' : ''} ${cell.beyond ? 'font-semibold' : ''}`}
+    >
+      <span className="font-normal text-ink-2 sm:hidden">{head}: </span>
+      {cell.words}
+    </td>
   );
 }

@@ -92,7 +92,7 @@ function CausesPanel({ comparison, line, site, phase, onPhase }: CausesProps) {
             marked={undefined}
           />
           <div>
-            <AgainstTable rows={againstRows(before, after, context)} heads={HEADS} />
+            <AgainstTable rows={againstRows(before, after, context)} heads={HEADS} past="first" />
             <p className="mt-2 text-caption text-ink-2">
               Before: {qualityWords(before, context)}. After: {qualityWords(after, context)}. In brackets and
               below figures: 95 % intervals.

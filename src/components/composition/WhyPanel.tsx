@@ -127,7 +127,7 @@ function Told({ line, site, unit, phase, verdict, composition }: ToldProps) {
         />
       </div>
       <div className="mt-3">
-        <AgainstTable rows={againstRows(composition, before, context)} heads={HEADS} />
+        <AgainstTable rows={againstRows(composition, before, context)} heads={HEADS} past="second" />
       </div>
       <p className="mt-2 text-caption text-ink-2">
         {`Now: ${qualityWords(composition, context)}.`}

@@ -21,9 +21,9 @@ export function MarginHead({ address }: { address: MarginAddressState }) {
               key={group}
               scope="colgroup"
               colSpan={columns.length}
-              className="border-b-0! pb-0! pl-3! text-right!"
+              className="border-b-0! pr-0! pb-0! pl-3!"
             >
-              {group}
+              <span className="block border-b border-hairline text-right">{group}</span>
             </th>
           ),
         )}

@@ -1,4 +1,5 @@
 import { memo } from 'react';
+import type { Condition } from '../../contract/condition';
 import type { Result } from '../../contract/result';
 import type { MarginRow } from '../../contract/standing';
 import { kilovoltsText } from '../../view/figures';
@@ -101,7 +102,7 @@ function ShareCell({ row, nearRatio }: { row: MarginRow; nearRatio: number }) {
         >
           {near && <ConditionShape condition="near" />}
           {near && <span className="sr-only">beyond the near mark, </span>}
-          {marginText(row, 'share')}
+          {marginText(row, 'share', nearRatio)}
         </span>
       </div>
     </td>
@@ -114,36 +115,53 @@ interface FigureCellProps {
   nearRatio: number;
 }
 
+/** What a figure says beside itself: with a shape and a word, never by colour alone. */
+interface Remark {
+  readonly condition: Condition;
+  readonly words: string;
+  readonly ink: string;
+}
+
 function FigureCell({ column, row, nearRatio }: FigureCellProps) {
-  const rising = column === 'creep' && row.creepVerdict === 'creep';
-  const near = isNear(column, row, nearRatio);
-  const ink = rising ? 'font-semibold text-rising' : near ? 'font-semibold text-near' : '';
+  const remark = remarkOn(column, row, nearRatio);
   const quiet = column === 'creep' && row.creepVerdict === null ? 'text-ink-2' : '';
   return (
-    <td className={`figure max-lg:text-left! ${ink} ${quiet} ${column === 'now' ? 'live-value' : ''}`}>
+    <td
+      className={`figure max-lg:text-left! ${quiet} ${remark === undefined ? '' : `font-semibold ${remark.ink}`} ${column === 'now' ? 'live-value' : ''}`}
+    >
       <span className="block text-caption font-normal whitespace-normal text-ink-2 lg:hidden">
         {MARGIN_COLUMN[column].name}
       </span>
       <span className="inline-flex items-center gap-1">
-        {rising && <ConditionShape condition="rising" />}
-        {rising && <span className="sr-only">creeping, </span>}
-        {near && <ConditionShape condition="near" />}
-        {near && <span className="sr-only">beyond the near mark, </span>}
-        {marginText(row, column)}
+        {remark !== undefined && (
+          <>
+            <ConditionShape condition={remark.condition} />
+            <span className="sr-only">{remark.words}, </span>
+          </>
+        )}
+        {marginText(row, column, nearRatio)}
       </span>
     </td>
   );
 }
 
-function isNear(column: MarginColumn, row: MarginRow, nearRatio: number): boolean {
+function remarkOn(column: MarginColumn, row: MarginRow, nearRatio: number): Remark | undefined {
+  const near = { condition: 'near', words: 'beyond the near mark', ink: 'text-near' } as const;
   switch (column) {
+    case 'creep':
+      return row.creepVerdict === 'creep'
+        ? { condition: 'rising', words: 'creeping', ink: 'text-rising' }
+        : undefined;
     case 'now':
-      return (row.utilisation ?? 0) >= nearRatio;
+      return (row.utilisation ?? 0) >= nearRatio ? near : undefined;
     case 'p95':
-      return (row.utilisationP95 ?? 0) >= nearRatio;
+      return (row.utilisationP95 ?? 0) >= nearRatio ? near : undefined;
     case 'emergency':
-      return (row.emergencyUtilisation ?? 0) >= nearRatio;
+      // a prediction is no condition, so it has no condition's colour
+      return (row.emergencyUtilisation ?? 0) >= 1
+        ? { condition: 'over', words: 'would be over', ink: 'text-ink' }
+        : undefined;
     default:
-      return false;
+      return undefined;
   }
 }

@@ -31,21 +31,20 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
     readDailyLevels(store, lineIds, new Date(nowMs - HISTORY_DAYS * DAY_MS)),
   ]);
   const daysOf = groupedBy(days, ({ lineId, phase }) => `${lineId} ${phase}`);
-  const lines = [...groupedBy(margins, ({ lineId }) => lineId)].map(
-    ([lineId, own]): ForecastLine => ({
-      key: own[0]!.key,
-      name: own[0]!.lineName,
-      voltageKv: own[0]!.voltageKv,
-      substations: ends.get(lineId) ?? [],
-      phases: own.map(({ phase, verdict }) => ({
-        verdict,
-        dailyLevels: (daysOf.get(`${lineId} ${phase}`) ?? []).map(({ start, medianAmps }) => ({
-          day: start.toISOString().slice(0, 10),
-          levelAmps: medianAmps,
-        })),
+  const lines = [...groupedBy(margins, ({ lineId }) => lineId)].map(([lineId, own]): ForecastLine => ({
+    key: own[0]!.key,
+    name: own[0]!.lineName,
+    voltageKv: own[0]!.voltageKv,
+    substations: [...(ends.get(lineId) ?? [])],
+    phases: own.map(({ phase, verdict, figures }) => ({
+      verdict,
+      creepVerdict: figures.creepVerdict,
+      dailyLevels: (daysOf.get(`${lineId} ${phase}`) ?? []).map(({ start, medianAmps }) => ({
+        day: start.toISOString().slice(0, 10),
+        levelAmps: medianAmps,
       })),
-    }),
-  );
+    })),
+  }));
   return {
     at: new Date(nowMs).toISOString(),
     lines,

@@ -45,7 +45,7 @@ export async function readLevelList(
     readLevels(site.store, rung, { lineIds: [line.id], from, to }),
     readCreep(site.store, [line.id]),
   ]);
-  const levels: Level[] = rows.map(({ lineId: _lineId, sums: _sums, ...row }) => ({
+  const levels: Level[] = rows.map(({ lineId: _lineId, sums: _sums, channelPath: _path, ...row }) => ({
     ...row,
     start: row.start.toISOString(),
   }));

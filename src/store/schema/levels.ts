@@ -1,4 +1,4 @@
-import { double, int, json, mysqlEnum, mysqlTable, primaryKey } from 'drizzle-orm/mysql-core';
+import { double, int, json, mysqlEnum, mysqlTable, primaryKey, varchar } from 'drizzle-orm/mysql-core';
 import type { Creep } from '../../contract/warning';
 import type { Disqualification } from '../../standing/qualification';
 import { amps, bytes, instant } from './columns';
@@ -21,6 +21,8 @@ const levelColumns = () => ({
   disqualified: json('disqualified').$type<Partial<Record<Disqualification, number>>>(),
   /** what the composition needs, packed by store/composition-packing; they add over any window */
   sums: bytes('sums', { length: 1024 }),
+  /** the paths that the terminals' channels took at the end of the window; null where no terminal says */
+  channelPath: varchar('channel_path', { length: 300 }),
 });
 
 /** Partitioned by day in a hand-written migration, as the raw rows are. */

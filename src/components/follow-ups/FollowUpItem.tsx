@@ -1,0 +1,47 @@
+import { useState } from 'react';
+import type { FollowUp } from '../../contract/standing';
+import { dueWords, isOverdue, openedWords } from '../../view/follow-up-words';
+import type { SiteCustom } from '../../view/site-custom';
+
+interface FollowUpItemProps {
+  followUp: FollowUp;
+  site: SiteCustom;
+  nowMs: number;
+  /** undefined for whoever may not */
+  onDone: ((followUp: FollowUp) => Promise<void>) | undefined;
+}
+
+/** One follow-up: what is to be done, until when, who asked for it, and the way to end it. */
+export function FollowUpItem({ followUp, site, nowMs, onDone }: FollowUpItemProps) {
+  const [sending, setSending] = useState(false);
+  const end = async () => {
+    setSending(true);
+    await onDone?.(followUp);
+    setSending(false);
+  };
+  return (
+    <div
+      className="flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1"
+      data-follow-up={followUp.id}
+    >
+      <p className="min-w-0 flex-1 basis-64 text-pretty wrap-anywhere">
+        {followUp.note}{' '}
+        <span className={isOverdue(followUp, nowMs) ? 'font-semibold' : 'text-ink-2'}>
+          {dueWords(followUp, nowMs)}
+        </span>
+        <span className="block text-caption text-ink-2">{openedWords(followUp, nowMs, site)}</span>
+      </p>
+      {onDone !== undefined && (
+        <button
+          type="button"
+          className="button"
+          disabled={sending}
+          onClick={() => void end()}
+          aria-label={`Done: ${followUp.note}, ${followUp.lineName}`}
+        >
+          Done
+        </button>
+      )}
+    </div>
+  );
+}
