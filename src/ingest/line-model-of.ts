@@ -22,10 +22,9 @@ export function emergencyUtilisation(
   if (!hasVoltage) return undefined;
   const [admittance, ...mismatches] = composition.coefficients;
   const { frequencyHz } = version.conditions;
-  const compensated =
-    version.zone?.charging === undefined ? 0 : (lineSusceptanceMillisiemens(line, frequencyHz) ?? 0);
   const model = measuredModel(
-    { terminalCount, voltageKv: line.voltageKv, compensatedMillisiemens: compensated },
+    // what the scheme compensates is out of these sums already
+    { terminalCount, voltageKv: line.voltageKv, compensatedMillisiemens: 0 },
     { admittanceMillisiemens: admittance!, mismatches },
   );
   const range = { frequencyHz, lagRadLeast: -LAG_RAD_MOST, lagRadMost: LAG_RAD_MOST };

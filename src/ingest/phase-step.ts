@@ -1,4 +1,4 @@
-import type { Cause, StepOnWire } from '../contract/standing';
+import type { Cause, StandingVerdict, StepOnWire } from '../contract/standing';
 import type { PhaseName } from '../protection/phase';
 import { compositionStep, type CompositionStep } from '../standing/composition-step';
 import { stepVerdict } from '../standing/step';
@@ -16,19 +16,21 @@ const SIDE_HOURS = 48;
 
 /**
  * The newest step of one phase's standing level. What came before a step is never taken as ordinary for what comes
- * after it: hours are looked through from the oldest on, each look beginning after the last step found. With one
- * known from an earlier look only the last days are looked at again.
+ * after it: hours are looked through from the oldest on, each look beginning after the last step found. After an
+ * earlier look only what has come since is looked at, with some days of overlap.
  */
 export function phaseStep(
   line: RosterLine,
   history: LineHistory,
-  { phase, known }: { phase: PhaseName; known: StepOnWire | null | undefined },
+  { phase, earlier }: { phase: PhaseName; earlier: Pick<StandingVerdict, 'step' | 'computedAt'> | undefined },
 ): StepOnWire | null {
   const rows = rowsOf(history.hours, phase);
   const pathChangeHours = pathChanges(rows);
   const nowHour = history.nowMs / HOUR_MS;
-  const looks = known === undefined ? Math.floor(rows.length / LOOK_HOURS) : 1;
-  let step = known ?? null;
+  const all = Math.floor(rows.length / LOOK_HOURS);
+  const sinceHours = earlier === undefined ? Infinity : nowHour - Date.parse(earlier.computedAt) / HOUR_MS;
+  const looks = Math.min(all, 1 + Math.floor(sinceHours / LOOK_HOURS));
+  let step = earlier?.step ?? null;
   for (let look = looks - 1; look >= 0; look -= 1) {
     const since = step === null ? -Infinity : Date.parse(step.at) / HOUR_MS;
     const found = stepWithin(

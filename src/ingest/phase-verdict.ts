@@ -1,5 +1,6 @@
 import type { CompositionOnWire } from '../contract/composition';
 import type { StandingVerdict, StepOnWire } from '../contract/standing';
+import type { Creep } from '../contract/warning';
 import { pickupAmps } from '../protection/characteristic';
 import type { PhaseName } from '../protection/phase';
 import { type Composition, composition } from '../standing/composition';
@@ -11,6 +12,7 @@ import { ascending, quantileSorted } from '../standing/quantile';
 import { levelsAtReferenceLoad } from '../standing/reference-level';
 import { compositionOnWire } from '../view/composition-on-wire';
 import { dateOfDay, type SummedDay, summedDays } from '../view/day-sums';
+import { compensatedMillisiemens } from '../view/line-zone';
 import { creepOnWire } from './creep-on-wire';
 import { likelyCause } from './likely-cause';
 import { dailyLevels, lastDayOf, type LineHistory, rowsOf } from './line-history';
@@ -25,12 +27,12 @@ const BEFORE_DAYS = 60;
 const HORIZON_DAYS = 365;
 const UTILISATION_DAYS = 7;
 
-/** Which phase is looked at, by what marks, and the step that an earlier look found: undefined when there was none. */
+/** Which phase is looked at, by what marks, and what an earlier look found, if there was one. */
 export interface PhaseLook {
   readonly phase: PhaseName;
   readonly nearRatio: number;
   readonly frequencyHz: number;
-  readonly knownStep: StepOnWire | null | undefined;
+  readonly earlier: Pick<StandingVerdict, 'step' | 'computedAt'> | undefined;
 }
 
 /** What the levels of one phase say at a moment. Pure: everything comes from the rows. */
@@ -40,13 +42,18 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
   const version = versionInForce(line, nowMs);
   const pickup = version && pickupAmps(version.scheme.characteristic);
   const levelAmps = standingLevel24h(mediansOf(lastDayOf(history, phase)));
-  const step = phaseStep(line, history, { phase, known: look.knownStep });
+  const step = phaseStep(line, history, { phase, earlier: look.earlier });
   const markDays = knownMarks(line, step);
-  const windows = composedWindows(line, summedDays(history.days, phase), { nowMs, frequencyHz, markDays });
-  const drift = drifts(line, history, { phase, pickup, nearRatio, now: windows.now, markDays });
+  const compensated = compensatedMillisiemens(line.register, {
+    isCompensated: version?.zone?.charging !== undefined,
+    frequencyHz,
+  });
+  const days = summedDays(history.days, phase, compensated);
+  const windows = composedWindows(line, days, { nowMs, frequencyHz, markDays, compensated });
+  const drift = drifts(line, history, { phase, pickup, nearRatio, now: windows.now, markDays, days });
   const { cause, terminal } = likelyCause(windows.now.onWire, windows.before);
   const separated = windows.now.composition.kind === 'separated' ? windows.now.composition : undefined;
-  const counted = drift.creepAtReference?.creep ?? drift.creep;
+  const counted = driftThatCounts({ ...drift, composition: windows.now.onWire });
   return {
     line: line.key,
     phase,
@@ -70,6 +77,15 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
   };
 }
 
+/** A drift with the growth of load counts only where the load can't be taken out of it. */
+export function driftThatCounts({
+  creep,
+  creepAtReference,
+  composition: told,
+}: Pick<StandingVerdict, 'creep' | 'creepAtReference' | 'composition'>): Creep | undefined {
+  return told.kind === 'separated' ? creepAtReference?.creep : (creep ?? undefined);
+}
+
 const mediansOf = (rows: readonly { medianAmps: number | null }[]): number[] =>
   rows.flatMap(({ medianAmps }) => medianAmps ?? []);
 
@@ -82,7 +98,12 @@ interface Composed {
 function composedWindows(
   line: RosterLine,
   days: readonly SummedDay[],
-  { nowMs, frequencyHz, markDays }: { nowMs: number; frequencyHz: number; markDays: readonly number[] },
+  {
+    nowMs,
+    frequencyHz,
+    markDays,
+    compensated,
+  }: { nowMs: number; frequencyHz: number; markDays: readonly number[]; compensated: number },
 ): { now: Composed; before: CompositionOnWire | null } {
   const today = Math.floor(nowMs / DAY_MS);
   const over = (from: number, to: number): Composed => {
@@ -90,7 +111,11 @@ function composedWindows(
     const sums = within.map((each) => each.sums);
     const found = composition(sums, { frequencyHz });
     const window = { from: dateOfDay(from), to: dateOfDay(to), sums };
-    const onWire = compositionOnWire(found, window, { line: line.register, frequencyHz });
+    const onWire = compositionOnWire(found, window, {
+      line: line.register,
+      frequencyHz,
+      compensatedMillisiemens: compensated,
+    });
     return { composition: found, onWire, days: within };
   };
   // a mark of the last month parts what it was from what it is: the composition of today begins after it
@@ -118,9 +143,10 @@ function drifts(
     nearRatio: number;
     now: Composed;
     markDays: readonly number[];
+    days: readonly SummedDay[];
   },
 ): Pick<StandingVerdict, 'creep' | 'creepAtReference'> {
-  const { phase, pickup, nearRatio, now, markDays } = known;
+  const { phase, pickup, nearRatio, now, markDays, days } = known;
   if (pickup === undefined || line.obstacle !== undefined) return { creep: null, creepAtReference: null };
   const plan = { pickupAmps: pickup, nearRatio, horizonDays: HORIZON_DAYS, markDays };
   const measured = watchedCreep(dailyLevels(rowsOf(history.days, phase)), plan);
@@ -129,7 +155,7 @@ function drifts(
   const point = total && typicalPoint(total);
   if (now.composition.kind !== 'separated' || total === undefined || point === undefined)
     return { creep, creepAtReference: null };
-  const levels = levelsAtReferenceLoad(summedDays(history.days, phase), now.composition, point);
+  const levels = levelsAtReferenceLoad(days, now.composition, point);
   const atReference = creepOnWire(watchedCreep(levels, plan).verdict, phase);
   const load = throughLoad(total);
   return {

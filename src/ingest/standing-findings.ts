@@ -8,7 +8,7 @@ import { readVerdictsOfLine, type VerdictRow, writeVerdicts } from '../store/sta
 import { readLineHistory } from './line-history';
 import { STEP_WARNING } from '../warnings/limits';
 import type { StandingFindings } from './line-watch';
-import { phaseVerdict } from './phase-verdict';
+import { driftThatCounts, phaseVerdict } from './phase-verdict';
 import type { RosterLine } from './roster';
 
 /** Looks at a line's levels, keeps what they say of each phase, and gives what the warnings go by. */
@@ -20,10 +20,9 @@ export async function renewFindings(
   const history = await readLineHistory(store, line.id, nowMs);
   const earlier = await readVerdictsOfLine(store, line.id);
   const verdicts = perPhase((phase) => {
-    const knownStep = earlier.find((verdict) => verdict.phase === phase)?.step;
-    return phaseVerdict(line, history, { phase, nearRatio, frequencyHz, knownStep });
+    const known = earlier.find((verdict) => verdict.phase === phase);
+    return phaseVerdict(line, history, { phase, nearRatio, frequencyHz, earlier: known });
   });
-  // a drift with the growth of load counts only where the load can't be taken out of it
   const creep = PHASES.flatMap((phase) => driftThatCounts(verdicts[phase]) ?? []);
   await writeVerdicts(
     store,
@@ -38,10 +37,6 @@ export async function renewFindings(
       nowMs,
     ),
   };
-}
-
-function driftThatCounts({ creep, creepAtReference, composition }: StandingVerdict) {
-  return composition.kind === 'separated' ? creepAtReference?.creep : (creep ?? undefined);
 }
 
 /** The largest recent step up, as a cause for a warning. */

@@ -1,6 +1,7 @@
 import type { PhaseName } from '../protection/phase';
-import { shapeOf, totalOf } from '../standing/composition-sums';
+import { type CompositionSums, shapeOf, snapshotCount, totalOf } from '../standing/composition-sums';
 import { packSums, unpackSums } from '../store/composition-packing';
+import { groupedBy } from '../store/grouped';
 import type { LevelRow } from '../store/levels';
 import { unpackMeasurements } from '../store/packing';
 import type { SnapshotRow } from '../store/snapshots';
@@ -64,16 +65,15 @@ export function minuteRows(
   });
 }
 
-/** The sums of one phase's rows of the rung below; those of another set of terminals than the newest row's are left out. */
+/** The sums of one phase's rows of the rung below; where they differ in what they are of, of those with the most snapshots. */
 export function summedBelow(below: readonly LevelRow[], phase: PhaseName): Buffer | null {
   const sums = below.flatMap((row) => (row.phase === phase ? (unpackSums(row.sums) ?? []) : []));
-  const newest = sums.at(-1);
-  if (newest === undefined) return null;
-  const { terminalCount, hasVoltage } = shapeOf(newest);
-  const total = totalOf(
-    sums.filter(
-      (each) => shapeOf(each).terminalCount === terminalCount && shapeOf(each).hasVoltage === hasVoltage,
-    ),
+  const totals = [...groupedBy(sums, shapeKey).values()].flatMap((alike) => totalOf(alike) ?? []);
+  const [first, ...others] = totals;
+  if (first === undefined) return null;
+  return packSums(
+    others.reduce((most, total) => (snapshotCount(total) > snapshotCount(most) ? total : most), first),
   );
-  return total === undefined ? null : packSums(total);
 }
+
+const shapeKey = (sums: CompositionSums): string => JSON.stringify(shapeOf(sums));

@@ -31,7 +31,11 @@ const NO_VOLTAGE =
 export function compositionOnWire(
   composition: Composition,
   window: ComposedWindow,
-  { line, frequencyHz }: { line: ComposedLine; frequencyHz: number },
+  {
+    line,
+    frequencyHz,
+    compensatedMillisiemens,
+  }: { line: ComposedLine; frequencyHz: number; compensatedMillisiemens: number },
 ): CompositionOnWire {
   const counted = {
     from: window.from,
@@ -51,7 +55,9 @@ export function compositionOnWire(
     voltageKv,
   } = composition;
   if (susceptance === undefined) return { kind: 'not separable', ...counted, reason: NO_VOLTAGE };
-  const expected = lineSusceptanceMillisiemens(line, frequencyHz);
+  const constant = lineSusceptanceMillisiemens(line, frequencyHz);
+  // under a scheme that compensates, what is left of the charging is expected to be nothing
+  const expected = constant === undefined ? undefined : constant - compensatedMillisiemens;
   return {
     kind: 'separated',
     ...counted,

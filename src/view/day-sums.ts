@@ -1,6 +1,8 @@
 import type { PhaseName } from '../protection/phase';
-import { type CompositionSums, shapeOf } from '../standing/composition-sums';
+import { compensatedSums } from '../standing/compensated-sums';
+import { type CompositionSums, shapeOf, snapshotCount } from '../standing/composition-sums';
 import { unpackSums } from '../store/composition-packing';
+import { groupedBy } from '../store/grouped';
 import type { LevelRow } from '../store/levels';
 
 const DAY_MS = 86_400_000;
@@ -11,19 +13,36 @@ export interface SummedDay {
   readonly sums: CompositionSums;
 }
 
-/** Of rows with another set of terminals, or without the voltage that the newest have, nothing can be added: they are left out. */
-export function summedDays(rows: readonly LevelRow[], phase: PhaseName): SummedDay[] {
+/**
+ * The days of one phase that add: of the line's present number of terminals, and with or without a voltage as most of
+ * their snapshots are. `compensatedMillisiemens` is what the scheme in force takes out of the differential; 0 for
+ * none. Without a voltage nothing could be taken out, and the days stay as they are.
+ */
+export function summedDays(
+  rows: readonly LevelRow[],
+  phase: PhaseName,
+  compensatedMillisiemens: number,
+): SummedDay[] {
   const days = rows.flatMap((row) => {
     const sums = row.phase === phase ? unpackSums(row.sums) : undefined;
     return sums === undefined ? [] : [{ day: row.start.getTime() / DAY_MS, sums }];
   });
+  return alikeDays(days).map(({ day, sums }) => ({
+    day,
+    sums: (compensatedMillisiemens > 0 ? compensatedSums(sums, compensatedMillisiemens) : undefined) ?? sums,
+  }));
+}
+
+function alikeDays(days: readonly SummedDay[]): SummedDay[] {
   const newest = days.at(-1);
   if (newest === undefined) return [];
-  const wanted = shapeOf(newest.sums);
-  return days.filter(({ sums }) => {
-    const shape = shapeOf(sums);
-    return shape.terminalCount === wanted.terminalCount && shape.hasVoltage === wanted.hasVoltage;
-  });
+  const { terminalCount } = shapeOf(newest.sums);
+  const present = days.filter(({ sums }) => shapeOf(sums).terminalCount === terminalCount);
+  const groups = groupedBy(present, ({ sums }) => shapeOf(sums).hasVoltage);
+  const countOf = (group: readonly SummedDay[] | undefined): number =>
+    (group ?? []).reduce((total, { sums }) => total + snapshotCount(sums), 0);
+  const isWithVoltage = countOf(groups.get(true)) >= countOf(groups.get(false));
+  return groups.get(isWithVoltage) ?? [];
 }
 
 export const dateOfDay = (day: number): string => new Date(day * DAY_MS).toISOString().slice(0, 10);

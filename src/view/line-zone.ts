@@ -42,3 +42,11 @@ function winding(
     };
   return removesZeroSequence.line ? { ratio: 1, clockNumber: 0, zeroSequence: 'removed' } : undefined;
 }
+
+/** What a scheme takes out of the differential by compensation, millisiemens; 0 where it does not or can't. */
+export function compensatedMillisiemens(
+  line: Pick<ZoneFacts, 'capacitanceNfPerKm' | 'lengthKm'>,
+  { isCompensated, frequencyHz }: { isCompensated: boolean; frequencyHz: number },
+): number {
+  return isCompensated ? (lineSusceptanceMillisiemens(line, frequencyHz) ?? 0) : 0;
+}

@@ -4,7 +4,7 @@ import { demoHistoryOf, demoRosterLine } from './demo-history';
 
 // midnight, so that the history holds whole days
 const NOW_MS = Date.UTC(2026, 2, 2);
-const plan = { nearRatio: 0.7, frequencyHz: 50, knownStep: undefined } as const;
+const plan = { nearRatio: 0.7, frequencyHz: 50, earlier: undefined } as const;
 
 function verdictsOf(key: string) {
   const line = demoRosterLine(key);
@@ -91,6 +91,33 @@ describe('the story of a channel that took another path', () => {
     if (composition.kind !== 'separated') throw new Error(composition.reason);
     expect(composition.mismatches[0]?.angleBudget).toBe('beyond');
     expect(Math.abs(composition.chargingAmps!.value - composition.expectedChargingAmps!)).toBeLessThan(2);
+  });
+});
+
+describe('a step that an earlier look found', () => {
+  it('is kept, and looked for again only in what has come since', () => {
+    const line = demoRosterLine('skelder-low-pell-1');
+    const step = {
+      at: '2026-01-10T10:00:00.000Z',
+      fromAmps: 10,
+      toAmps: 14,
+      cause: 'charging',
+      terminal: null,
+      channelPathChanged: false,
+    } as const;
+    const earlier = { step, computedAt: new Date(NOW_MS - 3_600_000).toISOString() };
+    const verdict = phaseVerdict(line, demoHistoryOf(line, NOW_MS), { ...plan, phase: 'a', earlier });
+    expect(verdict.step).toEqual(step);
+  });
+});
+
+describe('a line that compensates its charging', () => {
+  it('shows no charging in what stands, and is not told to expect any', () => {
+    const { composition, likelyCause } = verdictsOf('skelder-hask')('a');
+    if (composition.kind !== 'separated') throw new Error(composition.reason);
+    expect(Math.abs(composition.chargingAmps!.value)).toBeLessThan(0.5);
+    expect(composition.expectedChargingAmps).toBeCloseTo(0, 6);
+    expect(likelyCause).not.toBe('charging');
   });
 });
 

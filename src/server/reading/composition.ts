@@ -7,9 +7,10 @@ import { mannWhitney } from '../../standing/mann-whitney';
 import { compositionPolygon } from '../../standing/operating-point';
 import { median } from '../../standing/quantile';
 import { type LevelRow, readLevels } from '../../store/levels';
-import { readRegisterLine, type RegisteredLine } from '../../store/register';
+import { readRegisterLine, type RegisteredLine, settingsInForce } from '../../store/register';
 import { compositionOnWire } from '../../view/composition-on-wire';
 import { dateOfDay, type SummedDay, summedDays } from '../../view/day-sums';
+import { compensatedMillisiemens } from '../../view/line-zone';
 import type { Site } from '../site';
 
 interface Window {
@@ -30,16 +31,33 @@ export async function readComposition(
   if (line === undefined) return undefined;
   const rows = await readLevels(site.store, 'day', { lineIds: [line.id], ...window });
   const frequencyHz = site.settings.NOMINAL_FREQUENCY_HZ;
+  const compensated = compensatedNow(site, line);
+  const daysOf = (phase: PhaseName) => summedDays(rows, phase, compensated);
   return {
     line: key,
-    phases: perPhase((phase) => composed(summedDays(rows, phase), { line, window, frequencyHz })),
-    history: PHASES.flatMap((phase) => history(summedDays(rows, phase), { phase, frequencyHz })),
+    phases: perPhase((phase) => composed(daysOf(phase), { line, window, frequencyHz, compensated })),
+    history: PHASES.flatMap((phase) => history(daysOf(phase), { phase, frequencyHz })),
   };
+}
+
+interface ComposedOf {
+  readonly line: RegisteredLine;
+  readonly window: Window;
+  readonly frequencyHz: number;
+  readonly compensated: number;
+}
+
+/** What the scheme in force now takes out of the differential, millisiemens. */
+function compensatedNow({ settings, now }: Site, line: RegisteredLine): number {
+  return compensatedMillisiemens(line, {
+    isCompensated: settingsInForce(line.settings, now())?.chargingCompensation === true,
+    frequencyHz: settings.NOMINAL_FREQUENCY_HZ,
+  });
 }
 
 function composed(
   days: readonly SummedDay[],
-  { line, window, frequencyHz }: { line: RegisteredLine; window: Window; frequencyHz: number },
+  { line, window, frequencyHz, compensated }: ComposedOf,
 ): CompositionOnWire {
   const sums = days.map((each) => each.sums);
   const dates = { from: window.from.toISOString().slice(0, 10), to: window.to.toISOString().slice(0, 10) };
@@ -52,7 +70,11 @@ function composed(
       reason:
         'This feed holds magnitudes alone; what a differential consists of can’t be told from it. Phasors of every terminal would tell.',
     };
-  return compositionOnWire(composition(sums, { frequencyHz }), { ...dates, sums }, { line, frequencyHz });
+  return compositionOnWire(
+    composition(sums, { frequencyHz }),
+    { ...dates, sums },
+    { line, frequencyHz, compensatedMillisiemens: compensated },
+  );
 }
 
 /** The causes day by day, by the window's composition, so that a day with a steady load has its shares as well. */
@@ -86,6 +108,7 @@ function history(
 export async function readComparison(site: Site, key: string, at: string): Promise<Comparison | undefined> {
   const line = await readRegisterLine(site.store, key);
   if (line === undefined) return undefined;
+  const compensated = compensatedNow(site, line);
   const atMs = Date.parse(`${at}T00:00:00Z`);
   const frequencyHz = site.settings.NOMINAL_FREQUENCY_HZ;
   const side = async (window: Window) => ({
@@ -100,7 +123,12 @@ export async function readComparison(site: Site, key: string, at: string): Promi
     phases: PHASES.map((phase) => {
       const [earlier, later] = [before, after].map(({ rows, window }) => ({
         levels: levelsOf(rows, phase),
-        composition: composed(summedDays(rows, phase), { line, window, frequencyHz }),
+        composition: composed(summedDays(rows, phase, compensated), {
+          line,
+          window,
+          frequencyHz,
+          compensated,
+        }),
       }));
       return {
         phase,
