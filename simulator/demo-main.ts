@@ -79,10 +79,10 @@ async function load(site: Site, months: number): Promise<void> {
       stopped.signal.throwIfAborted();
       show(share);
     };
-    const plan = { days: Math.round(months * MONTH_DAYS), lines: [...demoLines, ...storyLines] };
     try {
       await migrateStore(store);
-      await loadDemo(store, site, progress, plan);
+      const days = Math.round(months * MONTH_DAYS);
+      await loadDemo(store, site, { progress, days, lines: [...demoLines, ...storyLines] });
     } finally {
       await store.close();
     }

@@ -2,7 +2,13 @@ import { hashPassword } from '../src/auth/passwords';
 import type { Measurement } from '../src/contract/feed';
 import { computedSnapshot, type ComputedSnapshot } from '../src/ingest/computed-snapshot';
 import { roster, type RosterLine } from '../src/ingest/roster';
-import { minuteRows, rowsByWindow, summedBelow, windowRows } from '../src/ingest/window-rows';
+import {
+  channelPathBelow,
+  minuteRows,
+  rowsByWindow,
+  summedBelow,
+  windowRows,
+} from '../src/ingest/window-rows';
 import { RUNG_MS, rungRows, rungStart } from '../src/ingest/rung';
 import { snapshotRow } from '../src/ingest/snapshot-row';
 import { inTransaction, type Store } from '../src/store/client';
@@ -40,20 +46,18 @@ const DAYS_A_WRITE = 30;
 
 type Site = { readonly seed: number; readonly epochMs: number };
 
-/** What is loaded: which lines, and how many days of them. */
-export type DemoPlan = { readonly days: number; readonly lines: readonly NewLine[] };
+/** What is loaded: two months of the demo network unless told. A progress that throws breaks the load off. */
+export type DemoPlan = {
+  readonly progress: (share: number) => void;
+  readonly days?: number;
+  readonly lines?: readonly NewLine[];
+};
 
-const PRESET: DemoPlan = { days: HISTORY.days, lines: demoLines };
-
-/**
- * Loads the demo's people, register and history; the history passes through the product's own evaluation. A
- * progress that throws breaks the load off.
- */
+/** Loads the demo's people, register and history; the history passes through the product's own evaluation. */
 export async function loadDemo(
   store: Store,
   site: Site,
-  progress: (share: number) => void,
-  { days, lines: entries }: DemoPlan = PRESET,
+  { progress, days = HISTORY.days, lines: entries = demoLines }: DemoPlan,
 ): Promise<void> {
   await loadPeople(store, site);
   await loadRegister(store, site, entries);
@@ -122,7 +126,6 @@ async function loadHistory(store: Store, line: RosterLine, load: Load): Promise<
     await write();
     load.done(1 - back / (load.days + 1));
   }
-  load.done(1);
 }
 
 function dayRows(line: RosterLine, dayMs: number, { measurements, epochMs }: Load): SnapshotRow[] {
@@ -149,6 +152,7 @@ function levelsOfDay(
   const days = rungRows(day, rows, beforeDay).map((row) => ({
     ...row,
     sums: summedBelow(hours, row.phase),
+    channelPath: channelPathBelow(hours, row.phase),
   }));
   return { hours, days };
 }

@@ -81,11 +81,9 @@ async function fillDatabase({ url, adminUrl }: PrivateDatabase, site: Site): Pro
   try {
     await migrateStore(store);
     if (existsSync(LOADED)) return;
-    await loadDemo(
-      store,
-      site,
-      createProgress('Demo network: loading two months of history', process.stdout),
-    );
+    await loadDemo(store, site, {
+      progress: createProgress('Demo network: loading two months of history', process.stdout),
+    });
     await writeFile(LOADED, `${new Date().toISOString()}\n`);
   } finally {
     await store.close();

@@ -27,11 +27,14 @@ const story = (told: Told): DemoLine =>
 
 const [A, B, C] = [0, 1, 2] as const;
 
+const LOW_PICKUP = [halfSum('2019-05-06', fromZero(40, [0.2, 800, 0.6]))];
+
 const creepingRatios = [
   story({
     key: 'dunmarsh-oxhollow',
     name: 'Dunmarsh – Oxhollow',
     at: ['dunmarsh', 'oxhollow'],
+    settings: LOW_PICKUP,
     load: towns(0.6),
     ratioDrift: { terminal: 'oxhollow', phase: A, perDay: 0.00016, fromDay: -330, toDay: 300 },
   }),
@@ -40,6 +43,7 @@ const creepingRatios = [
     key: 'calder-stye-oxhollow',
     name: 'Calder Stye – Oxhollow',
     at: ['calder-stye', 'oxhollow'],
+    settings: LOW_PICKUP,
     load: works(0.6),
     ratioDrift: { terminal: 'calder-stye', phase: C, perDay: 0.00016, fromDay: -330, toDay: 300 },
   }),

@@ -1,13 +1,19 @@
 import type { LineSummary } from './lines';
 import type { FollowUp, MarginRow, StandingVerdict } from './standing';
 
+/** Levels day by day from a first day on; null for days without. Short, since a page carries hundreds of these. */
+export interface ForecastHistory {
+  readonly from: string;
+  readonly levelsAmps: readonly (number | null)[];
+}
+
 /** One phase whose standing level rises, or stands beyond the near mark already. */
 export interface ForecastPhase {
   readonly verdict: StandingVerdict;
   /** of the drift that counts; null where the level stands beyond the mark and does not rise */
   readonly creepVerdict: MarginRow['creepVerdict'];
-  /** daily standing levels of this phase, oldest first; null for days without */
-  readonly dailyLevels: readonly { readonly day: string; readonly levelAmps: number | null }[];
+  /** daily standing levels of this phase; undefined when there are none */
+  readonly history: ForecastHistory | undefined;
 }
 
 export interface ForecastLine {

@@ -28,7 +28,7 @@ export interface CompositionStep extends Step {
   readonly seenIn: 'ratio' | 'angle' | 'charging';
   /** Explanations, the best first. */
   readonly terms: readonly MovedTerm[];
-  /** The best one, where it leaves clearly less over than the next; `undefined` where two do as well. */
+  /** The best one, where it, or with it its terminal, leaves clearly less over than the next; else `undefined`. */
   readonly moved: MovedTerm | undefined;
   /** The angle moved when the channel took another path. */
   readonly pointsToChannel: boolean;
@@ -129,13 +129,28 @@ function explained(
   const coefficients = coefficientsOf(hours.filter(({ hour }) => hour + 1 <= step.atHour))!;
   const after = totalOf(hours.filter(({ hour }) => hour >= step.atHour).map(({ sums }) => sums))!;
   const terms = explanations(after, coefficients);
-  const [first, second] = terms;
-  const isDecided =
-    first !== undefined &&
-    (second === undefined || 1 - second.explains >= DECIDED_RATIO * (1 - first.explains));
-  const moved = isDecided ? first : undefined;
+  const moved = decided(terms);
   const isPathNear = pathChangeHours.some((hour) => Math.abs(hour - step.atHour) <= PATH_HOURS);
   return { ...step, seenIn, terms, moved, pointsToChannel: moved?.term === 'angle' && isPathNear };
+}
+
+/**
+ * The best explanation, where it leaves clearly less over than the next. A transformer that was replaced moves the
+ * ratio and the angle of its terminal at once, of which neither alone explains much: so where no term stands out,
+ * the two of a terminal (or of the voltage) are taken together, and the greater one is told. What the two explain
+ * adds up, since they are at right angles.
+ */
+function decided(terms: readonly MovedTerm[]): MovedTerm | undefined {
+  const isClear = (best: number, next: number): boolean => 1 - next >= DECIDED_RATIO * (1 - best);
+  const [first, second] = terms;
+  if (first === undefined || isClear(first.explains, second?.explains ?? 0)) return first;
+  const together = new Map<number | undefined, number>();
+  for (const { terminal, explains } of terms) {
+    together.set(terminal, (together.get(terminal) ?? 0) + explains);
+  }
+  const [best, next] = [...together].sort(([, a], [, b]) => b - a);
+  if (best === undefined || !isClear(best[1], next?.[1] ?? 0)) return undefined;
+  return terms.find(({ terminal }) => terminal === best[0]);
 }
 
 /** What each term alone would have to change, and how much that explains, the best first. */

@@ -58,18 +58,16 @@ export function creepVerdict(levels: readonly DailyLevel[], limits: CreepLimits)
   const series = levels.map(({ day, levelAmps }) => ({ time: day, value: levelAmps }));
   const daysNeeded = Math.max(limits.daysLeast ?? 10, LIMITS_DAYS_LEAST);
   const last = levels.at(-1);
-  const line = senSlope(series);
-  if (levels.length < daysNeeded || last === undefined || line?.limits === undefined) {
+  const plain = senSlope(series);
+  if (levels.length < daysNeeded || last === undefined || plain?.limits === undefined) {
     return { kind: 'too few days', days: levels.length, daysNeeded };
   }
-  const drift = {
-    slopeAmpsPerDay: line.slope,
-    slopeLowAmpsPerDay: line.limits.low,
-    slopeHighAmpsPerDay: line.limits.high,
-  };
-  const pTwoSided = cautiousP(series, line.slope);
-  const isRising = line.slope > 0 && pTwoSided < (limits.pMost ?? 0.01);
-  const levelNowAmps = line.intercept + line.slope * last.day;
+  const { pTwoSided, varianceRatio } = significance(series, plain.slope);
+  const { slope, intercept } = plain;
+  const { low, high } = (varianceRatio > 1 && senSlope(series, { varianceRatio })?.limits) || plain.limits;
+  const drift = { slopeAmpsPerDay: slope, slopeLowAmpsPerDay: low, slopeHighAmpsPerDay: high };
+  const isRising = slope > 0 && pTwoSided < (limits.pMost ?? 0.01);
+  const levelNowAmps = intercept + slope * last.day;
   const forecast = (targetAmps: number) =>
     forecastDates(isRising ? drift : NO_DRIFT, { lastDay: last.day, levelNowAmps, targetAmps });
   const near = forecast(limits.nearRatio * limits.pickupAmps);
@@ -83,17 +81,24 @@ function kindOfRise(near: ForecastDates, horizonDay: number): 'creep' | 'within 
 }
 
 /**
- * Two-sided p of the series: the greatest of the plain one, the one after Hamed and Rao, and the one that takes the
- * detrended series for first-order autoregressive. A correction may take evidence away and never add any: on
- * uncorrelated noise Hamed and Rao's alone would find a trend about three times as often as p says, since some lags
- * look negatively correlated by chance; and on noise that lasts for days it leaves out lags that a short series
- * can't show to be significant, which the first-order model carries on.
+ * How sure a trend of the series is, autocorrelation allowed for: variance of S over that of independent values, the
+ * greater of what Hamed and Rao's correction and a first-order autoregressive model of the detrended series say, and
+ * the two-sided p with it. A correction may take evidence away and never add any: on uncorrelated noise Hamed and
+ * Rao's alone would find a trend about three times as often as p says, since some lags look negatively correlated by
+ * chance; and on noise that lasts for days it leaves out lags that a short series can't show to be significant, which
+ * the first-order model carries on.
  */
-function cautiousP(series: readonly SeriesPoint[], slope: number): number {
+function significance(
+  series: readonly SeriesPoint[],
+  slope: number,
+): { readonly pTwoSided: number; readonly varianceRatio: number } {
   const plain = mannKendall(series.map((point) => point.value));
-  if (plain === undefined) return 1;
+  if (plain === undefined) return { pTwoSided: 1, varianceRatio: 1 };
   const rho = firstOrder(detrended(series, slope))?.rho ?? 0;
-  const varianceS = plain.varianceS * varianceRatioOfAr1(rho, plain.count);
-  const firstOrderP = mannKendallFrom({ ...plain, varianceS }).pTwoSided;
-  return Math.max(plain.pTwoSided, firstOrderP, hamedRao(series, slope)?.pTwoSided ?? 0);
+  const varianceRatio = Math.max(
+    varianceRatioOfAr1(rho, plain.count),
+    hamedRao(series, slope)?.varianceRatio ?? 1,
+  );
+  const varianceS = plain.varianceS * varianceRatio;
+  return { pTwoSided: mannKendallFrom({ ...plain, varianceS }).pTwoSided, varianceRatio };
 }

@@ -23,22 +23,26 @@ export interface SenSlope {
  * The line whose slope is the median of the slopes between all pairs of points, placed so that as many points
  * lie above it as below (intercept: median of value − slope·time). P. K. Sen, J. Am. Stat. Assoc. 63, 1968,
  * 1379–1389; limits after R. O. Gilbert, "Statistical Methods for Environmental Pollution Monitoring", 1987,
- * §16.5. The limits take the values to be independent and are too narrow where they are not. `undefined` for
- * fewer than two points; throws for a NaN and for times that do not ascend.
+ * §16.5. The limits take the values to be independent; `varianceRatio`, the variance of S over that of independent
+ * values, widens them for values that are not. `undefined` for fewer than two points; throws for a NaN and for times
+ * that do not ascend.
  */
 export function senSlope(
   series: readonly SeriesPoint[],
-  { confidence }: { readonly confidence: number } = { confidence: 0.95 },
+  {
+    confidence = 0.95,
+    varianceRatio = 1,
+  }: { readonly confidence?: number; readonly varianceRatio?: number } = {},
 ): SenSlope | undefined {
   assertAscendingTimes(series);
   if (series.length < 2) return undefined;
   const slopes = ascending(pairSlopes(series));
   const slope = quantileOfSome(slopes, 0.5);
-  const varianceS = tieCorrectedVariance(series.map((point) => point.value));
+  const varianceS = varianceRatio * tieCorrectedVariance(series.map((point) => point.value));
   return {
     slope,
     intercept: quantileOfSome(ascending(detrended(series, slope)), 0.5),
-    limits: gilbertLimits(slopes, { varianceS, confidence }),
+    limits: gilbertLimits(slopes, { varianceS, confidence, isClamped: varianceRatio > 1 }),
     pairs: slopes.length,
   };
 }
@@ -63,15 +67,17 @@ function pairSlopes(series: readonly SeriesPoint[]): Float64Array {
 
 /**
  * With N slopes and C = z·√Var S, the slopes of rank (N − C)/2 and (N + C)/2 + 1 from below, both rounded to
- * the nearest rank.
+ * the nearest rank; clamped, the least and the greatest slope where those ranks lie beyond them.
  */
 function gilbertLimits(
   slopes: Float64Array,
-  { varianceS, confidence }: { varianceS: number; confidence: number },
+  { varianceS, confidence, isClamped }: { varianceS: number; confidence: number; isClamped: boolean },
 ): SenSlope['limits'] {
   const c = normalQuantile((1 + confidence) / 2) * Math.sqrt(varianceS);
-  const low = slopes[Math.round((slopes.length - c) / 2) - 1];
-  const high = slopes[Math.round((slopes.length + c) / 2)];
+  const lowRank = Math.round((slopes.length - c) / 2) - 1;
+  const highRank = Math.round((slopes.length + c) / 2);
+  const low = slopes[isClamped ? Math.max(0, lowRank) : lowRank];
+  const high = slopes[isClamped ? Math.min(slopes.length - 1, highRank) : highRank];
   return low === undefined || high === undefined ? undefined : { low, high };
 }
 

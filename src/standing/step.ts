@@ -45,7 +45,7 @@ const BASELINE_LEAST = 120;
 const HOURS_AFTER_LEAST = 12;
 
 /** Below this size, in robust standard deviations, noise that lasts for days looks no different from a step. */
-const SIZE_LEAST = 5;
+const SIZE_LEAST = 6;
 
 /** Half of the least step that is looked for, in robust standard deviations. */
 const SLACK = 2;

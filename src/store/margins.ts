@@ -142,24 +142,33 @@ export async function readMarginPoints(store: Store, filter: MarginFilter): Prom
   const pickupAmps = sql`coalesce(
     ${standingVerdict.levelAmps} / nullif(${standingVerdict.shareOfPickup}, 0),
     cast(json_value(${standingVerdict.verdict}, '$.pickupAmps') as double))`;
-  const rows = await store.db
-    .select({
-      key: line.key,
-      lineName: line.name,
-      phase: standingVerdict.phase,
-      chargingShare: sql<number | null>`${standingVerdict.chargingAmps} / nullif(${pickupAmps}, 0)`,
-      mismatchShare: sql<number | null>`${standingVerdict.mismatchAmps} / nullif(${pickupAmps}, 0)`,
-      shareOfPickup: standingVerdict.shareOfPickup,
-    })
-    .from(standingVerdict)
-    .innerJoin(line, eq(standingVerdict.lineId, line.id))
-    .where(
-      and(filtered(filter), isNotNull(standingVerdict.chargingAmps), isNotNull(standingVerdict.mismatchAmps)),
-    )
-    .orderBy(asc(line.name), asc(standingVerdict.lineId), asc(standingVerdict.phase));
-  return rows.flatMap(({ chargingShare, mismatchShare, ...row }) =>
-    chargingShare === null || mismatchShare === null ? [] : [{ ...row, chargingShare, mismatchShare }],
-  );
+  const [rows, lines] = await Promise.all([
+    store.db
+      .select({
+        lineId: standingVerdict.lineId,
+        phase: standingVerdict.phase,
+        chargingShare: sql<number | null>`${standingVerdict.chargingAmps} / nullif(${pickupAmps}, 0)`,
+        mismatchShare: sql<number | null>`${standingVerdict.mismatchAmps} / nullif(${pickupAmps}, 0)`,
+        shareOfPickup: standingVerdict.shareOfPickup,
+      })
+      .from(standingVerdict)
+      .innerJoin(line, eq(standingVerdict.lineId, line.id))
+      .where(
+        and(
+          filtered(filter),
+          isNotNull(standingVerdict.chargingAmps),
+          isNotNull(standingVerdict.mismatchAmps),
+        ),
+      ),
+    // names once a line and not with each phase: half of what would have to be carried
+    store.db.select({ id: line.id, key: line.key, lineName: line.name }).from(line),
+  ]);
+  const named = new Map(lines.map(({ id, ...names }) => [id, names]));
+  return rows.flatMap(({ lineId, chargingShare, mismatchShare, ...row }) => {
+    const names = named.get(lineId);
+    if (names === undefined || chargingShare === null || mismatchShare === null) return [];
+    return [{ ...names, ...row, chargingShare, mismatchShare }];
+  });
 }
 
 /** Rows that rise, whether to the near mark or within their margin, and rows that stand beyond it; most urgent first. */

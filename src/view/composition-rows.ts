@@ -77,11 +77,10 @@ function causeCell(window: Window, id: CauseRow['id'], context: CauseContext): C
   if (!isSeparated(window) || window.polygon === null) return undefined;
   if (id === 'charging' && window.chargingAmps === null)
     return { figure: 'not told', interval: 'no voltage' };
-  const estimate =
-    id === 'charging' ? window.chargingAmps : id === 'leakage' ? window.leakageAmps : undefined;
+  const estimate = id === 'charging' ? window.chargingAmps : id === 'leakage' ? window.leakageAmps : null;
   return {
     figure: tenthsText(causeAmps(window.polygon, id), context),
-    interval: estimate == null ? undefined : `${ampsInterval(estimate, context)}`,
+    interval: estimate === null ? undefined : ampsInterval(estimate, context),
   };
 }
 

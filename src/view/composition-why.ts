@@ -1,4 +1,4 @@
-import type { CompositionOnWire } from '../contract/composition';
+import type { CompositionOnWire, EstimateOnWire } from '../contract/composition';
 import type { StandingVerdict, StepOnWire } from '../contract/standing';
 import { causeAmps, leakageMatters, POLYGON_CAUSES } from './composition-polygon';
 import type { PolygonCause } from './composition-polygon';
@@ -8,6 +8,7 @@ import type { SeparatedOnWire } from './composition-words';
 import { dateText } from './figures';
 import { currentText } from './line-figures';
 import type { CurrentUnit } from './line-unit';
+import { listed } from './line-words';
 
 interface AmpsContext {
   readonly unit: CurrentUnit;
@@ -41,6 +42,32 @@ export function stepInWindowWords(
 ): string | undefined {
   if (step === null || step.at < composition.from || step.at.slice(0, 10) >= composition.to) return undefined;
   return `This window reaches across the step of ${dateText(step.at, timeZone)}: what was before it and what came after are mixed here. Compare before and after keeps them apart.`;
+}
+
+/** An interval that reaches further to either side than this share of the differential tells little. */
+const WEAK_SHARE = 0.5;
+
+/**
+ * Which causes a separable window still tells only weakly, as a sentence to stand above the drawing; undefined where
+ * all of them are told well. A mismatch's interval is taken in proportion to its share of the differential.
+ */
+export function weakWords(composition: SeparatedOnWire): string | undefined {
+  const { polygon, chargingAmps, leakageAmps, mismatches } = composition;
+  if (polygon === null) return undefined;
+  const most = WEAK_SHARE * causeAmps(polygon, 'differential');
+  const half = ({ low, high }: EstimateOnWire) => (high - low) / 2;
+  const scaled = (estimate: EstimateOnWire, amps: number) =>
+    estimate.value === 0 ? 0 : (half(estimate) * amps) / Math.abs(estimate.value);
+  const alone = mismatches.length === 1 ? mismatches[0] : undefined;
+  const reaches = [
+    { name: 'charging', amps: chargingAmps === null ? 0 : half(chargingAmps) },
+    { name: 'leakage', amps: leakageAmps === null ? 0 : half(leakageAmps) },
+    { name: 'ratio', amps: alone === undefined ? 0 : scaled(alone.ratio, causeAmps(polygon, 'ratio')) },
+    { name: 'angle', amps: alone === undefined ? 0 : scaled(alone.angleDeg, causeAmps(polygon, 'angle')) },
+  ];
+  const weak = reaches.filter(({ amps }) => amps > most).map(({ name }) => name);
+  if (weak.length === 0) return undefined;
+  return `Weakly told: the ${weak.length === 1 ? 'interval' : 'intervals'} of ${listed(weak)} ${weak.length === 1 ? 'is' : 'are'} as wide as the differential itself. Something may have changed within this window; read the causes by their intervals.`;
 }
 
 /** The words of the sides: "ratio 27.1 A". Leakage only where it matters. */

@@ -42,6 +42,17 @@ export function forecastRow(line: ForecastLine, nearRatio: number): ForecastRow 
 export const shownDates = ({ phase: { verdict }, place }: ForecastRow): ForecastDatesOnWire | null =>
   place === 'beyond' ? verdict.pickup : verdict.near;
 
+const DAY_MS = 86_400_000;
+
+/** The history in small, as a sparkline takes it. */
+export const dailyLevelsOf = ({ history }: ForecastPhase): { day: string; levelAmps: number | null }[] =>
+  history === undefined
+    ? []
+    : history.levelsAmps.map((levelAmps, index) => ({
+        day: new Date(Date.parse(history.from) + index * DAY_MS).toISOString().slice(0, 10),
+        levelAmps,
+      }));
+
 /** A date that is not within reach stands behind every one that is. */
 const far = (day: string | null | undefined): string => day ?? '9999';
 

@@ -5,6 +5,7 @@ import { causeAmps } from './composition-polygon';
 import type { PolygonCause } from './composition-polygon';
 import { intervalText } from './composition-words';
 import { ampsText, dateText } from './figures';
+import { DASH } from './line-figures';
 import type { LineTable, TableColumn } from './line-table';
 import { wallTimeTyped } from './register-instant';
 import type { PhaseLetters, SiteCustom } from './site-custom';
@@ -118,6 +119,19 @@ export function comparisonTable(
       ...CAUSES.flatMap((cause) => [sideAmps(before.composition, cause), sideAmps(after.composition, cause)]),
     ]),
   };
+}
+
+/** The same figures with a row each and a column a phase, as they are read on a screen. */
+export function turnedTable({ columns, rows }: LineTable): { heads: string[]; rows: string[][] } {
+  const shown = (cell: string | number | null | undefined, column: TableColumn): string => {
+    if (cell === null || cell === undefined) return DASH;
+    return typeof cell === 'number' && column.kind === 'figure' ? cell.toFixed(column.digits) : String(cell);
+  };
+  const [first, ...others] = columns.map((column, at) => [
+    column.head,
+    ...rows.map((row) => shown(row[at], column).replace(/^-/, '−')),
+  ]);
+  return { heads: first ?? [], rows: others };
 }
 
 /** Null where the side is not separable, and for charging that no voltage tells. */

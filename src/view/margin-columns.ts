@@ -142,19 +142,23 @@ export function marginColumnsOf(asked: string | null): readonly MarginColumn[] {
 /** A dash on the screen where there is no figure: the row has many, and the head says what is missing. */
 const orDash = (text: string): string => (text === NOT_COMPUTABLE ? '–' : text);
 
+/** Per cent that rounds across neither the near mark nor the threshold or pickup. */
+const markedText = (ratio: number | null, nearRatio: number): string =>
+  orDash(percentOfMarkText(ratio, ratio !== null && ratio < nearRatio ? nearRatio : 1));
+
 /** A row's figures as they stand in the list. */
 export function marginText(row: MarginRow, column: MarginColumn, nearRatio: number): string {
   switch (column) {
     case 'share':
-      return orDash(percentOfMarkText(row.shareOfPickup));
+      return markedText(row.shareOfPickup, nearRatio);
     case 'level':
       return orDash(ampsText(row.levelAmps));
     case 'expected':
       return orDash(ampsText(row.expectedAmps));
     case 'now':
-      return orDash(percentOfMarkText(row.utilisation));
+      return markedText(row.utilisation, nearRatio);
     case 'p95':
-      return orDash(percentOfMarkText(row.utilisationP95));
+      return markedText(row.utilisationP95, nearRatio);
     case 'emergency':
       return orDash(percentOfMarkText(row.emergencyUtilisation));
     case 'charging':

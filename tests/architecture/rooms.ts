@@ -43,7 +43,16 @@ export const MAY_IMPORT = {
   // types that Astro hands to every page
   env: ['server', 'auth'],
   // The stand-in site shares the wire and the store. Its plant is the independent truth: it shares nothing.
-  simulator: ['simulator/network', 'simulator/plant', 'ingest', 'auth', 'store', 'contract'],
+  simulator: [
+    'simulator/stories',
+    'simulator/network',
+    'simulator/plant',
+    'ingest',
+    'auth',
+    'store',
+    'contract',
+  ],
+  'simulator/stories': ['simulator/network', 'simulator/plant', 'contract'],
   'simulator/network': ['simulator/plant', 'contract'],
   'simulator/plant': [],
 } as const satisfies Record<string, readonly string[]>;

@@ -34,9 +34,15 @@ export function storyRosterLine(key: string): RosterLine {
   );
 }
 
-/** The year that a look reaches back, sampled every half hour, through the product's own evaluation and rows. */
-export function storyHistoryOf(line: RosterLine, nowMs: number): LineHistory {
-  const feed = createDemoMeasurements({ seed: SEED, epochMs: nowMs });
+/**
+ * The year that a look at midnight reaches back, sampled every half hour, through the product's own evaluation and
+ * rows. Stories are told around the epoch.
+ */
+export function storyHistoryOf(
+  line: RosterLine,
+  { nowMs, epochMs }: { readonly nowMs: number; readonly epochMs: number },
+): LineHistory {
+  const feed = createDemoMeasurements({ seed: SEED, epochMs });
   const hours: LevelRow[] = [];
   const days: LevelRow[] = [];
   let before: SnapshotRow | undefined;

@@ -58,4 +58,22 @@ describe('ticks of a time axis', () => {
   it('no more ticks than asked for', () => {
     expect(labels('2026-01-01T00:00:00Z', '2026-03-01T00:00:00Z', { most: 5 }).length).toBeLessThanOrEqual(5);
   });
+
+  it('years are counted in months, on the site’s first of them, and the year is named where it begins', () => {
+    expect(labels('2024-11-15T00:00:00Z', '2026-11-16T00:00:00Z', { most: 10 })).toEqual([
+      'Jan 2025',
+      'Apr',
+      'Jul',
+      'Oct',
+      'Jan 2026',
+      'Apr',
+      'Jul',
+      'Oct',
+    ]);
+    const [first] = timeTicks(
+      { fromMs: Date.parse('2024-11-15T00:00:00Z'), toMs: Date.parse('2026-11-16T00:00:00Z') },
+      { timeZone: BERLIN, most: 10 },
+    );
+    expect(new Date(first!.atMs).toISOString()).toBe('2024-12-31T23:00:00.000Z');
+  });
 });

@@ -2,7 +2,8 @@ import type { AgainstCell, AgainstRow } from '../../view/composition-rows';
 
 interface Props {
   readonly rows: readonly AgainstRow[];
-  readonly heads: readonly [string, string];
+  /** of one window or of two */
+  readonly heads: readonly string[];
   /** which of the two is history */
   readonly past: 'first' | 'second';
 }
@@ -29,8 +30,14 @@ export function AgainstTable({ rows, heads, past }: Props) {
             <th scope="row" className="max-sm:block max-sm:border-0 max-sm:p-0">
               {row.name}
             </th>
-            <Cell cell={row.now} head={heads[0]} isPast={past === 'first'} />
-            <Cell cell={row.before} head={heads[1]} isPast={past === 'second'} />
+            {[row.now, row.before].slice(0, heads.length).map((cell, index) => (
+              <Cell
+                key={heads[index]}
+                cell={cell}
+                head={heads[index] ?? ''}
+                isPast={index === (past === 'first' ? 0 : 1)}
+              />
+            ))}
           </tr>
         ))}
       </tbody>

@@ -11,7 +11,7 @@ import {
   stackedDays,
 } from '../../view/composition-history';
 import type { CauseSpan, StackedCause, StackedDay } from '../../view/composition-history';
-import { stepInWindowWords } from '../../view/composition-why';
+import { stepInWindowWords, weakWords } from '../../view/composition-why';
 import { countedWords } from '../../view/composition-rows';
 import { tenthsText } from '../../view/composition-words';
 import { dateText } from '../../view/figures';
@@ -72,7 +72,10 @@ export function CauseHistory(props: Props) {
   const history = query.data?.history ?? NO_HISTORY;
   const composition = query.data?.phases[phase];
   const step = standing.find((each) => each.phase === phase)?.step ?? null;
-  const mixed = composition && stepInWindowWords(composition, step, site.timeZone);
+  const caution =
+    composition?.kind === 'separated'
+      ? (stepInWindowWords(composition, step, site.timeZone) ?? weakWords(composition))
+      : undefined;
   const title = `The causes by day, phase ${site.phaseLetters[phase]}`;
   const table = causeTable(history, phase, {
     caption: title,
@@ -115,7 +118,7 @@ export function CauseHistory(props: Props) {
         </p>
       ) : (
         <>
-          {mixed !== undefined && <p className="mb-2 max-w-[110ch] text-pretty">{mixed}</p>}
+          {caution !== undefined && <p className="mb-2 max-w-[110ch] text-pretty">{caution}</p>}
           <Stack {...props} window={window} history={history} label={`${title}. ${caption}.`} />
         </>
       )}

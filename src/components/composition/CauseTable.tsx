@@ -4,7 +4,8 @@ import { StrokeOfCause } from './StrokeOfCause';
 
 interface Props {
   readonly rows: readonly CauseRow[];
-  readonly heads: readonly [string, string];
+  /** of one window or of two */
+  readonly heads: readonly string[];
   readonly caption: string;
   /** the colour that the phase has earned, as a text utility; ink otherwise */
   readonly ink: string;
@@ -36,7 +37,7 @@ export function CauseTable({ rows, heads, caption, ink, marked }: Props) {
               </span>
             </th>
             <Cell cell={row.now} ink={row.id === marked ? ink : ''} />
-            <Cell cell={row.before} ink="" />
+            {heads.length > 1 && <Cell cell={row.before} ink="" />}
           </tr>
         ))}
       </tbody>

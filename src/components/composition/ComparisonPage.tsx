@@ -1,13 +1,12 @@
 import type { LineSummary } from '../../contract/lines';
 import type { Comparison } from '../../contract/standing';
 import { againstRows, causeRows, qualityWords } from '../../view/composition-rows';
-import { comparisonSentence, comparisonTable, dayText } from '../../view/line-comparison';
+import { comparisonSentence, comparisonTable, dayText, turnedTable } from '../../view/line-comparison';
 import { tableCsv } from '../../view/line-table';
 import { PHASES } from '../../view/phase';
 import type { PhaseName } from '../../view/phase';
 import type { SiteCustom } from '../../view/site-custom';
 import { Choice } from '../charts/Choice';
-import { FiguresTable } from '../charts/FiguresTable';
 import { saveTextFile } from '../charts/save-file';
 import { useAddressSwitch } from '../line/use-address';
 import { AgainstTable } from './AgainstTable';
@@ -106,12 +105,36 @@ function CausesPanel({ comparison, line, site, phase, onPhase }: CausesProps) {
 
 function FiguresPanel({ comparison, line, site }: Props) {
   const table = comparisonTable(comparison, { letters: site.phaseLetters, name: line.name });
+  const turned = turnedTable(table);
   return (
     <section className="panel min-w-0 p-4 sm:p-[1.125rem]" aria-labelledby="figures-title">
       <h2 id="figures-title" className="m-0 mb-2 text-body font-semibold">
         All phases in figures
       </h2>
-      <FiguresTable table={table} timeZone={site.timeZone} />
+      <table className="figures">
+        <caption className="sr-only">{table.caption}</caption>
+        <thead>
+          <tr>
+            {turned.heads.map((head, index) => (
+              <th key={head} scope="col" className={index === 0 ? '' : 'figure'}>
+                {head}
+              </th>
+            ))}
+          </tr>
+        </thead>
+        <tbody>
+          {turned.rows.map(([name, ...figures]) => (
+            <tr key={name}>
+              <th scope="row">{name}</th>
+              {figures.map((figure, index) => (
+                <td key={index} className="figure">
+                  {figure}
+                </td>
+              ))}
+            </tr>
+          ))}
+        </tbody>
+      </table>
       <button
         type="button"
         className="button mt-3"

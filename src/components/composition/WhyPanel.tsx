@@ -4,11 +4,12 @@ import type { Cause, StandingVerdict } from '../../contract/standing';
 import { CONDITION_INK } from '../../view/condition-words';
 import { polygonFit, polygonPicture } from '../../view/composition-polygon';
 import type { PolygonCause } from '../../view/composition-polygon';
-import { againstRows, causeRows, countedWords, qualityWords } from '../../view/composition-rows';
+import { againstRows, causeRows, qualityWords } from '../../view/composition-rows';
 import {
   polygonWords,
   polygonSentence,
   stepInWindowWords,
+  weakWords,
   whyCaption,
   whyTitle,
 } from '../../view/composition-why';
@@ -56,7 +57,9 @@ export function WhyPanel(props: Props) {
             {whyTitle(verdict, words)}
           </h2>
           <p className="mt-0.5 text-caption text-ink-2">
-            {verdict !== undefined && whyCaption(verdict.composition, site.timeZone)}
+            {verdict !== undefined &&
+              line.goesBy === 'phasors' &&
+              whyCaption(verdict.composition, site.timeZone)}
           </p>
         </div>
         <Choice
@@ -83,12 +86,9 @@ function Why({ verdict, ...props }: Props & { verdict: StandingVerdict | undefin
   const { composition } = verdict;
   if (composition.kind === 'not separable')
     return (
-      <>
-        <p className="mt-3 max-w-[60ch]">
-          <strong className="font-semibold">Not separable in this window.</strong> {composition.reason}
-        </p>
-        <p className="mt-2 text-caption text-ink-2">{countedWords(composition)} so far.</p>
-      </>
+      <p className="mt-3 max-w-[60ch]">
+        <strong className="font-semibold">Not separable in this window.</strong> {composition.reason}
+      </p>
     );
   return <Told {...props} verdict={verdict} composition={composition} />;
 }
@@ -112,26 +112,29 @@ function Told({ line, site, unit, phase, verdict, composition }: ToldProps) {
   const coloured = condition === 'over' || condition === 'near' || condition === 'rising';
   const ink = coloured ? CONDITION_INK[condition] : 'text-ink';
   const marked = SIDES[verdict.likelyCause];
-  const mixed = stepInWindowWords(composition, verdict.step, site.timeZone);
+  const caution = stepInWindowWords(composition, verdict.step, site.timeZone) ?? weakWords(composition);
+  const heads = before === null ? HEADS.slice(0, 1) : HEADS;
   return (
     <>
-      {mixed !== undefined && <p className="mt-2 max-w-[80ch] text-pretty">{mixed}</p>}
+      {caution !== undefined && <p className="mt-2 max-w-[80ch] text-pretty">{caution}</p>}
       <div className="mt-2 grid items-center gap-x-6 gap-y-3 sm:grid-cols-[minmax(0,0.85fr)_minmax(0,1fr)]">
         <Polygon {...{ composition, phase, ink, marked }} context={context} />
         <CauseTable
           rows={causeRows(composition, before, context)}
-          heads={HEADS}
+          heads={heads}
           caption="The causes of the standing level, now and 90 days ago"
           ink={ink}
           marked={marked}
         />
       </div>
       <div className="mt-3">
-        <AgainstTable rows={againstRows(composition, before, context)} heads={HEADS} past="second" />
+        <AgainstTable rows={againstRows(composition, before, context)} heads={heads} past="second" />
       </div>
       <p className="mt-2 text-caption text-ink-2">
         {`Now: ${qualityWords(composition, context)}.`}
-        {before !== null && ` 90 days ago: ${beforeWords(before, context)}`}
+        {before === null
+          ? ' Of 90 days ago there is no history yet.'
+          : ` 90 days ago: ${beforeWords(before, context)}`}
         {' In brackets and below figures: 95 % intervals.'}
       </p>
     </>

@@ -3,7 +3,13 @@ import type { FollowUp } from '../../contract/standing';
 import type { Condition } from '../../contract/condition';
 import { kilovoltsText } from '../../view/figures';
 import { dayOf, forecastRange, type ForecastAxis } from '../../view/forecast-axis';
-import { causeName, shownDates, type ForecastPlace, type ForecastRow } from '../../view/forecast-list';
+import {
+  causeName,
+  dailyLevelsOf,
+  shownDates,
+  type ForecastPlace,
+  type ForecastRow,
+} from '../../view/forecast-list';
 import { phaseWords } from '../../view/forecast-words';
 import type { SiteCustom } from '../../view/site-custom';
 import { sparkline } from '../../view/sparkline';
@@ -29,20 +35,26 @@ export const ROW_GRID =
   'lg:grid-cols-[14rem_9rem_minmax(0,1fr)_24rem] xl:grid-cols-[16rem_11rem_minmax(0,1fr)_30rem]';
 
 const MARKS: Readonly<
-  Record<ForecastPlace, { condition: Condition; words: string; ink: string; edge: string }>
+  Record<ForecastPlace, { condition: Condition; words: string; ink: string; block: string }>
 > = {
   beyond: {
     condition: 'near',
     words: 'beyond the near mark',
     ink: 'text-near',
-    edge: 'border-l-near',
+    block: 'panel border-l-4 border-l-near px-4 py-3.5',
   },
-  coming: { condition: 'rising', words: 'rising', ink: 'text-rising', edge: 'border-l-rising' },
+  coming: {
+    condition: 'rising',
+    words: 'rising',
+    ink: 'text-rising',
+    block: 'panel border-l-4 border-l-rising px-4 py-3.5',
+  },
   'within margin': {
     condition: 'settled',
     words: 'rising within margin',
     ink: 'text-ink-2',
-    edge: 'border-l-rule',
+    // what asks for nothing gets little
+    block: 'border-b border-hairline pt-1 pb-2.5 lg:pr-4 lg:pl-5',
   },
 };
 
@@ -56,12 +68,9 @@ export function ForecastRowItem({ row, axis, site, nowMs, followUps, mayKeep }: 
   const nearAmps = verdict.pickupAmps === null ? undefined : site.nearRatio * verdict.pickupAmps;
   const range = forecastRange(shownDates(row), axis);
   return (
-    <li
-      data-line={line.key}
-      className={`panel grid items-start gap-x-7 gap-y-3 border-l-4 px-4 py-3.5 ${mark.edge} ${ROW_GRID}`}
-    >
+    <li data-line={line.key} className={`grid items-start gap-x-7 gap-y-3 ${mark.block} ${ROW_GRID}`}>
       <div>
-        <h3 className="text-lead leading-snug font-semibold">
+        <h3 className={place === 'within margin' ? 'font-medium' : 'text-lead leading-snug font-semibold'}>
           <a href={`/lines/${line.key}`} className="text-ink no-underline hover:underline">
             {line.name}
           </a>
@@ -73,12 +82,14 @@ export function ForecastRowItem({ row, axis, site, nowMs, followUps, mayKeep }: 
           </span>
           · {causeName(verdict.likelyCause)}
         </p>
-        <p className={`mt-1 inline-flex items-center gap-1.5 font-semibold ${mark.ink}`}>
-          {place !== 'within margin' && <ConditionShape condition={mark.condition} />}
-          {mark.words}
-        </p>
+        {place !== 'within margin' && (
+          <p className={`mt-1 inline-flex items-center gap-1.5 font-semibold ${mark.ink}`}>
+            <ConditionShape condition={mark.condition} />
+            {mark.words}
+          </p>
+        )}
       </div>
-      <Sparkline picture={sparkline([...phase.dailyLevels], nearAmps)} condition={mark.condition} />
+      <Sparkline picture={sparkline(dailyLevelsOf(phase), nearAmps)} condition={mark.condition} />
       <div className="lg:pt-2.5">
         {range === undefined ? (
           <p className="text-caption text-ink-2">
@@ -118,7 +129,7 @@ function Others({ row, context }: { row: ForecastRow; context: Parameters<typeof
 function LineFollowUps({ row, site, nowMs, followUps, mayKeep }: Omit<ForecastRowProps, 'axis'>) {
   const [writing, setWriting] = useState(false);
   const closed = useRef(false);
-  const { line, phase } = row;
+  const { line, phase, place } = row;
   const own: readonly FollowUp[] = followUps.open.filter((one) => one.line === line.key);
   return (
     <>
@@ -160,7 +171,7 @@ function LineFollowUps({ row, site, nowMs, followUps, mayKeep }: Omit<ForecastRo
               closed.current = false;
               button.focus();
             }}
-            className="button mt-2"
+            className={`mt-2 ${place === 'within margin' ? 'link cursor-pointer' : 'button'}`}
             aria-label={`Open a follow-up for ${line.name}`}
             onClick={() => setWriting(true)}
           >

@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import { forecastAxis, forecastRange } from '../../view/forecast-axis';
 import { forecastGroups, shownDates, type ForecastRow } from '../../view/forecast-list';
 import type { ForecastGrouping } from '../../view/forecast-query';
@@ -13,8 +14,12 @@ interface ForecastSectionProps extends Omit<ForecastRowProps, 'row' | 'axis'> {
   grouping: ForecastGrouping;
 }
 
+/** A longer list is no work list for a first look; the rest comes when it is asked for. */
+const ROWS_FIRST = 50;
+
 /** Lines of one kind, in one list or one a group. */
 export function ForecastSection({ id, title, caption, rows, grouping, ...shared }: ForecastSectionProps) {
+  const [most, setMost] = useState(ROWS_FIRST);
   if (rows.length === 0) return null;
   const axis = forecastAxis(rows.map(shownDates), shared.nowMs);
   const dated = rows.some((row) => forecastRange(shownDates(row), axis) !== undefined);
@@ -29,7 +34,7 @@ export function ForecastSection({ id, title, caption, rows, grouping, ...shared 
         </div>
         {dated && <AxisLabels axis={axis} className="max-lg:hidden" />}
       </div>
-      {forecastGroups(rows, grouping).map((group) => (
+      {forecastGroups(rows.slice(0, most), grouping).map((group) => (
         <div key={group.key}>
           {group.name !== '' && <h3 className="mt-4 mb-1 font-medium text-ink-2">{group.name}</h3>}
           <ul className="mt-2 grid gap-2">
@@ -39,6 +44,11 @@ export function ForecastSection({ id, title, caption, rows, grouping, ...shared 
           </ul>
         </div>
       ))}
+      {rows.length > most && (
+        <button type="button" className="button mt-3" onClick={() => setMost(rows.length)}>
+          Show {rows.length - most} more
+        </button>
+      )}
     </section>
   );
 }

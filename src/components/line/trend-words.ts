@@ -24,16 +24,42 @@ export function trendWordsSeries(drawing: TrendDrawing): CustomSeriesOption {
 
 type At = (atMs: number, level: number) => { x: number; y: number };
 
+/** Barlow at 12 px is narrower than this on average. */
+const CHARACTER_PX = 6;
+
+/** Where a name begins so that no marked change runs through it: where it would like to, or beyond the last such one. */
+function clearOf(
+  changesPx: readonly number[],
+  { startPx, widthPx }: { startPx: number; widthPx: number },
+): number {
+  const through = changesPx
+    .filter((px) => px > startPx - 4 && px < startPx + widthPx)
+    .sort((one, other) => one - other);
+  const first = through[0];
+  return first === undefined ? startPx : clearOf(changesPx, { startPx: first + 6, widthPx });
+}
+
 /** A line's name stands clear of the line, halo and all. */
 const MARK_NAME_ABOVE = 10;
 
-/** The pickup is named at the right and the near mark at the left, so that they cannot meet. */
-function markNames({ ink, pickup, nearRatio, levelText }: TrendDrawing, at: At) {
-  const first = pickup[0];
+/**
+ * The pickup is named at the right and the near mark at the left of what was longest in force, so that they cannot
+ * meet, and neither stands across a change of the settings.
+ */
+function markNames(drawing: TrendDrawing, at: At) {
+  const { ink, pickup, nearRatio, levelText } = drawing;
   const last = pickup[pickup.length - 1];
-  if (first === undefined || last === undefined) return [];
-  const near = at(first.fromMs, nearRatio * first.pickup);
+  if (last === undefined) return [];
+  const longest = pickup.reduce((most, step) =>
+    step.toMs - step.fromMs > most.toMs - most.fromMs ? step : most,
+  );
+  const near = at(longest.fromMs, nearRatio * longest.pickup);
   const end = at(last.toMs, last.pickup);
+  const nearName = `near mark ${levelText(nearRatio * longest.pickup)}`;
+  const pickupName = `pickup ${levelText(last.pickup)}`;
+  const changesPx = drawing.changes.map(({ atMs }) => at(atMs, 0).x);
+  // The name at the right grows to the left: seen from the end it is the same question.
+  const mirrored = changesPx.map((px) => end.x - px);
   const style = {
     ...CHART_TYPE,
     fill: ink.ink2,
@@ -44,19 +70,19 @@ function markNames({ ink, pickup, nearRatio, levelText }: TrendDrawing, at: At) 
   return [
     {
       type: 'text' as const,
-      x: near.x + 6,
+      x: clearOf(changesPx, { startPx: near.x + 6, widthPx: nearName.length * CHARACTER_PX }),
       y: near.y - MARK_NAME_ABOVE,
       style: {
         ...style,
-        text: `near mark ${levelText(nearRatio * first.pickup)}`,
+        text: nearName,
         align: 'left' as const,
       },
     },
     {
       type: 'text' as const,
-      x: end.x,
+      x: end.x - clearOf(mirrored, { startPx: 0, widthPx: pickupName.length * CHARACTER_PX }),
       y: end.y - MARK_NAME_ABOVE,
-      style: { ...style, text: `pickup ${levelText(last.pickup)}`, align: 'right' as const },
+      style: { ...style, text: pickupName, align: 'right' as const },
     },
   ];
 }

@@ -73,7 +73,7 @@ export function FleetScatter({ state, site, nowMs }: FleetScatterProps) {
         <ChartPlace
           option={option}
           label={`Charging share against mismatch share of ${points.length} ${which === 'all' ? 'phases' : 'lines'}; the figures stand in the table.`}
-          className="h-80"
+          className="h-[26rem] max-w-[60rem]"
           onOpen={open}
         />
       )}

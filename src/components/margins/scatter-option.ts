@@ -89,8 +89,7 @@ function circle(
         color: ink.ink2,
         ...CHART_TYPE,
         align: 'left',
-        verticalAlign: 'bottom',
-        offset: [2, -2],
+        offset: [0, -10],
       },
     },
   ];

@@ -1,4 +1,6 @@
-import type { ForecastLine, ForecastList } from '../../contract/forecast-list';
+import type { CompositionOnWire } from '../../contract/composition';
+import type { ForecastHistory, ForecastLine, ForecastList } from '../../contract/forecast-list';
+import type { StandingVerdict } from '../../contract/standing';
 import { groupedBy } from '../../store/grouped';
 import { readFollowUps } from '../../store/follow-ups';
 import {
@@ -13,7 +15,7 @@ import type { Site } from '../site';
 const DAY_MS = 86_400_000;
 const HISTORY_DAYS = 60;
 /** More phases than this are no work list any more, and their histories would make the page heavy. */
-const PHASES_MOST = 600;
+const PHASES_MOST = 400;
 
 /** Lines that rise or stand beyond the near mark, most urgent first, with what is kept to be done about them. */
 export async function readForecastList({ store, settings, now }: Site): Promise<ForecastList> {
@@ -37,12 +39,9 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
     voltageKv: own[0]!.voltageKv,
     substations: [...(ends.get(lineId) ?? [])],
     phases: own.map(({ phase, verdict, figures }) => ({
-      verdict,
+      verdict: withoutPolygons(verdict),
       creepVerdict: figures.creepVerdict,
-      dailyLevels: (daysOf.get(`${lineId} ${phase}`) ?? []).map(({ start, medianAmps }) => ({
-        day: start.toISOString().slice(0, 10),
-        levelAmps: medianAmps,
-      })),
+      history: history(daysOf.get(`${lineId} ${phase}`) ?? []),
     })),
   }));
   return {
@@ -54,3 +53,27 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
     followUps,
   };
 }
+
+type Day = Awaited<ReturnType<typeof readDailyLevels>>[number];
+
+function history(days: readonly Day[]): ForecastHistory | undefined {
+  const first = days[0];
+  const last = days.at(-1);
+  if (first === undefined || last === undefined) return undefined;
+  const place = ({ start }: Day) => Math.round((start.getTime() - first.start.getTime()) / DAY_MS);
+  const levelsAmps = Array<number | null>(place(last) + 1).fill(null);
+  for (const day of days) levelsAmps[place(day)] = day.medianAmps === null ? null : tenths(day.medianAmps);
+  return { from: first.start.toISOString().slice(0, 10), levelsAmps };
+}
+
+const tenths = (amps: number): number => Math.round(amps * 10) / 10;
+
+/** The page draws no polygon: what it does not show, it is not sent. */
+const withoutPolygons = (verdict: StandingVerdict): StandingVerdict => ({
+  ...verdict,
+  composition: bare(verdict.composition),
+  compositionBefore: verdict.compositionBefore && bare(verdict.compositionBefore),
+});
+
+const bare = (found: CompositionOnWire): CompositionOnWire =>
+  found.kind === 'separated' ? { ...found, polygon: null } : found;
