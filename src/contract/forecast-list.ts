@@ -28,6 +28,9 @@ export interface ForecastLine {
 export interface ForecastList {
   readonly at: string;
   readonly lines: readonly ForecastLine[];
+  /** lines beyond the near mark, and lines on their way to it, also those left out below */
+  readonly beyondCount: number;
+  readonly comingCount: number;
   /** lines with findings of which no phase rises */
   readonly steadyCount: number;
   /** lines in service of which nothing has been computed yet */

@@ -1,4 +1,4 @@
-import { connect, type MqttClient } from 'mqtt';
+import { connect, type IClientOptions, type MqttClient } from 'mqtt';
 import type { IngestSettings } from '../settings';
 import { deferAcknowledgements, type Delivery, type Receipt } from './deferred-acknowledgement';
 import { INGEST_LIMITS } from './limits';
@@ -27,22 +27,7 @@ export function connectFeed(
 ): FeedClient {
   let wanted: readonly string[] = [];
   let away = false;
-  const mqtt = connect(settings.BROKER_URL, {
-    clientId: `tareline-ingest-${settings.WORKER_INDEX}-of-${settings.WORKER_COUNT}`,
-    clean: false,
-    resubscribe: false,
-    keepalive: KEEPALIVE_S,
-    connectTimeout: CONNECT_TIMEOUT_MS,
-    reconnectPeriod: INGEST_LIMITS.retryFirstMs,
-    ...(settings.MQTT_VERSION === '5'
-      ? {
-          protocolVersion: 5,
-          properties: { receiveMaximum: RECEIVE_MOST, sessionExpiryInterval: 0xffffffff },
-        }
-      : { protocolVersion: 4 }),
-    ...(settings.BROKER_USERNAME !== undefined && { username: settings.BROKER_USERNAME }),
-    ...(settings.BROKER_PASSWORD !== undefined && { password: settings.BROKER_PASSWORD }),
-  });
+  const mqtt = connect(settings.BROKER_URL, clientOptions(settings));
   const { acknowledge } = deferAcknowledgements(mqtt, take);
   let granted = () => {};
   const subscribed = new Promise<void>((resolve) => (granted = resolve));
@@ -83,5 +68,24 @@ export function connectFeed(
       subscribe(fresh);
     },
     close: () => mqtt.endAsync(),
+  };
+}
+
+function clientOptions(settings: IngestSettings): IClientOptions {
+  return {
+    clientId: `tareline-ingest-${settings.WORKER_INDEX}-of-${settings.WORKER_COUNT}`,
+    clean: false,
+    resubscribe: false,
+    keepalive: KEEPALIVE_S,
+    connectTimeout: CONNECT_TIMEOUT_MS,
+    reconnectPeriod: INGEST_LIMITS.retryFirstMs,
+    ...(settings.MQTT_VERSION === '5'
+      ? {
+          protocolVersion: 5,
+          properties: { receiveMaximum: RECEIVE_MOST, sessionExpiryInterval: 0xffffffff },
+        }
+      : { protocolVersion: 4 }),
+    ...(settings.BROKER_USERNAME !== undefined && { username: settings.BROKER_USERNAME }),
+    ...(settings.BROKER_PASSWORD !== undefined && { password: settings.BROKER_PASSWORD }),
   };
 }

@@ -14,7 +14,11 @@ const PARTS = [
   ['rest', 'restAmps'],
 ] as const satisfies readonly (readonly [Cause, keyof PolygonOnWire])[];
 
-/** Compares what a level consists of with what it consisted of before; without a before, the largest part counts. */
+/**
+ * Of a level that drifts, the part that differs most from what it was before; of one that stands still, or has no
+ * before, the largest part. `before` is only given for a level that drifts: two windows at different loads differ
+ * in every part that follows the load.
+ */
 export function likelyCause(now: CompositionOnWire, before: CompositionOnWire | null): LikelyCause {
   if (now.kind === 'not separable' || now.polygon === null) return { cause: 'not told', terminal: null };
   const earlier = before?.kind === 'separated' ? before.polygon : null;

@@ -51,9 +51,10 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
   const days = summedDays(history.days, phase, compensated);
   const windows = composedWindows(line, days, { nowMs, frequencyHz, markDays, compensated });
   const drift = drifts(line, history, { phase, pickup, nearRatio, now: windows.now, markDays, days });
-  const { cause, terminal } = likelyCause(windows.now.onWire, windows.before);
   const separated = windows.now.composition.kind === 'separated' ? windows.now.composition : undefined;
   const counted = driftThatCounts({ ...drift, composition: windows.now.onWire });
+  const hasMoved = counted !== undefined || step !== null;
+  const { cause, terminal } = likelyCause(windows.now.onWire, hasMoved ? windows.before : null);
   return {
     line: line.key,
     phase,

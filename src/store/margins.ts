@@ -188,38 +188,66 @@ export async function readForecastKeys(store: Store, nearRatio: number, most: nu
     .limit(most);
 }
 
-/** How many lines have findings, how many of them rise or stand beyond, and how many in service have none yet. */
-export async function countForecastLines(
-  store: Store,
-  nearRatio: number,
-): Promise<{ found: number; listed: number; unknown: number }> {
-  const listed = sql`${standingVerdict.creepVerdict} is not null or ${standingVerdict.shareOfPickup} >= ${nearRatio}`;
+export interface ForecastCounts {
+  /** lines with findings */
+  readonly found: number;
+  readonly beyond: number;
+  /** on the way to the near mark, and not beyond it */
+  readonly coming: number;
+  readonly withinMargin: number;
+  /** lines in service without findings */
+  readonly unknown: number;
+}
+
+/** How many lines stand where, each by its most urgent phase. */
+export async function countForecastLines(store: Store, nearRatio: number): Promise<ForecastCounts> {
+  const byLine = store.db
+    .select({
+      lineId: standingVerdict.lineId,
+      beyond: sql<number>`coalesce(max(${standingVerdict.shareOfPickup} >= ${nearRatio}), 0)`.as('beyond'),
+      creeps: sql<number>`coalesce(max(${standingVerdict.creepVerdict} = 'creep'), 0)`.as('creeps'),
+      rises: sql<number>`max(${standingVerdict.creepVerdict} is not null)`.as('rises'),
+    })
+    .from(standingVerdict)
+    .innerJoin(line, eq(standingVerdict.lineId, line.id))
+    .groupBy(standingVerdict.lineId)
+    .as('by_line');
+  const held = (condition: SQL) => sql<number>`coalesce(sum(${condition}), 0)`.mapWith(Number);
   const [[known], [without]] = await Promise.all([
     store.db
       .select({
-        found: sql<number>`count(distinct ${standingVerdict.lineId})`.mapWith(Number),
-        listed: sql<number>`count(distinct case when ${listed} then ${standingVerdict.lineId} end)`.mapWith(
-          Number,
-        ),
+        found: count(),
+        beyond: held(sql`${byLine.beyond}`),
+        coming: held(sql`${byLine.creeps} and not ${byLine.beyond}`),
+        withinMargin: held(sql`${byLine.rises} and not ${byLine.creeps} and not ${byLine.beyond}`),
       })
-      .from(standingVerdict)
-      .innerJoin(line, eq(standingVerdict.lineId, line.id)),
+      .from(byLine),
     store.db
       .select({ lines: sql<number>`count(distinct ${line.id})`.mapWith(Number) })
       .from(line)
       .leftJoin(standingVerdict, eq(standingVerdict.lineId, line.id))
       .where(and(eq(line.inService, true), isNull(standingVerdict.lineId))),
   ]);
-  return { found: known?.found ?? 0, listed: known?.listed ?? 0, unknown: without?.lines ?? 0 };
+  const { found = 0, beyond = 0, coming = 0, withinMargin = 0 } = known ?? {};
+  return { found, beyond, coming, withinMargin, unknown: without?.lines ?? 0 };
 }
 
-/** Daily standing levels of these lines, oldest first: without the sums, which are most of a day row. */
+/** Daily standing levels of these phases, oldest first: without the sums, which are most of a day row. */
 export async function readDailyLevels(
   store: Store,
-  lineIds: readonly number[],
+  keys: readonly MarginKey[],
   from: Date,
 ): Promise<(MarginKey & { start: Date; medianAmps: number | null })[]> {
-  if (lineIds.length === 0) return [];
+  if (keys.length === 0) return [];
+  const ofPhase = [...groupedBy(keys, ({ phase }) => phase)].map(([phase, own]) =>
+    and(
+      inArray(
+        dayLevel.lineId,
+        own.map(({ lineId }) => lineId),
+      ),
+      eq(dayLevel.phase, phase),
+    ),
+  );
   return store.db
     .select({
       lineId: dayLevel.lineId,
@@ -228,7 +256,7 @@ export async function readDailyLevels(
       medianAmps: dayLevel.medianAmps,
     })
     .from(dayLevel)
-    .where(and(inArray(dayLevel.lineId, [...lineIds]), gte(dayLevel.start, from)))
+    .where(and(or(...ofPhase), gte(dayLevel.start, from)))
     .orderBy(asc(dayLevel.start));
 }
 

@@ -128,33 +128,36 @@ function causeMoves(
 const meet = (one: EstimateOnWire, other: EstimateOnWire): boolean =>
   one.low <= other.high && other.low <= one.high;
 
-/** The head of the page: who is beyond, who is coming within a year, and who stays within margin. */
-export function forecastSentence(sections: ForecastSections, nowMs: number) {
-  const { beyond, coming, 'within margin': within } = sections;
+const lines = (count: number): string => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
+
+interface ForecastHeadCounts {
+  readonly beyondCount: number;
+  readonly comingCount: number;
+}
+
+/** The head of the page: how many are beyond, how many are on the way and when the first is there. */
+export function forecastSentence(
+  { beyondCount, comingCount }: ForecastHeadCounts,
+  coming: ForecastSections['coming'],
+  nowMs: number,
+) {
   return {
     beyond:
-      beyond.length === 0
+      beyondCount === 0
         ? undefined
-        : capital(`${lines(beyond.length)} ${beyond.length === 1 ? 'stands' : 'stand'} beyond the near mark`),
-    coming: coming.length === 0 ? undefined : capital(comingWords(coming, nowMs)),
-    rest:
-      beyond.length + coming.length > 0
-        ? undefined
-        : within.length === 0
-          ? 'No line rises, and none stands beyond the near mark'
-          : 'No line is on its way to the near mark',
+        : capital(`${lines(beyondCount)} ${beyondCount === 1 ? 'stands' : 'stand'} beyond the near mark`),
+    coming: comingCount === 0 ? undefined : capital(comingWords(comingCount, coming, nowMs)),
+    rest: beyondCount + comingCount > 0 ? undefined : 'No line is beyond the near mark or on its way there',
   };
 }
 
-const lines = (count: number): string => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
-
-function comingWords(coming: ForecastSections['coming'], nowMs: number): string {
+function comingWords(comingCount: number, coming: ForecastSections['coming'], nowMs: number): string {
   const first = coming
     .flatMap(({ phase }) => phase.verdict.near?.likely ?? [])
     .reduce((one, other) => (other < one ? other : one), '9999');
-  const many = `${lines(coming.length)} ${coming.length === 1 ? 'is' : 'are'} on the way there`;
+  const many = `${lines(comingCount)} ${comingCount === 1 ? 'is' : 'are'} on the way there`;
   if (first === '9999') return many;
-  return `${many}, ${coming.length === 1 ? 'likely' : 'the first likely'} in ${halfMonthWords(first, nowMs)}`;
+  return `${many}, ${comingCount === 1 ? 'likely' : 'the first likely'} in ${halfMonthWords(first, nowMs)}`;
 }
 
 /** What the list does not show: lines that are steady, not known yet, or left out. */

@@ -133,6 +133,10 @@ describe('the forecast', () => {
     const list = await readForecastList(site);
     expect(list.lines.reduce((sum, { phases }) => sum + phases.length, 0)).toBe(listed.length);
     expect(list.lines.length).toBe(new Set(listed.map(({ lineId }) => lineId)).size);
+    const beyond = new Set(rows.filter((row) => (row.shareOfPickup ?? 0) >= 0.7).map(({ lineId }) => lineId));
+    const creeping = new Set(rows.filter((row) => row.creepVerdict === 'creep').map(({ lineId }) => lineId));
+    expect(list.beyondCount).toBe(beyond.size);
+    expect(list.comingCount).toBe([...creeping].filter((id) => !beyond.has(id)).length);
     expect(list.steadyCount).toBe(90 - list.lines.length);
     expect([list.unknownCount, list.leftOutCount]).toEqual([1, 0]);
     expect(list.followUps.map(({ note }) => note)).toEqual(['Soon.', 'Some day.']);

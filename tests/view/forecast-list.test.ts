@@ -104,7 +104,7 @@ describe('where a line stands', () => {
     expect(sections.beyond.map(({ line }) => line.key)).toEqual(['high']);
     expect(sections.coming.map(({ line }) => line.key)).toEqual(['soon', 'late', 'never']);
     expect(sections['within margin'].map(({ line }) => line.key)).toEqual(['margin']);
-    expect(forecastSentence(sections, AT_MS)).toEqual({
+    expect(forecastSentence({ beyondCount: 1, comingCount: 3 }, sections.coming, AT_MS)).toEqual({
       beyond: 'One line stands beyond the near mark',
       coming: 'Three lines are on the way there, the first likely in the second half of December',
       rest: undefined,

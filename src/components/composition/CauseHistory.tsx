@@ -85,7 +85,7 @@ export function CauseHistory(props: Props) {
   });
   const caption =
     composition?.kind === 'separated'
-      ? `Magnitudes stacked, told by the composition of the whole window (${countedWords(composition)}); the line is their sum as phasors, lower where causes point apart`
+      ? `Magnitudes stacked, each day told by the days around it (window: ${countedWords(composition)}); the line is their sum as phasors, lower where causes point apart`
       : 'What the standing level consisted of on each day';
   return (
     <ChartPanel

@@ -7,17 +7,19 @@ interface OpenFollowUpsProps {
   site: SiteCustom;
   nowMs: number;
   mayKeep: boolean;
+  /** whether there is a row above at which one could be opened */
+  hasRows: boolean;
 }
 
 /** Every follow-up that is open, the one due first first. */
-export function OpenFollowUps({ followUps, site, nowMs, mayKeep }: OpenFollowUpsProps) {
+export function OpenFollowUps({ followUps, site, nowMs, mayKeep, hasRows }: OpenFollowUpsProps) {
   const { open } = followUps;
   return (
     <section aria-labelledby="follow-ups" className="mt-10">
       <h2 id="follow-ups" className="font-medium text-ink-2">
         {open.length === 0 ? 'No open follow-ups' : `Open follow-ups, ${open.length}`}
       </h2>
-      {open.length === 0 && mayKeep && (
+      {open.length === 0 && mayKeep && hasRows && (
         <p className="mt-1 text-ink-2">One is opened at a line’s row above.</p>
       )}
       {open.length > 0 && (

@@ -81,7 +81,7 @@ function Forecast({ list, site, search, mayKeep }: ForecastPageProps) {
         caption="A significant rise that does not reach the near mark within the horizon: no warning"
         rows={sections['within margin']}
       />
-      <OpenFollowUps followUps={followUps} site={site} nowMs={nowMs} mayKeep={mayKeep} />
+      <OpenFollowUps followUps={followUps} site={site} nowMs={nowMs} mayKeep={mayKeep} hasRows={shown > 0} />
     </>
   );
 }
@@ -105,7 +105,7 @@ function ForecastHead({ list, rows, known, followUpCount }: ForecastHeadProps) {
         </p>
       </div>
     );
-  const words = forecastSentence(forecastSections(rows, WHOLE_FORECAST), Date.parse(list.at));
+  const words = forecastSentence(list, forecastSections(rows, WHOLE_FORECAST).coming, Date.parse(list.at));
   const unlisted = unlistedWords(list);
   return (
     <>

@@ -3,6 +3,8 @@ import type { Comparison } from '../../contract/standing';
 import { perPhase, PHASES, type PhaseName } from '../../protection/phase';
 import { modulus } from '../../standing/complex';
 import { composition } from '../../standing/composition';
+import { shrunkCoefficients } from '../../standing/composition-fit';
+import { totalOf } from '../../standing/composition-sums';
 import { mannWhitney } from '../../standing/mann-whitney';
 import { compositionPolygon } from '../../standing/operating-point';
 import { median } from '../../standing/quantile';
@@ -20,6 +22,9 @@ interface Window {
 
 const DAY_MS = 86_400_000;
 const COMPARED_DAYS = 180;
+/** A day is looked at with a week on either side of it. */
+const AROUND_DAYS = 7;
+const WHOLE_WEIGHT = 0.001;
 
 /** What every phase consists of over a window of days; undefined when the register does not hold the line. */
 export async function readComposition(
@@ -77,7 +82,10 @@ function composed(
   );
 }
 
-/** The causes day by day, by the window's composition, so that a day with a steady load has its shares as well. */
+/**
+ * The causes day by day: each day by the composition of the days around it, drawn a little towards that of the whole
+ * window, so that a drift shows in its own term and a day with a steady load has its shares as well.
+ */
 function history(
   days: readonly SummedDay[],
   { phase, frequencyHz }: { phase: PhaseName; frequencyHz: number },
@@ -88,7 +96,12 @@ function history(
   );
   if (whole.kind === 'not separable') return [];
   return days.flatMap(({ day, sums }) => {
-    const polygon = compositionPolygon(sums, whole);
+    const near = totalOf(
+      days.flatMap((each) => (Math.abs(each.day - day) <= AROUND_DAYS ? [each.sums] : [])),
+    );
+    const coefficients =
+      near && shrunkCoefficients(near, { prior: whole.coefficients, weight: WHOLE_WEIGHT });
+    const polygon = coefficients && compositionPolygon(sums, { shape: whole.shape, coefficients });
     if (polygon === undefined) return [];
     return [
       {

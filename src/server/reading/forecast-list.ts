@@ -30,7 +30,7 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
   const [margins, ends, days] = await Promise.all([
     readMargins(store, keys),
     readLineEnds(store, lineIds),
-    readDailyLevels(store, lineIds, new Date(nowMs - HISTORY_DAYS * DAY_MS)),
+    readDailyLevels(store, keys, new Date(nowMs - HISTORY_DAYS * DAY_MS)),
   ]);
   const daysOf = groupedBy(days, ({ lineId, phase }) => `${lineId} ${phase}`);
   const lines = [...groupedBy(margins, ({ lineId }) => lineId)].map(([lineId, own]): ForecastLine => ({
@@ -44,12 +44,15 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
       history: history(daysOf.get(`${lineId} ${phase}`) ?? []),
     })),
   }));
+  const listed = counts.beyond + counts.coming + counts.withinMargin;
   return {
     at: new Date(nowMs).toISOString(),
     lines,
-    steadyCount: counts.found - counts.listed,
+    beyondCount: counts.beyond,
+    comingCount: counts.coming,
+    steadyCount: counts.found - listed,
     unknownCount: counts.unknown,
-    leftOutCount: counts.listed - lines.length,
+    leftOutCount: listed - lines.length,
     followUps,
   };
 }
