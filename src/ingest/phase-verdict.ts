@@ -49,7 +49,7 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
     frequencyHz,
   });
   const days = summedDays(history.days, phase, compensated);
-  const windows = composedWindows(line, days, { nowMs, frequencyHz, markDays, compensated });
+  const windows = composedWindows(line, days, { nowMs, frequencyHz, markDays, compensated, step });
   const drift = drifts(line, history, { phase, pickup, nearRatio, now: windows.now, markDays, days });
   const separated = windows.now.composition.kind === 'separated' ? windows.now.composition : undefined;
   const counted = driftThatCounts({ ...drift, composition: windows.now.onWire });
@@ -70,7 +70,7 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
     compositionBefore: windows.before,
     creep: drift.creep,
     creepAtReference: drift.creepAtReference,
-    step,
+    step: step && { ...step, ...stepCause(windows) },
     likelyCause: cause,
     causeTerminal: terminal,
     near: counted?.near ?? null,
@@ -96,6 +96,14 @@ interface Composed {
   readonly days: readonly SummedDay[];
 }
 
+interface ComposedWindows {
+  readonly now: Composed;
+  readonly before: CompositionOnWire | null;
+  /** the month before a known step, and the days since it, a month at the most */
+  readonly beforeStep: CompositionOnWire | undefined;
+  readonly sinceStep: CompositionOnWire | undefined;
+}
+
 function composedWindows(
   line: RosterLine,
   days: readonly SummedDay[],
@@ -104,8 +112,15 @@ function composedWindows(
     frequencyHz,
     markDays,
     compensated,
-  }: { nowMs: number; frequencyHz: number; markDays: readonly number[]; compensated: number },
-): { now: Composed; before: CompositionOnWire | null } {
+    step,
+  }: {
+    nowMs: number;
+    frequencyHz: number;
+    markDays: readonly number[];
+    compensated: number;
+    step: StepOnWire | null;
+  },
+): ComposedWindows {
   const today = Math.floor(nowMs / DAY_MS);
   const over = (from: number, to: number): Composed => {
     const within = days.filter(({ day }) => day >= from && day < to);
@@ -122,10 +137,28 @@ function composedWindows(
   // a mark of the last month parts what it was from what it is: the composition of today begins after it
   const newestMark = Math.max(-Infinity, ...markDays.filter((day) => day < today));
   const before = over(today - BEFORE_DAYS - COMPOSED_DAYS, today - BEFORE_DAYS);
+  const stepDay = step === null ? undefined : Math.floor(Date.parse(step.at) / DAY_MS);
   return {
     now: over(Math.max(today - COMPOSED_DAYS, newestMark + 1), today),
     before: before.composition.kind === 'separated' ? before.onWire : null,
+    beforeStep: stepDay === undefined ? undefined : over(stepDay - COMPOSED_DAYS, stepDay).onWire,
+    sinceStep:
+      stepDay === undefined
+        ? undefined
+        : over(stepDay + 1, Math.min(today, stepDay + 1 + COMPOSED_DAYS)).onWire,
   };
+}
+
+/**
+ * What moved with a step, by the days on either side of it: surer than the hours around it, once there are days
+ * enough. Until then what the hours said stands.
+ */
+function stepCause({
+  beforeStep,
+  sinceStep,
+}: ComposedWindows): Partial<Pick<StepOnWire, 'cause' | 'terminal'>> {
+  if (beforeStep?.kind !== 'separated' || sinceStep?.kind !== 'separated') return {};
+  return likelyCause(sinceStep, beforeStep);
 }
 
 /** Days that no trend and no composition is fitted across: a step, and a change of what the scheme does with its currents. */

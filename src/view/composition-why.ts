@@ -41,7 +41,7 @@ export function stepInWindowWords(
   timeZone: string,
 ): string | undefined {
   if (step === null || step.at < composition.from || step.at.slice(0, 10) >= composition.to) return undefined;
-  return `This window reaches across the step of ${dateText(step.at, timeZone)}: what was before it and what came after are mixed here. Compare before and after keeps them apart.`;
+  return `This window reaches across the step of ${dateText(step.at, timeZone)}: the days on either side of it are told by themselves, and the day itself is left out.`;
 }
 
 /** An interval that reaches further to either side than this share of the differential tells little. */

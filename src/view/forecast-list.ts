@@ -21,11 +21,13 @@ export function phasePlace({ verdict, creepVerdict }: ForecastPhase, nearRatio: 
   return creepVerdict === 'creep' ? 'coming' : 'within margin';
 }
 
-/** The drift that counts: at reference load where there is one, so that load and season are not in it. */
+/** The drift that counts: at one load wherever the causes are told apart, so that load and season are not in it. */
 export const creepOf = ({
   creep,
   creepAtReference,
-}: ForecastPhase['verdict']): ForecastPhase['verdict']['creep'] => creepAtReference?.creep ?? creep;
+  composition,
+}: ForecastPhase['verdict']): ForecastPhase['verdict']['creep'] =>
+  composition.kind === 'separated' ? (creepAtReference?.creep ?? null) : creep;
 
 /** A line by its most urgent phase. */
 export function forecastRow(line: ForecastLine, nearRatio: number): ForecastRow {

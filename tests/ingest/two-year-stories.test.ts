@@ -81,7 +81,7 @@ describe('a transformer replaced', () => {
     expect(verdict.creepAtReference).toBeNull();
   });
 
-  it.fails('has its step named by cause and terminal too', () => {
+  it('has its step named by cause and terminal too', () => {
     expect(verdict.step).toMatchObject({ cause: truth.cause, terminal: truth.terminal });
   });
 

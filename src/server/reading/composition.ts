@@ -10,6 +10,7 @@ import { compositionPolygon } from '../../standing/operating-point';
 import { median } from '../../standing/quantile';
 import { type LevelRow, readLevels } from '../../store/levels';
 import { readRegisterLine, type RegisteredLine, settingsInForce } from '../../store/register';
+import { readVerdictsOfLine } from '../../store/standing';
 import { compositionOnWire } from '../../view/composition-on-wire';
 import { dateOfDay, type SummedDay, summedDays } from '../../view/day-sums';
 import { compensatedMillisiemens } from '../../view/line-zone';
@@ -38,10 +39,14 @@ export async function readComposition(
   const frequencyHz = site.settings.NOMINAL_FREQUENCY_HZ;
   const compensated = compensatedNow(site, line);
   const daysOf = (phase: PhaseName) => summedDays(rows, phase, compensated);
+  const verdicts = await readVerdictsOfLine(site.store, line.id);
+  const steps = new Map(verdicts.map(({ phase, step }) => [phase, step?.at]));
   return {
     line: key,
     phases: perPhase((phase) => composed(daysOf(phase), { line, window, frequencyHz, compensated })),
-    history: PHASES.flatMap((phase) => history(daysOf(phase), { phase, frequencyHz })),
+    history: PHASES.flatMap((phase) =>
+      sides(daysOf(phase), steps.get(phase)).flatMap((days) => history(days, { phase, frequencyHz })),
+    ),
   };
 }
 
@@ -80,6 +85,13 @@ function composed(
     { ...dates, sums },
     { line, frequencyHz, compensatedMillisiemens: compensated },
   );
+}
+
+/** The days before a step and those after it; the day itself is half of each and belongs to neither. */
+function sides(days: readonly SummedDay[], stepAt: string | undefined): SummedDay[][] {
+  if (stepAt === undefined) return [[...days]];
+  const stepDay = Math.floor(Date.parse(stepAt) / DAY_MS);
+  return [days.filter(({ day }) => day < stepDay), days.filter(({ day }) => day > stepDay)];
 }
 
 /**
