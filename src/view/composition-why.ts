@@ -34,7 +34,7 @@ export function whyCaption(composition: CompositionOnWire, timeZone: string): st
   return `${load}${window}: ${countedWords(composition)}, ${told}`;
 }
 
-/** A window that reaches across a step mixes what was before with what came after, and has to say so. */
+/** A history that reaches across a step is told on either side of it by itself, and has to say so. */
 export function stepInWindowWords(
   composition: CompositionOnWire,
   step: StepOnWire | null,

@@ -107,7 +107,7 @@ describe('what stands above the polygon', () => {
     expect(whyTitle(undefined, words)).toBe('Why phase L2 stands where it does');
   });
 
-  it('a window across a step says that both sides are mixed, one after it does not', () => {
+  it('a window across a step says so, one after it does not', () => {
     expect(stepInWindowWords(separatedWith(), STEP, SITE.timeZone)).toContain('the step of 22 Nov 2026');
     expect(stepInWindowWords(separatedWith({ from: '2026-11-23' }), STEP, SITE.timeZone)).toBeUndefined();
     expect(stepInWindowWords(separatedWith(), null, SITE.timeZone)).toBeUndefined();
