@@ -2,6 +2,7 @@ import type { CompositionOnWire, EstimateOnWire } from '../contract/composition'
 import type { LineSummary } from '../contract/lines';
 import type { Cause, StandingVerdict, StepOnWire } from '../contract/standing';
 import type { Creep, ForecastDatesOnWire } from '../contract/warning';
+import { MONTHS } from './forecast';
 import { dateText, timeText } from './figures';
 import { currentText } from './line-figures';
 import { inUnit, unitSign } from './line-unit';
@@ -155,21 +156,6 @@ function forecastPart(
   if (isPast) return `past the near mark, pickup ${monthsWords(verdict.pickup ?? drift.pickup, nowMs)}`;
   return `near mark ${monthsWords(verdict.near ?? drift.near, nowMs)}`;
 }
-
-const MONTHS = [
-  'January',
-  'February',
-  'March',
-  'April',
-  'May',
-  'June',
-  'July',
-  'August',
-  'September',
-  'October',
-  'November',
-  'December',
-];
 
 /** "in March to June", "in December to March 2028", "from March on", "not within five years"; another year is named. */
 export function monthsWords({ earliest, latest }: ForecastDatesOnWire, nowMs: number): string {

@@ -2,7 +2,7 @@ import type { Creep, ForecastDatesOnWire } from '../contract/warning';
 import { ampsText, dateText } from './figures';
 import type { SiteCustom } from './site-custom';
 
-const MONTHS = [
+export const MONTHS = [
   'January',
   'February',
   'March',

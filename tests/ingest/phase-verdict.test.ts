@@ -4,11 +4,12 @@ import { demoHistoryOf, demoRosterLine } from './demo-history';
 
 // midnight, so that the history holds whole days
 const NOW_MS = Date.UTC(2026, 2, 2);
+const TWO_MONTHS = { nowMs: NOW_MS, epochMs: NOW_MS, days: 60, sampleMs: 600_000 } as const;
 const plan = { nearRatio: 0.7, frequencyHz: 50, earlier: undefined } as const;
 
 function verdictsOf(key: string) {
   const line = demoRosterLine(key);
-  const history = demoHistoryOf(line, NOW_MS);
+  const history = demoHistoryOf(line, TWO_MONTHS);
   return (phase: 'a' | 'b' | 'c') => phaseVerdict(line, history, { phase, ...plan });
 }
 
@@ -106,7 +107,7 @@ describe('a step that an earlier look found', () => {
       channelPathChanged: false,
     } as const;
     const earlier = { step, computedAt: new Date(NOW_MS - 3_600_000).toISOString() };
-    const verdict = phaseVerdict(line, demoHistoryOf(line, NOW_MS), { ...plan, phase: 'a', earlier });
+    const verdict = phaseVerdict(line, demoHistoryOf(line, TWO_MONTHS), { ...plan, phase: 'a', earlier });
     const { at, fromAmps, toAmps } = step;
     expect(verdict.step).toMatchObject({ at, fromAmps, toAmps });
   });

@@ -3,7 +3,8 @@ import { storyTruths } from '../../simulator/stories/story-lines';
 import { toldTruths, type ToldTruth } from '../../simulator/stories/told-truth';
 import type { StandingVerdict } from '../../src/contract/standing';
 import { phaseVerdict } from '../../src/ingest/phase-verdict';
-import { storyHistoryOf, storyRosterLine } from './story-history';
+import { HISTORY_DAYS } from '../../src/ingest/line-history';
+import { demoHistoryOf, demoRosterLine } from './demo-history';
 
 // in the coldest weeks: a seasonal load has risen for half a year
 const EPOCH_MS = Date.UTC(2026, 0, 12);
@@ -13,8 +14,13 @@ const told = toldTruths(storyTruths, EPOCH_MS);
 
 /** What the product says of every phase of a line, beside what is so. */
 function looksAt(line: string, nowMs = EPOCH_MS): { truth: ToldTruth; verdict: StandingVerdict }[] {
-  const roster = storyRosterLine(line);
-  const history = storyHistoryOf(roster, { nowMs, epochMs: EPOCH_MS });
+  const roster = demoRosterLine(line);
+  const history = demoHistoryOf(roster, {
+    nowMs,
+    epochMs: EPOCH_MS,
+    days: HISTORY_DAYS.drift,
+    sampleMs: 1_800_000,
+  });
   return told
     .filter((truth) => truth.line === line)
     .map((truth) => {

@@ -1,6 +1,6 @@
 import type { SeriesPoint } from '../../src/standing/sen-slope';
 
-/** Worked by hand in lecture notes of Holy Cross Montserrat. */
+/** Worked by hand in course notes of Holy Cross Montserrat. */
 export const BY_HAND = [12.9, 14.8, 13.2, 15.7, 13.8, 15.6, 12.9, 11.0, 17.3, 15.9, 19.0, 18.3, 20.1, 21.7];
 
 /** Frost days; Schönwiese, 1992, page 114. */
