@@ -3,6 +3,7 @@ import { mkdtemp, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { sql } from 'drizzle-orm';
+import { connectAsync } from 'mqtt';
 import { createConnection } from 'mysql2/promise';
 import { type PrivateDatabase, startDatabase } from '../../simulator/database';
 import { freePort } from '../../simulator/ports';
@@ -77,8 +78,21 @@ async function workerRate(
     return rate(firstMs, await completedMs(store, worker.output));
   } finally {
     await worker.stop();
+    await forgetSession(brokerUrl);
     await store.close();
   }
+}
+
+/** Ends the session that the broker keeps for the worker: it would gather the next bare run's messages for the next worker. */
+async function forgetSession(brokerUrl: string): Promise<void> {
+  const client = await connectAsync(brokerUrl, {
+    protocolVersion: 4,
+    clientId: 'tareline-ingest-0-of-1',
+    clean: true,
+    username: 'ingest',
+    password: 'ingest-secret',
+  });
+  await client.endAsync();
 }
 
 const rate = (firstMs: number, lastMs: number): number => (MEASUREMENTS / (lastMs - firstMs)) * 1000;
