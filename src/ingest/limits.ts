@@ -17,4 +17,5 @@ export const INGEST_LIMITS = {
   retryMostMs: 10_000,
   registerPollMs: 1_000,
   rungEveryMs: 60_000,
+  keepStoreEveryMs: 3_600_000,
 } as const;

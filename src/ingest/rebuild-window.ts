@@ -27,7 +27,7 @@ export async function rebuildWindow(
   }
   let [days, daysLeft] = [0, 0];
   for (let startMs = rungStart('day', fromMs); startMs < toMs; startMs += RUNG_MS.day) {
-    if (startMs < wholeFromMs && startMs < oldest.getTime()) daysLeft += 1;
+    if (startMs < oldest.getTime()) daysLeft += 1;
     else {
       await rebuildRung(store, line, { rung: 'day', startMs });
       days += 1;

@@ -1,14 +1,10 @@
 import type { Rung } from '../contract/lines';
 import { PHASES, type PhaseName } from '../protection/phase';
 import { levelSummary } from '../standing/level';
-import {
-  DEFAULT_QUALIFICATION_LIMITS,
-  disqualifications,
-  type SnapshotFacts,
-} from '../standing/qualification';
+import { DEFAULT_QUALIFICATION_LIMITS, disqualifications } from '../standing/qualification';
 import type { LevelRow } from '../store/levels';
-import { hasFlag } from '../store/snapshot-flags';
 import type { SnapshotFigures } from '../store/snapshots';
+import { snapshotFacts } from '../view/snapshot-facts';
 
 export const RUNG_MS: Record<Rung, number> = { minute: 60_000, hour: 3_600_000, day: 86_400_000 };
 export const rungStart = (rung: Rung, atMs: number): number =>
@@ -68,27 +64,15 @@ export function qualification<Row extends SnapshotFigures>(
 ): { qualified: Row[]; disqualified: NonNullable<LevelRow['disqualified']> } {
   const qualified: Row[] = [];
   const disqualified: NonNullable<LevelRow['disqualified']> = {};
-  let previous = before && factsOf(before);
+  let previous = before && snapshotFacts(before);
   for (const row of figures) {
-    const facts = factsOf(row);
+    const facts = snapshotFacts(row);
     const reasons = disqualifications(facts, previous, { ratingAmps, limits: DEFAULT_QUALIFICATION_LIMITS });
     previous = facts;
     for (const reason of reasons) disqualified[reason] = (disqualified[reason] ?? 0) + 1;
     if (reasons.length === 0 && row.differentialAAmps !== null) qualified.push(row);
   }
   return { qualified, disqualified };
-}
-
-function factsOf({ at, flags, throughAmps }: SnapshotFigures): SnapshotFacts {
-  return {
-    atMs: at.getTime(),
-    complete: !hasFlag(flags, 'incomplete'),
-    validityGood: !hasFlag(flags, 'validityNotGood'),
-    test: hasFlag(flags, 'test'),
-    clocksWithinLimit: !hasFlag(flags, 'clockBeyondLimit'),
-    breakersClosed: !hasFlag(flags, 'breakerOpen'),
-    throughAmps: throughAmps ?? undefined,
-  };
 }
 
 function mean(values: readonly (number | null)[]): number | null {

@@ -40,8 +40,10 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
   });
   const room = createWatchRoom({ settings, store, now });
   const intake = createIntake({ settings, room, now });
-  if (settings.WORKER_INDEX === 0)
-    await untilDone(() => keepStore(store, { settings, nowMs: now() }), database);
+  const isFirst = settings.WORKER_INDEX === 0;
+  const keep = () => untilDone(() => keepStore(store, { settings, nowMs: now() }), database);
+  // ahead of the feed: its rows want the partitions of their days
+  if (isFirst) await keep();
   await refreshRegister(room, intake, database);
   const feed = connectFeed(settings, { take: (delivery: Delivery) => intake.take(delivery), log });
   feed.follow(room.topics());
@@ -56,14 +58,13 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
     acknowledge: feed.acknowledge,
     publish: (watch) => publishResult(feed.mqtt, watch, now()),
   });
+  const keepOn = () => every(INGEST_LIMITS.keepStoreEveryMs, stop.signal, keep);
   const loops = [
     keepStoring(storing, intake, stop.signal),
     every(INGEST_LIMITS.registerPollMs, stop.signal, async () => {
       if (await refreshRegister(room, intake, database)) feed.follow(room.topics());
     }),
     every(INGEST_LIMITS.rungEveryMs, stop.signal, async () => {
-      if (settings.WORKER_INDEX === 0)
-        await untilDone(() => keepStore(store, { settings, nowMs: now() }), database);
       for (const watch of room.watches()) {
         if (stop.signal.aborted) return;
         storing.note(
@@ -72,6 +73,7 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
         );
       }
     }),
+    ...(isFirst ? [pause(INGEST_LIMITS.keepStoreEveryMs, stop.signal).then(() => keepOn())] : []),
   ];
   const stopped = Promise.all(loops).then(
     () => undefined,

@@ -2,17 +2,13 @@ import type { ReviewCloud } from '../../contract/review';
 import type { SettingsVersion } from '../../contract/settings-version';
 import { evaluation, isComputable } from '../../protection/evaluation';
 import { perPhase, PHASES } from '../../protection/phase';
-import {
-  DEFAULT_QUALIFICATION_LIMITS,
-  disqualifications,
-  type SnapshotFacts,
-} from '../../standing/qualification';
+import { DEFAULT_QUALIFICATION_LIMITS, disqualifications } from '../../standing/qualification';
 import { readLevels } from '../../store/levels';
 import { readOperatingPoints, readPackedAt, type OperatingPointRow } from '../../store/operating-points';
 import { unpackMeasurements } from '../../store/packing';
 import { readRegisterLine, settingsInForce, type RegisteredLine } from '../../store/register';
-import { hasFlag } from '../../store/snapshot-flags';
 import { readSnapshotBefore } from '../../store/snapshots';
+import { snapshotFacts } from '../../view/snapshot-facts';
 import { reviewScheme, terminalsInService, type ReviewLine } from '../../view/review-line';
 import { NOT_FROM_MAGNITUDES, reviewSnapshot } from '../../view/review-now';
 import { planeKind, reviewPlace } from '../../view/review-place';
@@ -159,14 +155,14 @@ async function readQualified(
 ): Promise<Qualified> {
   const seen: Qualified = { snapshotCount: 0, qualifiedCount: 0, otherConventionCount: 0, instantsMs: [] };
   const before = await readSnapshotBefore(site.store, line.id, window.from);
-  let previous = before && factsOf(before);
+  let previous = before && snapshotFacts(before);
   const limits = { ratingAmps: line.ratingAmps, limits: DEFAULT_QUALIFICATION_LIMITS };
   for (let from = window.from.getTime(); from < window.to.getTime(); from += REVIEW_LIMITS.chunkMs) {
     const to = Math.min(from + REVIEW_LIMITS.chunkMs, window.to.getTime());
     const rows = await readOperatingPoints(site.store, line.id, { from: new Date(from), to: new Date(to) });
     seen.snapshotCount += rows.length;
     for (const row of rows) {
-      const facts = factsOf(row);
+      const facts = snapshotFacts(row);
       const counts = disqualifications(facts, previous, limits).length === 0;
       previous = facts;
       if (!counts || row.differentialAAmps === null) continue;
@@ -176,22 +172,6 @@ async function readQualified(
     }
   }
   return seen;
-}
-
-function factsOf({
-  at,
-  flags,
-  throughAmps,
-}: Pick<OperatingPointRow, 'at' | 'flags' | 'throughAmps'>): SnapshotFacts {
-  return {
-    atMs: at.getTime(),
-    complete: !hasFlag(flags, 'incomplete'),
-    validityGood: !hasFlag(flags, 'validityNotGood'),
-    test: hasFlag(flags, 'test'),
-    clocksWithinLimit: !hasFlag(flags, 'clockBeyondLimit'),
-    breakersClosed: !hasFlag(flags, 'breakerOpen'),
-    throughAmps: throughAmps ?? undefined,
-  };
 }
 
 /** Versions under which differential and restraint are formed as in this one, whatever their threshold. */

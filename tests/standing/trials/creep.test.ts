@@ -7,7 +7,7 @@ import { surestRise } from '../../../src/standing/creep-watch';
 import { levelAtPointAmps, typicalPoint } from '../../../src/standing/operating-point';
 import { levelsAtReferenceLoad } from '../../../src/standing/reference-level';
 import { daySumsOf } from './line-sums';
-import { measuredHours, uniform } from './seeded-line';
+import { drawnTruth, measuredHours, uniform } from './seeded-line';
 import type { LineTruth, Pair } from './seeded-line';
 
 const NEAR_RATIO = 0.7;
@@ -48,24 +48,7 @@ function firstCreepDay(
   return undefined;
 }
 
-function settledTruth(seed: number): LineTruth {
-  const random = uniform(seed * 104729 + 5);
-  const between = (low: number, high: number) => low + (high - low) * random();
-  const ratingAmps = between(400, 2000);
-  const voltageKv = [110, 220, 380][Math.floor(3 * random())]! / Math.sqrt(3);
-  return {
-    seed,
-    ratingAmps,
-    voltageKv,
-    susceptanceMillisiemens: (ratingAmps * between(0.01, 0.1)) / voltageKv,
-    mismatch: { re: between(-0.015, 0.015), im: between(-0.02, 0.02) },
-    loadShare: between(0.25, 0.55),
-    seasonShare: between(0, 0.35),
-    growthShareAYear: between(0, 0.12),
-    noiseShare: between(0.0003, 0.0012),
-    smallCurrentError: between(0, 0.001),
-  };
-}
+const settledTruth = (seed: number): LineTruth => drawnTruth(seed, uniform(seed * 104729 + 5));
 
 /** The change of e that raises the differential at mean load by 1 A: along D, whichever way D points. */
 function mismatchPerAmp({ loadShare, ratingAmps, mismatch: e, ...truth }: LineTruth): Pair {

@@ -110,3 +110,22 @@ function remembering(normal: () => number, time: number): () => number {
 function polar(size: number, angle: number): Pair {
   return { re: size * Math.cos(angle), im: size * Math.sin(angle) };
 }
+
+/** A settled line drawn at random: what is true of it, and how its load and noise go. */
+export function drawnTruth(seed: number, random: () => number): LineTruth {
+  const between = (low: number, high: number) => low + (high - low) * random();
+  const ratingAmps = between(400, 2000);
+  const voltageKv = [110, 220, 380][Math.floor(3 * random())]! / Math.sqrt(3);
+  return {
+    seed,
+    ratingAmps,
+    voltageKv,
+    susceptanceMillisiemens: (ratingAmps * between(0.01, 0.1)) / voltageKv,
+    mismatch: { re: between(-0.015, 0.015), im: between(-0.02, 0.02) },
+    loadShare: between(0.25, 0.55),
+    seasonShare: between(0, 0.35),
+    growthShareAYear: between(0, 0.12),
+    noiseShare: between(0.0003, 0.0012),
+    smallCurrentError: between(0, 0.001),
+  };
+}

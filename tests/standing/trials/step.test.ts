@@ -2,7 +2,7 @@ import { describe, expect, test } from 'vitest';
 import { compositionStep } from '../../../src/standing/composition-step';
 import type { CompositionStep, HourSums, MovedTerm } from '../../../src/standing/composition-step';
 import { hourSums } from './line-sums';
-import { measuredHours, uniform } from './seeded-line';
+import { drawnTruth, measuredHours, uniform } from './seeded-line';
 import type { LineTruth, Pair } from './seeded-line';
 
 /** A trial takes half a minute of one core; this leaves room for a busy machine. */
@@ -12,24 +12,7 @@ const TRIAL_MS = 240_000;
 const WINDOW_HOURS = 96 + 336;
 const BEFORE_HOURS = 24 * 24;
 
-function drawnTruth(seed: number): LineTruth {
-  const random = uniform(seed * 32452843 + 17);
-  const between = (low: number, high: number) => low + (high - low) * random();
-  const ratingAmps = between(400, 2000);
-  const voltageKv = [110, 220, 380][Math.floor(3 * random())]! / Math.sqrt(3);
-  return {
-    seed,
-    ratingAmps,
-    voltageKv,
-    susceptanceMillisiemens: (ratingAmps * between(0.01, 0.1)) / voltageKv,
-    mismatch: { re: between(-0.015, 0.015), im: between(-0.02, 0.02) },
-    loadShare: between(0.25, 0.55),
-    seasonShare: between(0, 0.35),
-    growthShareAYear: between(0, 0.12),
-    noiseShare: between(0.0003, 0.0012),
-    smallCurrentError: between(0, 0.001),
-  };
-}
+const truthOf = (seed: number): LineTruth => drawnTruth(seed, uniform(seed * 32452843 + 17));
 
 const dated = (truth: LineTruth, hours: number): HourSums[] =>
   Array.from(measuredHours(truth, hours), (measured) => ({ hour: measured.hour, sums: hourSums(measured) }));
@@ -68,7 +51,7 @@ describe('a step', () => {
             const share = sign * shareAfter(hour, moment);
             return { re: change.re * share, im: change.im * share };
           };
-          const found = firstRaised({ ...drawnTruth(seed), mismatchChange }, moment);
+          const found = firstRaised({ ...truthOf(seed), mismatchChange }, moment);
           return found && { ...found, offHours: Math.abs(found.step.atHour - moment) };
         });
         const within = raised.filter((each) => each !== undefined);
@@ -99,7 +82,7 @@ describe('a step', () => {
     () => {
       let wrong = 0;
       for (let seed = 1; seed <= LINES; seed++) {
-        const all = dated(drawnTruth(seed + 9000), 730 * 24);
+        const all = dated(truthOf(seed + 9000), 730 * 24);
         const isRaised = () => {
           for (let count = WINDOW_HOURS; count <= all.length; count += 96) {
             if (compositionStep(all.slice(count - WINDOW_HOURS, count)).kind === 'step') return true;
