@@ -75,6 +75,7 @@ function registerLine(sheet: LineSheet): NewLine {
   return {
     key: sheet.key,
     name: sheet.name,
+    owner: ownerOf(sheet),
     voltageKv: sheet.voltageKv,
     ratingAmps: sheet.ratingAmps,
     emergencyRatingAmps: sheet.emergencyRatingAmps,
@@ -98,6 +99,10 @@ function registerLine(sheet: LineSheet): NewLine {
     settings: sheet.settings,
   };
 }
+
+/** The transmission lines are one company's, those below another's. */
+const ownerOf = ({ voltageKv }: LineSheet): string =>
+  voltageKv >= 220 ? 'Tarnside Transmission' : 'Pellwater Networks';
 
 const QUIET_CHANNEL: ChannelTruth = {
   usual: { path: 'main', delayMs: 3.6, asymmetryMs: 0.01 },

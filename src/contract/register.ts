@@ -28,6 +28,13 @@ export type InZoneTransformer = z.infer<typeof inZoneTransformerSchema>;
 
 const lineFields = {
   name,
+  /** who owns the line and answers for its protection; null when not recorded */
+  owner: z
+    .string()
+    .trim()
+    .min(1, 'Give the owner’s name.')
+    .max(80, 'A name has at most 80 characters.')
+    .nullable(),
   voltageKv: positive('The voltage', 1200),
   ratingAmps: positive('The rating', 20_000),
   emergencyRatingAmps: positive('The emergency rating', 40_000),
@@ -82,6 +89,7 @@ export const newLineSchema = z
   .object({
     key: keySchema,
     ...lineFields,
+    owner: lineFields.owner.default(null),
     capacitanceNfPerKm: lineFields.capacitanceNfPerKm.default(null),
     leastInternalFaultAmps: lineFields.leastInternalFaultAmps.default(null),
     goesBy: goesBySchema.default('phasors'),

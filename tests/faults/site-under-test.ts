@@ -27,6 +27,7 @@ const SETTINGS_FROM = '2020-01-01T00:00:00Z';
 export const madeUpLine = (key: string): NewLine => ({
   key,
   name: 'Anvil – Birch',
+  owner: null,
   voltageKv: 110,
   ratingAmps: 600,
   emergencyRatingAmps: 700,

@@ -23,6 +23,8 @@ export const line = mysqlTable('line', {
   id: int('id').autoincrement().primaryKey(),
   key: varchar('key', { length: 40 }).notNull().unique(),
   name: varchar('name', { length: 80 }).notNull(),
+  /** who owns the line and answers for its protection; null when not recorded */
+  owner: varchar('owner', { length: 80 }),
   voltageKv: double('voltage_kv').notNull(),
   ratingAmps: amps('rating_amps').notNull(),
   emergencyRatingAmps: amps('emergency_rating_amps').notNull(),

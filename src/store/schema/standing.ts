@@ -61,3 +61,26 @@ export const followUp = mysqlTable(
   },
   (table) => [index('follow_up_line').on(table.lineId, table.openedAt)],
 );
+
+/** Work done on a line that may have moved its standing level: no trend is fitted across its day. */
+export const recordedWork = mysqlTable(
+  'recorded_work',
+  {
+    id: int('id').autoincrement().primaryKey(),
+    lineId: int('line_id')
+      .notNull()
+      .references(() => line.id, { onDelete: 'cascade' }),
+    /** where it was done; null for the line itself or more than one terminal */
+    terminal: varchar('terminal', { length: 40 }),
+    doneOn: date('done_on', { mode: 'string' }).notNull(),
+    what: varchar('what', { length: 500 }).notNull(),
+    /** the follow-up that it ended, if one did */
+    followUpId: int('follow_up_id').references(() => followUp.id, { onDelete: 'set null' }),
+    recordedBy: varchar('recorded_by', { length: 80 }).notNull(),
+    recordedAt: instant('recorded_at').notNull(),
+    /** a record made in error is withdrawn, not deleted */
+    withdrawnBy: varchar('withdrawn_by', { length: 80 }),
+    withdrawnAt: instant('withdrawn_at'),
+  },
+  (table) => [index('recorded_work_line').on(table.lineId, table.doneOn)],
+);
