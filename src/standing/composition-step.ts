@@ -1,7 +1,9 @@
 import type { Complex } from './complex';
-import { fittedCoefficients, residualProducts, residualSquares, shrunkCoefficients } from './composition-fit';
+import { fittedCoefficients, residualProducts, shrunkCoefficients } from './composition-fit';
 import { normalProduct, regressorCount, shapeOf, snapshotCount, totalOf } from './composition-sums';
 import type { CompositionSums } from './composition-sums';
+import { decided, explanations } from './moved-term';
+import type { MovedTerm } from './moved-term';
 import { stepVerdict } from './step';
 import type { HourlyValue, Step, StepPlan } from './step';
 
@@ -9,17 +11,6 @@ import type { HourlyValue, Step, StepPlan } from './step';
 export interface HourSums {
   readonly hour: number;
   readonly sums: CompositionSums;
-}
-
-/** One term of the composition as an explanation of a step. */
-export interface MovedTerm {
-  readonly term: 'charging' | 'leakage' | 'ratio' | 'angle';
-  /** Place of the terminal whose mismatch it is, from 0; `undefined` for charging and leakage. */
-  readonly terminal: number | undefined;
-  /** Change were it this term alone: siemens/1000 for charging and leakage, per unit for ratio, radians for angle. */
-  readonly change: number;
-  /** Share of what the composition before leaves over of the hours after, that this change takes away; 0 to 1. */
-  readonly explains: number;
 }
 
 /** A step of the composition. */
@@ -49,9 +40,6 @@ const BASELINE_HOURS = 336;
 
 /** A path change this near to an angle step is taken for its cause. */
 const PATH_HOURS = 1.5;
-
-/** The second best explanation leaves at least so many times more over, or the best one is not said to be it. */
-const DECIDED_RATIO = 1.5;
 
 /** For a baseline whose load is too constant to tell causes apart: then the smallest coefficients that fit. */
 const RIDGE = 0.003;
@@ -132,46 +120,4 @@ function explained(
   const moved = decided(terms);
   const isPathNear = pathChangeHours.some((hour) => Math.abs(hour - step.atHour) <= PATH_HOURS);
   return { ...step, seenIn, terms, moved, pointsToChannel: moved?.term === 'angle' && isPathNear };
-}
-
-/**
- * The best explanation, where it leaves clearly less over than the next. A transformer that was replaced moves the
- * ratio and the angle of its terminal at once, of which neither alone explains much: so where no term stands out,
- * the two of a terminal (or of the voltage) are taken together, and the greater one is told. What the two explain
- * adds up, since they are at right angles.
- */
-function decided(terms: readonly MovedTerm[]): MovedTerm | undefined {
-  const isClear = (best: number, next: number): boolean => 1 - next >= DECIDED_RATIO * (1 - best);
-  const [first, second] = terms;
-  if (first === undefined || isClear(first.explains, second?.explains ?? 0)) return first;
-  const together = new Map<number | undefined, number>();
-  for (const { terminal, explains } of terms) {
-    together.set(terminal, (together.get(terminal) ?? 0) + explains);
-  }
-  const [best, next] = [...together].sort(([, a], [, b]) => b - a);
-  if (best === undefined || !isClear(best[1], next?.[1] ?? 0)) return undefined;
-  return terms.find(({ terminal }) => terminal === best[0]);
-}
-
-/** What each term alone would have to change, and how much that explains, the best first. */
-function explanations(after: CompositionSums, coefficients: readonly Complex[]): MovedTerm[] {
-  const { hasVoltage } = shapeOf(after);
-  const leftOver = residualSquares(after, coefficients);
-  const terms = residualProducts(after, coefficients).flatMap((product, place): MovedTerm[] => {
-    const squares = normalProduct(after, place, place).re;
-    if (squares === 0 || leftOver <= 0) return [];
-    const isVoltage = hasVoltage && place === 0;
-    const terminal = isVoltage ? undefined : place + (hasVoltage ? 0 : 1);
-    const term = (name: MovedTerm['term'], along: number): MovedTerm => ({
-      term: name,
-      terminal,
-      change: along / squares,
-      explains: Math.min(1, along ** 2 / squares / leftOver),
-    });
-    return [
-      term(isVoltage ? 'leakage' : 'ratio', product.re),
-      term(isVoltage ? 'charging' : 'angle', product.im),
-    ];
-  });
-  return terms.sort((a, b) => b.explains - a.explains);
 }

@@ -110,6 +110,24 @@ export function normalProduct(sums: CompositionSums, row: number, column: number
   return { re: sums.values[at]!, im: sums.values[at + 1]! };
 }
 
+/** Σ|I|² of the terminal at this place, from 0, A²: the first one's current is D less all others. */
+export function currentSquares(sums: CompositionSums, terminal: number): number {
+  const { terminalCount, hasVoltage } = shapeOf(sums);
+  if (!(Number.isInteger(terminal) && terminal >= 0 && terminal < terminalCount)) {
+    throw new RangeError(`The line has ${terminalCount} terminals and none at place ${terminal}.`);
+  }
+  const from = hasVoltage ? 1 : 0;
+  if (terminal > 0) return normalProduct(sums, from + terminal - 1, from + terminal - 1).re;
+  let squares = differentialSquares(sums);
+  for (let row = from; row < regressorCount(sums); row++) {
+    squares -= 2 * crossProduct(sums, row).re;
+    for (let column = from; column < regressorCount(sums); column++) {
+      squares += normalProduct(sums, row, column).re;
+    }
+  }
+  return Math.max(0, squares);
+}
+
 /**
  * Adds one snapshot to the sums, in place: an hour has thousands. A snapshot without the voltage that the shape
  * asks for is counted and left out. Throws for a snapshot of another number of terminals and for values that

@@ -4,6 +4,7 @@ import { mismatchFrom } from './composition';
 import { residualRmsAmps } from './composition-fit';
 import {
   crossProduct,
+  currentSquares,
   differentialSquares,
   normalProduct,
   regressorCount,
@@ -177,11 +178,10 @@ export function meanResidueAmps(
 
 /** The place of the terminal with the greatest rms current, from 0. */
 export function strongestTerminal(sums: CompositionSums): number {
-  const from = shapeOf(sums).hasVoltage ? 1 : 0;
   let strongest = 0;
-  let most = firstCurrent(sums).squares;
+  let most = currentSquares(sums, 0);
   for (let terminal = 1; terminal < shapeOf(sums).terminalCount; terminal++) {
-    const squares = normalProduct(sums, from + terminal - 1, from + terminal - 1).re;
+    const squares = currentSquares(sums, terminal);
     // the two ends of a line differ by its own differential: no reason to change the reference
     if (squares > most * 1.2) [strongest, most] = [terminal, squares];
   }
@@ -231,8 +231,7 @@ function firstCurrent(sums: CompositionSums): ReferenceProducts {
     { re: differentialSquares(sums), im: 0 },
     plus(...others.map((other) => crossProduct(sums, other))),
   );
-  const squares = differential.re - plus(...others.map((other) => products[other]!)).re;
-  return { products, differential, squares: Math.max(0, squares) };
+  return { products, differential, squares: currentSquares(sums, 0) };
 }
 
 /** |D| at the point, amperes rms. */

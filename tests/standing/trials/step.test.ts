@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { compositionStep } from '../../../src/standing/composition-step';
-import type { CompositionStep, HourSums, MovedTerm } from '../../../src/standing/composition-step';
+import type { CompositionStep, HourSums } from '../../../src/standing/composition-step';
+import type { MovedTerm } from '../../../src/standing/moved-term';
 import { hourSums } from './line-sums';
 import { drawnTruth, measuredHours, uniform } from './seeded-line';
 import type { LineTruth, Pair } from './seeded-line';
