@@ -1,3 +1,4 @@
+import { eachPhase, type Three } from './complex';
 import { smoothNoise } from './noise';
 
 /** How a line is loaded over a week; shares are of the line's rating, the rest are ratios of the mean share. */
@@ -71,4 +72,23 @@ function weekend(hours: number): number {
   const fromMiddle = Math.min(days, 7 - days);
   const edge = Math.min(1, Math.max(0, (1.125 - fromMiddle) / 0.25));
   return edge * edge * (3 - 2 * edge);
+}
+
+/** what an untransposed line does to its phases, for good */
+const UNBALANCE: Three<number> = [1.004, 0.995, 1.001];
+
+/**
+ * The load of each phase over the mean of the three, the same at every terminal: single-phase loads come and go, and
+ * wander by days and by seasons.
+ */
+export function loadUnbalance(seed: number, atMs: number): Three<number> {
+  const hours = atMs / HOUR_MS;
+  return eachPhase((phase) => {
+    const own = seed ^ (0x5bd1e995 + phase);
+    const wander =
+      0.0025 * smoothNoise(own, hours / 7) +
+      0.0015 * smoothNoise(own ^ 1, hours / 60) +
+      0.0015 * smoothNoise(own ^ 2, hours / 1500);
+    return UNBALANCE[phase] + wander;
+  });
 }

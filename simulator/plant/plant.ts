@@ -4,7 +4,7 @@ import { type ClockState, clockState } from './clock';
 import { type Complex, complex, eachPhase, multiply, polar, scale, type Three } from './complex';
 import { measuredAmps, measuredVolts } from './instrument';
 import { type PiSection, teeFlow, type TerminalFlow, twoTerminalFlow } from './line-flow';
-import { loadShare } from './load';
+import { loadShare, loadUnbalance } from './load';
 import { seedOf } from './noise';
 import { ramped } from './ramp';
 import { farSide } from './transformer';
@@ -94,11 +94,11 @@ function trueFlows(
   const towards = truth.load.from === 'first' ? 1 : -1;
   const throughAmps = towards * truth.ratingAmps * loadShare(truth.load, line.loadSeed, at);
   const lag = polar(throughAmps / line.busbar.phaseVolts, -Math.atan(truth.load.tanPhi));
-  // A light unbalance between the phases, the same at every terminal, as an untransposed load has it.
+  const unbalance = loadUnbalance(line.loadSeed, at.atMs);
   const byPhase = eachPhase((phase) =>
     phaseFlow(truth, sectionsOf(truth, frequencyHz, { phase, sinceEpochMs: at.atMs - at.epochMs }), {
       volts: volts[phase],
-      throughAmps: multiply(volts[phase], scale(lag, UNBALANCE[phase])),
+      throughAmps: multiply(volts[phase], scale(lag, unbalance[phase])),
     }),
   );
   const byTerminal = truth.terminals.map((_, position) => eachPhase((phase) => byPhase[phase][position]!));
@@ -108,7 +108,6 @@ function trueFlows(
 }
 
 const DEAD: TerminalFlow = { amps: complex(0, 0), volts: complex(0, 0) };
-const UNBALANCE: Three<number> = [1.004, 0.995, 1.001];
 
 function sectionsOf(
   { branches, capacitanceDrift }: LineTruth,

@@ -13,8 +13,9 @@ const phasor = z.tuple([z.number(), z.number()]);
 export const budgetVerdictSchema = z.enum(['within', 'beyond', 'undecided']).nullable();
 
 export const mismatchSchema = z.object({
-  /** measured against the line's first terminal */
   terminal: keySchema,
+  /** the line's first terminal, which it is measured against */
+  against: keySchema,
   /** per unit of the current, above 0 where this terminal measures more */
   ratio: estimateSchema,
   ratioBudget: budgetVerdictSchema,

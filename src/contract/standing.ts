@@ -8,16 +8,34 @@ export const CAUSES = ['charging', 'ratio mismatch', 'angle mismatch', 'rest', '
 export const causeSchema = z.enum(CAUSES);
 export type Cause = z.infer<typeof causeSchema>;
 
+/** Where a mismatch is: at a terminal, or somewhere between it and another one where that can’t be told. */
+export const causePlaceSchema = z.object({ terminal: keySchema, against: keySchema.nullable() });
+export type CausePlace = z.infer<typeof causePlaceSchema>;
+
+export const MARK_KINDS = [
+  'settings changed',
+  'channel path changed',
+  'work recorded',
+  'terminals changed',
+  'step',
+] as const;
+
+/** A day that no trend and no composition is taken across. */
+export const standingMarkSchema = z.object({ on: z.iso.date(), kind: z.enum(MARK_KINDS) });
+export type StandingMark = z.infer<typeof standingMarkSchema>;
+
 /** A sudden change of a standing level. */
 export const stepSchema = z.object({
-  /** start of the hour in which it came */
+  /** the minute in which it came, or the start of its hour where there are no minutes */
   at: z.iso.datetime(),
   fromAmps: z.number(),
   toAmps: z.number(),
   /** the term of the composition that moved */
   cause: causeSchema,
-  /** where a mismatch moved, against the first */
-  terminal: keySchema.nullable(),
+  /** where a mismatch moved */
+  place: causePlaceSchema.nullable(),
+  /** an angle that moved alike in all three phases: that is time, not a transformer */
+  isTime: z.boolean(),
   /** the path of a channel changed at the same time: an angle step then points to the channel */
   channelPathChanged: z.boolean(),
 });
@@ -27,6 +45,18 @@ export type StepOnWire = z.infer<typeof stepSchema>;
 export const creepAtReferenceSchema = z.object({
   creep: creepSchema,
   referenceThroughAmps: z.number(),
+});
+
+/** The significant drift of utilisation at emergency rating, a ratio of the threshold; as `creepSchema` otherwise. */
+export const emergencyCreepSchema = z.object({
+  verdict: z.enum(['creep', 'within margin']),
+  utilisationNow: z.number(),
+  slopePerMonth: z.number(),
+  slopeLowPerMonth: z.number(),
+  slopeHighPerMonth: z.number(),
+  near: forecastDatesSchema,
+  /** when utilisation at emergency rating reaches 1 */
+  over: forecastDatesSchema,
 });
 
 /** What the worker last found of one phase's standing level: renewed every hour. */
@@ -48,10 +78,18 @@ export const standingVerdictSchema = z.object({
   compositionBefore: compositionSchema.nullable(),
   creep: creepSchema.nullable(),
   creepAtReference: creepAtReferenceSchema.nullable(),
+  /** of utilisation at emergency rating, where the composition separates */
+  emergencyCreep: emergencyCreepSchema.nullable(),
+  /** what parts the history, newest first */
+  marks: z.array(standingMarkSchema),
+  /** the mark that the drifts are taken since, where one parted the levels */
+  driftSince: standingMarkSchema.nullable(),
   step: stepSchema.nullable(),
   /** the term that is growing, or else the largest one */
   likelyCause: causeSchema,
-  causeTerminal: keySchema.nullable(),
+  causePlace: causePlaceSchema.nullable(),
+  /** an angle that is alike in all three phases: that is time, not a transformer */
+  causeIsTime: z.boolean(),
   /** the forecast that counts: by the level at reference load where there is one */
   near: forecastDatesSchema.nullable(),
   pickup: forecastDatesSchema.nullable(),
@@ -60,7 +98,13 @@ export type StandingVerdict = z.infer<typeof standingVerdictSchema>;
 
 /** One row of the fleet's lists: GET /api/margins */
 export const marginRowSchema = standingVerdictSchema
-  .omit({ composition: true, compositionBefore: true, creep: true, creepAtReference: true })
+  .omit({
+    composition: true,
+    compositionBefore: true,
+    creep: true,
+    creepAtReference: true,
+    marks: true,
+  })
   .extend({
     lineName: z.string(),
     voltageKv: z.number(),

@@ -1,3 +1,4 @@
+import type { StandingVerdict } from '../contract/standing';
 import type { Creep, ForecastDatesOnWire } from '../contract/warning';
 import type { PhaseName } from '../protection/phase';
 import type { CreepVerdict } from '../standing/creep';
@@ -20,6 +21,22 @@ export function creepOnWire(verdict: CreepVerdict, phase: PhaseName): Creep | un
     levelNowAmps: verdict.levelNowAmps,
     near: datesOnWire(verdict.near),
     pickup: datesOnWire(verdict.pickup),
+  };
+}
+
+/** The significant drift of utilisation at emergency rating; its verdict is in ratios where another's is in amperes. */
+export function emergencyCreepOnWire(
+  verdict: CreepVerdict,
+): NonNullable<StandingVerdict['emergencyCreep']> | undefined {
+  if (verdict.kind === 'too few days' || verdict.kind === 'no trend') return undefined;
+  return {
+    verdict: verdict.kind,
+    utilisationNow: verdict.levelNowAmps,
+    slopePerMonth: verdict.slopeAmpsPerDay * DAYS_A_MONTH,
+    slopeLowPerMonth: verdict.slopeLowAmpsPerDay * DAYS_A_MONTH,
+    slopeHighPerMonth: verdict.slopeHighAmpsPerDay * DAYS_A_MONTH,
+    near: datesOnWire(verdict.near),
+    over: datesOnWire(verdict.pickup),
   };
 }
 

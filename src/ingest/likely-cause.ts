@@ -1,41 +1,40 @@
-import type { CompositionOnWire, PolygonOnWire } from '../contract/composition';
 import type { Cause } from '../contract/standing';
-
-/** The term that a level grows by, or else its largest: and where a mismatch it is, of which terminal. */
-export interface LikelyCause {
-  readonly cause: Cause;
-  readonly terminal: string | null;
-}
-
-const PARTS = [
-  ['charging', 'chargingAmps'],
-  ['ratio mismatch', 'ratioAmps'],
-  ['angle mismatch', 'angleAmps'],
-  ['rest', 'restAmps'],
-] as const satisfies readonly (readonly [Cause, keyof PolygonOnWire])[];
+import type { SeparatedComposition } from '../standing/composition';
+import { minus, modulus } from '../standing/complex';
+import { compositionPolygon, partsAt } from '../standing/operating-point';
+import type { ComposedWindow } from './composed-window';
 
 /**
- * Of a level that drifts, the part that differs most from what it was before; of one that stands still, or has no
- * before, the largest part. `before` is only given for a level that drifts: two windows at different loads differ
- * in every part that follows the load.
+ * Of a level that moved, the part of its composition that changed most, both taken at the load of now: two windows at
+ * different loads differ in every part that follows the load. Of one that stands still, or has no window before, the
+ * largest part.
  */
-export function likelyCause(now: CompositionOnWire, before: CompositionOnWire | null): LikelyCause {
-  if (now.kind === 'not separable' || now.polygon === null) return { cause: 'not told', terminal: null };
-  const earlier = before?.kind === 'separated' ? before.polygon : null;
-  const moved = PARTS.map(([cause, part]) => {
-    const [re, im] = now.polygon![part];
-    const [reBefore, imBefore] = earlier?.[part] ?? [0, 0];
-    return { cause, amps: Math.hypot(re - reBefore, im - imBefore) };
-  });
-  const { cause } = moved.reduce((most, each) => (each.amps > most.amps ? each : most));
-  return { cause, terminal: cause.endsWith('mismatch') ? mismatchedTerminal(now) : null };
+export function likelyCause(now: ComposedWindow, before: ComposedWindow | undefined): Cause {
+  const parts = partsOf(now, now);
+  if (parts === undefined) return 'not told';
+  const earlier = before && partsOf(before, now);
+  const moved = parts.map(({ cause, amps }, index) => ({
+    cause,
+    amps: modulus(earlier === undefined ? amps : minus(amps, earlier[index]!.amps)),
+  }));
+  return moved.reduce((most, each) => (each.amps > most.amps ? each : most)).cause;
 }
 
-/** The terminal that differs most from the first. */
-function mismatchedTerminal(now: CompositionOnWire & { kind: 'separated' }): string | null {
-  const sorted = now.mismatches.toSorted((one, other) => sizeOf(other) - sizeOf(one));
-  return sorted[0]?.terminal ?? null;
+/** The parts of one window's composition at the load of another one's; undefined where it is not separable. */
+function partsOf({ composition, total }: ComposedWindow, load: ComposedWindow) {
+  const own = isTold(composition) && total ? compositionPolygon(total, composition) : undefined;
+  const point =
+    load.total && isTold(load.composition) && compositionPolygon(load.total, load.composition)?.point;
+  if (!isTold(composition) || own === undefined || !point) return undefined;
+  const { chargingAmps, ratioAmps, angleAmps } = partsAt(composition, point);
+  return [
+    { cause: 'charging', amps: chargingAmps },
+    { cause: 'ratio mismatch', amps: ratioAmps },
+    { cause: 'angle mismatch', amps: angleAmps },
+    { cause: 'rest', amps: own.restAmps },
+  ] as const;
 }
 
-const sizeOf = ({ ratio, angleDeg }: { ratio: { value: number }; angleDeg: { value: number } }): number =>
-  Math.hypot(ratio.value, (angleDeg.value * Math.PI) / 180);
+/** Separated, with the charging apart from the mismatches: that takes a voltage. */
+export const isTold = (composition: ComposedWindow['composition']): composition is SeparatedComposition =>
+  composition.kind === 'separated' && composition.shape.hasVoltage;

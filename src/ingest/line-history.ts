@@ -1,3 +1,4 @@
+import type { Work } from '../contract/works';
 import type { PhaseName } from '../protection/phase';
 import type { DailyLevel } from '../standing/creep';
 import type { Store } from '../store/client';
@@ -16,6 +17,8 @@ export interface LineHistory {
   readonly hours: readonly LevelRow[];
   /** day rows of the last year without today: its level would be that of a part of the load cycle */
   readonly days: readonly LevelRow[];
+  /** recorded works that were not withdrawn */
+  readonly works: readonly Pick<Work, 'doneOn' | 'terminal'>[];
 }
 
 export async function readLineHistory(store: Store, lineId: number, nowMs: number): Promise<LineHistory> {
@@ -32,7 +35,7 @@ export async function readLineHistory(store: Store, lineId: number, nowMs: numbe
       to: new Date(rungStart('day', nowMs)),
     }),
   ]);
-  return { nowMs, hours, days };
+  return { nowMs, hours, days, works: [] };
 }
 
 export const rowsOf = (rows: readonly LevelRow[], phase: PhaseName): LevelRow[] =>

@@ -4,32 +4,37 @@ import { classBudget, CT_CLASSES, ctClassNamed } from '../protection/ct-class';
 import { isComputable } from '../protection/evaluation';
 import { expectedStanding } from '../protection/expected-standing';
 import { measuredModel } from '../protection/line-model';
-import { loadability } from '../protection/loadability';
-import type { SeparatedComposition } from '../standing/composition';
+import { worstPoint } from '../protection/loadability';
+import type { Complex } from '../standing/complex';
+import type { SumsShape } from '../standing/composition-sums';
 import { lineSusceptanceMillisiemens } from '../view/line-zone';
 import type { SchemeVersion } from './roster';
 
 /** Power-factor angles that a prediction for emergency rating ranges over, either way of the power. */
 const LAG_RAD_MOST = Math.PI / 6;
 
-/** Utilisation of one phase at emergency rating by its measured composition; undefined where it can't be told. */
-export function emergencyUtilisation(
+/**
+ * What gives the utilisation of one phase at emergency rating by the coefficients of a composition of this shape;
+ * undefined where it can't be told.
+ */
+export function emergencyUtilisationOf(
   line: RegisterLine,
-  version: SchemeVersion,
-  composition: SeparatedComposition,
-): number | undefined {
-  const { hasVoltage, terminalCount } = composition.shape;
+  { scheme, conditions }: SchemeVersion,
+  { hasVoltage, terminalCount }: SumsShape,
+): ((coefficients: readonly Complex[]) => number | undefined) | undefined {
   if (!hasVoltage) return undefined;
-  const [admittance, ...mismatches] = composition.coefficients;
-  const { frequencyHz } = version.conditions;
-  const model = measuredModel(
-    // what the scheme compensates is out of these sums already
-    { terminalCount, voltageKv: line.voltageKv, compensatedMillisiemens: 0 },
-    { admittanceMillisiemens: admittance!, mismatches },
-  );
-  const range = { frequencyHz, lagRadLeast: -LAG_RAD_MOST, lagRadMost: LAG_RAD_MOST };
-  const found = loadability({ scheme: version.scheme, model, range }, line);
-  return isComputable(found) ? found.atEmergency.utilisation : undefined;
+  const range = {
+    frequencyHz: conditions.frequencyHz,
+    lagRadLeast: -LAG_RAD_MOST,
+    lagRadMost: LAG_RAD_MOST,
+  };
+  // what the scheme compensates is out of these sums already
+  const underLoad = { terminalCount, voltageKv: line.voltageKv, compensatedMillisiemens: 0 };
+  return ([admittance, ...mismatches]) => {
+    const model = measuredModel(underLoad, { admittanceMillisiemens: admittance!, mismatches });
+    const found = worstPoint({ scheme, model, range }, line.emergencyRatingAmps);
+    return isComputable(found) ? found.utilisation : undefined;
+  };
 }
 
 /** The standing level to be expected by charging and the transformers' classes, taken as independent. */

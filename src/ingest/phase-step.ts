@@ -1,12 +1,19 @@
-import type { Cause, StandingVerdict, StepOnWire } from '../contract/standing';
-import type { PhaseName } from '../protection/phase';
+import type { Cause, CausePlace, StandingVerdict, StepOnWire } from '../contract/standing';
+import { perPhase, type PhaseName } from '../protection/phase';
 import { compositionStep, type CompositionStep } from '../standing/composition-step';
-import { stepVerdict } from '../standing/step';
+import type { CompositionSums } from '../standing/composition-sums';
+import { movedTerminal, type UnbalanceSides } from '../standing/moved-terminal';
+import type { MovedTerm } from '../standing/moved-term';
 import { median } from '../standing/quantile';
+import { stepVerdict } from '../standing/step';
 import { unpackSums } from '../store/composition-packing';
 import type { LevelRow } from '../store/levels';
+import { alikeWindows } from '../view/day-sums';
+import { unbalanceSides } from './cause-place';
+import { type DayRange, within } from './composed-window';
 import { type LineHistory, rowsOf } from './line-history';
 import type { RosterLine } from './roster';
+import { pathChangeStarts } from './standing-marks';
 
 const HOUR_MS = 3_600_000;
 /** A step is looked for in the last days of a series; this is how far each earlier look lies before the next. */
@@ -25,7 +32,7 @@ export function phaseStep(
   { phase, earlier }: { phase: PhaseName; earlier: Pick<StandingVerdict, 'step' | 'computedAt'> | undefined },
 ): StepOnWire | null {
   const rows = rowsOf(history.hours, phase);
-  const pathChangeHours = pathChanges(rows);
+  const pathChangeHours = pathChangeStarts(rows).map((atMs) => atMs / HOUR_MS);
   const nowHour = history.nowMs / HOUR_MS;
   const all = Math.floor(rows.length / LOOK_HOURS);
   const sinceHours = earlier === undefined ? Infinity : nowHour - Date.parse(earlier.computedAt) / HOUR_MS;
@@ -40,7 +47,7 @@ export function phaseStep(
       }),
       pathChangeHours,
     );
-    if (found !== undefined) step = stepOnWire(line, found, { rows, pathChangeHours });
+    if (found !== undefined) step = stepOnWire(line, history, { phase, found, pathChangeHours });
   }
   return step;
 }
@@ -51,10 +58,7 @@ interface FoundStep {
 }
 
 function stepWithin(rows: readonly LevelRow[], pathChangeHours: readonly number[]): FoundStep | undefined {
-  const sums = rows.flatMap((row) => {
-    const unpacked = unpackSums(row.sums);
-    return unpacked === undefined ? [] : [{ hour: row.start.getTime() / HOUR_MS, sums: unpacked }];
-  });
+  const sums = alikeWindows(summedHours(rows)).map(({ day, ...each }) => ({ ...each, hour: day }));
   if (sums.length > 0) {
     const found = compositionStep(sums, { pathChangeHours });
     return found.kind === 'step' ? { atHour: found.atHour, composition: found } : undefined;
@@ -66,14 +70,6 @@ function stepWithin(rows: readonly LevelRow[], pathChangeHours: readonly number[
   return found?.kind === 'step' ? { atHour: found.atHour, composition: undefined } : undefined;
 }
 
-/** Hours at whose start the channel's path is another than in the hour before. */
-function pathChanges(rows: readonly LevelRow[]): number[] {
-  const told = rows.filter(({ channelPath }) => channelPath !== null);
-  return told.flatMap(({ start, channelPath }, index) =>
-    index > 0 && told[index - 1]!.channelPath !== channelPath ? [start.getTime() / HOUR_MS] : [],
-  );
-}
-
 const CAUSES: Readonly<Record<'charging' | 'leakage' | 'ratio' | 'angle', Cause>> = {
   charging: 'charging',
   leakage: 'rest',
@@ -83,25 +79,59 @@ const CAUSES: Readonly<Record<'charging' | 'leakage' | 'ratio' | 'angle', Cause>
 
 function stepOnWire(
   line: RosterLine,
-  { atHour, composition }: FoundStep,
-  { rows, pathChangeHours }: { rows: readonly LevelRow[]; pathChangeHours: readonly number[] },
+  history: LineHistory,
+  {
+    phase,
+    found: { atHour, composition },
+    pathChangeHours,
+  }: { phase: PhaseName; found: FoundStep; pathChangeHours: readonly number[] },
 ): StepOnWire {
   const hour = Math.floor(atHour);
-  const levelOf = (from: number, to: number): number =>
-    median(
-      rows.flatMap(({ start, medianAmps }) => {
-        const at = start.getTime() / HOUR_MS;
-        return at >= from && at < to && medianAmps !== null ? [medianAmps] : [];
-      }),
-    ) ?? 0;
+  const before = { from: hour - SIDE_HOURS, to: hour };
+  const now = { from: hour + 1, to: hour + 1 + SIDE_HOURS };
+  const levelIn = (range: DayRange): number => {
+    const levels = rowsOf(history.hours, phase).map(({ start, medianAmps }) => ({
+      day: start.getTime() / HOUR_MS,
+      medianAmps,
+    }));
+    return median(within(levels, range).flatMap(({ medianAmps }) => medianAmps ?? [])) ?? 0;
+  };
   const moved = composition?.moved;
+  const sides = () =>
+    unbalanceSides(
+      perPhase((each) => summedHours(rowsOf(history.hours, each))),
+      { phase, now, before },
+    );
   return {
     at: new Date(hour * HOUR_MS).toISOString(),
-    fromAmps: levelOf(hour - SIDE_HOURS, hour),
-    toAmps: levelOf(hour + 1, hour + 1 + SIDE_HOURS),
+    fromAmps: levelIn(before),
+    toAmps: levelIn(now),
     cause: moved === undefined ? 'not told' : CAUSES[moved.term],
-    terminal: moved?.terminal === undefined ? null : (line.expected[moved.terminal] ?? null),
+    place: moved === undefined ? null : placeOf(line, moved, sides),
+    // one phase’s hours do not say; the days around the step will
+    isTime: false,
     channelPathChanged:
       composition?.pointsToChannel ?? pathChangeHours.some((changed) => Math.abs(changed - atHour) <= 1),
   };
 }
+
+/** With three terminals and more the best explanation names one; with two, the unbalance of the phases may. */
+function placeOf(
+  line: RosterLine,
+  { term, terminal, change }: MovedTerm,
+  sides: () => UnbalanceSides,
+): CausePlace | null {
+  const [first, second] = line.expected;
+  if (terminal === undefined || first === undefined || second === undefined) return null;
+  if (line.expected.length > 2) return { terminal: line.expected[terminal] ?? second, against: null };
+  const moved = movedTerminal([change], term === 'ratio' ? sides() : undefined);
+  if (moved?.kind !== 'terminal') return { terminal: second, against: first };
+  return { terminal: line.expected[moved.terminal] ?? second, against: null };
+}
+
+/** The sums of some hour rows, hours counted from the epoch. */
+const summedHours = (rows: readonly LevelRow[]): { day: number; sums: CompositionSums }[] =>
+  rows.flatMap((row) => {
+    const sums = unpackSums(row.sums);
+    return sums === undefined ? [] : [{ day: row.start.getTime() / HOUR_MS, sums }];
+  });

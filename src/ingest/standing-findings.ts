@@ -6,9 +6,11 @@ import type { Store } from '../store/client';
 import { replaceCreep } from '../store/levels';
 import { readVerdictsOfLine, type VerdictRow, writeVerdicts } from '../store/standing';
 import { readLineHistory } from './line-history';
+import { lineSteps } from './line-steps';
 import { STEP_WARNING } from '../warnings/limits';
 import type { StandingFindings } from './line-watch';
-import { driftThatCounts, phaseVerdict } from './phase-verdict';
+import { driftThatCounts } from './phase-drift';
+import { phaseVerdict } from './phase-verdict';
 import type { RosterLine } from './roster';
 
 /** Looks at a line's levels, keeps what they say of each phase, and gives what the warnings go by. */
@@ -19,10 +21,10 @@ export async function renewFindings(
 ): Promise<StandingFindings> {
   const history = await readLineHistory(store, line.id, nowMs);
   const earlier = await readVerdictsOfLine(store, line.id);
-  const verdicts = perPhase((phase) => {
-    const known = earlier.find((verdict) => verdict.phase === phase);
-    return phaseVerdict(line, history, { phase, nearRatio, frequencyHz, earlier: known });
-  });
+  const steps = await lineSteps(store, line, { history, earlier });
+  const verdicts = perPhase((phase) =>
+    phaseVerdict(line, history, { phase, nearRatio, frequencyHz, step: steps[phase] }),
+  );
   const creep = PHASES.flatMap((phase) => driftThatCounts(verdicts[phase]) ?? []);
   await writeVerdicts(
     store,

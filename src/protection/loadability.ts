@@ -59,10 +59,14 @@ export function loadability(
   };
 }
 
-function worstPoint(
+/**
+ * The worst point of a line at a through current, amperes rms primary: over the range of power-factor angles in steps
+ * of 3°, both directions of power and all sets of mismatches of the model.
+ */
+export function worstPoint(
   { scheme, model, range }: { scheme: Scheme; model: LineModel; range: LoadRange },
   throughAmps: number,
-  lags: readonly number[],
+  lags: readonly number[] = lagsOf(range),
 ): PredictedPoint | NotComputable {
   let worst: PredictedPoint | undefined;
   for (const mismatches of model.mismatchSets) {

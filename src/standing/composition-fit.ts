@@ -77,6 +77,18 @@ export function shrunkCoefficients(
   return change?.map((value, i) => plus(prior[i]!, scaled(value, 1 / scales[i]!)));
 }
 
+/** For a window whose load is too constant to tell causes apart: then the smallest coefficients that fit. */
+const RIDGE = 0.003;
+
+/**
+ * Coefficients that say what is ordinary for a window, whether or not it tells causes apart: those that fit, or the
+ * smallest that nearly do. `undefined` for no snapshots.
+ */
+export function settledCoefficients(sums: CompositionSums): Complex[] | undefined {
+  const none = Array.from({ length: regressorCount(sums) }, () => ZERO);
+  return fittedCoefficients(sums) ?? shrunkCoefficients(sums, { prior: none, weight: RIDGE });
+}
+
 /** Σ conj(x)·(D − fit) of every regressor: what a set of coefficients leaves over of these sums. */
 export function residualProducts(sums: CompositionSums, coefficients: readonly Complex[]): Complex[] {
   return coefficients.map((_, i) => {

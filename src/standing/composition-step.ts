@@ -1,6 +1,6 @@
 import type { Complex } from './complex';
-import { fittedCoefficients, residualProducts, shrunkCoefficients } from './composition-fit';
-import { normalProduct, regressorCount, shapeOf, snapshotCount, totalOf } from './composition-sums';
+import { residualProducts, settledCoefficients } from './composition-fit';
+import { normalProduct, shapeOf, snapshotCount, totalOf } from './composition-sums';
 import type { CompositionSums } from './composition-sums';
 import { decided, explanations } from './moved-term';
 import type { MovedTerm } from './moved-term';
@@ -41,9 +41,6 @@ const BASELINE_HOURS = 336;
 /** A path change this near to an angle step is taken for its cause. */
 const PATH_HOURS = 1.5;
 
-/** For a baseline whose load is too constant to tell causes apart: then the smallest coefficients that fit. */
-const RIDGE = 0.003;
-
 /**
  * The step in the last hours of one phase: deviations of every hour from the composition of the hours before, along
  * the second terminal's current (ratio), across it (angle) and across the voltage (charging), each watched by
@@ -78,9 +75,7 @@ export function compositionStep(
 
 function coefficientsOf(hours: readonly HourSums[]): Complex[] | undefined {
   const total = totalOf(hours.map(({ sums }) => sums));
-  if (total === undefined) return undefined;
-  const none = Array.from({ length: regressorCount(total) }, () => ({ re: 0, im: 0 }));
-  return fittedCoefficients(total) ?? shrunkCoefficients(total, { prior: none, weight: RIDGE });
+  return total && settledCoefficients(total);
 }
 
 const SEEN_IN = ['ratio', 'angle', 'charging'] as const;

@@ -14,6 +14,9 @@ export interface UnbalanceSides {
 /** A terminal stood still when what moved there is at most this share of the whole change. */
 const STILL_SHARE = 1 / 3;
 
+/** Changes are alike where none is further from their mean than this share of it. */
+const ALIKE_SHARE = 1 / 4;
+
 /** A change smaller than so many spreads of the load's own unbalance is not laid on either terminal. */
 const SPREADS_LEAST = 3;
 
@@ -41,9 +44,7 @@ export function movedTerminal(
   if (largest === undefined) return undefined;
   const between = { kind: 'between', terminal: largest + 1, against: 0 } as const;
   const found =
-    changes.length > 1
-      ? oddOneOut(changes, largest)
-      : unbalance && movedOfTwo(changes[0]!, unbalance);
+    changes.length > 1 ? oddOneOut(changes, largest) : unbalance && movedOfTwo(changes[0]!, unbalance);
   return found === undefined ? between : { kind: 'terminal', terminal: found };
 }
 
@@ -55,11 +56,10 @@ function placeOfLargest(changes: readonly number[]): number | undefined {
 
 /** The one terminal whose change explains all of them; `undefined` where none does. */
 function oddOneOut(changes: readonly number[], largest: number): number | undefined {
-  const squares = (values: readonly number[]) => values.reduce((total, each) => total + each * each, 0);
-  const still = STILL_SHARE ** 2 * squares(changes);
-  if (squares(changes.filter((_, place) => place !== largest)) <= still) return largest + 1;
-  const mean = changes.reduce((total, each) => total + each, 0) / changes.length;
-  return squares(changes.map((each) => each - mean)) <= still ? 0 : undefined;
+  const still = STILL_SHARE * Math.abs(changes[largest]!);
+  if (changes.every((change, place) => place === largest || Math.abs(change) <= still)) return largest + 1;
+  const mean = changes.reduce((total, change) => total + change, 0) / changes.length;
+  return changes.every((change) => Math.abs(change - mean) <= ALIKE_SHARE * Math.abs(mean)) ? 0 : undefined;
 }
 
 /** By the unbalance: ratio error of the second against the first rises with the second's value, falls with the first's. */

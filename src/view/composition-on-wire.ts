@@ -114,6 +114,7 @@ function mismatchOnWire(mismatch: TerminalMismatch, line: ComposedLine) {
       : first.displacementLimitRad + own.displacementLimitRad;
   return {
     terminal: keys[mismatch.terminal] ?? '',
+    against: keys[0] ?? '',
     ratio: mismatch.ratio,
     ratioBudget: ratioBudget === undefined ? null : againstBudget(mismatch.ratio, ratioBudget),
     angleDeg: scaled(mismatch.angleRad, DEGREES),

@@ -2,7 +2,8 @@ import type { CompositionOnWire } from '../contract/composition';
 import type { LineSummary } from '../contract/lines';
 import { causeAmps, leakageMatters } from './composition-polygon';
 import type { PolygonCause } from './composition-polygon';
-import { budgetWords, causeName, intervalText, tenthsText } from './composition-words';
+import { causeName } from './cause-names';
+import { budgetWords, intervalText, tenthsText } from './composition-words';
 import type { MismatchOnWire, SeparatedOnWire } from './composition-words';
 import { DASH } from './line-figures';
 import { inUnit } from './line-unit';
@@ -56,16 +57,16 @@ function rowName(
 ): string {
   // With several ends the polygon adds their mismatches up; each stands by itself further down.
   const mismatches = told[0]?.mismatches ?? [];
-  const terminal = mismatches.length === 1 ? mismatches[0]!.terminal : null;
+  const place = mismatches.length === 1 ? mismatches[0]! : null;
   switch (id) {
     case 'charging':
       return 'charging';
     case 'leakage':
       return 'leakage or tapped load';
     case 'ratio':
-      return causeName('ratio mismatch', terminal, substations);
+      return causeName('ratio mismatch', place, substations);
     case 'angle':
-      return causeName('angle mismatch', terminal, substations);
+      return causeName('angle mismatch', place, substations);
     case 'rest':
       return 'rest';
     case 'differential':

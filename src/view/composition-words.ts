@@ -1,13 +1,13 @@
 import type { CompositionOnWire, EstimateOnWire } from '../contract/composition';
 import type { LineSummary } from '../contract/lines';
-import type { Cause, StandingVerdict, StepOnWire } from '../contract/standing';
+import type { StandingMark, StandingVerdict, StepOnWire } from '../contract/standing';
 import type { Creep, ForecastDatesOnWire } from '../contract/warning';
+import { causeName, movedAndStill, movedCauses, TIME_WORDS } from './cause-names';
+import { dateText, percentText, timeText } from './figures';
 import { MONTHS } from './forecast';
-import { dateText, timeText } from './figures';
 import { currentText } from './line-figures';
 import { inUnit, unitSign } from './line-unit';
 import type { CurrentUnit } from './line-unit';
-import { listed, terminalName } from './line-words';
 import type { SiteCustom } from './site-custom';
 
 export type SeparatedOnWire = Extract<CompositionOnWire, { kind: 'separated' }>;
@@ -23,26 +23,6 @@ export interface StandingWordsContext {
 }
 
 type AmpsContext = Pick<StandingWordsContext, 'unit' | 'ratingAmps'>;
-
-/** A cause as a name, with the terminal that it points to: "ratio mismatch of Low Pell". */
-export function causeName(
-  cause: Cause,
-  terminal: string | null,
-  substations: LineSummary['substations'],
-): string {
-  const named = terminal === null ? '' : ` of ${terminalName(terminal, substations)}`;
-  switch (cause) {
-    case 'charging':
-      return 'charging';
-    case 'ratio mismatch':
-    case 'angle mismatch':
-      return `${cause}${named}`;
-    case 'rest':
-      return 'what follows neither voltage nor load';
-    case 'not told':
-      return 'a cause that can’t be told';
-  }
-}
 
 /** Where a mismatch stands against the class limits of both transformers together. */
 export function budgetWords(verdict: MismatchOnWire['ratioBudget']): string {
@@ -92,12 +72,12 @@ export function stepSizeWords({ fromAmps, toAmps }: StepOnWire, { unit, ratingAm
   return `${from} to ${currentText(toAmps, unit, ratingAmps)}`;
 }
 
-function movedWords({ cause, terminal }: StepOnWire, { substations }: StandingWordsContext): string {
+function movedWords({ cause, place, isTime }: StepOnWire, { substations }: StandingWordsContext): string {
   switch (cause) {
     case 'charging':
     case 'ratio mismatch':
     case 'angle mismatch':
-      return `the ${causeName(cause, terminal, substations)} moved`;
+      return `the ${causeName(cause, place, substations)} moved${isTime ? `, ${TIME_WORDS}` : ''}`;
     case 'rest':
       return 'what moved follows neither voltage nor load';
     case 'not told':
@@ -117,7 +97,7 @@ export function driftWords(verdict: StandingVerdict, context: StandingWordsConte
     ? ` at one and the same load (${currentText(verdict.creepAtReference!.referenceThroughAmps, context.unit, context.ratingAmps)} through)`
     : ' as measured, load included';
   const parts = [
-    `Phase ${letter} ${slopeWords(drift, context)}${load}`,
+    `Phase ${letter} ${slopeWords(drift, context)}${load}${sinceWords(verdict, context)}`,
     forecastPart(verdict, drift, context),
     causePart(verdict, context),
   ];
@@ -179,44 +159,49 @@ const yearWords = (year: number, nowMs: number): string =>
   year === new Date(nowMs).getUTCFullYear() ? '' : ` ${year}`;
 
 function causePart(verdict: StandingVerdict, { substations }: StandingWordsContext): string {
-  const { composition, compositionBefore, likelyCause, causeTerminal } = verdict;
+  const { compositionBefore, likelyCause, causePlace, causeIsTime } = verdict;
+  const time = causeIsTime ? `; ${TIME_WORDS}` : '';
   const likely =
     likelyCause === 'not told'
       ? 'which cause moves can’t be told'
-      : `likely ${causeName(likelyCause, causeTerminal, substations)}`;
+      : `likely ${causeName(likelyCause, causePlace, substations)}${time}`;
   if (compositionBefore === null) return likely;
-  const found = movedCauses(composition, compositionBefore, substations);
+  const found = movedCauses({ ...verdict, compositionBefore }, substations);
   if (found === undefined) return likely;
   const { moved, still } = found;
   if (moved.length === 0) return `${likely}; no cause has moved beyond its interval in 90 days`;
-  return still.length === 0 ? `${listed(moved)} moved` : `${listed(moved)} moved, ${listed(still)} did not`;
+  return `${movedAndStill(moved, still)}${time}`;
 }
 
 /**
- * Which causes have moved beyond their 95 % intervals between two windows, and of charging whether it stayed.
- * Undefined where one of them is not separable.
+ * Where utilisation at emergency rating is going, in a sentence: a level that is harmless at the load of every day may
+ * not be at that of an emergency. Undefined where it does not rise.
  */
-export function movedCauses(
-  now: CompositionOnWire,
-  before: CompositionOnWire,
-  substations: LineSummary['substations'],
-): { moved: string[]; still: string[] } | undefined {
-  if (now.kind !== 'separated' || before.kind !== 'separated') return undefined;
-  const pairs: { name: string; one: EstimateOnWire; other: EstimateOnWire; always: boolean }[] = [];
-  if (now.chargingAmps !== null && before.chargingAmps !== null)
-    pairs.push({ name: 'charging', one: now.chargingAmps, other: before.chargingAmps, always: true });
-  for (const mismatch of now.mismatches) {
-    const earlier = before.mismatches.find(({ terminal }) => terminal === mismatch.terminal);
-    if (earlier === undefined) continue;
-    const name = (cause: Cause) => causeName(cause, mismatch.terminal, substations);
-    pairs.push(
-      { name: name('ratio mismatch'), one: mismatch.ratio, other: earlier.ratio, always: false },
-      { name: name('angle mismatch'), one: mismatch.angleDeg, other: earlier.angleDeg, always: false },
-    );
-  }
-  const isMoved = ({ one, other }: (typeof pairs)[number]) => one.low > other.high || one.high < other.low;
-  return {
-    moved: pairs.filter(isMoved).map(({ name }) => name),
-    still: pairs.filter((pair) => pair.always && !isMoved(pair)).map(({ name }) => name),
-  };
+export function emergencyWords(verdict: StandingVerdict, context: StandingWordsContext): string | undefined {
+  const { emergencyCreep: creep } = verdict;
+  if (creep === null) return undefined;
+  const points = (ratio: number) => signed((100 * ratio).toFixed(1));
+  const slope = `${points(creep.slopePerMonth)} points a month, 95 % between ${points(creep.slopeLowPerMonth)} and ${points(creep.slopeHighPerMonth)}`;
+  const isPast = creep.utilisationNow >= context.site.nearRatio;
+  const when = isPast
+    ? `past the near mark, the threshold ${monthsWords(creep.over, context.nowMs)}`
+    : `near mark ${monthsWords(creep.near, context.nowMs)}`;
+  return `At emergency rating it would stand at ${percentText(creep.utilisationNow)} of the threshold, rising ${slope}; ${when}.`;
 }
+
+/** "since the settings change of 12 Oct 2026": what a drift is taken since, where a mark parts the history. */
+export function sinceWords(
+  { driftSince }: StandingVerdict,
+  { site }: Pick<StandingWordsContext, 'site'>,
+): string {
+  if (driftSince === null) return '';
+  return ` since ${MARK_NAMES[driftSince.kind]} of ${dateText(`${driftSince.on}T12:00:00Z`, site.timeZone)}`;
+}
+
+const MARK_NAMES: Readonly<Record<StandingMark['kind'], string>> = {
+  'settings changed': 'the settings change',
+  'channel path changed': 'the channel’s change of path',
+  'work recorded': 'the work',
+  'terminals changed': 'the change of terminals',
+  step: 'the step',
+};

@@ -27,19 +27,22 @@ export function summedDays(
     const sums = row.phase === phase ? unpackSums(row.sums) : undefined;
     return sums === undefined ? [] : [{ day: row.start.getTime() / DAY_MS, sums }];
   });
-  return alikeDays(days).map(({ day, sums }) => ({
+  return alikeWindows(days).map(({ day, sums }) => ({
     day,
     sums: (compensatedMillisiemens > 0 ? compensatedSums(sums, compensatedMillisiemens) : undefined) ?? sums,
   }));
 }
 
-function alikeDays(days: readonly SummedDay[]): SummedDay[] {
+/** Those whose sums add: of the newest one's number of terminals, and with or without a voltage as most snapshots are. */
+export function alikeWindows<Window extends { readonly sums: CompositionSums }>(
+  days: readonly Window[],
+): Window[] {
   const newest = days.at(-1);
   if (newest === undefined) return [];
   const { terminalCount } = shapeOf(newest.sums);
   const present = days.filter(({ sums }) => shapeOf(sums).terminalCount === terminalCount);
   const groups = groupedBy(present, ({ sums }) => shapeOf(sums).hasVoltage);
-  const countOf = (group: readonly SummedDay[] | undefined): number =>
+  const countOf = (group: readonly Window[] | undefined): number =>
     (group ?? []).reduce((total, { sums }) => total + snapshotCount(sums), 0);
   const isWithVoltage = countOf(groups.get(true)) >= countOf(groups.get(false));
   return groups.get(isWithVoltage) ?? [];

@@ -132,7 +132,8 @@ export function forecastGroups(
 
 const causeGroup = ({ phase }: ForecastRow): { key: Cause; name: string } => ({
   key: phase.verdict.likelyCause,
-  name: causeName(phase.verdict.likelyCause),
+  name: shortCauseName(phase.verdict.likelyCause),
 });
 
-export const causeName = (cause: Cause): string => (cause === 'not told' ? 'cause not told' : cause);
+/** A cause as a filter and a group have it, without its place. */
+export const shortCauseName = (cause: Cause): string => (cause === 'not told' ? 'cause not told' : cause);

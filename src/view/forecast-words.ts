@@ -1,10 +1,10 @@
-import type { CompositionOnWire, EstimateOnWire } from '../contract/composition';
 import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
 import type { StandingVerdict, StepOnWire } from '../contract/standing';
+import { causeName, movedAndStill, movedCauses, TIME_WORDS } from './cause-names';
+import { sinceWords } from './composition-words';
 import { ampsText, dateText, percentText, timeText } from './figures';
 import { forecastWords, halfMonthWords, slopeWords } from './forecast';
 import { creepOf, phasePlace, type ForecastSections } from './forecast-list';
-import { listed, terminalName } from './line-words';
 import { capital, countWords } from './margin-sentence';
 import type { SiteCustom } from './site-custom';
 
@@ -34,7 +34,8 @@ export function phaseWords(phase: ForecastPhase, context: ForecastContext): Fore
 function leadWords({ verdict, creepVerdict }: ForecastPhase, { site }: ForecastContext): string {
   const phase = `Phase ${site.phaseLetters[verdict.phase]}`;
   const creep = creepVerdict === null ? null : creepOf(verdict);
-  if (creep !== null) return `${phase} rises ${slopeWords(creep)}${atReference(verdict)}.`;
+  if (creep !== null)
+    return `${phase} rises ${slopeWords(creep)}${atReference(verdict)}${sinceWords(verdict, { site })}.`;
   return `${phase} stands at ${percentText(verdict.shareOfPickup)} of the pickup, beyond the near mark.`;
 }
 
@@ -56,77 +57,33 @@ function whenWords(phase: ForecastPhase, { site, nowMs }: ForecastContext): stri
 function stepWords(step: StepOnWire | null, { site, substations }: ForecastContext): string | undefined {
   if (step === null) return undefined;
   const at = `${dateText(step.at, site.timeZone)}, ${timeText(step.at, site.timeZone).slice(0, 5)}`;
-  const where = step.terminal === null ? '' : ` at ${terminalName(step.terminal, substations)}`;
-  const cause = step.cause === 'not told' ? 'its cause is not told' : `${step.cause}${where}`;
+  const cause =
+    step.cause === 'not told' ? 'its cause is not told' : causeName(step.cause, step.place, substations);
   const channel = step.channelPathChanged ? '; the channel’s path changed at the same time' : '';
   return `It stepped from ${ampsText(step.fromAmps)} to ${ampsText(step.toAmps)} on ${at}: ${cause}${channel}.`;
 }
 
-/**
- * What moved between the composition of 90 to 60 days ago and the last 30 days: a cause whose two 95 % intervals
- * do not meet has moved. Without both compositions, what is the likely cause alone.
- */
-function causeMovedWords(verdict: StandingVerdict, context: ForecastContext): string | undefined {
-  const moves = causeMoves(verdict.composition, verdict.compositionBefore, context);
-  if (moves === undefined) return likelyCauseWords(verdict, context);
-  const moved = moves.filter((one) => one.moved);
-  const still = moves.filter((one) => !one.moved);
-  const names = (some: typeof moves) => listed(some.map(({ name }) => name));
-  if (moved.length === 0) return likelyCauseWords(verdict, context);
-  const lead = `${capital(names(moved))} moved`;
-  if (still.length === 0) return `${lead}.`;
-  return `${lead}, ${listed([...new Set(still.map(({ short }) => short))])} did not.`;
+/** What moved in 90 days, where both compositions tell; else what is the likely cause alone. */
+function causeMovedWords(verdict: StandingVerdict, { substations }: ForecastContext): string {
+  const { compositionBefore } = verdict;
+  const found = compositionBefore && movedCauses({ ...verdict, compositionBefore }, substations);
+  const time = verdict.causeIsTime ? ` It is ${TIME_WORDS}.` : '';
+  if (!found || found.moved.length === 0) return `${likelyCauseWords(verdict, substations)}${time}`;
+  return `${capital(movedAndStill(found.moved, found.still))}.${time}`;
 }
 
-function likelyCauseWords(verdict: StandingVerdict, { substations }: ForecastContext): string | undefined {
-  const { likelyCause, causeTerminal, composition } = verdict;
+function likelyCauseWords(
+  { likelyCause, causePlace, composition }: StandingVerdict,
+  substations: ForecastContext['substations'],
+): string {
   if (likelyCause === 'not told')
     return composition.kind === 'not separable'
       ? `The causes can’t be told apart: ${lowered(composition.reason)}`
       : 'The causes can’t be told apart.';
-  const at = causeTerminal === null ? '' : ` at ${terminalName(causeTerminal, substations)}`;
-  return `Likely cause: ${likelyCause}${at}.`;
+  return `Likely cause: ${causeName(likelyCause, causePlace, substations)}.`;
 }
 
 const lowered = (words: string): string => words.charAt(0).toLowerCase() + words.slice(1);
-
-interface CauseMove {
-  readonly name: string;
-  readonly short: string;
-  readonly moved: boolean;
-}
-
-function causeMoves(
-  now: CompositionOnWire,
-  before: CompositionOnWire | null,
-  { substations }: ForecastContext,
-): CauseMove[] | undefined {
-  if (now.kind !== 'separated' || before?.kind !== 'separated') return undefined;
-  const moves: CauseMove[] = [];
-  if (now.chargingAmps !== null && before.chargingAmps !== null)
-    moves.push({ name: 'charging', short: 'charging', moved: !meet(now.chargingAmps, before.chargingAmps) });
-  for (const mismatch of now.mismatches) {
-    const then = before.mismatches.find(({ terminal }) => terminal === mismatch.terminal);
-    if (then === undefined) continue;
-    const at = terminalName(mismatch.terminal, substations);
-    moves.push(
-      {
-        name: `ratio mismatch at ${at}`,
-        short: 'ratio mismatch',
-        moved: !meet(mismatch.ratio, then.ratio),
-      },
-      {
-        name: `angle mismatch at ${at}`,
-        short: 'angle mismatch',
-        moved: !meet(mismatch.angleDeg, then.angleDeg),
-      },
-    );
-  }
-  return moves.length === 0 ? undefined : moves;
-}
-
-const meet = (one: EstimateOnWire, other: EstimateOnWire): boolean =>
-  one.low <= other.high && other.low <= one.high;
 
 const lines = (count: number): string => `${countWords(count)} ${count === 1 ? 'line' : 'lines'}`;
 

@@ -1,12 +1,22 @@
-import { createDemoMeasurements } from '../../simulator/demo-history';
+import { createDemoMeasurements, type DemoMeasurements } from '../../simulator/demo-history';
 import { demoLines } from '../../simulator/network/demo-lines';
 import { storyLines } from '../../simulator/stories/story-lines';
+import type { StandingVerdict } from '../../src/contract/standing';
 import { computedSnapshot } from '../../src/ingest/computed-snapshot';
 import { HISTORY_DAYS, type LineHistory } from '../../src/ingest/line-history';
+import { phaseStep } from '../../src/ingest/phase-step';
+import { phaseVerdict } from '../../src/ingest/phase-verdict';
 import { type RosterLine, rosterLine } from '../../src/ingest/roster';
 import { RUNG_MS, rungRows } from '../../src/ingest/rung';
 import { snapshotRow } from '../../src/ingest/snapshot-row';
-import { rowsByWindow, summedBelow, windowRows } from '../../src/ingest/window-rows';
+import {
+  channelPathBelow,
+  minuteRows,
+  rowsByWindow,
+  summedBelow,
+  windowRows,
+} from '../../src/ingest/window-rows';
+import type { PhaseName } from '../../src/protection/phase';
 import type { LevelRow } from '../../src/store/levels';
 import type { SnapshotRow } from '../../src/store/snapshots';
 
@@ -54,11 +64,7 @@ export function demoHistoryOf(
   const days: LevelRow[] = [];
   let before: SnapshotRow | undefined;
   for (let dayMs = nowMs - daysBack * RUNG_MS.day; dayMs < nowMs; dayMs += RUNG_MS.day) {
-    const rows: SnapshotRow[] = [];
-    for (let atMs = dayMs; atMs < dayMs + RUNG_MS.day; atMs += sampleMs) {
-      const sent = feed(line.key, atMs).map(({ terminal, measurement }) => [terminal, measurement] as const);
-      rows.push(snapshotRow(computedSnapshot({ line, atMs, measurements: new Map(sent) }, CLOCK_LIMIT_US)));
-    }
+    const rows = rawRows(line, feed, { fromMs: dayMs, toMs: dayMs + RUNG_MS.day, sampleMs });
     const beforeDay = before;
     const ofDay = rowsByWindow('hour', rows).flatMap((window) => {
       const built = windowRows(line, { rung: 'hour', rows: window }, before);
@@ -68,8 +74,39 @@ export function demoHistoryOf(
     if (dayMs >= nowMs - HISTORY_DAYS.step * RUNG_MS.day) hours.push(...ofDay);
     const window = { lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps };
     days.push(
-      ...rungRows(window, rows, beforeDay).map((row) => ({ ...row, sums: summedBelow(ofDay, row.phase) })),
+      ...rungRows(window, rows, beforeDay).map((row) => ({
+        ...row,
+        sums: summedBelow(ofDay, row.phase),
+        channelPath: channelPathBelow(ofDay, row.phase),
+      })),
     );
   }
-  return { nowMs, hours, days };
+  return { nowMs, hours, days, works: [] };
+}
+
+function rawRows(
+  line: RosterLine,
+  feed: DemoMeasurements,
+  { fromMs, toMs, sampleMs }: { fromMs: number; toMs: number; sampleMs: number },
+): SnapshotRow[] {
+  const rows: SnapshotRow[] = [];
+  for (let atMs = fromMs; atMs < toMs; atMs += sampleMs) {
+    const sent = feed(line.key, atMs).map(({ terminal, measurement }) => [terminal, measurement] as const);
+    rows.push(snapshotRow(computedSnapshot({ line, atMs, measurements: new Map(sent) }, CLOCK_LIMIT_US)));
+  }
+  return rows;
+}
+
+/** The minute rows of a stretch, sampled at this spacing. */
+export function demoMinutesOf(
+  line: RosterLine,
+  { epochMs, ...stretch }: { fromMs: number; toMs: number; sampleMs: number; epochMs: number },
+): LevelRow[] {
+  return minuteRows(line, rawRows(line, createDemoMeasurements({ seed: SEED, epochMs }), stretch), undefined);
+}
+
+/** What is found of one phase by its history, without an earlier look. */
+export function verdictOf(line: RosterLine, history: LineHistory, phase: PhaseName): StandingVerdict {
+  const step = phaseStep(line, history, { phase, earlier: undefined });
+  return phaseVerdict(line, history, { phase, nearRatio: 0.7, frequencyHz: FREQUENCY_HZ, step });
 }

@@ -1,16 +1,15 @@
 import { describe, expect, it } from 'vitest';
-import { phaseVerdict } from '../../src/ingest/phase-verdict';
-import { demoHistoryOf, demoRosterLine } from './demo-history';
+import { phaseStep } from '../../src/ingest/phase-step';
+import { demoHistoryOf, demoRosterLine, verdictOf } from './demo-history';
 
 // midnight, so that the history holds whole days
 const NOW_MS = Date.UTC(2026, 2, 2);
 const TWO_MONTHS = { nowMs: NOW_MS, epochMs: NOW_MS, days: 60, sampleMs: 600_000 } as const;
-const plan = { nearRatio: 0.7, frequencyHz: 50, earlier: undefined } as const;
 
 function verdictsOf(key: string) {
   const line = demoRosterLine(key);
   const history = demoHistoryOf(line, TWO_MONTHS);
-  return (phase: 'a' | 'b' | 'c') => phaseVerdict(line, history, { phase, ...plan });
+  return (phase: 'a' | 'b' | 'c') => verdictOf(line, history, phase);
 }
 
 describe('the story of a slowly creeping ratio error', () => {
@@ -19,7 +18,10 @@ describe('the story of a slowly creeping ratio error', () => {
   it('is told by phase, terminal and cause', () => {
     const b = of('b');
     expect(b.composition.kind).toBe('separated');
-    expect([b.likelyCause, b.causeTerminal]).toEqual(['ratio mismatch', 'low-pell']);
+    expect([b.likelyCause, b.causePlace]).toEqual([
+      'ratio mismatch',
+      { terminal: 'low-pell', against: null },
+    ]);
     expect(b.creepAtReference?.creep).toMatchObject({ verdict: 'creep' });
     expect(b.creepAtReference!.creep.slopeAmpsPerMonth).toBeGreaterThan(2.5);
     expect(b.creepAtReference!.creep.slopeAmpsPerMonth).toBeLessThan(4.5);
@@ -83,7 +85,12 @@ describe('the story of a channel that took another path', () => {
       const nineDaysAgo = NOW_MS - 9 * 86_400_000;
       expect(Math.abs(Date.parse(step!.at) - nineDaysAgo)).toBeLessThanOrEqual(3_600_000);
       expect(step!.toAmps - step!.fromAmps).toBeGreaterThan(20);
-      expect(step).toMatchObject({ cause: 'angle mismatch', terminal: 'low-pell', channelPathChanged: true });
+      expect(step).toMatchObject({
+        cause: 'angle mismatch',
+        place: { terminal: 'low-pell', against: 'fennick' },
+        isTime: true,
+        channelPathChanged: true,
+      });
     },
   );
 
@@ -103,13 +110,12 @@ describe('a step that an earlier look found', () => {
       fromAmps: 10,
       toAmps: 14,
       cause: 'charging',
-      terminal: null,
+      place: null,
+      isTime: false,
       channelPathChanged: false,
     } as const;
     const earlier = { step, computedAt: new Date(NOW_MS - 3_600_000).toISOString() };
-    const verdict = phaseVerdict(line, demoHistoryOf(line, TWO_MONTHS), { ...plan, phase: 'a', earlier });
-    const { at, fromAmps, toAmps } = step;
-    expect(verdict.step).toMatchObject({ at, fromAmps, toAmps });
+    expect(phaseStep(line, demoHistoryOf(line, TWO_MONTHS), { phase: 'a', earlier })).toEqual(step);
   });
 });
 

@@ -99,6 +99,28 @@ describe('a step of the composition', () => {
     expect(found).toMatchObject({ moved: { term: 'ratio', terminal: 1 } });
   });
 
+  test.each([
+    ['the first', 0, [-0.02, -0.02]],
+    ['the third', 2, [0, 0.02]],
+  ] as const)('of the ratio of %s of three terminals names that terminal', (_, terminal, changes) => {
+    const three = {
+      ...before,
+      mismatches: [
+        { re: 0.01, im: 0.01 },
+        { re: 0.0, im: -0.01 },
+      ],
+    };
+    const after = {
+      ...three,
+      mismatches: three.mismatches.map(({ re, im }, index) => ({ re: re + changes[index]!, im })),
+    };
+    const hours = Array.from({ length: HOURS }, (_unused, hour) => ({
+      hour,
+      sums: sumsOf([dayOf(hour >= 400 ? after : three, Math.floor(hour / 24))[hour % 24]!]),
+    }));
+    expect(compositionStep(hours)).toMatchObject({ kind: 'step', moved: { term: 'ratio', terminal } });
+  });
+
   test('of angle without a path change does not point to the channel', () => {
     const after = { ...before, mismatches: [{ re: 0.01, im: -0.01 }] };
     const found = compositionStep(hoursOf(after), { pathChangeHours: [300] });

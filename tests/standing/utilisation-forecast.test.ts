@@ -1,13 +1,10 @@
 import { expect, test } from 'vitest';
+import type { Complex } from '../../src/standing/complex';
 import { modulus } from '../../src/standing/complex';
 import { compositionFit } from '../../src/standing/composition-fit';
 import { totalOf } from '../../src/standing/composition-sums';
-import { twoTerminalPoint } from '../../src/standing/operating-point';
-import {
-  dailyUtilisation,
-  greatestUtilisation,
-  watchedUtilisation,
-} from '../../src/standing/utilisation-forecast';
+import { predictedDifferentialAmps, twoTerminalPoint } from '../../src/standing/operating-point';
+import { dailyUtilisation, watchedUtilisation } from '../../src/standing/utilisation-forecast';
 import { dayOf, sumsOf } from './made-up-phase';
 
 const days = Array.from({ length: 90 }, (_, day) => ({
@@ -21,15 +18,15 @@ const points = [-0.3, 0, 0.3].map((powerFactorAngleRad) =>
   twoTerminalPoint({ voltageKv: 63.5, throughAmps: 900, powerFactorAngleRad }),
 );
 // a straight 60 A threshold stands for the scheme
-const plan = {
-  fit,
-  points,
-  utilisationOf: (point: { differentialAmps: { re: number; im: number } }) =>
-    modulus(point.differentialAmps) / 60,
-};
+const utilisationOf = (coefficients: readonly Complex[]) =>
+  Math.max(
+    ...points.map(
+      (point) => modulus(predictedDifferentialAmps({ shape: fit.shape, coefficients }, point)) / 60,
+    ),
+  );
 
 test('utilisation at emergency rating follows a mismatch that creeps, and is forecast to its marks', () => {
-  const series = dailyUtilisation(days, plan);
+  const series = dailyUtilisation(days, { fit, utilisationOf });
   expect(series).toHaveLength(90);
   expect(series[89]!.utilisation - series[0]!.utilisation).toBeGreaterThan(0.2);
   const { verdict } = watchedUtilisation(series, { nearRatio: 0.7, horizonDays: 365, markDays: [] });
@@ -40,9 +37,6 @@ test('utilisation at emergency rating follows a mismatch that creeps, and is for
   expect(verdict.pickup.likelyDay).toBeGreaterThan(verdict.near.likelyDay!);
 });
 
-test('the worst of the points counts, and points that the scheme can’t tell are left out', () => {
-  const each = points.map((point) => greatestUtilisation(fit, { ...plan, points: [point] })!);
-  expect(greatestUtilisation(fit, plan)).toBe(Math.max(...each));
-  expect(greatestUtilisation(fit, { points, utilisationOf: () => undefined })).toBeUndefined();
-  expect(dailyUtilisation(days, { ...plan, utilisationOf: () => undefined })).toEqual([]);
+test('days for which the scheme can’t tell are left out', () => {
+  expect(dailyUtilisation(days, { fit, utilisationOf: () => undefined })).toEqual([]);
 });

@@ -75,7 +75,12 @@ function creepOf(
   };
 }
 
-function composition(days: number, charging: number, ratio: number, terminal: string) {
+function composition(
+  days: number,
+  charging: number,
+  ratio: number,
+  [against, terminal]: readonly [string, string],
+) {
   const estimate = (value: number, half: number) => ({ value, low: value - half, high: value + half });
   return compositionSchema.parse({
     kind: 'separated',
@@ -97,6 +102,7 @@ function composition(days: number, charging: number, ratio: number, terminal: st
     mismatches: [
       {
         terminal,
+        against,
         ratio: estimate(ratio, 0.002),
         ratioBudget: ratio > 0.02 ? 'beyond' : 'within',
         angleDeg: estimate(0.2, 0.05),
@@ -122,7 +128,7 @@ export function madeUpVerdict(index: number, phase: 'a' | 'b' | 'c'): StandingVe
   const ratio = Math.sqrt(Math.max(0, levelAmps ** 2 - charging ** 2)) / 400;
   const separable = seed % 11 !== 5;
   const likelyCause: Cause = !separable ? 'not told' : rises ? 'ratio mismatch' : 'charging';
-  const far = keyOf(made.ends[1]);
+  const ends = [keyOf(made.ends[0]), keyOf(made.ends[1])] as const;
   return {
     line: made.key,
     phase,
@@ -134,7 +140,7 @@ export function madeUpVerdict(index: number, phase: 'a' | 'b' | 'c'): StandingVe
     utilisationP95: Math.min(1, share * 0.8 + 0.05),
     emergencyUtilisation: separable ? Math.min(1.2, share * 1.3) : null,
     composition: separable
-      ? composition(0, charging, ratio, far)
+      ? composition(0, charging, ratio, ends)
       : {
           kind: 'not separable',
           from: dayAfter(-30),
@@ -143,12 +149,16 @@ export function madeUpVerdict(index: number, phase: 'a' | 'b' | 'c'): StandingVe
           snapshotCount: 900_000,
           reason: 'The load hardly changes in this window.',
         },
-    compositionBefore: separable ? composition(60, charging, rises ? ratio * 0.5 : ratio, far) : null,
+    compositionBefore: separable ? composition(60, charging, rises ? ratio * 0.5 : ratio, ends) : null,
     creep,
     creepAtReference: creep === null ? null : { creep, referenceThroughAmps: 400 },
+    emergencyCreep: null,
+    marks: [],
+    driftSince: null,
     step: null,
     likelyCause,
-    causeTerminal: likelyCause === 'ratio mismatch' ? far : null,
+    causePlace: likelyCause === 'ratio mismatch' ? { terminal: ends[1], against: null } : null,
+    causeIsTime: false,
     near: creep?.near ?? null,
     pickup: creep?.pickup ?? null,
   };

@@ -11,8 +11,8 @@ describe('the causes in figures', () => {
     const rows = causeRows(separatedWith(), null, context);
     expect(rows.map(({ name }) => name)).toEqual([
       'charging',
-      'ratio mismatch of Hask',
-      'angle mismatch of Hask',
+      'ratio mismatch of Hask against Skelder',
+      'angle mismatch of Hask against Skelder',
       'rest',
       'differential',
     ]);

@@ -1,12 +1,14 @@
 import { describe, expect, it } from 'vitest';
+import type { CompositionOnWire } from '../../src/contract/composition';
 import type { StepOnWire } from '../../src/contract/standing';
 import {
   budgetWords,
   driftWords,
+  emergencyWords,
   monthsWords,
-  movedCauses,
   stepWords,
 } from '../../src/view/composition-words';
+import { movedCauses } from '../../src/view/cause-names';
 import type { StandingWordsContext } from '../../src/view/composition-words';
 import { stepInWindowWords, weakWords, whyTitle } from '../../src/view/composition-why';
 import { estimate, mismatchWith, notSeparable, separatedWith, verdictWith } from './sample-compositions';
@@ -27,7 +29,8 @@ const STEP: StepOnWire = {
   fromAmps: 28,
   toAmps: 60,
   cause: 'angle mismatch',
-  terminal: 'hask',
+  place: { terminal: 'hask', against: null },
+  isTime: false,
   channelPathChanged: true,
 };
 
@@ -39,7 +42,13 @@ describe('a step in words', () => {
   });
 
   it('says that a cause can’t be told where none was', () => {
-    const untold = { ...STEP, cause: 'not told', terminal: null, channelPathChanged: false } as const;
+    const untold = {
+      ...STEP,
+      cause: 'not told',
+      place: null,
+      isTime: false,
+      channelPathChanged: false,
+    } as const;
     expect(plain(stepWords(untold, context))).toMatch(/to 60 A; which cause moved can’t be told\.$/);
   });
 });
@@ -74,6 +83,66 @@ describe('a drift as a planner needs it', () => {
   });
 });
 
+describe('where a mismatch is', () => {
+  const said = (change: Parameters<typeof verdictWith>[0]) => plain(driftWords(verdictWith(change), context));
+
+  it('is said of one terminal against the other where the two can’t be told apart', () => {
+    const causePlace = { terminal: 'hask', against: 'skelder' };
+    expect(said({ causePlace })).toMatch(
+      /; ratio mismatch of Hask against Skelder moved, charging did not\.$/,
+    );
+    expect(said({ causePlace, compositionBefore: null })).toMatch(
+      /; likely ratio mismatch of Hask against Skelder\.$/,
+    );
+  });
+
+  it('is said of the first terminal where that is the one that moved', () => {
+    const causePlace = { terminal: 'skelder', against: null };
+    expect(said({ causePlace })).toMatch(/; ratio mismatch of Skelder moved, charging did not\.$/);
+  });
+
+  it('is said to be time where an angle is alike in all phases', () => {
+    expect(said({ likelyCause: 'angle mismatch', causeIsTime: true, compositionBefore: null })).toMatch(
+      /alike in all three phases: that is time, by the channel or a clock, rather than a transformer\.$/,
+    );
+  });
+});
+
+describe('a history that a mark parts', () => {
+  it('is said to be since that mark', () => {
+    const driftSince = { on: '2026-10-12', kind: 'settings changed' } as const;
+    expect(plain(driftWords(verdictWith({ driftSince }), context))).toMatch(
+      /\(412 A through\) since the settings change of 12 Oct 2026;/,
+    );
+  });
+});
+
+describe('utilisation at emergency rating', () => {
+  const emergencyCreep = {
+    verdict: 'creep',
+    utilisationNow: 0.58,
+    slopePerMonth: 0.021,
+    slopeLowPerMonth: 0.015,
+    slopeHighPerMonth: 0.027,
+    near: { earliest: '2027-03-04', likely: '2027-04-20', latest: '2027-06-11' },
+    over: { earliest: '2028-01-04', likely: '2028-06-20', latest: null },
+  } as const;
+
+  it('is told with its rise and its months where it rises, and not at all where it does not', () => {
+    expect(plain(emergencyWords(verdictWith({ emergencyCreep }), context))).toBe(
+      'At emergency rating it would stand at 58 % of the threshold, rising 2.1 points a month, 95 % between 1.5 and 2.7; near mark in March to June 2027.',
+    );
+    expect(emergencyWords(verdictWith(), context)).toBeUndefined();
+  });
+
+  it('past the near mark tells when it would meet the threshold', () => {
+    const past = { ...emergencyCreep, utilisationNow: 0.8 };
+    expect(plain(emergencyWords(verdictWith({ emergencyCreep: past }), context))).toMatch(
+      /; past the near mark, the threshold from January 2028 on\.$/,
+    );
+  });
+});
+
 describe('the months of a forecast', () => {
   it.each([
     [{ earliest: '2027-03-01', likely: null, latest: '2027-03-30' }, 'in March 2027'],
@@ -84,18 +153,20 @@ describe('the months of a forecast', () => {
 });
 
 describe('which causes moved', () => {
+  const verdictBeside = (compositionBefore: CompositionOnWire) => ({ ...verdictWith(), compositionBefore });
+
   it('an interval that still touches the earlier one has not moved', () => {
     const before = separatedWith({ mismatches: [mismatchWith({ ratio: estimate(0.045, 0.003) })] });
-    expect(movedCauses(separatedWith(), before, substations)).toEqual({ moved: [], still: ['charging'] });
+    expect(movedCauses(verdictBeside(before), substations)).toEqual({ moved: [], still: ['charging'] });
   });
 
   it('charging that moved is said to have moved', () => {
     const before = separatedWith({ chargingAmps: estimate(10, 0.5) });
-    expect(movedCauses(separatedWith(), before, substations)).toEqual({ moved: ['charging'], still: [] });
+    expect(movedCauses(verdictBeside(before), substations)).toEqual({ moved: ['charging'], still: [] });
   });
 
   it('a window that is not separable tells nothing', () => {
-    expect(movedCauses(separatedWith(), notSeparable, substations)).toBeUndefined();
+    expect(movedCauses(verdictBeside(notSeparable), substations)).toBeUndefined();
   });
 });
 

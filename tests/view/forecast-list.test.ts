@@ -48,7 +48,7 @@ function verdictWith(change: Partial<StandingVerdict> = {}): StandingVerdict {
     },
     compositionBefore: null,
     likelyCause: 'ratio mismatch',
-    causeTerminal: 'low-pell',
+    causePlace: { terminal: 'low-pell', against: null },
     near,
     pickup,
     ...change,
@@ -136,7 +136,7 @@ describe('the words for a planner', () => {
     expect(words(verdictWith())).toEqual({
       lead: 'Phase L2 rises 3.4\u00a0A a month (2.9 to 3.9).',
       when: 'Near mark likely in the second half of January (28 Dec 2026 to 4 Mar 2027).',
-      why: 'Likely cause: ratio mismatch at Low Pell.',
+      why: 'Likely cause: ratio mismatch of Low Pell.',
     });
   });
 
@@ -150,7 +150,7 @@ describe('the words for a planner', () => {
     };
     expect(
       words(verdictWith({ composition: separated(0.049), compositionBefore: separated(0.02) })).why,
-    ).toBe('Ratio mismatch at Low Pell moved, charging and angle mismatch did not.');
+    ).toBe('Ratio mismatch of Low Pell moved, charging did not.');
   });
 
   it('say that a date is not within five years, and that a level beyond the mark does not rise', () => {
@@ -162,7 +162,7 @@ describe('the words for a planner', () => {
   });
 
   it('say that the causes cannot be told, and why', () => {
-    expect(words(verdictWith({ likelyCause: 'not told', causeTerminal: null })).why).toBe(
+    expect(words(verdictWith({ likelyCause: 'not told', causePlace: null })).why).toBe(
       'The causes can’t be told apart: the load hardly changes.',
     );
   });

@@ -105,7 +105,8 @@ describe('known changes', () => {
       fromAmps: 28,
       toAmps: 60,
       cause: 'not told',
-      terminal: null,
+      place: null,
+      isTime: false,
       channelPathChanged: false,
     } as const;
     const settings = [version('2026-05-12T08:00:00.000Z'), version('2022-06-20T08:00:00.000Z')];

@@ -7,6 +7,7 @@ export const estimate = (value: number, half: number) => ({ value, low: value - 
 
 export const mismatchWith = (change: Partial<MismatchOnWire> = {}): MismatchOnWire => ({
   terminal: 'hask',
+  against: 'skelder',
   ratio: estimate(0.049, 0.003),
   ratioBudget: 'beyond',
   angleDeg: estimate(-0.52, 0.08),
@@ -68,9 +69,13 @@ export const verdictWith = (change: Partial<StandingVerdict> = {}): StandingVerd
     creep: { ...CREEP, slopeAmpsPerMonth: 0.9, slopeLowAmpsPerMonth: 0.6, slopeHighAmpsPerMonth: 1.2 },
     referenceThroughAmps: 412,
   },
+  emergencyCreep: null,
+  marks: [],
+  driftSince: null,
   step: null,
   likelyCause: 'ratio mismatch',
-  causeTerminal: 'hask',
+  causePlace: { terminal: 'hask', against: null },
+  causeIsTime: false,
   near: { earliest: '2027-03-04', likely: '2027-04-20', latest: '2027-06-11' },
   pickup: { earliest: '2028-01-04', likely: '2028-06-20', latest: null },
   ...change,

@@ -13,7 +13,8 @@ const step: StepOnWire = {
   fromAmps: 28,
   toAmps: 60,
   cause: 'angle mismatch',
-  terminal: 'hask',
+  place: { terminal: 'hask', against: null },
+  isTime: false,
   channelPathChanged: true,
 };
 const steps = [{ step, words: 'step 28 to 60 A' }];

@@ -1,5 +1,5 @@
 import { CAUSES } from '../../contract/standing';
-import { causeName } from '../../view/forecast-list';
+import { shortCauseName } from '../../view/forecast-list';
 import {
   FORECAST_GROUPS,
   FORECAST_SORTS,
@@ -52,7 +52,7 @@ export function ForecastFilters({ state: { address, choose, type }, substations 
         label="Likely cause"
         name="cause"
         value={address.cause ?? ''}
-        options={[['', 'all'], ...CAUSES.map((cause) => [cause, causeName(cause)] as const)]}
+        options={[['', 'all'], ...CAUSES.map((cause) => [cause, shortCauseName(cause)] as const)]}
         onChoose={(value) => choose({ cause: CAUSES.find((cause) => cause === value) })}
       />
       <Select

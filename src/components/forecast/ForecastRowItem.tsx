@@ -4,7 +4,7 @@ import type { Condition } from '../../contract/condition';
 import { kilovoltsText } from '../../view/figures';
 import { dayOf, forecastRange, type ForecastAxis } from '../../view/forecast-axis';
 import {
-  causeName,
+  shortCauseName,
   dailyLevelsOf,
   shownDates,
   type ForecastPlace,
@@ -80,7 +80,7 @@ export function ForecastRowItem({ row, axis, site, nowMs, followUps, mayKeep }: 
           <span className="inline-flex items-center gap-1">
             <PhaseSign phase={verdict.phase} size={3.2} /> phase {site.phaseLetters[verdict.phase]}
           </span>
-          · {causeName(verdict.likelyCause)}
+          · {shortCauseName(verdict.likelyCause)}
         </p>
         {place !== 'within margin' && (
           <p className={`mt-1 inline-flex items-center gap-1.5 font-semibold ${mark.ink}`}>

@@ -1,6 +1,6 @@
 import type { StandingVerdict } from '../../contract/standing';
 import type { Creep } from '../../contract/warning';
-import { driftWords, stepWords } from '../../view/composition-words';
+import { driftWords, emergencyWords, stepWords } from '../../view/composition-words';
 import type { StandingWordsContext } from '../../view/composition-words';
 import { fittedAcross } from '../../view/trend-marks';
 
@@ -25,6 +25,7 @@ export function TrendFindings({ verdicts, creep, context, missing }: Props) {
     const lead = several ? `Phase ${context.site.phaseLetters[phase]}: ` : '';
     return [
       driftWords(verdict, context),
+      emergencyWords(verdict, context),
       step === null
         ? undefined
         : `${lead}${several ? lowered(stepWords(step, context)) : stepWords(step, context)}${across}`,
