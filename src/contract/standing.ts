@@ -167,21 +167,42 @@ export const newFollowUpSchema = z.object({
   note: z.string().trim().min(1, 'Say what is to be done.').max(1000, 'A note has at most 1000 characters.'),
 });
 
-/** GET /api/lines/<key>/comparison?at: both sides of a date, for each phase. */
+const comparedSideSchema = z.object({
+  days: z.int(),
+  medianAmps: z.number().nullable(),
+  composition: compositionSchema,
+});
+
+/** Mann–Whitney on daily levels, allowed for days that are like their neighbours; null with too few days on a side. */
+const shiftTestSchema = z
+  .object({
+    pTwoSided: z.number(),
+    /** Hodges–Lehmann shift, after less before */
+    shiftAmps: z.object({ value: z.number(), low: z.number(), high: z.number() }),
+  })
+  .nullable();
+
+/**
+ * GET /api/lines/<key>/comparison?at: both sides of a date, for each phase. A side reaches no further than the next
+ * mark of the phase's history.
+ */
 export const comparisonSchema = z.object({
   line: keySchema,
   at: z.iso.date(),
   phases: z.array(
     z.object({
       phase: phaseNameSchema,
-      before: z.object({ days: z.int(), medianAmps: z.number().nullable(), composition: compositionSchema }),
-      after: z.object({ days: z.int(), medianAmps: z.number().nullable(), composition: compositionSchema }),
-      /** Mann–Whitney on daily levels; null with too few days on a side */
-      test: z
+      before: comparedSideSchema,
+      after: comparedSideSchema,
+      /** of the levels as measured, the load of each side in them */
+      test: shiftTestSchema,
+      /** of the levels at one load, where both sides are separable */
+      atReference: z
         .object({
-          pTwoSided: z.number(),
-          /** Hodges–Lehmann shift, after less before */
-          shiftAmps: z.object({ value: z.number(), low: z.number(), high: z.number() }),
+          throughAmps: z.number(),
+          beforeAmps: z.number(),
+          afterAmps: z.number(),
+          test: shiftTestSchema,
         })
         .nullable(),
     }),

@@ -58,23 +58,36 @@ export const dayText = (day: string): string => dateText(`${day}T12:00:00Z`, 'UT
 
 type ComparedPhase = Comparison['phases'][number];
 
-/** What changed across the date, in a sentence with its interval and p; or why that can't be told. */
+/**
+ * What changed across the date, in a sentence with its interval and p; or why that can't be told. At one and the same
+ * load where both sides have a composition: a winter against a summer differs by its load as well.
+ */
 export function comparisonSentence(
-  { phase, before, after, test }: ComparedPhase,
+  { phase, before, after, test, atReference }: ComparedPhase,
   { day, letters }: { day: string; letters: PhaseLetters },
 ): string {
   const name = `phase ${letters[phase]}`;
-  if (test === null)
+  const told = atReference?.test ?? test;
+  if (told === null)
     return `For ${name} there are ${daysWords(before.days)} with a standing level before ${dayText(day)} and ${daysWords(after.days)} after it: too few to tell whether it has changed.`;
-  const { value, low, high } = test.shiftAmps;
-  const medians = `median ${ampsText(before.medianAmps)} on ${daysWords(before.days)} before, ${ampsText(after.medianAmps)} on ${daysWords(after.days)} after`;
+  const isAtOneLoad = told === atReference?.test;
+  const load = isAtOneLoad ? ` at one and the same load (${ampsText(atReference!.throughAmps)} through)` : '';
+  const [from, to] = isAtOneLoad
+    ? [atReference!.beforeAmps, atReference!.afterAmps]
+    : [before.medianAmps, after.medianAmps];
+  const medians = `median ${ampsText(from)} on ${daysWords(before.days)} before, ${ampsText(to)} on ${daysWords(after.days)} after`;
+  return `After ${dayText(day)} ${shiftWords(told, `the standing level of ${name}${load}`)}; ${medians}.`;
+}
+
+function shiftWords({ shiftAmps, pTwoSided }: NonNullable<ComparedPhase['test']>, level: string): string {
+  const { value, low, high } = shiftAmps;
   if (low <= 0 && high >= 0)
-    return `After ${dayText(day)} no shift of the standing level of ${name} can be told: ${signedAmps(value)} (95 %: ${intervalText(test.shiftAmps, 1)}), ${pWords(test.pTwoSided)}; ${medians}.`;
+    return `no shift of ${level} can be told: ${signedAmps(value)} (95 %: ${intervalText(shiftAmps, 1)}), ${pWords(pTwoSided)}`;
   const sizes = { value: Math.abs(value), low: Math.abs(low), high: Math.abs(high) };
   const limits = { ...sizes, low: Math.min(sizes.low, sizes.high), high: Math.max(sizes.low, sizes.high) };
   return (
-    `After ${dayText(day)} the standing level of ${name} is ${value < 0 ? 'lower' : 'higher'} by ` +
-    `${ampsText(sizes.value)} (95 %: ${intervalText(limits, digitsOf(sizes.value))}), ${pWords(test.pTwoSided)}; ${medians}.`
+    `${level} is ${value < 0 ? 'lower' : 'higher'} by ${ampsText(sizes.value)} ` +
+    `(95 %: ${intervalText(limits, digitsOf(sizes.value))}), ${pWords(pTwoSided)}`
   );
 }
 
@@ -104,9 +117,13 @@ export function comparisonTable(
       amps('shift from'),
       amps('shift to'),
       { kind: 'text', head: 'p' },
+      amps('at one load, before'),
+      amps('at one load, after'),
+      amps('shift at one load'),
+      { kind: 'text', head: 'p at one load' },
       ...CAUSES.flatMap((cause) => [amps(`${cause} before`), amps(`${cause} after`)]),
     ],
-    rows: phases.map(({ phase, before, after, test }) => [
+    rows: phases.map(({ phase, before, after, test, atReference }) => [
       letters[phase],
       before.days,
       after.days,
@@ -115,11 +132,18 @@ export function comparisonTable(
       test?.shiftAmps.value ?? null,
       test?.shiftAmps.low ?? null,
       test?.shiftAmps.high ?? null,
-      test === null ? null : String(Number(test.pTwoSided.toPrecision(2))),
+      pCell(test),
+      atReference?.beforeAmps ?? null,
+      atReference?.afterAmps ?? null,
+      atReference?.test?.shiftAmps.value ?? null,
+      pCell(atReference?.test ?? null),
       ...CAUSES.flatMap((cause) => [sideAmps(before.composition, cause), sideAmps(after.composition, cause)]),
     ]),
   };
 }
+
+const pCell = (test: ComparedPhase['test']): string | null =>
+  test === null ? null : String(Number(test.pTwoSided.toPrecision(2)));
 
 /** The same figures with a row each and a column a phase, as they are read on a screen. */
 export function turnedTable({ columns, rows }: LineTable): { heads: string[]; rows: string[][] } {
@@ -143,6 +167,7 @@ function sideAmps(composition: CompositionOnWire, cause: PolygonCause): number |
 
 /** The phase worth looking at first: the one with the greatest shift, where any was tested. */
 export function mostMovedPhase({ phases }: Comparison): ComparedPhase['phase'] {
-  const size = ({ test }: ComparedPhase) => Math.abs(test?.shiftAmps.value ?? 0);
+  const size = ({ test, atReference }: ComparedPhase) =>
+    Math.abs((atReference?.test ?? test)?.shiftAmps.value ?? 0);
   return phases.reduce((most, each) => (size(each) > size(most) ? each : most), phases[0]!).phase;
 }

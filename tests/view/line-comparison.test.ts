@@ -18,6 +18,7 @@ const phaseWith = (change: Partial<Phase> = {}): Phase => ({
   before: { days: 60, medianAmps: 40, composition: separatedWith() },
   after: { days: 41, medianAmps: 28, composition: notSeparable },
   test: { pTwoSided: 3.2e-9, shiftAmps: { value: -12, low: -14, high: -10 } },
+  atReference: null,
   ...change,
 });
 const context = { day: '2026-05-03', letters: SITE.phaseLetters };
@@ -44,6 +45,14 @@ describe('before and after in a sentence', () => {
     const test = { pTwoSided: 0.0123, shiftAmps: { value: 1.8, low: 0.4, high: 3.1 } };
     expect(plain(comparisonSentence(phaseWith({ test }), context))).toContain(
       'is higher by 1.8 A (95 %: 0.4 to 3.1), p = 0.0123;',
+    );
+  });
+
+  it('goes by one and the same load where both sides have a composition', () => {
+    const test = { pTwoSided: 0.0021, shiftAmps: { value: -5, low: -6.1, high: -4.2 } };
+    const atReference = { throughAmps: 412, beforeAmps: 31, afterAmps: 26, test };
+    expect(plain(comparisonSentence(phaseWith({ atReference }), context))).toBe(
+      'After 3 May 2026 the standing level of phase L2 at one and the same load (412 A through) is lower by 5.0 A (95 %: 4.2 to 6.1), p = 0.0021; median 31 A on 60 days before, 26 A on 41 days after.',
     );
   });
 

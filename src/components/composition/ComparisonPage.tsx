@@ -38,9 +38,10 @@ export function ComparisonPage({ comparison, line, site, initialPhase }: Props) 
           </p>
         ))}
         <p className="text-caption text-pretty text-ink-2">
-          Mann–Whitney test on daily standing levels, at most half a year on each side, {dayText(day)} itself
-          on neither; the shift is Hodges–Lehmann’s. A load that differs between the sides is in it: the
-          causes below tell how much of it that may be.
+          Mann–Whitney test on daily standing levels, allowed for days that are like their neighbours; the
+          shift is Hodges–Lehmann’s. Each side reaches to the next known change of the line, half a year at
+          the most, {dayText(day)} itself on neither. Where a sentence names no load, a load that differs
+          between the sides is in it.
         </p>
       </div>
       <CausesPanel {...{ comparison, line, site, phase }} onPhase={setPhase} />

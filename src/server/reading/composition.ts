@@ -1,14 +1,11 @@
 import type { CompositionOnWire, LineComposition } from '../../contract/composition';
-import type { Comparison } from '../../contract/standing';
 import { perPhase, PHASES, type PhaseName } from '../../protection/phase';
 import { modulus } from '../../standing/complex';
 import { composition } from '../../standing/composition';
 import { shrunkCoefficients } from '../../standing/composition-fit';
 import { totalOf } from '../../standing/composition-sums';
-import { mannWhitney } from '../../standing/mann-whitney';
 import { compositionPolygon } from '../../standing/operating-point';
-import { median } from '../../standing/quantile';
-import { type LevelRow, readLevels } from '../../store/levels';
+import { readLevels } from '../../store/levels';
 import { readRegisterLine, type RegisteredLine, settingsInForce } from '../../store/register';
 import { readVerdictsOfLine } from '../../store/standing';
 import { compositionOnWire } from '../../view/composition-on-wire';
@@ -16,13 +13,12 @@ import { dateOfDay, type SummedDay, summedDays } from '../../view/day-sums';
 import { compensatedMillisiemens } from '../../view/line-zone';
 import type { Site } from '../site';
 
-interface Window {
+export interface Window {
   readonly from: Date;
   readonly to: Date;
 }
 
 const DAY_MS = 86_400_000;
-const COMPARED_DAYS = 180;
 /** A day is looked at with a week on either side of it. */
 const AROUND_DAYS = 7;
 const WHOLE_WEIGHT = 0.001;
@@ -50,7 +46,7 @@ export async function readComposition(
   };
 }
 
-interface ComposedOf {
+export interface ComposedOf {
   readonly line: RegisteredLine;
   readonly window: Window;
   readonly frequencyHz: number;
@@ -58,14 +54,14 @@ interface ComposedOf {
 }
 
 /** What the scheme in force now takes out of the differential, millisiemens. */
-function compensatedNow({ settings, now }: Site, line: RegisteredLine): number {
+export function compensatedNow({ settings, now }: Site, line: RegisteredLine): number {
   return compensatedMillisiemens(line, {
     isCompensated: settingsInForce(line.settings, now())?.chargingCompensation === true,
     frequencyHz: settings.NOMINAL_FREQUENCY_HZ,
   });
 }
 
-function composed(
+export function composed(
   days: readonly SummedDay[],
   { line, window, frequencyHz, compensated }: ComposedOf,
 ): CompositionOnWire {
@@ -127,55 +123,4 @@ function history(
       },
     ];
   });
-}
-
-/** Both sides of a date, half a year at the most on each; the day itself belongs to neither. */
-export async function readComparison(site: Site, key: string, at: string): Promise<Comparison | undefined> {
-  const line = await readRegisterLine(site.store, key);
-  if (line === undefined) return undefined;
-  const compensated = compensatedNow(site, line);
-  const atMs = Date.parse(`${at}T00:00:00Z`);
-  const frequencyHz = site.settings.NOMINAL_FREQUENCY_HZ;
-  const side = async (window: Window) => ({
-    window,
-    rows: await readLevels(site.store, 'day', { lineIds: [line.id], ...window }),
-  });
-  const before = await side({ from: new Date(atMs - COMPARED_DAYS * DAY_MS), to: new Date(atMs) });
-  const after = await side({ from: new Date(atMs + DAY_MS), to: new Date(atMs + COMPARED_DAYS * DAY_MS) });
-  return {
-    line: key,
-    at,
-    phases: PHASES.map((phase) => {
-      const [earlier, later] = [before, after].map(({ rows, window }) => ({
-        levels: levelsOf(rows, phase),
-        composition: composed(summedDays(rows, phase, compensated), {
-          line,
-          window,
-          frequencyHz,
-          compensated,
-        }),
-      }));
-      return {
-        phase,
-        before: summary(earlier!),
-        after: summary(later!),
-        test: shiftTest(earlier!.levels, later!.levels),
-      };
-    }),
-  };
-}
-
-const levelsOf = (rows: readonly LevelRow[], phase: PhaseName): number[] =>
-  rows.flatMap((row) => (row.phase === phase && row.medianAmps !== null ? [row.medianAmps] : []));
-
-const summary = ({ levels, composition: told }: { levels: number[]; composition: CompositionOnWire }) => ({
-  days: levels.length,
-  medianAmps: median(levels) ?? null,
-  composition: told,
-});
-
-function shiftTest(before: number[], after: number[]): Comparison['phases'][number]['test'] {
-  const found = mannWhitney(before, after);
-  if (found?.limits === undefined) return null;
-  return { pTwoSided: found.pTwoSided, shiftAmps: { value: found.shift, ...found.limits } };
 }

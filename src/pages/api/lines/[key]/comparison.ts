@@ -2,7 +2,7 @@ import type { APIRoute } from 'astro';
 import { z } from 'zod';
 import { requireAbility } from '../../../../auth/guard';
 import { jsonAnswer, jsonProblem, parseSent } from '../../../../server/problems';
-import { readComparison } from '../../../../server/reading/composition';
+import { readComparison } from '../../../../server/reading/comparison';
 import { unknownLine } from '../../../../server/register-answer';
 
 const querySchema = z.object({ at: z.iso.date('Give a date, such as 2026-03-01.') });
