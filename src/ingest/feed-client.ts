@@ -26,6 +26,8 @@ export function connectFeed(
   { take, log }: { take: (delivery: Delivery) => Promise<void> | undefined; log: Log },
 ): FeedClient {
   let wanted: readonly string[] = [];
+  // the session outlives the connection: what was left while the broker was away is left when it is back
+  const leaving = new Set<string>();
   let away = false;
   const mqtt = connect(settings.BROKER_URL, clientOptions(settings));
   const { acknowledge } = deferAcknowledgements(mqtt, take);
@@ -40,10 +42,18 @@ export function connectFeed(
       else if (error === null) granted();
     });
   };
+  const leave = () => {
+    if (leaving.size === 0 || !mqtt.connected) return;
+    const topics = [...leaving];
+    mqtt.unsubscribe(topics, (error) => {
+      if (!error) for (const topic of topics) leaving.delete(topic);
+    });
+  };
   mqtt.on('connect', () => {
     mqtt.options.reconnectPeriod = INGEST_LIMITS.retryFirstMs;
     if (away) log('Broker: connected again.');
     away = false;
+    leave();
     subscribe(wanted);
   });
   mqtt.on('close', () => {
@@ -64,7 +74,9 @@ export function connectFeed(
       const gone = wanted.filter((topic) => !topics.includes(topic));
       const fresh = topics.filter((topic) => !wanted.includes(topic));
       wanted = topics;
-      if (gone.length > 0 && mqtt.connected) mqtt.unsubscribe(gone);
+      for (const topic of gone) leaving.add(topic);
+      for (const topic of fresh) leaving.delete(topic);
+      leave();
       subscribe(fresh);
     },
     close: () => mqtt.endAsync(),
