@@ -1,13 +1,14 @@
+import { setImmediate } from 'node:timers/promises';
 import type { PolygonOnWire } from '../contract/composition';
 import type { StandingVerdict } from '../contract/standing';
 import type { WarningCause } from '../contract/warning';
-import { perPhase, PHASES } from '../protection/phase';
+import { perPhase, PHASES, type PhaseName } from '../protection/phase';
 import type { Store } from '../store/client';
 import { replaceCreep } from '../store/levels';
 import { readVerdictsOfLine, type VerdictRow, writeVerdicts } from '../store/standing';
+import { STEP_WARNING } from '../warnings/limits';
 import { readLineHistory } from './line-history';
 import { lineSteps } from './line-steps';
-import { STEP_WARNING } from '../warnings/limits';
 import type { StandingFindings } from './line-watch';
 import { driftThatCounts } from './phase-drift';
 import { phaseVerdict } from './phase-verdict';
@@ -22,22 +23,23 @@ export async function renewFindings(
   const history = await readLineHistory(store, line.id, nowMs);
   const earlier = await readVerdictsOfLine(store, line.id);
   const steps = await lineSteps(store, line, { history, earlier });
-  const verdicts = perPhase((phase) =>
-    phaseVerdict(line, history, { phase, nearRatio, frequencyHz, step: steps[phase] }),
-  );
-  const creep = PHASES.flatMap((phase) => driftThatCounts(verdicts[phase]) ?? []);
+  const verdicts: StandingVerdict[] = [];
+  for (const phase of PHASES) {
+    verdicts.push(phaseVerdict(line, history, { phase, nearRatio, frequencyHz, step: steps[phase] }));
+    // a verdict is a tenth of a second of arithmetic: the feed has its turn between two
+    await setImmediate();
+  }
+  const creep = verdicts.flatMap((verdict) => driftThatCounts(verdict) ?? []);
   await writeVerdicts(
     store,
-    PHASES.map((phase) => verdictRow(line.id, verdicts[phase])),
+    verdicts.map((verdict) => verdictRow(line.id, verdict)),
   );
   await replaceCreep(store, line.id, { creep, computedAt: new Date(nowMs) });
+  const levelOf = (phase: PhaseName) => verdicts.find((verdict) => verdict.phase === phase)?.levelAmps;
   return {
-    levelAmps: perPhase((phase) => verdicts[phase].levelAmps ?? undefined),
+    levelAmps: perPhase((phase) => levelOf(phase) ?? undefined),
     creep,
-    step: stepThatCounts(
-      PHASES.map((phase) => verdicts[phase]),
-      nowMs,
-    ),
+    step: stepThatCounts(verdicts, nowMs),
   };
 }
 
