@@ -19,6 +19,8 @@ export interface ForecastPhase {
 export interface ForecastLine {
   readonly key: string;
   readonly name: string;
+  /** null when not recorded */
+  readonly owner: string | null;
   readonly voltageKv: number;
   readonly substations: LineSummary['substations'];
   readonly phases: readonly ForecastPhase[];

@@ -27,6 +27,7 @@ export const lineSummarySchema = resultSchema
     goesBy: goesBySchema,
     ratingAmps: z.number(),
     emergencyRatingAmps: z.number(),
+    owner: z.string().nullable(),
     seriesCompensated: z.boolean(),
     inZoneTransformer: inZoneTransformerSchema.nullable(),
     /** recorded pickup in force, amperes primary; null without settings */

@@ -16,6 +16,7 @@ export const marginFilterSchema = z.object({
   substation: keySchema.optional(),
   voltage: z.coerce.number('The voltage is a number.').positive('The voltage is above 0.').optional(),
   creep: z.enum(CREEP_FILTERS).optional(),
+  owner: z.string().trim().min(1).max(80, 'An owner’s name has at most 80 characters.').optional(),
 });
 export type MarginFilter = z.infer<typeof marginFilterSchema>;
 
@@ -54,4 +55,5 @@ export type MarginScatter = z.infer<typeof marginScatterSchema>;
 export interface FleetChoices {
   readonly substations: readonly { readonly key: string; readonly name: string }[];
   readonly voltagesKv: readonly number[];
+  readonly owners: readonly string[];
 }

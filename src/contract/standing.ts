@@ -107,6 +107,8 @@ export const marginRowSchema = standingVerdictSchema
   })
   .extend({
     lineName: z.string(),
+    /** null when not recorded */
+    owner: z.string().nullable(),
     voltageKv: z.number(),
     substations: z.array(z.object({ key: keySchema, name: z.string() })),
     utilisation: z.number().nullable(),

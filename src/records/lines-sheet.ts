@@ -15,6 +15,7 @@ const COLUMN_OF: Readonly<Record<string, string>> = {
   ...{ key: 'key', name: 'name', voltageKv: 'voltage_kv', ratingAmps: 'rating_a', lengthKm: 'length_km' },
   ...{ emergencyRatingAmps: 'emergency_rating_a', kind: 'kind', goesBy: 'goes_by' },
   ...{ capacitanceNfPerKm: 'capacitance_nf_per_km', leastInternalFaultAmps: 'least_internal_fault_a' },
+  owner: 'owner',
   ...{ inService: 'in_service', seriesCompensated: 'series_compensated' },
   'inZoneTransformer.otherVoltageKv': 'transformer_other_kv',
   'inZoneTransformer.clockNumber': 'transformer_clock_number',
@@ -30,6 +31,7 @@ export function lineCells(line: LineFacts): Cells {
     ...{ rating_a: amountCell(line.ratingAmps), emergency_rating_a: amountCell(line.emergencyRatingAmps) },
     capacitance_nf_per_km: amountCell(line.capacitanceNfPerKm),
     least_internal_fault_a: amountCell(line.leastInternalFaultAmps),
+    owner: guardedText(line.owner ?? ''),
     ...{ in_service: yesOrNo(line.inService), series_compensated: yesOrNo(line.seriesCompensated) },
     transformer_other_kv: amountCell(transformer?.otherVoltageKv),
     transformer_clock_number: amountCell(transformer?.clockNumber),
@@ -43,6 +45,7 @@ export function lineFromCells(cells: Cells, standing: RegisterLine | undefined):
   const cell = cellReader(cells);
   const value = {
     ...{ key: cell.text('key'), name: cell.text('name'), voltageKv: cell.figure('voltage_kv') },
+    owner: cells.owner === undefined ? (standing?.owner ?? null) : cell.text('owner') || null,
     ...{ ratingAmps: cell.figure('rating_a'), emergencyRatingAmps: cell.figure('emergency_rating_a') },
     ...{ lengthKm: cell.figure('length_km'), kind: cell.oneOf('kind', LINE_KINDS) },
     capacitanceNfPerKm: cell.amount('capacitance_nf_per_km') ?? null,

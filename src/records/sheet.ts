@@ -6,7 +6,7 @@ export const COLUMNS: Readonly<Record<ImportKind, readonly string[]>> = {
   lines: [
     ...['key', 'name', 'voltage_kv', 'rating_a', 'emergency_rating_a', 'length_km', 'kind'],
     ...['capacitance_nf_per_km', 'least_internal_fault_a', 'goes_by', 'in_service', 'series_compensated'],
-    ...['transformer_other_kv', 'transformer_clock_number'],
+    ...['owner', 'transformer_other_kv', 'transformer_clock_number'],
     ...['transformer_zero_sequence_line', 'transformer_zero_sequence_other'],
   ],
   terminals: [
@@ -22,6 +22,9 @@ export const COLUMNS: Readonly<Record<ImportKind, readonly string[]>> = {
 
 /** Exported for whoever reads the file; the register writes its own when a version is recorded. */
 const WRITTEN_ONLY: readonly string[] = ['recorded_by', 'recorded_at'];
+
+/** A file from before there was such a column leaves what it would hold as it is. */
+const MAY_BE_MISSING: readonly string[] = [...WRITTEN_ONLY, 'owner'];
 
 export type Cells = Readonly<Record<string, string>>;
 export interface SheetRow {
@@ -80,7 +83,7 @@ function kindOf(names: readonly string[]): ImportKind | null {
 }
 
 function headerProblems(names: readonly string[], columns: readonly string[]): RowProblem[] {
-  const missing = columns.filter((column) => !names.includes(column) && !WRITTEN_ONLY.includes(column));
+  const missing = columns.filter((column) => !names.includes(column) && !MAY_BE_MISSING.includes(column));
   const unknown = names.filter((name) => !columns.includes(name));
   const twice = names.filter((name, at) => names.indexOf(name) < at);
   const at = (field: string, problem: string) => ({ row: 1, field, problem });

@@ -30,6 +30,7 @@ export interface MarginKey {
 export interface StoredMargin extends MarginKey {
   readonly key: string;
   readonly lineName: string;
+  readonly owner: string | null;
   readonly voltageKv: number;
   readonly figures: Omit<typeof standingVerdict.$inferSelect, 'verdict'>;
   readonly verdict: StandingVerdict;
@@ -113,6 +114,7 @@ export async function readMargins(store: Store, keys: readonly MarginKey[]): Pro
       verdict: standingVerdict.verdict,
       key: line.key,
       name: line.name,
+      owner: line.owner,
       kv: line.voltageKv,
     })
     .from(standingVerdict)
@@ -122,8 +124,8 @@ export async function readMargins(store: Store, keys: readonly MarginKey[]): Pro
   return keys.flatMap(({ lineId, phase }) => {
     const row = found.get(`${lineId} ${phase}`);
     if (row === undefined) return [];
-    const { figures, verdict, key, name, kv } = row;
-    return [{ lineId, phase, key, lineName: name, voltageKv: kv, figures, verdict }];
+    const { figures, verdict, key, name, owner, kv } = row;
+    return [{ lineId, phase, key, lineName: name, owner, voltageKv: kv, figures, verdict }];
   });
 }
 
@@ -313,21 +315,32 @@ export async function readLineEnds(store: Store, lineIds: readonly number[]): Pr
 export async function readFleetChoices(store: Store): Promise<{
   substations: { key: string; name: string }[];
   voltagesKv: number[];
+  owners: string[];
 }> {
-  const [substations, voltages] = await Promise.all([
+  const [substations, voltages, owners] = await Promise.all([
     store.db.select().from(substation).orderBy(asc(substation.name)),
     store.db.selectDistinct({ kv: line.voltageKv }).from(line),
+    store.db
+      .selectDistinct({ owner: line.owner })
+      .from(line)
+      .where(isNotNull(line.owner))
+      .orderBy(asc(line.owner)),
   ]);
-  return { substations, voltagesKv: voltages.map(({ kv }) => kv).sort((one, other) => other - one) };
+  return {
+    substations,
+    owners: owners.flatMap(({ owner }) => owner ?? []),
+    voltagesKv: voltages.map(({ kv }) => kv).sort((one, other) => other - one),
+  };
 }
 
-function filtered({ text, substation: at, voltage, creep }: MarginFilter): SQL | undefined {
+function filtered({ text, substation: at, voltage, creep, owner }: MarginFilter): SQL | undefined {
   return and(
     ...text
       .split(/\s+/)
       .filter((word) => word !== '')
       .map(namesWord),
     at === undefined ? undefined : endsAt(sql`${terminal.substation} = ${at}`),
+    owner === undefined ? undefined : eq(line.owner, owner),
     voltage === undefined ? undefined : eq(line.voltageKv, voltage),
     creep === undefined
       ? undefined

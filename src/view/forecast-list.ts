@@ -82,9 +82,10 @@ const ORDERS: Readonly<Record<ForecastAddress['sort'], (one: ForecastRow, other:
   name: byName,
 };
 
-function fits({ line, phase }: ForecastRow, { text, substation, cause }: ForecastAddress): boolean {
+function fits({ line, phase }: ForecastRow, { text, substation, cause, owner }: ForecastAddress): boolean {
   if (substation !== undefined && !line.substations.some(({ key }) => key === substation)) return false;
   if (cause !== undefined && phase.verdict.likelyCause !== cause) return false;
+  if (owner !== undefined && line.owner !== owner) return false;
   const haystack = [line.name, line.key, ...line.substations.map(({ name }) => name)].join(' ').toLowerCase();
   return text
     .toLowerCase()
@@ -112,7 +113,7 @@ export interface ForecastGroup {
   readonly rows: readonly ForecastRow[];
 }
 
-/** One group without a name, or one a substation (a line stands under each of its ends), or one a cause. */
+/** One group without a name, or one a substation (a line stands under each of its ends), a cause or an owner. */
 export function forecastGroups(
   rows: readonly ForecastRow[],
   grouping: ForecastAddress['group'],
@@ -120,7 +121,7 @@ export function forecastGroups(
   if (grouping === 'none') return [{ key: '', name: '', rows }];
   const groups = new Map<string, { name: string; rows: ForecastRow[] }>();
   for (const row of rows)
-    for (const { key, name } of grouping === 'substation' ? row.line.substations : [causeGroup(row)]) {
+    for (const { key, name } of groupsOf(row, grouping)) {
       const group = groups.get(key) ?? { name, rows: [] };
       group.rows.push(row);
       groups.set(key, group);
@@ -129,6 +130,26 @@ export function forecastGroups(
     .map(([key, group]) => ({ key, ...group }))
     .sort((one, other) => one.name.localeCompare(other.name, 'en', { numeric: true }));
 }
+
+function groupsOf(
+  row: ForecastRow,
+  grouping: Exclude<ForecastAddress['group'], 'none'>,
+): readonly { readonly key: string; readonly name: string }[] {
+  switch (grouping) {
+    case 'substation':
+      return row.line.substations;
+    case 'cause':
+      return [causeGroup(row)];
+    case 'owner':
+      return [{ key: row.line.owner ?? '', name: row.line.owner ?? 'owner not recorded' }];
+  }
+}
+
+/** Owners of the lines listed, by name. */
+export const ownersOf = (lines: readonly ForecastLine[]): string[] =>
+  [...new Set(lines.flatMap(({ owner }) => owner ?? []))].sort((one, other) =>
+    one.localeCompare(other, 'en'),
+  );
 
 const causeGroup = ({ phase }: ForecastRow): { key: Cause; name: string } => ({
   key: phase.verdict.likelyCause,

@@ -1,6 +1,6 @@
 import { CAUSES, type Cause } from '../contract/standing';
 
-export const FORECAST_GROUPS = ['none', 'substation', 'cause'] as const;
+export const FORECAST_GROUPS = ['none', 'substation', 'cause', 'owner'] as const;
 export type ForecastGrouping = (typeof FORECAST_GROUPS)[number];
 export const FORECAST_SORTS = ['date', 'share', 'name'] as const;
 export type ForecastSort = (typeof FORECAST_SORTS)[number];
@@ -10,6 +10,7 @@ export interface ForecastAddress {
   readonly text: string;
   readonly substation: string | undefined;
   readonly cause: Cause | undefined;
+  readonly owner: string | undefined;
   readonly group: ForecastGrouping;
   readonly sort: ForecastSort;
 }
@@ -18,6 +19,7 @@ export const WHOLE_FORECAST: ForecastAddress = {
   text: '',
   substation: undefined,
   cause: undefined,
+  owner: undefined,
   group: 'none',
   sort: 'date',
 };
@@ -28,6 +30,7 @@ export function parseForecastAddress(search: string): ForecastAddress {
   return {
     text: given.get('text') ?? '',
     substation: given.get('substation') || undefined,
+    owner: given.get('owner') || undefined,
     cause: CAUSES.find((cause) => cause === given.get('cause')),
     group: FORECAST_GROUPS.find((group) => group === given.get('group')) ?? 'none',
     sort: FORECAST_SORTS.find((sort) => sort === given.get('sort')) ?? 'date',
@@ -40,11 +43,12 @@ export function forecastSearch(address: ForecastAddress): string {
   if (address.text.trim() !== '') chosen.set('text', address.text);
   if (address.substation !== undefined) chosen.set('substation', address.substation);
   if (address.cause !== undefined) chosen.set('cause', address.cause);
+  if (address.owner !== undefined) chosen.set('owner', address.owner);
   if (address.group !== 'none') chosen.set('group', address.group);
   if (address.sort !== 'date') chosen.set('sort', address.sort);
   const search = chosen.toString();
   return search === '' ? '' : `?${search}`;
 }
 
-export const isForecastNarrowed = ({ text, substation, cause }: ForecastAddress): boolean =>
-  text.trim() !== '' || substation !== undefined || cause !== undefined;
+export const isForecastNarrowed = ({ text, substation, cause, owner }: ForecastAddress): boolean =>
+  text.trim() !== '' || substation !== undefined || cause !== undefined || owner !== undefined;

@@ -19,6 +19,7 @@ export function lineFacts(
   },
 ): string[] {
   const facts = [kilovoltsText(line.voltageKv), buildWords(line), terminalsWords(terminalCount)];
+  if (line.owner !== null) facts.push(`of ${line.owner}`);
   if (line.seriesCompensated) facts.push('series-compensated');
   if (line.inZoneTransformer !== null) {
     facts.push(`transformer in the zone to ${kilovoltsText(line.inZoneTransformer.otherVoltageKv)}`);

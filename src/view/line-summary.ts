@@ -43,6 +43,7 @@ export function lineSummary(line: RegisterLine, known: LineKnowledge): LineSumma
     goesBy: line.goesBy,
     ratingAmps: line.ratingAmps,
     emergencyRatingAmps: line.emergencyRatingAmps,
+    owner: line.owner,
     seriesCompensated: line.seriesCompensated,
     inZoneTransformer: line.inZoneTransformer,
     ...standing(line, known),

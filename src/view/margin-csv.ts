@@ -4,7 +4,7 @@ import { MARGIN_COLUMN, type MarginColumn } from './margin-columns';
 import type { PhaseLetters } from './site-custom';
 
 /** What every saved row begins with, and the cause that ends it. */
-const OWN = ['line', 'key', 'phase', 'voltage (kV)'];
+const OWN = ['line', 'key', 'phase', 'voltage (kV)', 'owner'];
 const LAST = ['likely cause', 'computed at (UTC)'];
 
 export const marginCsvHead = (columns: readonly MarginColumn[]): string =>
@@ -29,6 +29,7 @@ export function marginCsvRows(
     row.line,
     letters[row.phase],
     row.voltageKv,
+    row.owner,
     ...columns.map((column) => MARGIN_COLUMN[column].saved(row)),
     row.likelyCause,
     row.computedAt,

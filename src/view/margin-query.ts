@@ -8,6 +8,7 @@ export interface MarginAddress {
   readonly substation: string | undefined;
   readonly voltageKv: number | undefined;
   readonly creep: CreepFilter | undefined;
+  readonly owner: string | undefined;
   readonly sort: MarginSort;
   readonly descending: boolean;
   readonly columns: readonly MarginColumn[];
@@ -20,6 +21,7 @@ export const WHOLE_FLEET: MarginAddress = {
   substation: undefined,
   voltageKv: undefined,
   creep: undefined,
+  owner: undefined,
   sort: 'shareOfPickup',
   descending: true,
   columns: MARGIN_COLUMNS,
@@ -40,6 +42,7 @@ export function parseMarginAddress(search: string): MarginAddress {
     substation: /^[a-z0-9-]{1,40}$/.test(substation) ? substation : undefined,
     voltageKv: Number.isFinite(voltageKv) && voltageKv > 0 ? voltageKv : undefined,
     creep: CREEP_FILTERS.find((one) => one === given.get('creep')),
+    owner: given.get('owner')?.trim().slice(0, TEXT_MOST) || undefined,
     sort,
     descending:
       descending === 'true' || descending === 'false' ? descending === 'true' : isUsuallyDescending(sort),
@@ -55,6 +58,7 @@ export function marginFilterParameters(address: MarginAddress): URLSearchParams 
   if (address.substation !== undefined) chosen.set('substation', address.substation);
   if (address.voltageKv !== undefined) chosen.set('voltage', `${address.voltageKv}`);
   if (address.creep !== undefined) chosen.set('creep', address.creep);
+  if (address.owner !== undefined) chosen.set('owner', address.owner);
   return chosen;
 }
 
@@ -82,6 +86,7 @@ export const marginQueryOf = ({
   substation,
   voltageKv,
   creep,
+  owner,
   sort,
   descending,
 }: MarginAddress): MarginQuery => ({
@@ -89,6 +94,7 @@ export const marginQueryOf = ({
   ...(substation === undefined ? {} : { substation }),
   ...(voltageKv === undefined ? {} : { voltage: voltageKv }),
   ...(creep === undefined ? {} : { creep }),
+  ...(owner === undefined ? {} : { owner }),
   sort,
   descending,
   after: 0,

@@ -9,6 +9,7 @@ import { behindField, type Typed } from './register-typed';
 export function lineTyped(line: RegisterLine): Typed {
   return {
     name: line.name,
+    owner: line.owner ?? '',
     voltageKv: String(line.voltageKv),
     lengthKm: String(line.lengthKm),
     ratingAmps: String(line.ratingAmps),

@@ -50,6 +50,7 @@ export function lineFromTyped(typed: Typed): FromTyped {
   return {
     value: {
       name: typed.name ?? '',
+      owner: (typed.owner ?? '').trim() || null,
       ...Object.fromEntries(Object.keys(LINE_AMOUNTS).map((field) => [field, amount(typed[field])])),
       kind: typed.kind,
       ...Object.fromEntries(Object.keys(CONSTANTS).map((field) => [field, amount(typed[field]) ?? null])),

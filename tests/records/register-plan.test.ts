@@ -124,6 +124,24 @@ describe('a file is recognised by its header', () => {
   });
 });
 
+describe('the owner of a line', () => {
+  it('comes with its row, and an empty cell takes it away', () => {
+    const owned = [{ ...register[0]!, owner: 'Pellwater' }];
+    const given = registerPlan(file('lines', { owner: 'Tarnside, Ltd.' }), owned);
+    expect(given.changes).toMatchObject([{ kind: 'line', patch: { owner: 'Tarnside, Ltd.' } }]);
+    const taken = registerPlan(file('lines', { owner: '' }), owned);
+    expect(taken.changes).toMatchObject([{ kind: 'line', patch: { owner: null } }]);
+  });
+
+  it('stays as it is by a file from before there was such a column', () => {
+    const owned = [{ ...register[0]!, owner: 'Pellwater' }];
+    const at = COLUMNS.lines.indexOf('owner');
+    const read = parseCsv(registerFile('lines', owned));
+    const old = (read.ok ? read.records : []).map((record) => record.toSpliced(at, 1).join(';')).join('\n');
+    expect(registerPlan(`${old}\n`, owned)).toMatchObject({ problems: [], changes: [] });
+  });
+});
+
 describe('a row of lines', () => {
   it('adds, changes or leaves, and says which columns it changes', () => {
     const plan = registerPlan(file('lines', { key: 'new-line' }, { length_km: '43' }), register);

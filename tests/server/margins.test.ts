@@ -7,7 +7,7 @@ import { GET as getScatter } from '../../src/pages/api/margins/scatter';
 import type { Site } from '../../src/server/site';
 import { readMarginList } from '../../src/server/reading/margins';
 import { testStore } from '../database';
-import { madeUpLineOf, storedFleet } from '../store/made-up-fleet';
+import { madeUpLineOf, ownerAt, storedFleet } from '../store/made-up-fleet';
 import type { APIContext } from 'astro';
 import type { Role } from '../../src/contract/role';
 
@@ -168,6 +168,15 @@ describe('the filters', () => {
     expect(counts.reduce((sum, count) => sum + count)).toBe(ROWS);
   });
 
+  it('narrow by owner', async () => {
+    const owner = ownerAt(380)!;
+    const found = await everyRow(`owner=${encodeURIComponent(owner)}`);
+    expect(found.length).toBe((await list('?voltage=380')).total);
+    expect(new Set(found.map((row) => row.owner))).toEqual(new Set([owner]));
+    expect((await everyRow('voltage=110')).every((row) => row.owner === null)).toBe(true);
+    expect((await list('?owner=Nobody')).total).toBe(0);
+  });
+
   it('are refused with the field named when they cannot be taken', async () => {
     const answer = await called(getMargins, '?sort=colour&voltage=high&creep=perhaps&after=-1');
     expect(answer.status).toBe(400);
@@ -197,10 +206,10 @@ describe('the saved file', () => {
     expect(answer.headers.get('content-disposition')).toMatch(/filename="margins-2026-03-02\.csv"/);
     const lines = (await answer.text()).trimEnd().split('\r\n');
     expect(lines[0]).toBe(
-      'line,key,phase,voltage (kV),standing level (A),"near mark, likely (day)",likely cause,computed at (UTC)',
+      'line,key,phase,voltage (kV),owner,standing level (A),"near mark, likely (day)",likely cause,computed at (UTC)',
     );
     expect(lines.length - 1).toBe((await list('?substation=garth')).total);
-    const levels = lines.slice(1).map((one) => Number(one.split(',')[4]));
+    const levels = lines.slice(1).map((one) => Number(one.split(',')[5]));
     expect(levels).toEqual(levels.toSorted((one, other) => other - one));
     expect(lines[1]).toMatch(/,L[123],/);
   });
@@ -225,7 +234,7 @@ describe(`with ${MANY_LINES} lines of three phases`, () => {
   const QUESTIONS: readonly (readonly [string, typeof getMargins, string])[] = [
     ...MARGIN_SORTS.map((sort) => [`list by ${sort}`, getMargins, `?sort=${sort}`] as const),
     ['list, last page', getMargins, `?sort=levelAmps&after=${3 * MANY_LINES - 50}`],
-    ['list, filtered', getMargins, '?text=esk&substation=holm&voltage=220&creep=none'],
+    ['list, filtered', getMargins, '?text=esk&substation=holm&voltage=220&creep=none&owner=Holm+Networks'],
     ['scatter', getScatter, ''],
   ];
 

@@ -19,6 +19,10 @@ function fraction(seed: number): number {
   return turned - Math.floor(turned);
 }
 
+/** The lower voltage’s owner is not recorded. */
+export const ownerAt = (voltageKv: number): string | null =>
+  voltageKv === 110 ? null : voltageKv === 220 ? 'Holm Networks' : 'Garth & Kell Transmission';
+
 const keyOf = (place: string): string => place.toLowerCase().replaceAll(' ', '-');
 const dayAfter = (days: number): string =>
   new Date(Date.parse(FLEET_AT) + days * 86_400_000).toISOString().slice(0, 10);
@@ -200,6 +204,7 @@ export async function storedFleet(store: Store, lineCount: number): Promise<Map<
       some.map(({ key, name, voltageKv }) => ({
         key,
         name,
+        owner: ownerAt(voltageKv),
         voltageKv,
         ratingAmps: 800,
         emergencyRatingAmps: 960,

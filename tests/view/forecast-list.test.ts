@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { ForecastLine } from '../../src/contract/forecast-list';
 import type { StandingVerdict } from '../../src/contract/standing';
 import { forecastAxis, forecastRange } from '../../src/view/forecast-axis';
-import { forecastGroups, forecastRow, forecastSections } from '../../src/view/forecast-list';
+import { forecastGroups, forecastRow, forecastSections, ownersOf } from '../../src/view/forecast-list';
 import { forecastSearch, parseForecastAddress, WHOLE_FORECAST } from '../../src/view/forecast-query';
 import { forecastSentence, phaseWords, unlistedWords } from '../../src/view/forecast-words';
 import { madeUpVerdict } from '../store/made-up-fleet';
@@ -59,9 +59,11 @@ const lineOf = (
   key: string,
   verdicts: readonly StandingVerdict[],
   substations = SUBSTATIONS,
+  owner: string | null = null,
 ): ForecastLine => ({
   key,
   name: key,
+  owner,
   voltageKv: 110,
   substations,
   phases: verdicts.map((verdict) => ({
@@ -125,6 +127,24 @@ describe('where a line stands', () => {
       'ratio mismatch',
     ]);
     expect(forecastGroups(rows, 'none')).toHaveLength(1);
+  });
+
+  it('groups and filters by owner, and says so where none is recorded', () => {
+    const lines = [
+      lineOf('one', [verdictWith()], SUBSTATIONS, 'Tarnside'),
+      lineOf('two', [verdictWith()], SUBSTATIONS, 'Pellwater'),
+      lineOf('three', [verdictWith()]),
+      lineOf('four', [verdictWith()], SUBSTATIONS, 'Tarnside'),
+    ];
+    const rows = lines.map(rowOf);
+    expect(forecastGroups(rows, 'owner').map(({ name, rows: own }) => [name, own.length])).toEqual([
+      ['owner not recorded', 1],
+      ['Pellwater', 1],
+      ['Tarnside', 2],
+    ]);
+    expect(ownersOf(lines)).toEqual(['Pellwater', 'Tarnside']);
+    const { coming } = forecastSections(rows, { ...WHOLE_FORECAST, owner: 'Tarnside' });
+    expect(coming.map(({ line }) => line.key)).toEqual(['four', 'one']);
   });
 });
 
@@ -202,11 +222,12 @@ describe('the address of the forecast', () => {
       text: 'esk',
       substation: 'holm',
       cause: 'charging',
-      group: 'cause',
+      owner: 'Pell Water & Sons',
+      group: 'owner',
       sort: 'name',
     } as const;
     expect(parseForecastAddress(forecastSearch(address))).toEqual(address);
     expect(forecastSearch(WHOLE_FORECAST)).toBe('');
-    expect(parseForecastAddress('?cause=weather&group=owner&sort=colour')).toEqual(WHOLE_FORECAST);
+    expect(parseForecastAddress('?cause=weather&group=weather&owner=&sort=colour')).toEqual(WHOLE_FORECAST);
   });
 });

@@ -18,6 +18,7 @@ const NARROWED: MarginAddress = {
   substation: 'holm',
   voltageKv: 220,
   creep: 'within margin',
+  owner: 'Pell Water & Sons',
   sort: 'nearLikely',
   descending: true,
   columns: ['level', 'forecast'],
@@ -37,7 +38,7 @@ describe('the address of the margins', () => {
 
   it('takes what it does not understand as not chosen', () => {
     const strange =
-      '?sort=colour&descending=perhaps&voltage=-3&creep=x&substation=A%20B&columns=none&points=x';
+      '?sort=colour&descending=perhaps&voltage=-3&creep=x&owner=%20&substation=A%20B&columns=none&points=x';
     expect(parseMarginAddress(strange)).toEqual(WHOLE_FLEET);
   });
 

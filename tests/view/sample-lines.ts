@@ -39,6 +39,7 @@ export function lineWith(change: Partial<LineSummary> = {}): LineSummary {
     goesBy: 'phasors',
     ratingAmps: 800,
     emergencyRatingAmps: 960,
+    owner: null,
     seriesCompensated: false,
     inZoneTransformer: null,
     pickupAmps: 60,

@@ -14,6 +14,7 @@ import type { ForecastAddressState } from './use-forecast-address';
 interface ForecastFiltersProps {
   state: ForecastAddressState;
   substations: readonly { readonly key: string; readonly name: string }[];
+  owners: readonly string[];
 }
 
 const SORT_WORDS: Readonly<Record<ForecastAddress['sort'], string>> = {
@@ -25,10 +26,15 @@ const GROUP_WORDS: Readonly<Record<ForecastAddress['group'], string>> = {
   none: 'nothing',
   substation: 'substation',
   cause: 'likely cause',
+  owner: 'owner',
 };
 
 /** Filters, order and grouping. Without a script it is a form that asks the server. */
-export function ForecastFilters({ state: { address, choose, type }, substations }: ForecastFiltersProps) {
+export function ForecastFilters({
+  state: { address, choose, type },
+  substations,
+  owners,
+}: ForecastFiltersProps) {
   return (
     <form method="get" role="search" className="mt-4 flex flex-wrap items-end gap-x-4 gap-y-2">
       <label className="grid gap-0.5 text-caption text-ink-2 max-sm:w-full">
@@ -55,6 +61,15 @@ export function ForecastFilters({ state: { address, choose, type }, substations 
         options={[['', 'all'], ...CAUSES.map((cause) => [cause, shortCauseName(cause)] as const)]}
         onChoose={(value) => choose({ cause: CAUSES.find((cause) => cause === value) })}
       />
+      {owners.length > 0 && (
+        <Select
+          label="Owner"
+          name="owner"
+          value={address.owner ?? ''}
+          options={[['', 'all'], ...owners.map((owner) => [owner, owner] as const)]}
+          onChoose={(value) => choose({ owner: value || undefined })}
+        />
+      )}
       <Select
         label="Sort by"
         name="sort"

@@ -1,7 +1,7 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import type { ForecastList } from '../../contract/forecast-list';
-import { forecastRow, forecastSections, type ForecastRow } from '../../view/forecast-list';
+import { forecastRow, forecastSections, ownersOf, type ForecastRow } from '../../view/forecast-list';
 import { isForecastNarrowed, WHOLE_FORECAST } from '../../view/forecast-query';
 import { forecastSentence, unlistedWords } from '../../view/forecast-words';
 import { capital } from '../../view/margin-sentence';
@@ -51,7 +51,9 @@ function Forecast({ list, site, search, mayKeep }: ForecastPageProps) {
       <p role="alert" className="field-problem mt-2 empty:hidden">
         {followUps.problem}
       </p>
-      {rows.length > 0 && <ForecastFilters state={state} substations={endsOf(rows)} />}
+      {rows.length > 0 && (
+        <ForecastFilters state={state} substations={endsOf(rows)} owners={ownersOf(list.lines)} />
+      )}
       {rows.length > 0 && shown === 0 && isForecastNarrowed(state.address) && (
         <p className="mt-8">
           No line fits these filters.{' '}

@@ -92,6 +92,15 @@ function Selects({ state: { address, choose }, choices }: Omit<MarginFiltersProp
         options={[['', 'all'], ...choices.voltagesKv.map((kv) => [`${kv}`, kilovoltsText(kv)] as const)]}
         onChoose={(value) => choose({ voltageKv: value === '' ? undefined : Number(value) })}
       />
+      {choices.owners.length > 0 && (
+        <Select
+          label="Owner"
+          name="owner"
+          value={address.owner ?? ''}
+          options={[['', 'all'], ...choices.owners.map((owner) => [owner, owner] as const)]}
+          onChoose={(value) => choose({ owner: value || undefined })}
+        />
+      )}
       <Select
         label="Drift"
         name="creep"

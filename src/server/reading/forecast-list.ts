@@ -36,6 +36,7 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
   const lines = [...groupedBy(margins, ({ lineId }) => lineId)].map(([lineId, own]): ForecastLine => ({
     key: own[0]!.key,
     name: own[0]!.lineName,
+    owner: own[0]!.owner,
     voltageKv: own[0]!.voltageKv,
     substations: [...(ends.get(lineId) ?? [])],
     phases: own.map(({ phase, verdict, figures }) => ({

@@ -104,12 +104,14 @@ function marginRow(row: StoredMargin, ends: LineEnds, { live, now }: Site): Marg
     compositionBefore: _before,
     creep: _creep,
     creepAtReference: _atReference,
+    marks: _marks,
     ...rest
   } = verdict;
   return {
     ...rest,
     line: row.key,
     lineName: row.lineName,
+    owner: row.owner,
     voltageKv: row.voltageKv,
     substations: [...(ends.get(row.lineId) ?? [])],
     utilisation: liveUtilisation(live.results().get(row.key), row.phase, now()),
