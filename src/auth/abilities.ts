@@ -12,6 +12,7 @@ const HOLDERS = {
   'see margins': ['engineer', 'planner', 'admin'],
   'see forecast': ['planner', 'engineer'],
   'keep follow-ups': ['planner', 'engineer'],
+  'record work': ['planner', 'engineer'],
   'see feeds': ['admin'],
 } as const satisfies Readonly<Record<string, readonly Role[]>>;
 

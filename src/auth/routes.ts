@@ -43,6 +43,8 @@ const RULES: readonly RouteRule[] = [
   { under: '/api/margins', methods: READ, need: 'see margins' },
   { under: '/api/follow-ups', methods: READ, need: 'see forecast' },
   { under: '/api/follow-ups', methods: ['POST'], need: 'keep follow-ups' },
+  { under: '/api/works', methods: READ, need: 'see lines' },
+  { under: '/api/works', methods: ['POST'], need: 'record work' },
   { under: '/api/feed', methods: READ, need: 'see feeds' },
   { under: '/api/register', methods: READ, need: 'see the register' },
   { under: '/api/register', methods: ['POST', 'PATCH', 'DELETE'], need: 'edit the register' },

@@ -20,6 +20,12 @@ export const newWorkSchema = z.object({
 });
 export type NewWork = z.output<typeof newWorkSchema>;
 
+/** POST /api/follow-ups/<id>/done: with what was done, where it may have moved the standing level. */
+export const followUpDoneSchema = z.object({
+  work: newWorkSchema.omit({ line: true, followUp: true }).nullable().default(null),
+});
+export type FollowUpDone = z.output<typeof followUpDoneSchema>;
+
 export const workSchema = z.object({
   id: z.int(),
   line: keySchema,
@@ -35,5 +41,6 @@ export const workSchema = z.object({
 });
 export type Work = z.infer<typeof workSchema>;
 
-/** GET /api/works?line= */
+/** The query and the answer of GET /api/works. */
+export const worksQuerySchema = z.object({ line: keySchema.optional() });
 export const workListSchema = z.object({ works: z.array(workSchema) });

@@ -3,6 +3,7 @@ import type { PhaseName } from '../protection/phase';
 import type { DailyLevel } from '../standing/creep';
 import type { Store } from '../store/client';
 import { type LevelRow, readLevels } from '../store/levels';
+import { readWorksOfLine } from '../store/works';
 import { RUNG_MS, rungStart } from './rung';
 
 const DAY_MS = RUNG_MS.day;
@@ -23,7 +24,7 @@ export interface LineHistory {
 
 export async function readLineHistory(store: Store, lineId: number, nowMs: number): Promise<LineHistory> {
   const lineIds = [lineId];
-  const [hours, days] = await Promise.all([
+  const [hours, days, works] = await Promise.all([
     readLevels(store, 'hour', {
       lineIds,
       from: new Date(rungStart('hour', nowMs) - HISTORY_DAYS.step * DAY_MS),
@@ -34,8 +35,9 @@ export async function readLineHistory(store: Store, lineId: number, nowMs: numbe
       from: new Date(rungStart('day', nowMs) - HISTORY_DAYS.drift * DAY_MS),
       to: new Date(rungStart('day', nowMs)),
     }),
+    readWorksOfLine(store, lineId),
   ]);
-  return { nowMs, hours, days, works: [] };
+  return { nowMs, hours, days, works };
 }
 
 export const rowsOf = (rows: readonly LevelRow[], phase: PhaseName): LevelRow[] =>

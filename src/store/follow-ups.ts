@@ -2,10 +2,12 @@ import { and, asc, desc, eq, isNotNull, isNull, sql, type SQL } from 'drizzle-or
 import type { z } from 'zod';
 import type { FollowUpQuery } from '../contract/follow-ups';
 import type { FollowUp, newFollowUpSchema } from '../contract/standing';
+import type { FollowUpDone } from '../contract/works';
 import { insertAuditEntry } from './audit';
-import type { Store } from './client';
+import { inTransaction, type Store } from './client';
 import { line } from './schema/register';
 import { followUp } from './schema/standing';
+import { insertWorkWithin, type WorkRefusal } from './works';
 
 const FOLLOW_UPS_MOST = 500;
 
@@ -39,20 +41,47 @@ export async function insertFollowUp(
   return kept;
 }
 
-/** Ends a follow-up once: a second call says that it did nothing. */
+/** Ends a follow-up once, with the work that was done where there is any: both or neither. */
 export async function endFollowUp(
   store: Store,
   id: number,
+  { work, ...keeping }: Keeping & FollowUpDone,
+): Promise<'done' | 'already done' | 'unknown' | WorkRefusal> {
+  try {
+    return await inTransaction(store, async (_connection, db) => {
+      const within = { ...store, db };
+      const outcome = await endFollowUpWithin(within, id, keeping);
+      if (outcome.kind !== 'done' || work === null) return outcome.kind;
+      const recorded = await insertWorkWithin(within, { ...work, line: outcome.line, followUp: id }, keeping);
+      if (!recorded.ok) throw new RefusedWork(recorded);
+      return 'done';
+    });
+  } catch (error) {
+    if (error instanceof RefusedWork) return error.refusal;
+    throw error;
+  }
+}
+
+/** Takes back all that its transaction has done. */
+class RefusedWork extends Error {
+  constructor(readonly refusal: WorkRefusal) {
+    super(refusal.problem);
+  }
+}
+
+async function endFollowUpWithin(
+  store: Store,
+  id: number,
   { by, nowMs }: Keeping,
-): Promise<'done' | 'already done' | 'unknown'> {
+): Promise<{ kind: 'done'; line: string } | { kind: 'already done' | 'unknown' }> {
   const at = new Date(nowMs);
   const [result] = await store.db
     .update(followUp)
     .set({ doneAt: at })
     .where(and(eq(followUp.id, id), isNull(followUp.doneAt)));
   const kept = await readFollowUp(store, id);
-  if (kept === undefined) return 'unknown';
-  if (result.affectedRows === 0) return 'already done';
+  if (kept === undefined) return { kind: 'unknown' };
+  if (result.affectedRows === 0) return { kind: 'already done' };
   await insertAuditEntry(store, {
     at,
     person: by,
@@ -60,7 +89,7 @@ export async function endFollowUp(
     subject: kept.line,
     detail: { followUp: id },
   });
-  return 'done';
+  return { kind: 'done', line: kept.line };
 }
 
 export async function readFollowUp(store: Store, id: number): Promise<FollowUp | undefined> {

@@ -1,6 +1,6 @@
 import type { CompositionOnWire } from '../contract/composition';
 import type { SettingsVersion } from '../contract/settings-version';
-import type { Comparison, StandingVerdict } from '../contract/standing';
+import type { Comparison, StandingMark, StandingVerdict } from '../contract/standing';
 import { causeAmps } from './composition-polygon';
 import type { PolygonCause } from './composition-polygon';
 import { intervalText } from './composition-words';
@@ -28,13 +28,19 @@ export function comparedDate(value: string | null): ComparedDate {
 export const comparedDay = (instant: string, timeZone: string): string =>
   wallTimeTyped(instant, timeZone).slice(0, 10);
 
+/** Marks of a verdict that stand nowhere else on the page. */
+const MARKED: Readonly<Partial<Record<StandingMark['kind'], string>>> = {
+  'channel path changed': 'the channel’s path changed',
+  'terminals changed': 'terminals changed',
+};
+
 /** A date that something is known of, worth comparing across. */
 export interface KnownChange {
   readonly day: string;
   readonly words: string;
 }
 
-/** Changes of the recorded settings and steps of a level, newest first; the first version changed nothing. */
+/** Changes that are known of, newest first; the first version changed nothing, and recorded works stand by themselves. */
 export function knownChanges(
   settings: readonly SettingsVersion[],
   standing: readonly StandingVerdict[],
@@ -49,9 +55,18 @@ export function knownChanges(
   const steps = standing.flatMap(({ phase, step }) =>
     step === null ? [] : [{ instant: step.at, words: `phase ${phaseLetters[phase]} stepped` }],
   );
-  return [...changes, ...steps]
-    .sort((one, other) => Date.parse(other.instant) - Date.parse(one.instant))
-    .map(({ instant, words }) => ({ day: comparedDay(instant, timeZone), words }));
+  const dated = [...changes, ...steps].map(({ instant, words }) => ({
+    day: comparedDay(instant, timeZone),
+    words,
+  }));
+  const marks = standing
+    .flatMap(({ marks: own }) => own)
+    .flatMap(({ on, kind }) => {
+      const words = MARKED[kind];
+      return words === undefined ? [] : [{ day: on, words }];
+    });
+  const all = [...dated, ...marks].sort((one, other) => other.day.localeCompare(one.day));
+  return [...new Map(all.map((change) => [`${change.day} ${change.words}`, change])).values()];
 }
 
 export const dayText = (day: string): string => dateText(`${day}T12:00:00Z`, 'UTC');

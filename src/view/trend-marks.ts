@@ -1,12 +1,12 @@
 import type { SettingsVersion } from '../contract/settings-version';
-import type { StepOnWire } from '../contract/standing';
+import type { StandingMark, StepOnWire } from '../contract/standing';
 import { placedLabels } from './scale-labels';
 import type { LabelAnchor } from './scale-labels';
 import type { TrendWindow } from './trend-span';
 
 /** An instant at which something is known to have changed, marked on the trend. */
 export interface TrendMark {
-  readonly kind: 'step' | 'settings';
+  readonly kind: 'step' | 'settings' | 'mark';
   readonly atMs: number;
   readonly words: string;
 }
@@ -17,14 +17,26 @@ export interface PlacedMark extends TrendMark {
   readonly row: number;
 }
 
-/** Steps, and every change of the recorded settings, inside the window. The first version changes nothing. */
+/** Words of the marks that neither the steps nor the settings bring along. */
+const MARK_WORDS: Readonly<Partial<Record<StandingMark['kind'], string>>> = {
+  'work recorded': 'work',
+  'channel path changed': 'channel path',
+  'terminals changed': 'terminals',
+};
+
+/**
+ * Steps, every change of the recorded settings, and the other marks that part the history, inside the window. The first
+ * version changes nothing; a mark that several phases have stands once.
+ */
 export function trendMarks(
   {
     steps,
     settings,
+    others,
   }: {
     steps: readonly { readonly step: StepOnWire; readonly words: string }[];
     settings: readonly SettingsVersion[];
+    others: readonly StandingMark[];
   },
   { fromMs, toMs }: TrendWindow,
 ): TrendMark[] {
@@ -35,8 +47,16 @@ export function trendMarks(
   const marks: TrendMark[] = [
     ...steps.map(({ step, words }) => ({ kind: 'step' as const, atMs: Date.parse(step.at), words })),
     ...changes.map((atMs) => ({ kind: 'settings' as const, atMs, words: 'settings' })),
+    ...otherMarks(others),
   ];
   return marks.filter(({ atMs }) => atMs >= fromMs && atMs <= toMs);
+}
+
+function otherMarks(others: readonly StandingMark[]): TrendMark[] {
+  const byDay = new Map(others.map(({ on, kind }) => [`${on} ${kind}`, { on, words: MARK_WORDS[kind] }]));
+  return [...byDay.values()].flatMap(({ on, words }) =>
+    words === undefined ? [] : [{ kind: 'mark' as const, atMs: Date.parse(`${on}T12:00:00Z`), words }],
+  );
 }
 
 /** The marks with their words in as few rows as keep them apart, at this width of the plot and any greater one. */

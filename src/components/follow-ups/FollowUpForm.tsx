@@ -1,6 +1,7 @@
 import { useId, useState, type FormEvent } from 'react';
 import { CAUSES, newFollowUpSchema, type Cause, type FollowUp } from '../../contract/standing';
 import { RequestRefused } from '../shell/api-request';
+import { FieldProblem } from '../shell/FieldProblem';
 import type { NewFollowUp } from './use-follow-ups';
 
 interface FollowUpFormProps {
@@ -65,7 +66,7 @@ export function FollowUpForm({ line, phase, cause: likely, today, onSend, onClos
         onChange={(event) => setNote(event.target.value)}
         className="field -mt-1.5 w-full py-1"
       />
-      <Problem id={`${id}-note-problem`} words={problems.note} />
+      <FieldProblem id={`${id}-note-problem`} words={problems.note} />
       <div className="flex flex-wrap gap-x-4 gap-y-2">
         <label className="grid gap-0.5 text-caption text-ink-2">
           Cause
@@ -94,8 +95,8 @@ export function FollowUpForm({ line, phase, cause: likely, today, onSend, onClos
           />
         </label>
       </div>
-      <Problem id={`${id}-due-problem`} words={problems.due} />
-      <Problem id={`${id}-problem`} words={problems.whole} />
+      <FieldProblem id={`${id}-due-problem`} words={problems.due} />
+      <FieldProblem id={`${id}-problem`} words={problems.whole} />
       <div className="flex gap-2">
         <button type="submit" disabled={sending} className="button button-first">
           {sending ? 'Sending…' : 'Open the follow-up'}
@@ -105,14 +106,6 @@ export function FollowUpForm({ line, phase, cause: likely, today, onSend, onClos
         </button>
       </div>
     </form>
-  );
-}
-
-function Problem({ id, words }: { id: string; words: string | undefined }) {
-  return (
-    <p id={id} role="alert" className="field-problem text-caption empty:hidden">
-      {words}
-    </p>
   );
 }
 

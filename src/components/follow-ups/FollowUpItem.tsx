@@ -1,24 +1,22 @@
 import { useState } from 'react';
 import type { FollowUp } from '../../contract/standing';
+import type { FollowUpDone } from '../../contract/works';
 import { dueWords, isOverdue, openedWords } from '../../view/follow-up-words';
+import { comparedDay } from '../../view/line-comparison';
 import type { SiteCustom } from '../../view/site-custom';
+import { EndForm } from './EndForm';
 
 interface FollowUpItemProps {
   followUp: FollowUp;
   site: SiteCustom;
   nowMs: number;
   /** undefined for whoever may not */
-  onDone: ((followUp: FollowUp) => Promise<void>) | undefined;
+  onDone: ((followUp: FollowUp, done: FollowUpDone) => Promise<void>) | undefined;
 }
 
 /** One follow-up: what is to be done, until when, who asked for it, and the way to end it. */
 export function FollowUpItem({ followUp, site, nowMs, onDone }: FollowUpItemProps) {
-  const [sending, setSending] = useState(false);
-  const end = async () => {
-    setSending(true);
-    await onDone?.(followUp);
-    setSending(false);
-  };
+  const [ending, setEnding] = useState(false);
   return (
     <div
       className="flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1"
@@ -31,16 +29,23 @@ export function FollowUpItem({ followUp, site, nowMs, onDone }: FollowUpItemProp
         </span>
         <span className="block text-caption text-ink-2">{openedWords(followUp, nowMs, site)}</span>
       </p>
-      {onDone !== undefined && (
+      {onDone !== undefined && !ending && (
         <button
           type="button"
           className="button"
-          disabled={sending}
-          onClick={() => void end()}
+          onClick={() => setEnding(true)}
           aria-label={`Done: ${followUp.note}, ${followUp.lineName}`}
         >
           Done
         </button>
+      )}
+      {onDone !== undefined && ending && (
+        <EndForm
+          followUp={followUp}
+          today={comparedDay(new Date(nowMs).toISOString(), site.timeZone)}
+          onEnd={onDone}
+          onClose={() => setEnding(false)}
+        />
       )}
     </div>
   );

@@ -2,6 +2,7 @@ import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { followUpListSchema } from '../../contract/follow-ups';
 import { followUpSchema, type FollowUp } from '../../contract/standing';
+import type { FollowUpDone } from '../../contract/works';
 import { apiRequest, RequestRefused } from '../shell/api-request';
 
 const REFETCH_MS = 60_000;
@@ -19,16 +20,18 @@ export interface FollowUps {
   readonly open: readonly FollowUp[];
   /** what was done last, for whoever listens: a sentence */
   readonly told: string | undefined;
-  readonly problem: string | undefined;
+  /** where the work that was just recorded can be seen before and after */
+  readonly compare: string | undefined;
   add(opened: NewFollowUp): Promise<void>;
-  end(followUp: FollowUp): Promise<void>;
+  /** throws `RequestRefused` with the fields that are wrong */
+  end(followUp: FollowUp, done: FollowUpDone): Promise<void>;
 }
 
 /** The open follow-ups, as the page brought them and as they are asked for anew each minute. */
 export function useFollowUps(initial: readonly FollowUp[]): FollowUps {
   const client = useQueryClient();
   const [told, setTold] = useState<string>();
-  const [problem, setProblem] = useState<string>();
+  const [compare, setCompare] = useState<string>();
   const { data } = useQuery({
     queryKey: KEY,
     queryFn: async ({ signal }) =>
@@ -42,7 +45,7 @@ export function useFollowUps(initial: readonly FollowUp[]): FollowUps {
   return {
     open: data,
     told,
-    problem,
+    compare,
     async add(opened) {
       const kept = await apiRequest('/api/follow-ups', {
         answer: followUpSchema,
@@ -52,13 +55,20 @@ export function useFollowUps(initial: readonly FollowUp[]): FollowUps {
       setTold(`Follow-up opened for ${kept.lineName}.`);
       await asked();
     },
-    async end(followUp) {
-      setProblem(undefined);
+    async end(followUp, done) {
+      setCompare(undefined);
       try {
-        await apiRequest(`/api/follow-ups/${followUp.id}/done`, { answer: followUpSchema, method: 'POST' });
+        await apiRequest(`/api/follow-ups/${followUp.id}/done`, {
+          answer: followUpSchema,
+          method: 'POST',
+          body: done,
+        });
         setTold(`Follow-up for ${followUp.lineName} done.`);
+        if (done.work !== null) setCompare(`/lines/${followUp.line}/compare?at=${done.work.doneOn}`);
       } catch (error) {
-        setProblem(error instanceof RequestRefused ? error.message : 'The follow-up could not be ended.');
+        // ended by somebody else meanwhile: the list shows it
+        if (!(error instanceof RequestRefused) || error.status !== 409) throw error;
+        setTold(error.message);
       }
       await asked();
     },

@@ -47,9 +47,14 @@ function Forecast({ list, site, search, mayKeep }: ForecastPageProps) {
       <ForecastHead list={list} rows={rows} known={known} followUpCount={followUps.open.length} />
       <p role="status" className="mt-2 font-medium empty:hidden">
         {followUps.told}
-      </p>
-      <p role="alert" className="field-problem mt-2 empty:hidden">
-        {followUps.problem}
+        {followUps.compare !== undefined && (
+          <>
+            {' '}
+            <a href={followUps.compare} className="link">
+              Compare before and after the work
+            </a>
+          </>
+        )}
       </p>
       {rows.length > 0 && (
         <ForecastFilters state={state} substations={endsOf(rows)} owners={ownersOf(list.lines)} />

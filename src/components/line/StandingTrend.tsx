@@ -151,7 +151,8 @@ function useMarks({ standing, settings, line, unit, site }: Props, window: Trend
       step,
       words: `${phase === 'all' ? `${letter}: ` : ''}step ${stepSizeWords(step, { unit, ratingAmps })}`,
     }));
-    return trendMarks({ steps: named, settings }, window);
+    const others = standing.flatMap(({ phase: of, marks }) => (phase === 'all' || phase === of ? marks : []));
+    return trendMarks({ steps: named, settings, others }, window);
   }, [standing, settings, unit, ratingAmps, phaseLetters, phase, window]);
 }
 

@@ -1,0 +1,62 @@
+import { useState, type FormEvent } from 'react';
+import type { FollowUp } from '../../contract/standing';
+import { followUpDoneSchema, type FollowUpDone } from '../../contract/works';
+import { workProblems, type WorkProblems, type WorkTyped } from '../../view/work-typed';
+import { fieldsOf, refusedProblems } from '../works/WorkForm';
+import { WorkFields } from '../works/WorkFields';
+
+interface EndFormProps {
+  followUp: FollowUp;
+  today: string;
+  onEnd: (followUp: FollowUp, done: FollowUpDone) => Promise<void>;
+  onClose: () => void;
+}
+
+/** Ends a follow-up, with what was done on the line where that may have moved its standing level. */
+export function EndForm({ followUp, today, onEnd, onClose }: EndFormProps) {
+  const [typed, setTyped] = useState<WorkTyped>({ what: '', doneOn: today, terminal: '' });
+  const [problems, setProblems] = useState<WorkProblems>({});
+  const [sending, setSending] = useState(false);
+  const end = async (event: FormEvent) => {
+    event.preventDefault();
+    const { what, doneOn } = typed;
+    const checked = followUpDoneSchema.safeParse({ work: what.trim() === '' ? null : { what, doneOn } });
+    if (!checked.success) return setProblems(workProblems(fieldsOf(checked.error.issues)));
+    setSending(true);
+    setProblems({});
+    try {
+      await onEnd(followUp, checked.data);
+    } catch (error) {
+      setProblems(refusedProblems(error));
+      setSending(false);
+    }
+  };
+  return (
+    <form
+      noValidate
+      onSubmit={(event) => void end(event)}
+      onKeyDown={(event) => event.key === 'Escape' && onClose()}
+      aria-label={`Done: ${followUp.note}, ${followUp.lineName}`}
+      className="grid w-full max-w-[32rem] gap-2 border-l-2 border-rule pl-3"
+    >
+      <WorkFields
+        {...{ typed, problems, today }}
+        terminals={[]}
+        whatLabel="What was done on the line; leave it empty where nothing was"
+        onType={(change) => setTyped((before) => ({ ...before, ...change }))}
+      />
+      <div className="flex gap-2">
+        <button type="submit" disabled={sending} className="button button-first">
+          {sending
+            ? 'Sending…'
+            : typed.what.trim() === ''
+              ? 'End the follow-up'
+              : 'End it and record the work'}
+        </button>
+        <button type="button" onClick={onClose} className="button">
+          Cancel
+        </button>
+      </div>
+    </form>
+  );
+}
