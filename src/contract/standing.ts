@@ -175,7 +175,10 @@ const comparedSideSchema = z.object({
   composition: compositionSchema,
 });
 
-/** Mann–Whitney on daily levels, allowed for days that are like their neighbours; null with too few days on a side. */
+/**
+ * Mann–Whitney on daily levels, allowed for days that are like their neighbours; null with too few days on a side, or
+ * where they drift so much that a shift can’t be told from it.
+ */
 const shiftTestSchema = z
   .object({
     pTwoSided: z.number(),

@@ -186,7 +186,8 @@ export function emergencyWords(verdict: StandingVerdict, context: StandingWordsC
   const when = isPast
     ? `past the near mark, the threshold ${monthsWords(creep.over, context.nowMs)}`
     : `near mark ${monthsWords(creep.near, context.nowMs)}`;
-  return `At emergency rating it would stand at ${percentText(creep.utilisationNow)} of the threshold, rising ${slope}; ${when}.`;
+  const letter = context.site.phaseLetters[verdict.phase];
+  return `Phase ${letter} would stand at ${percentText(creep.utilisationNow)} of its threshold at emergency rating, rising ${slope}; ${when}.`;
 }
 
 /** "since the settings change of 12 Oct 2026": what a drift is taken since, where a mark parts the history. */

@@ -83,6 +83,8 @@ export function comparisonSentence(
 ): string {
   const name = `phase ${letters[phase]}`;
   const told = atReference?.test ?? test;
+  if (told === null && Math.min(before.days, after.days) >= DAYS_ENOUGH)
+    return `The standing level of ${name} drifts too much by itself to tell a shift on ${dayText(day)} from it: median ${ampsText(before.medianAmps)} on ${daysWords(before.days)} before, ${ampsText(after.medianAmps)} on ${daysWords(after.days)} after.`;
   if (told === null)
     return `For ${name} there are ${daysWords(before.days)} with a standing level before ${dayText(day)} and ${daysWords(after.days)} after it: too few to tell whether it has changed.`;
   const isAtOneLoad = told === atReference?.test;
@@ -96,8 +98,10 @@ export function comparisonSentence(
 
 function shiftWords({ shiftAmps, pTwoSided }: NonNullable<ComparedPhase['test']>, level: string): string {
   const { value, low, high } = shiftAmps;
-  if (low <= 0 && high >= 0)
-    return `no shift of ${level} can be told: ${signedAmps(value)} (95 %: ${intervalText(shiftAmps, 1)}), ${pWords(pTwoSided)}`;
+  if (low <= 0 && high >= 0) {
+    const digits = digitsOf(Math.max(Math.abs(low), Math.abs(high)));
+    return `no shift of ${level} can be told: ${signedAmps(value, digits)} (95 %: ${intervalText(shiftAmps, digits)}), ${pWords(pTwoSided)}`;
+  }
   const sizes = { value: Math.abs(value), low: Math.abs(low), high: Math.abs(high) };
   const limits = { ...sizes, low: Math.min(sizes.low, sizes.high), high: Math.max(sizes.low, sizes.high) };
   return (
@@ -106,9 +110,17 @@ function shiftWords({ shiftAmps, pTwoSided }: NonNullable<ComparedPhase['test']>
   );
 }
 
+/** With so many days on either side it is not for want of days that nothing can be told. */
+const DAYS_ENOUGH = 8;
+
 const daysWords = (days: number): string => `${days} ${days === 1 ? 'day' : 'days'}`;
-const digitsOf = (amps: number): number => (amps < 9.95 ? 1 : 0);
-const signedAmps = (amps: number): string => `${amps < 0 ? '−' : '+'}${Math.abs(amps).toFixed(1)}\u00a0A`;
+const digitsOf = (amps: number): number => (amps < 0.95 ? 2 : amps < 9.95 ? 1 : 0);
+
+function signedAmps(amps: number, digits: number): string {
+  const size = Math.abs(amps).toFixed(digits);
+  return `${Number(size) === 0 ? '' : amps < 0 ? '−' : '+'}${size}\u00a0A`;
+}
+
 const pWords = (p: number): string => (p < 0.0001 ? 'p\u00a0<\u00a00.0001' : `p\u00a0=\u00a0${p.toFixed(4)}`);
 
 const CAUSES = ['charging', 'ratio', 'angle', 'rest'] as const satisfies readonly PolygonCause[];
@@ -164,7 +176,9 @@ const pCell = (test: ComparedPhase['test']): string | null =>
 export function turnedTable({ columns, rows }: LineTable): { heads: string[]; rows: string[][] } {
   const shown = (cell: string | number | null | undefined, column: TableColumn): string => {
     if (cell === null || cell === undefined) return DASH;
-    return typeof cell === 'number' && column.kind === 'figure' ? cell.toFixed(column.digits) : String(cell);
+    if (typeof cell !== 'number' || column.kind !== 'figure') return String(cell);
+    // a nought has no sign
+    return cell.toFixed(column.digits).replace(/^-(?=[0.]*$)/, '');
   };
   const [first, ...others] = columns.map((column, at) => [
     column.head,

@@ -130,7 +130,7 @@ describe('utilisation at emergency rating', () => {
 
   it('is told with its rise and its months where it rises, and not at all where it does not', () => {
     expect(plain(emergencyWords(verdictWith({ emergencyCreep }), context))).toBe(
-      'At emergency rating it would stand at 58 % of the threshold, rising 2.1 points a month, 95 % between 1.5 and 2.7; near mark in March to June 2027.',
+      'Phase L2 would stand at 58 % of its threshold at emergency rating, rising 2.1 points a month, 95 % between 1.5 and 2.7; near mark in March to June 2027.',
     );
     expect(emergencyWords(verdictWith(), context)).toBeUndefined();
   });

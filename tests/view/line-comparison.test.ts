@@ -63,6 +63,12 @@ describe('before and after in a sentence', () => {
     );
   });
 
+  it('a level that drifts by itself is said to, and no shift is told', () => {
+    expect(plain(comparisonSentence(phaseWith({ test: null }), context))).toBe(
+      'The standing level of phase L2 drifts too much by itself to tell a shift on 3 May 2026 from it: median 40 A on 60 days before, 28 A on 41 days after.',
+    );
+  });
+
   it('too few days on a side are a sentence, and no number of amperes', () => {
     const sentence = comparisonSentence(
       phaseWith({ after: { days: 1, medianAmps: 28, composition: notSeparable }, test: null }),
