@@ -24,14 +24,8 @@ import {
   patchTerminal,
   removeTerminal,
 } from '../store/register-edit';
-import {
-  lineFromTyped,
-  problemsByField,
-  settingsFromTyped,
-  terminalFromTyped,
-  type FromTyped,
-  type Typed,
-} from '../view/register-typed';
+import type { FromTyped, Typed } from '../view/register-form';
+import { lineFromTyped, problemsByField, settingsFromTyped, terminalFromTyped } from '../view/register-typed';
 import { importRegister } from './register-import';
 
 /** What a form of the register comes back with; a refused one brings along all that was typed. */

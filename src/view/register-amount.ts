@@ -1,5 +1,5 @@
 import type { Problem } from '../contract/problem';
-import type { Typed } from './register-typed';
+import type { Typed } from './register-form';
 
 /** Figures as people type them. */
 

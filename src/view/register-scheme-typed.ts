@@ -8,7 +8,7 @@ import {
 import { RESTRAINT_KINDS, schemeProblems } from '../protection/scheme';
 import type { SettingProblem } from '../protection/setting-problem';
 import { amount, amountProblems, percentTyped, ratio } from './register-amount';
-import type { FromTyped, Typed } from './register-typed';
+import type { FromTyped, Typed } from './register-form';
 
 /** The fields of a scheme of any kind: what a form asks for each, and how it is read and filled in. */
 

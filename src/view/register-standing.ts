@@ -2,7 +2,8 @@ import type { InZoneTransformer, RegisterLine } from '../contract/register';
 import type { SettingsVersion } from '../contract/settings-version';
 import { wallTimeTyped } from './register-instant';
 import { schemeTyped, STARTING_SCHEME } from './register-scheme-typed';
-import { behindField, type Typed } from './register-typed';
+import type { Typed } from './register-form';
+import { behindField } from './register-typed';
 
 /** What stands in the register, as the fields of a form hold it. */
 

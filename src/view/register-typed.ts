@@ -1,17 +1,9 @@
 import type { Problem } from '../contract/problem';
 import { compensationProblems } from '../store/register-rules';
 import { amount, amountProblems } from './register-amount';
+import type { FromTyped, Typed } from './register-form';
 import { typedInstant } from './register-instant';
 import { schemeFromTyped } from './register-scheme-typed';
-
-/** What stood in a form's fields, by name; a box that was not ticked is absent. */
-export type Typed = Readonly<Record<string, string>>;
-
-/** What a schema is to judge, and what could already be told from the typing itself. */
-export interface FromTyped {
-  readonly value: Record<string, unknown>;
-  readonly problems: Problem['fields'];
-}
 
 const LINE_AMOUNTS = {
   voltageKv: 'the nominal voltage in kV',

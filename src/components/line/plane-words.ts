@@ -1,7 +1,7 @@
 import type { CustomSeriesOption } from 'echarts/charts';
 import { labelPlaces, wordPlace } from '../../view/plane-labels';
 import { CHART_TYPE } from '../charts/chart-axes';
-import type { PlaneDrawing } from './plane-option';
+import type { PlaneDrawing } from './plane-drawing';
 
 /** A drawing's words are placed together, in pixels, so that none lies on another or on a mark. */
 export function planeWordsSeries(drawing: PlaneDrawing): CustomSeriesOption {

@@ -1,7 +1,7 @@
 import type { CustomSeriesOption } from 'echarts/charts';
 import type { PlacedMark } from '../../view/trend-marks';
 import { CHART_TYPE } from '../charts/chart-axes';
-import type { TrendDrawing } from './trend-option';
+import type { TrendDrawing } from './trend-drawing';
 
 const ROW_PX = 16;
 

@@ -1,5 +1,5 @@
 import type { CustomSeriesOption, LineSeriesOption } from 'echarts/charts';
-import type { TrendDrawing, TrendLine } from './trend-option';
+import type { TrendDrawing, TrendLine } from './trend-drawing';
 
 /** A phase's levels. What stands alone between two gaps is a dot, since a line of one point is none. */
 export function levelSeries(line: TrendLine): LineSeriesOption {

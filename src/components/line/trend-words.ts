@@ -1,7 +1,7 @@
 import type { CustomSeriesOption } from 'echarts/charts';
 import { labelPlaces } from '../../view/plane-labels';
 import { CHART_TYPE } from '../charts/chart-axes';
-import type { TrendDrawing } from './trend-option';
+import type { TrendDrawing } from './trend-drawing';
 
 /** The names of the marks, and the letters at the ends of the lines where several are drawn. */
 export function trendWordsSeries(drawing: TrendDrawing): CustomSeriesOption {

@@ -17,7 +17,7 @@ import { trendTooltip } from '../../view/trend-words';
 import type { ChartInk } from '../charts/chart-ink';
 import { phaseColour } from './phase-colour';
 import { trendOption } from './trend-option';
-import type { TrendDrawing } from './trend-option';
+import type { TrendDrawing } from './trend-drawing';
 import type { Trend } from './use-trend';
 
 /** A phase that is drawn, and the condition whose colour it may carry. */

@@ -1,5 +1,5 @@
 import type { RegisterOutcome } from '../../actions/register';
-import type { Typed } from '../../view/register-typed';
+import type { Typed } from '../../view/register-form';
 
 /** What a form shows: values by field, and after a refusal what was said of them. */
 export interface FormState {

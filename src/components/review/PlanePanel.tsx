@@ -1,9 +1,5 @@
 import { useState } from 'react';
-import type { LineSummary } from '../../contract/lines';
-import type { ReviewCloud } from '../../contract/review';
-import type { SettingsVersion } from '../../contract/settings-version';
 import { isThresholdCharacteristic } from '../../protection/characteristic';
-import type { NotComputable } from '../../protection/evaluation';
 import { csvName } from '../../view/line-csv';
 import { missingFiguresReason } from '../../view/line-phase-rows';
 import { PHASES } from '../../view/phase';
@@ -12,31 +8,13 @@ import type { PlaneExtent } from '../../view/plane-window';
 import { cloudWords } from '../../view/review-cloud';
 import { worstLoadability } from '../../view/review-margins';
 import { periodWords } from '../../view/review-period';
-import type { ReviewPeriod } from '../../view/review-period';
 import { cloudTable } from '../../view/review-tables';
-import type { SiteCustom } from '../../view/site-custom';
 import { ChartPanel } from '../charts/ChartPanel';
 import { Choice } from '../charts/Choice';
 import { FetchState } from '../charts/FetchState';
 import { RegionPlane } from './RegionPlane';
 import { RestraintPlane } from './RestraintPlane';
-import type { LiveSnapshot } from './use-live-snapshot';
-import type { ReviewFigures } from './use-review';
-
-export interface PlanePanelProps {
-  readonly line: LineSummary;
-  readonly inForce: SettingsVersion;
-  readonly site: SiteCustom;
-  readonly nowMs: number;
-  readonly faded: boolean;
-  readonly convention: string;
-  readonly period: ReviewPeriod;
-  readonly cloud: ReviewCloud | undefined;
-  readonly cloudError: Error | null;
-  readonly onTryAgain: () => void;
-  readonly live: LiveSnapshot | NotComputable | undefined;
-  readonly load: ReviewFigures['load'];
-}
+import type { PlanePanelProps } from './plane-panel-props';
 
 const TITLES = {
   'two-slope': 'Differential against restraint',

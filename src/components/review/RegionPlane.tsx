@@ -15,7 +15,7 @@ import type { DiscPlace, DiscWindow } from '../../view/review-polar';
 import { pathPieces, regionMarks, regionSentence, regionSpan } from '../../view/review-region';
 import type { RegionMark } from '../../view/review-region';
 import { PhaseMarker } from '../marks/PhaseMarker';
-import type { PlanePanelProps } from './PlanePanel';
+import type { PlanePanelProps } from './plane-panel-props';
 
 interface Props extends Pick<PlanePanelProps, 'line' | 'site' | 'faded' | 'convention' | 'live' | 'cloud'> {
   readonly characteristic: AlphaPlane | PhaseComparison;

@@ -14,7 +14,7 @@ import { ChartPlace } from '../charts/ChartPlace';
 import { useChartInk } from '../charts/use-chart-ink';
 import { phaseColour } from '../line/phase-colour';
 import { planeOption } from '../line/plane-option';
-import type { PlanePanelProps } from './PlanePanel';
+import type { PlanePanelProps } from './plane-panel-props';
 
 interface Props extends PlanePanelProps {
   readonly characteristic: ThresholdCharacteristic;
