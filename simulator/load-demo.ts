@@ -8,8 +8,8 @@ import {
   rowsByWindow,
   summedBelow,
   windowRows,
-} from '../src/ingest/window-rows';
-import { RUNG_MS, rungRows, rungStart } from '../src/ingest/rung';
+} from '../src/ingest/rungs/window-rows';
+import { RUNG_MS, rungRows, rungStart } from '../src/ingest/rungs/rung';
 import { snapshotRow } from '../src/ingest/snapshot-row';
 import { inTransaction, type Store } from '../src/store/client';
 import { type LevelRow, writeLevels } from '../src/store/levels';

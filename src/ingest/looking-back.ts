@@ -6,8 +6,8 @@ import { keepPartitions } from '../store/partitions';
 import type { WarningLimits } from '../warnings/limits';
 import { INGEST_LIMITS } from './limits';
 import { type LineWatch, type WarningChange, watchFindings } from './line-watch';
-import { catchUpRungs } from './rebuild';
-import { renewFindings } from './standing-findings';
+import { catchUpRungs } from './rungs/rebuild';
+import { renewFindings } from './verdict/standing-findings';
 
 const DAY_MS = 86_400_000;
 

@@ -7,7 +7,7 @@ import type { FeedIntake, Intake } from './intake';
 import { type LineWatch, type WarningChange, watchSnapshot, watchTime } from './line-watch';
 import { untilDone, type Retrying } from './retry';
 import { snapshotRow } from './snapshot-row';
-import { staleHours } from './stale-hours';
+import { staleHours } from './rungs/stale-hours';
 import type { WatchRoom } from './watch-room';
 
 export interface StoringParts {

@@ -3,11 +3,11 @@ import { demoLines } from '../../simulator/network/demo-lines';
 import { storyLines } from '../../simulator/stories/story-lines';
 import type { StandingVerdict } from '../../src/contract/standing';
 import { computedSnapshot } from '../../src/ingest/computed-snapshot';
-import { HISTORY_DAYS, type LineHistory } from '../../src/ingest/line-history';
-import { phaseStep } from '../../src/ingest/phase-step';
-import { phaseVerdict } from '../../src/ingest/phase-verdict';
+import { HISTORY_DAYS, type LineHistory } from '../../src/ingest/verdict/line-history';
+import { phaseStep } from '../../src/ingest/verdict/phase-step';
+import { phaseVerdict } from '../../src/ingest/verdict/phase-verdict';
 import { type RosterLine, rosterLine } from '../../src/ingest/roster';
-import { RUNG_MS, rungRows } from '../../src/ingest/rung';
+import { RUNG_MS, rungRows } from '../../src/ingest/rungs/rung';
 import { snapshotRow } from '../../src/ingest/snapshot-row';
 import {
   channelPathBelow,
@@ -15,7 +15,7 @@ import {
   rowsByWindow,
   summedBelow,
   windowRows,
-} from '../../src/ingest/window-rows';
+} from '../../src/ingest/rungs/window-rows';
 import type { PhaseName } from '../../src/protection/phase';
 import type { LevelRow } from '../../src/store/levels';
 import type { SnapshotRow } from '../../src/store/snapshots';

@@ -1,8 +1,8 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import { followUpSchema } from '../../src/contract/standing';
 import { workListSchema, workSchema, type Work } from '../../src/contract/works';
-import { readLineHistory } from '../../src/ingest/line-history';
-import { standingMarks } from '../../src/ingest/standing-marks';
+import { readLineHistory } from '../../src/ingest/verdict/line-history';
+import { standingMarks } from '../../src/ingest/verdict/standing-marks';
 import { POST as postFollowUp } from '../../src/pages/api/follow-ups';
 import { POST as postDone } from '../../src/pages/api/follow-ups/[id]/done';
 import { GET as getWorks, POST as postWork } from '../../src/pages/api/works';

@@ -1,7 +1,7 @@
-import type { Cause } from '../contract/standing';
-import type { SeparatedComposition } from '../standing/composition';
-import { minus, modulus } from '../standing/complex';
-import { compositionPolygon, partsAt } from '../standing/operating-point';
+import type { Cause } from '../../contract/standing';
+import type { SeparatedComposition } from '../../standing/composition';
+import { minus, modulus } from '../../standing/complex';
+import { compositionPolygon, partsAt } from '../../standing/operating-point';
 import type { ComposedWindow } from './composed-window';
 
 /**

@@ -1,14 +1,14 @@
-import { expectedTerminals } from '../contract/expected-terminals';
-import type { RegisterLine } from '../contract/register';
-import { classBudget, CT_CLASSES, ctClassNamed } from '../protection/ct-class';
-import { isComputable } from '../protection/evaluation';
-import { expectedStanding } from '../protection/expected-standing';
-import { measuredModel } from '../protection/line-model';
-import { worstPoint } from '../protection/loadability';
-import type { Complex } from '../standing/complex';
-import type { SumsShape } from '../standing/composition-sums';
-import { lineSusceptanceMillisiemens } from '../view/line-zone';
-import type { SchemeVersion } from './roster';
+import { expectedTerminals } from '../../contract/expected-terminals';
+import type { RegisterLine } from '../../contract/register';
+import { classBudget, CT_CLASSES, ctClassNamed } from '../../protection/ct-class';
+import { isComputable } from '../../protection/evaluation';
+import { expectedStanding } from '../../protection/expected-standing';
+import { measuredModel } from '../../protection/line-model';
+import { worstPoint } from '../../protection/loadability';
+import type { Complex } from '../../standing/complex';
+import type { SumsShape } from '../../standing/composition-sums';
+import { lineSusceptanceMillisiemens } from '../../view/line-zone';
+import type { SchemeVersion } from '../roster';
 
 /** Power-factor angles that a prediction for emergency rating ranges over, either way of the power. */
 const LAG_RAD_MOST = Math.PI / 6;

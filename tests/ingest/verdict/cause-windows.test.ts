@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { causeWindows } from '../../src/ingest/cause-windows';
+import { causeWindows } from '../../../src/ingest/verdict/cause-windows';
 
 const TODAY = 1000;
 

@@ -1,11 +1,11 @@
-import type { StandingMark, StepOnWire } from '../contract/standing';
-import type { PhaseName } from '../protection/phase';
-import { shapeOf } from '../standing/composition-sums';
-import { unpackSums } from '../store/composition-packing';
-import type { LevelRow } from '../store/levels';
-import { dateOfDay } from '../view/day-sums';
+import type { StandingMark, StepOnWire } from '../../contract/standing';
+import type { PhaseName } from '../../protection/phase';
+import { shapeOf } from '../../standing/composition-sums';
+import { unpackSums } from '../../store/composition-packing';
+import type { LevelRow } from '../../store/levels';
+import { dateOfDay } from '../../view/day-sums';
 import { type LineHistory, rowsOf } from './line-history';
-import type { RosterLine } from './roster';
+import type { RosterLine } from '../roster';
 
 const DAY_MS = 86_400_000;
 

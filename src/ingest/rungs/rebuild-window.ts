@@ -1,7 +1,7 @@
-import type { Store } from '../store/client';
-import { readOldestInstant } from '../store/snapshots';
+import type { Store } from '../../store/client';
+import { readOldestInstant } from '../../store/snapshots';
 import { rebuildRung } from './rebuild';
-import type { RosterLine } from './roster';
+import type { RosterLine } from '../roster';
 import { RUNG_MS, rungStart } from './rung';
 
 export interface RebuiltWindow {

@@ -1,18 +1,18 @@
 import { setImmediate } from 'node:timers/promises';
-import type { PolygonOnWire } from '../contract/composition';
-import type { StandingVerdict } from '../contract/standing';
-import type { WarningCause } from '../contract/warning';
-import { perPhase, PHASES, type PhaseName } from '../protection/phase';
-import type { Store } from '../store/client';
-import { replaceCreep } from '../store/levels';
-import { readVerdictsOfLine, type VerdictRow, writeVerdicts } from '../store/standing';
-import { STEP_WARNING } from '../warnings/limits';
+import type { PolygonOnWire } from '../../contract/composition';
+import type { StandingVerdict } from '../../contract/standing';
+import type { WarningCause } from '../../contract/warning';
+import { perPhase, PHASES, type PhaseName } from '../../protection/phase';
+import type { Store } from '../../store/client';
+import { replaceCreep } from '../../store/levels';
+import { readVerdictsOfLine, type VerdictRow, writeVerdicts } from '../../store/standing';
+import { STEP_WARNING } from '../../warnings/limits';
 import { readLineHistory } from './line-history';
 import { lineSteps } from './line-steps';
-import type { StandingFindings } from './line-watch';
+import type { StandingFindings } from '../line-watch';
 import { driftThatCounts } from './phase-drift';
 import { phaseVerdict } from './phase-verdict';
-import type { RosterLine } from './roster';
+import type { RosterLine } from '../roster';
 
 /** Looks at a line's levels, keeps what they say of each phase, and gives what the warnings go by. */
 export async function renewFindings(

@@ -1,12 +1,12 @@
 import { parseArgs } from 'node:util';
 import { z } from 'zod';
-import { keySchema } from '../contract/key';
-import { rebuildSettings, SettingsError } from '../settings';
-import { createStore } from '../store/client';
-import { readRegister } from '../store/register';
+import { keySchema } from '../../contract/key';
+import { rebuildSettings, SettingsError } from '../../settings';
+import { createStore } from '../../store/client';
+import { readRegister } from '../../store/register';
 import { rebuildWindow } from './rebuild-window';
-import { rootReason } from './retry';
-import { rosterLine } from './roster';
+import { rootReason } from '../retry';
+import { rosterLine } from '../roster';
 
 /** npm run rebuild: builds level rows again from the raw rows, to the same numbers. */
 

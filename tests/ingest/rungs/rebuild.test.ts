@@ -1,21 +1,21 @@
 import { beforeEach, describe, expect, it } from 'vitest';
-import { commitBatch } from '../../src/ingest/commit';
-import { catchUpRungs, rebuildRung } from '../../src/ingest/rebuild';
-import { type RosterLine, rosterLine } from '../../src/ingest/roster';
+import { commitBatch } from '../../../src/ingest/commit';
+import { catchUpRungs, rebuildRung } from '../../../src/ingest/rungs/rebuild';
+import { type RosterLine, rosterLine } from '../../../src/ingest/roster';
 import {
   type LevelRow,
   readLevels,
   readStaleHours,
   writeLevels,
   writeStaleHours,
-} from '../../src/store/levels';
-import { staleHour } from '../../src/store/schema/levels';
-import { dayLevel, hourLevel } from '../../src/store/schema/levels';
-import { line as lineTable } from '../../src/store/schema/register';
-import { snapshot } from '../../src/store/schema/snapshots';
-import { testStore } from '../database';
-import { seededRandom } from '../protection/seeded-random';
-import { snapshotRowOf, storedLine, storeRows } from '../store/made-up-rows';
+} from '../../../src/store/levels';
+import { staleHour } from '../../../src/store/schema/levels';
+import { dayLevel, hourLevel } from '../../../src/store/schema/levels';
+import { line as lineTable } from '../../../src/store/schema/register';
+import { snapshot } from '../../../src/store/schema/snapshots';
+import { testStore } from '../../database';
+import { seededRandom } from '../../protection/seeded-random';
+import { snapshotRowOf, storedLine, storeRows } from '../../store/made-up-rows';
 
 const HOUR_MS = 3_600_000;
 const DAY_MS = 24 * HOUR_MS;

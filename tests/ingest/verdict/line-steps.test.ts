@@ -1,10 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { storyTruths } from '../../simulator/stories/story-lines';
-import { toldTruths } from '../../simulator/stories/told-truth';
-import { rowsOf } from '../../src/ingest/line-history';
-import { atItsMinute } from '../../src/ingest/line-steps';
-import { phaseStep } from '../../src/ingest/phase-step';
-import { demoHistoryOf, demoMinutesOf, demoRosterLine } from './demo-history';
+import { storyTruths } from '../../../simulator/stories/story-lines';
+import { toldTruths } from '../../../simulator/stories/told-truth';
+import { rowsOf } from '../../../src/ingest/verdict/line-history';
+import { atItsMinute } from '../../../src/ingest/verdict/line-steps';
+import { phaseStep } from '../../../src/ingest/verdict/phase-step';
+import { demoHistoryOf, demoMinutesOf, demoRosterLine } from '../demo-history';
 
 const EPOCH_MS = Date.UTC(2026, 0, 12);
 const HOUR_MS = 3_600_000;

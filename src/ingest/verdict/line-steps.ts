@@ -1,15 +1,15 @@
-import type { StandingVerdict, StepOnWire } from '../contract/standing';
-import { type PerPhase, PHASES, type PhaseName } from '../protection/phase';
-import type { CompositionSums } from '../standing/composition-sums';
-import { type MomentValue, residueSeries, stepMoment } from '../standing/step-moment';
-import type { Store } from '../store/client';
-import { unpackSums } from '../store/composition-packing';
-import { type LevelRow, readLevels } from '../store/levels';
-import { alikeWindows } from '../view/day-sums';
+import type { StandingVerdict, StepOnWire } from '../../contract/standing';
+import { type PerPhase, PHASES, type PhaseName } from '../../protection/phase';
+import type { CompositionSums } from '../../standing/composition-sums';
+import { type MomentValue, residueSeries, stepMoment } from '../../standing/step-moment';
+import type { Store } from '../../store/client';
+import { unpackSums } from '../../store/composition-packing';
+import { type LevelRow, readLevels } from '../../store/levels';
+import { alikeWindows } from '../../view/day-sums';
 import { type LineHistory, rowsOf } from './line-history';
 import { phaseStep } from './phase-step';
-import type { RosterLine } from './roster';
-import { RUNG_MS } from './rung';
+import type { RosterLine } from '../roster';
+import { RUNG_MS } from '../rungs/rung';
 
 /** Minutes are looked at for so many hours on either side of the hour in which a step was seen. */
 const AROUND_HOURS = 3;

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { staleHours } from '../../src/ingest/stale-hours';
-import { registeredLine, rosterLine } from './made-up-feed';
+import { staleHours } from '../../../src/ingest/rungs/stale-hours';
+import { registeredLine, rosterLine } from '../made-up-feed';
 
 const LINE = rosterLine();
 const OTHER = rosterLine(registeredLine({ id: 8, key: 'corl-dorn' }));

@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import { type LineHistory, rowsOf } from '../../src/ingest/line-history';
-import { pathChangeStarts, standingMarks } from '../../src/ingest/standing-marks';
-import type { LevelRow } from '../../src/store/levels';
-import { dateOfDay } from '../../src/view/day-sums';
-import { demoHistoryOf, demoRosterLine, verdictOf } from './demo-history';
+import { type LineHistory, rowsOf } from '../../../src/ingest/verdict/line-history';
+import { pathChangeStarts, standingMarks } from '../../../src/ingest/verdict/standing-marks';
+import type { LevelRow } from '../../../src/store/levels';
+import { dateOfDay } from '../../../src/view/day-sums';
+import { demoHistoryOf, demoRosterLine, verdictOf } from '../demo-history';
 
 const NOW_MS = Date.UTC(2026, 0, 12);
 const DAY_MS = 86_400_000;

@@ -1,11 +1,11 @@
-import type { PhaseName } from '../protection/phase';
-import { type CompositionSums, shapeOf, snapshotCount, totalOf } from '../standing/composition-sums';
-import { packSums, unpackSums } from '../store/composition-packing';
-import { groupedBy } from '../store/grouped';
-import type { LevelRow } from '../store/levels';
-import { unpackMeasurements } from '../store/packing';
-import type { SnapshotRow } from '../store/snapshots';
-import type { RosterLine } from './roster';
+import type { PhaseName } from '../../protection/phase';
+import { type CompositionSums, shapeOf, snapshotCount, totalOf } from '../../standing/composition-sums';
+import { packSums, unpackSums } from '../../store/composition-packing';
+import { groupedBy } from '../../store/grouped';
+import type { LevelRow } from '../../store/levels';
+import { unpackMeasurements } from '../../store/packing';
+import type { SnapshotRow } from '../../store/snapshots';
+import type { RosterLine } from '../roster';
 import { qualification, rungRows, rungStart } from './rung';
 import { snapshotSums } from './snapshot-sums';
 

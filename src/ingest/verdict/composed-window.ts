@@ -1,9 +1,9 @@
-import type { CompositionOnWire } from '../contract/composition';
-import { type Composition, composition } from '../standing/composition';
-import { type CompositionSums, totalOf } from '../standing/composition-sums';
-import { compositionOnWire } from '../view/composition-on-wire';
-import { dateOfDay, type SummedDay } from '../view/day-sums';
-import type { RosterLine } from './roster';
+import type { CompositionOnWire } from '../../contract/composition';
+import { type Composition, composition } from '../../standing/composition';
+import { type CompositionSums, totalOf } from '../../standing/composition-sums';
+import { compositionOnWire } from '../../view/composition-on-wire';
+import { dateOfDay, type SummedDay } from '../../view/day-sums';
+import type { RosterLine } from '../roster';
 
 /** Days since the epoch, the last one not among them. */
 export interface DayRange {

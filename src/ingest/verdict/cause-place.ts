@@ -1,13 +1,13 @@
-import type { Cause, CausePlace } from '../contract/standing';
-import { PHASES, type PhaseName } from '../protection/phase';
-import { mismatchFrom } from '../standing/composition';
-import { fittedCoefficients } from '../standing/composition-fit';
-import { type CompositionSums, shapeOf, totalOf } from '../standing/composition-sums';
-import { movedTerminal, type UnbalanceSides } from '../standing/moved-terminal';
-import { phaseUnbalance } from '../standing/phase-unbalance';
-import type { SummedDay } from '../view/day-sums';
+import type { Cause, CausePlace } from '../../contract/standing';
+import { PHASES, type PhaseName } from '../../protection/phase';
+import { mismatchFrom } from '../../standing/composition';
+import { fittedCoefficients } from '../../standing/composition-fit';
+import { type CompositionSums, shapeOf, totalOf } from '../../standing/composition-sums';
+import { movedTerminal, type UnbalanceSides } from '../../standing/moved-terminal';
+import { phaseUnbalance } from '../../standing/phase-unbalance';
+import type { SummedDay } from '../../view/day-sums';
 import { type DayRange, within } from './composed-window';
-import type { RosterLine } from './roster';
+import type { RosterLine } from '../roster';
 
 export interface FoundPlace {
   readonly place: CausePlace | null;

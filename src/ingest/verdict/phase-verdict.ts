@@ -1,16 +1,16 @@
-import type { StandingVerdict, StepOnWire } from '../contract/standing';
-import { pickupAmps } from '../protection/characteristic';
-import type { PhaseName } from '../protection/phase';
-import { standingLevel24h } from '../standing/level';
-import { ascending, quantileSorted } from '../standing/quantile';
-import { summedDays } from '../view/day-sums';
-import { compensatedMillisiemens } from '../view/line-zone';
+import type { StandingVerdict, StepOnWire } from '../../contract/standing';
+import { pickupAmps } from '../../protection/characteristic';
+import type { PhaseName } from '../../protection/phase';
+import { standingLevel24h } from '../../standing/level';
+import { ascending, quantileSorted } from '../../standing/quantile';
+import { summedDays } from '../../view/day-sums';
+import { compensatedMillisiemens } from '../../view/line-zone';
 import { BEFORE_DAYS, COMPOSED_DAYS } from './cause-windows';
 import { type ComposedWindow, composedWindow, type Composing } from './composed-window';
 import { lastDayOf, type LineHistory, rowsOf } from './line-history';
 import { expectedLevelAmps } from './line-model-of';
 import { driftThatCounts, phaseDrifts } from './phase-drift';
-import { type RosterLine, type SchemeVersion, versionInForce } from './roster';
+import { type RosterLine, type SchemeVersion, versionInForce } from '../roster';
 import { standingCause } from './standing-cause';
 import { type MarkDay, markOnWire, standingMarks } from './standing-marks';
 

@@ -1,6 +1,6 @@
-import type { StandingVerdict, StepOnWire } from '../contract/standing';
-import { perPhase, type PhaseName } from '../protection/phase';
-import { summedDays } from '../view/day-sums';
+import type { StandingVerdict, StepOnWire } from '../../contract/standing';
+import { perPhase, type PhaseName } from '../../protection/phase';
+import { summedDays } from '../../view/day-sums';
 import { causePlace, NOWHERE, type SummedPhases } from './cause-place';
 import { causeWindows, type Moved } from './cause-windows';
 import { type ComposedWindow, composedWindow, type Composing } from './composed-window';

@@ -1,8 +1,8 @@
 import { describe, expect, it } from 'vitest';
-import { rungRows, rungStart } from '../../src/ingest/rung';
-import { packFlags, type SnapshotFlag } from '../../src/store/snapshot-flags';
-import type { SnapshotFigures } from '../../src/store/snapshots';
-import { seededRandom } from '../protection/seeded-random';
+import { rungRows, rungStart } from '../../../src/ingest/rungs/rung';
+import { packFlags, type SnapshotFlag } from '../../../src/store/snapshot-flags';
+import type { SnapshotFigures } from '../../../src/store/snapshots';
+import { seededRandom } from '../../protection/seeded-random';
 
 const START = new Date('2026-03-02T10:00:00.000Z');
 const WINDOW = { lineId: 7, start: START, ratingAmps: 1000 };

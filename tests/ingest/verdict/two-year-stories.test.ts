@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import { storyTruths } from '../../simulator/stories/story-lines';
-import { toldTruths, type ToldTruth } from '../../simulator/stories/told-truth';
-import type { StandingVerdict } from '../../src/contract/standing';
-import { HISTORY_DAYS } from '../../src/ingest/line-history';
-import { demoHistoryOf, demoRosterLine, verdictOf } from './demo-history';
+import { storyTruths } from '../../../simulator/stories/story-lines';
+import { toldTruths, type ToldTruth } from '../../../simulator/stories/told-truth';
+import type { StandingVerdict } from '../../../src/contract/standing';
+import { HISTORY_DAYS } from '../../../src/ingest/verdict/line-history';
+import { demoHistoryOf, demoRosterLine, verdictOf } from '../demo-history';
 
 // in the coldest weeks: a seasonal load has risen for half a year
 const EPOCH_MS = Date.UTC(2026, 0, 12);

@@ -1,4 +1,4 @@
-import { inTransaction, type Store } from '../store/client';
+import { inTransaction, type Store } from '../../store/client';
 import {
   dropStaleHour,
   readLevels,
@@ -6,15 +6,15 @@ import {
   readStaleHours,
   type StaleHour,
   writeLevels,
-} from '../store/levels';
+} from '../../store/levels';
 import {
   readNewestInstants,
   readSnapshotBefore,
   readSnapshotFigures,
   readSnapshots,
-} from '../store/snapshots';
+} from '../../store/snapshots';
 import { channelPathBelow, minuteRows, summedBelow } from './window-rows';
-import type { RosterLine } from './roster';
+import type { RosterLine } from '../roster';
 import { RUNG_MS, rungRows, rungStart } from './rung';
 
 /** Minutes of the current hour that are built again at every look: what comes late comes within them, or waits for the hour to close. */

@@ -1,17 +1,17 @@
-import type { StandingVerdict } from '../contract/standing';
-import type { Creep } from '../contract/warning';
-import type { PhaseName } from '../protection/phase';
-import { throughLoad } from '../standing/composition-sums';
-import { levelsSinceMark, watchedCreep } from '../standing/creep-watch';
-import { typicalPoint } from '../standing/operating-point';
-import { levelsAtReferenceLoad } from '../standing/reference-level';
-import { dailyUtilisation, watchedUtilisation } from '../standing/utilisation-forecast';
+import type { StandingVerdict } from '../../contract/standing';
+import type { Creep } from '../../contract/warning';
+import type { PhaseName } from '../../protection/phase';
+import { throughLoad } from '../../standing/composition-sums';
+import { levelsSinceMark, watchedCreep } from '../../standing/creep-watch';
+import { typicalPoint } from '../../standing/operating-point';
+import { levelsAtReferenceLoad } from '../../standing/reference-level';
+import { dailyUtilisation, watchedUtilisation } from '../../standing/utilisation-forecast';
 import { creepOnWire, emergencyCreepOnWire } from './creep-on-wire';
 import type { ComposedWindow, Composing } from './composed-window';
 import { isTold } from './likely-cause';
 import { dailyLevels, type LineHistory, rowsOf } from './line-history';
 import { emergencyUtilisationOf } from './line-model-of';
-import type { SchemeVersion } from './roster';
+import type { SchemeVersion } from '../roster';
 import { type MarkDay, markOnWire } from './standing-marks';
 
 const HORIZON_DAYS = 365;

@@ -1,10 +1,10 @@
-import type { Work } from '../contract/works';
-import type { PhaseName } from '../protection/phase';
-import type { DailyLevel } from '../standing/creep';
-import type { Store } from '../store/client';
-import { type LevelRow, readLevels } from '../store/levels';
-import { readWorksOfLine } from '../store/works';
-import { RUNG_MS, rungStart } from './rung';
+import type { Work } from '../../contract/works';
+import type { PhaseName } from '../../protection/phase';
+import type { DailyLevel } from '../../standing/creep';
+import type { Store } from '../../store/client';
+import { type LevelRow, readLevels } from '../../store/levels';
+import { readWorksOfLine } from '../../store/works';
+import { RUNG_MS, rungStart } from '../rungs/rung';
 
 const DAY_MS = RUNG_MS.day;
 

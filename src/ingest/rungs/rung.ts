@@ -1,10 +1,10 @@
-import type { Rung } from '../contract/lines';
-import { PHASES, type PhaseName } from '../protection/phase';
-import { levelSummary } from '../standing/level';
-import { DEFAULT_QUALIFICATION_LIMITS, disqualifications } from '../standing/qualification';
-import type { LevelRow } from '../store/levels';
-import type { SnapshotFigures } from '../store/snapshots';
-import { snapshotFacts } from '../view/snapshot-facts';
+import type { Rung } from '../../contract/lines';
+import { PHASES, type PhaseName } from '../../protection/phase';
+import { levelSummary } from '../../standing/level';
+import { DEFAULT_QUALIFICATION_LIMITS, disqualifications } from '../../standing/qualification';
+import type { LevelRow } from '../../store/levels';
+import type { SnapshotFigures } from '../../store/snapshots';
+import { snapshotFacts } from '../../view/snapshot-facts';
 
 export const RUNG_MS: Record<Rung, number> = { minute: 60_000, hour: 3_600_000, day: 86_400_000 };
 export const rungStart = (rung: Rung, atMs: number): number =>

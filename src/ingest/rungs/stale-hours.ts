@@ -1,5 +1,5 @@
-import type { StaleHour } from '../store/levels';
-import type { ComputedSnapshot } from './computed-snapshot';
+import type { StaleHour } from '../../store/levels';
+import type { ComputedSnapshot } from '../computed-snapshot';
 import { rungStart } from './rung';
 
 /** The snapshot after a late one is judged steady against it; it lies in the next hour when it is this close. */

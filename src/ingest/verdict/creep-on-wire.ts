@@ -1,9 +1,9 @@
-import type { StandingVerdict } from '../contract/standing';
-import type { Creep, ForecastDatesOnWire } from '../contract/warning';
-import type { PhaseName } from '../protection/phase';
-import type { CreepVerdict } from '../standing/creep';
-import type { ForecastDates } from '../standing/forecast';
-import { dateOfDay } from '../view/day-sums';
+import type { StandingVerdict } from '../../contract/standing';
+import type { Creep, ForecastDatesOnWire } from '../../contract/warning';
+import type { PhaseName } from '../../protection/phase';
+import type { CreepVerdict } from '../../standing/creep';
+import type { ForecastDates } from '../../standing/forecast';
+import { dateOfDay } from '../../view/day-sums';
 
 const DAYS_A_MONTH = 365.25 / 12;
 

@@ -1,13 +1,13 @@
-import type { Measurement } from '../contract/feed';
-import { PHASES, perPhase, type PerPhase } from '../protection/phase';
-import { type Phasor, scale, sum } from '../protection/phasor';
-import { throughAmps } from '../protection/evaluation';
-import { isOnLineSide } from '../protection/winding-compensation';
-import { addSnapshot, type CompositionSums, emptySums } from '../standing/composition-sums';
-import { unpackMeasurements } from '../store/packing';
-import type { SnapshotRow } from '../store/snapshots';
-import { type RosterLine, type SchemeVersion, versionInForce } from './roster';
-import { voltagePhasors, zoneCurrents } from './zone-currents';
+import type { Measurement } from '../../contract/feed';
+import { PHASES, perPhase, type PerPhase } from '../../protection/phase';
+import { type Phasor, scale, sum } from '../../protection/phasor';
+import { throughAmps } from '../../protection/evaluation';
+import { isOnLineSide } from '../../protection/winding-compensation';
+import { addSnapshot, type CompositionSums, emptySums } from '../../standing/composition-sums';
+import { unpackMeasurements } from '../../store/packing';
+import type { SnapshotRow } from '../../store/snapshots';
+import { type RosterLine, type SchemeVersion, versionInForce } from '../roster';
+import { voltagePhasors, zoneCurrents } from '../zone-currents';
 
 /**
  * The composition's sums over qualified raw rows, one a phase. Undefined for a line whose feed holds no phasors,

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { phaseStep } from '../../src/ingest/phase-step';
-import { demoHistoryOf, demoRosterLine, verdictOf } from './demo-history';
+import { phaseStep } from '../../../src/ingest/verdict/phase-step';
+import { demoHistoryOf, demoRosterLine, verdictOf } from '../demo-history';
 
 // midnight, so that the history holds whole days
 const NOW_MS = Date.UTC(2026, 2, 2);
