@@ -33,13 +33,19 @@ export async function lookBack(
   return watchFindings(watch, findings, { atMs: nowMs, limits });
 }
 
-/** Housekeeping of the store, done by the first worker alone. */
-export async function keepStore(
-  store: Store,
-  { settings, nowMs }: { settings: IngestSettings; nowMs: number },
-): Promise<void> {
+interface Keeping {
+  readonly settings: IngestSettings;
+  readonly nowMs: number;
+}
+
+/** Room for the days to come: what the feed brings wants the partitions of its days. Done by the first worker alone. */
+export async function makeRoom(store: Store, { settings, nowMs }: Keeping): Promise<void> {
   await keepPartitions(store, { table: 'snapshot', now: nowMs, days: settings.RAW_DAYS });
   await keepPartitions(store, { table: 'minute_level', now: nowMs, days: settings.MINUTE_DAYS });
+}
+
+/** Drops what has outlived its reach, row by row. Done by the first worker alone, and nobody waits for it. */
+export async function dropOutlived(store: Store, { settings, nowMs }: Keeping): Promise<void> {
   await dropHourLevelsBefore(store, new Date(nowMs - settings.HOUR_DAYS * DAY_MS));
   await dropRefusalsBefore(store, new Date(nowMs - INGEST_LIMITS.refusalsKeptDays * DAY_MS));
 }

@@ -5,7 +5,7 @@ import type { Delivery } from './deferred-acknowledgement';
 import { connectFeed } from './feed-client';
 import { createIntake, type FeedIntake } from './intake';
 import { INGEST_LIMITS } from './limits';
-import { keepStore, lookBack } from './looking-back';
+import { dropOutlived, lookBack, makeRoom } from './looking-back';
 import { publishResult } from './results-publisher';
 import { type Log, pause, type Retrying, untilDone } from './retry';
 import { createStoring, type Storing } from './storing';
@@ -41,9 +41,9 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
   const room = createWatchRoom({ settings, store, now });
   const intake = createIntake({ settings, room, now });
   const isFirst = settings.WORKER_INDEX === 0;
-  const keep = () => untilDone(() => keepStore(store, { settings, nowMs: now() }), database);
-  // ahead of the feed: its rows want the partitions of their days
-  if (isFirst) await keep();
+  const keep = (work: typeof makeRoom) => untilDone(() => work(store, { settings, nowMs: now() }), database);
+  // ahead of the feed
+  if (isFirst) await keep(makeRoom);
   await refreshRegister(room, intake, database);
   const feed = connectFeed(settings, { take: (delivery: Delivery) => intake.take(delivery), log });
   feed.follow(room.topics());
@@ -58,7 +58,6 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
     acknowledge: feed.acknowledge,
     publish: (watch) => publishResult(feed.mqtt, watch, now()),
   });
-  const keepOn = () => every(INGEST_LIMITS.keepStoreEveryMs, stop.signal, keep);
   const loops = [
     keepStoring(storing, intake, stop.signal),
     every(INGEST_LIMITS.registerPollMs, stop.signal, async () => {
@@ -73,7 +72,14 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
         );
       }
     }),
-    ...(isFirst ? [pause(INGEST_LIMITS.keepStoreEveryMs, stop.signal).then(() => keepOn())] : []),
+    ...(isFirst
+      ? [
+          every(INGEST_LIMITS.keepStoreEveryMs, stop.signal, async () => {
+            await keep(makeRoom);
+            await keep(dropOutlived);
+          }),
+        ]
+      : []),
   ];
   const stopped = Promise.all(loops).then(
     () => undefined,

@@ -103,12 +103,19 @@ export async function dropStaleHour(store: Store, { lineId, start }: StaleHour):
   await store.db.delete(staleHour).where(and(eq(staleHour.lineId, lineId), eq(staleHour.start, start)));
 }
 
-/** Hour rows beyond their reach, except of days that no day row holds: what is dropped can't be built again. */
+/**
+ * Drops hour rows beyond their reach, except of days that no day row holds: what is dropped can't be built again. Each
+ * line and phase by itself, from the front of its own rows: there are years of others, which need not be gone through.
+ */
 export async function dropHourLevelsBefore(store: Store, before: Date): Promise<void> {
-  await store.db.execute(
-    sql`delete hour_level from hour_level
-        join day_level on day_level.line_id = hour_level.line_id and day_level.phase = hour_level.phase
-          and day_level.start = date(hour_level.start)
-        where hour_level.start < ${before}`,
-  );
+  const series = await store.db
+    .selectDistinct({ lineId: hourLevel.lineId, phase: hourLevel.phase })
+    .from(hourLevel);
+  for (const { lineId, phase } of series)
+    await store.db.execute(
+      sql`delete hour_level from hour_level
+          join day_level on day_level.line_id = hour_level.line_id and day_level.phase = hour_level.phase
+            and day_level.start = date(hour_level.start)
+          where hour_level.line_id = ${lineId} and hour_level.phase = ${phase} and hour_level.start < ${before}`,
+    );
 }
