@@ -38,36 +38,56 @@ type Moves = Pick<StandingVerdict, 'likelyCause' | 'causePlace'> & {
   readonly compositionBefore: CompositionOnWire;
 };
 
+/** Of what moved, a mismatch that moved less than this share of the one that moved most is not worth a word. */
+const WORTH_SHARE = 1 / 4;
+
+interface Move {
+  readonly name: string;
+  readonly one: EstimateOnWire;
+  readonly other: EstimateOnWire;
+  /** how far a mismatch moved, per unit or radians; undefined for the charging */
+  readonly size: number | undefined;
+}
+
 /**
- * Which causes have moved beyond their 95 % intervals between two windows, and of charging whether it stayed.
- * Undefined where one of them is not separable.
+ * Which causes have moved beyond their 95 % intervals between two windows, the mismatch that moved most first, and of
+ * charging whether it stayed. Undefined where one of them is not separable.
  */
 export function movedCauses(
   { composition: now, compositionBefore: before, likelyCause, causePlace }: Moves,
   substations: Substations,
 ): { moved: string[]; still: string[] } | undefined {
   if (now.kind !== 'separated' || before.kind !== 'separated') return undefined;
-  const pairs: { name: string; one: EstimateOnWire; other: EstimateOnWire; always: boolean }[] = [];
-  if (now.chargingAmps !== null && before.chargingAmps !== null)
-    pairs.push({ name: 'charging', one: now.chargingAmps, other: before.chargingAmps, always: true });
-  for (const mismatch of now.mismatches) {
+  const charging: Move[] =
+    now.chargingAmps === null || before.chargingAmps === null
+      ? []
+      : [{ name: 'charging', one: now.chargingAmps, other: before.chargingAmps, size: undefined }];
+  const mismatches = now.mismatches.flatMap((mismatch): Move[] => {
     const earlier = before.mismatches.find(({ terminal }) => terminal === mismatch.terminal);
-    if (earlier === undefined) continue;
+    if (earlier === undefined) return [];
     const { terminal, against } = mismatch;
     // between two terminals the place that was found for this cause is surer than "one against the other"
     const name = (cause: Cause) => {
       const isFound = now.mismatches.length === 1 && cause === likelyCause && causePlace !== null;
       return causeName(cause, isFound ? causePlace : { terminal, against }, substations);
     };
-    pairs.push(
-      { name: name('ratio mismatch'), one: mismatch.ratio, other: earlier.ratio, always: false },
-      { name: name('angle mismatch'), one: mismatch.angleDeg, other: earlier.angleDeg, always: false },
-    );
-  }
-  const isMoved = ({ one, other }: (typeof pairs)[number]) => one.low > other.high || one.high < other.low;
+    const ratio = { one: mismatch.ratio, other: earlier.ratio };
+    const angle = { one: mismatch.angleDeg, other: earlier.angleDeg };
+    return [
+      { name: name('ratio mismatch'), ...ratio, size: Math.abs(ratio.one.value - ratio.other.value) },
+      {
+        name: name('angle mismatch'),
+        ...angle,
+        size: (Math.abs(angle.one.value - angle.other.value) * Math.PI) / 180,
+      },
+    ];
+  });
+  const isMoved = ({ one, other }: Move) => one.low > other.high || one.high < other.low;
+  const movedMismatches = mismatches.filter(isMoved).sort((one, other) => other.size! - one.size!);
+  const worthAWord = movedMismatches.filter(({ size }) => size! >= WORTH_SHARE * movedMismatches[0]!.size!);
   return {
-    moved: pairs.filter(isMoved).map(({ name }) => name),
-    still: pairs.filter((pair) => pair.always && !isMoved(pair)).map(({ name }) => name),
+    moved: [...worthAWord, ...charging.filter(isMoved)].map(({ name }) => name),
+    still: charging.filter((move) => !isMoved(move)).map(({ name }) => name),
   };
 }
 

@@ -67,7 +67,7 @@ function stepWords(step: StepOnWire | null, { site, substations }: ForecastConte
 function causeMovedWords(verdict: StandingVerdict, { substations }: ForecastContext): string {
   const { compositionBefore } = verdict;
   const found = compositionBefore && movedCauses({ ...verdict, compositionBefore }, substations);
-  const time = verdict.causeIsTime ? ` It is ${TIME_WORDS}.` : '';
+  const time = verdict.causeIsTime ? ` The angle is ${TIME_WORDS}.` : '';
   if (!found || found.moved.length === 0) return `${likelyCauseWords(verdict, substations)}${time}`;
   return `${capital(movedAndStill(found.moved, found.still))}.${time}`;
 }

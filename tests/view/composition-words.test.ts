@@ -160,6 +160,26 @@ describe('which causes moved', () => {
     expect(movedCauses(verdictBeside(before), substations)).toEqual({ moved: [], still: ['charging'] });
   });
 
+  it('the mismatch that moved most goes first, one that moved by a fraction of it is not named', () => {
+    const sharp = (ratio: number, angleDeg: number) =>
+      separatedWith({
+        mismatches: [mismatchWith({ ratio: estimate(ratio, 0.0001), angleDeg: estimate(angleDeg, 0.001) })],
+      });
+    const movedFrom = (ratio: number, angleDeg: number) =>
+      movedCauses(
+        {
+          ...verdictWith({ composition: sharp(0.049, -0.52), causePlace: null }),
+          compositionBefore: sharp(ratio, angleDeg),
+        },
+        substations,
+      )!.moved;
+    expect(movedFrom(0.048, -2.52)).toEqual(['angle mismatch of Hask against Skelder']);
+    expect(movedFrom(0.029, -2.52)).toEqual([
+      'angle mismatch of Hask against Skelder',
+      'ratio mismatch of Hask against Skelder',
+    ]);
+  });
+
   it('charging that moved is said to have moved', () => {
     const before = separatedWith({ chargingAmps: estimate(10, 0.5) });
     expect(movedCauses(verdictBeside(before), substations)).toEqual({ moved: ['charging'], still: [] });
