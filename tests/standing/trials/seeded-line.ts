@@ -24,6 +24,8 @@ export interface LineTruth {
   readonly growthShareAYear?: number;
   /** Swing of the daily cycle, as a share of the mean load; 0.3 unless given. */
   readonly daySwing?: number;
+  /** Swing of the daily cycle of the power-factor angle, radians; 0.08 unless given. */
+  readonly lagSwingRad?: number;
   /** Rms of the noise as a share of the current; 0.0006 unless given. And its correlation time, hours. */
   readonly noiseShare?: number;
   readonly noiseHours?: number;
@@ -63,7 +65,8 @@ export function* measuredHours(truth: LineTruth, hours: number): Generator<Measu
     const day = 1 + swing * (Math.sin((2 * Math.PI * hour) / 24 + phase.day) + 0.4 * loadNoise());
     const week = Math.floor(hour / 24) % 7 >= 5 ? 1 - swing / 2 : 1;
     const amps = Math.max(0.04, truth.loadShare * year * growth * day * week) * truth.ratingAmps;
-    const lag = 0.2 + 0.1 * factorNoise() + 0.08 * Math.sin((2 * Math.PI * hour) / 24);
+    const lagSwing = (truth.lagSwingRad ?? 0.08) * Math.sin((2 * Math.PI * hour) / 24);
+    const lag = 0.2 + 0.1 * factorNoise() + lagSwing;
     const volts = truth.voltageKv * (1 + 0.01 * voltageNoise());
     const absolute = phase.angle + 2.4 * hour;
     const voltage = polar(volts, absolute);
