@@ -1,6 +1,6 @@
 import type { Complex } from './complex';
-import { residualProducts, settledCoefficients } from './composition-fit';
-import { normalProduct, shapeOf, snapshotCount, totalOf } from './composition-sums';
+import { partsOf, settledCoefficients } from './composition-fit';
+import { normalSquares, shapeOf, snapshotCount, totalOf, writeResidualProducts } from './composition-sums';
 import type { CompositionSums } from './composition-sums';
 import { decided, explanations } from './moved-term';
 import type { MovedTerm } from './moved-term';
@@ -89,17 +89,19 @@ function deviations(
   coefficients: readonly Complex[],
 ): Record<CompositionStep['seenIn'], HourlyValue[]> {
   const series: Record<CompositionStep['seenIn'], HourlyValue[]> = { ratio: [], angle: [], charging: [] };
+  const parts = partsOf(coefficients);
+  const products = new Float64Array(parts.length);
   for (const { hour, sums } of hours) {
-    const products = residualProducts(sums, coefficients);
+    writeResidualProducts(sums, parts, { target: products, at: 0 });
     const { hasVoltage } = shapeOf(sums);
     const second = hasVoltage ? 1 : 0;
-    const currents = normalProduct(sums, second, second).re;
+    const currents = normalSquares(sums, second);
     if (currents > 0) {
-      series.ratio.push({ hour, value: products[second]!.re / currents });
-      series.angle.push({ hour, value: products[second]!.im / currents });
+      series.ratio.push({ hour, value: products[2 * second]! / currents });
+      series.angle.push({ hour, value: products[2 * second + 1]! / currents });
     }
-    const voltages = hasVoltage ? normalProduct(sums, 0, 0).re : 0;
-    if (voltages > 0) series.charging.push({ hour, value: products[0]!.im / voltages });
+    const voltages = hasVoltage ? normalSquares(sums, 0) : 0;
+    if (voltages > 0) series.charging.push({ hour, value: products[1]! / voltages });
   }
   return series;
 }

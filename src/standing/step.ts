@@ -1,7 +1,7 @@
 import { firstOrder } from './autocorrelation';
 import { tabularCusum } from './cusum';
 import { mannWhitney } from './mann-whitney';
-import { median } from './quantile';
+import { medianInPlace } from './quantile';
 
 /** A value of one hour, hours counted from the epoch; hours may be missing. */
 export interface HourlyValue {
@@ -69,23 +69,36 @@ const MAD_TO_DEVIATION = 1.4826;
 export function stepVerdict(series: readonly HourlyValue[], plan: StepPlan = {}): StepVerdict {
   assertAscendingHours(series);
   const watchedFrom = (series.at(-1)?.hour ?? 0) - (plan.watchedHours ?? WATCHED_HOURS) + 1;
-  const baselineFrom = watchedFrom - (plan.baselineHours ?? BASELINE_HOURS);
-  const within = series.filter(({ hour }) => hour >= baselineFrom);
-  const baseline = within.filter(({ hour }) => hour < watchedFrom).map(({ value }) => value);
-  const target = median(baseline);
-  if (target === undefined || baseline.length < BASELINE_LEAST) {
+  const within = from(series, watchedFrom - (plan.baselineHours ?? BASELINE_HOURS));
+  const values = new Float64Array(within.map(({ value }) => value));
+  if (values.some(Number.isNaN)) throw new RangeError('There is no step of values that are not numbers.');
+  const baseline = values.subarray(0, within.length - from(within, watchedFrom).length);
+  if (baseline.length < BASELINE_LEAST) {
     return { kind: 'too few hours', hours: baseline.length, hoursNeeded: BASELINE_LEAST };
   }
-  const spread = MAD_TO_DEVIATION * median(baseline.map((value) => Math.abs(value - target)))!;
+  const target = medianInPlace(baseline.slice());
+  const spread = MAD_TO_DEVIATION * medianInPlace(baseline.map((value) => Math.abs(value - target)));
   if (!(spread > 0)) return { kind: 'no step' };
   const rho = Math.max(0, firstOrder(baseline)?.rho ?? 0);
+  const watched = values.subarray(baseline.length);
   const run = alarmRun(
-    within.slice(baseline.length).map(({ value }) => (value - target) / spread),
+    Array.from(watched, (value) => (value - target) / spread),
     (DECISION * (1 + rho)) / (1 - rho),
   );
   if (run === undefined) return { kind: 'no step' };
-  const from = baseline.length + run.from;
-  return stepWithin(within, { from, to: baseline.length + run.to, target, spread, rho });
+  return stepWithin(within, {
+    from: baseline.length + run.from,
+    to: baseline.length + run.to,
+    target,
+    spread,
+    rho,
+  });
+}
+
+/** The values of an ascending series from this hour on. */
+function from(series: readonly HourlyValue[], hour: number): readonly HourlyValue[] {
+  const place = series.findIndex((each) => each.hour >= hour);
+  return place < 0 ? [] : series.slice(place);
 }
 
 /** From where the sum that crossed its limit has been above 0, to where it crossed; places among the values. */

@@ -1,7 +1,12 @@
+import { fittedCoefficients } from '../../../src/standing/composition-fit';
+import { shapeOf, totalOf } from '../../../src/standing/composition-sums';
+import type { CompositionSums } from '../../../src/standing/composition-sums';
 import type { DailyLevel } from '../../../src/standing/creep';
 import { surestRise } from '../../../src/standing/creep-watch';
 import { levelsAtLoad, loadResponse } from '../../../src/standing/load-response';
 import type { HourlyLevel } from '../../../src/standing/load-response';
+import { levelAtPointAmps, typicalPoint } from '../../../src/standing/operating-point';
+import { levelsAtReferenceLoad } from '../../../src/standing/reference-level';
 import { uniform } from './seeded-line';
 import type { LineTruth, Pair } from './seeded-line';
 
@@ -58,6 +63,18 @@ export function looksAtLoad(hours: readonly HourlyLevel[]): Looks {
     }
     return levels?.slice(Math.max(0, days - HISTORY_DAYS - from), days - from);
   };
+}
+
+/** Daily levels at the typical load of the first two months, by the composition of those, and that level itself. */
+export function referenceLevels(days: readonly CompositionSums[]): {
+  readonly levels: readonly DailyLevel[];
+  readonly levelAmps: number;
+} {
+  const first = totalOf(days.slice(0, LEARNING_DAYS))!;
+  const fit = { shape: shapeOf(first), coefficients: fittedCoefficients(first)! };
+  const point = typicalPoint(first)!;
+  const dated = days.map((sums, day) => ({ day, sums }));
+  return { levels: levelsAtReferenceLoad(dated, fit, point), levelAmps: levelAtPointAmps(fit, point) };
 }
 
 /** A 400 A line that creeps by 1 A a month at its mean load from an unknown day on, in any direction of D. */

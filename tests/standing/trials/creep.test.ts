@@ -1,20 +1,15 @@
 import { beforeAll, describe, expect, test } from 'vitest';
-import { fittedCoefficients } from '../../../src/standing/composition-fit';
-import { totalOf } from '../../../src/standing/composition-sums';
-import type { CompositionSums } from '../../../src/standing/composition-sums';
 import type { DailyLevel } from '../../../src/standing/creep';
 import type { HourlyLevel } from '../../../src/standing/load-response';
-import { levelAtPointAmps, typicalPoint } from '../../../src/standing/operating-point';
 import { median } from '../../../src/standing/quantile';
-import { levelsAtReferenceLoad } from '../../../src/standing/reference-level';
 import {
   creepingLine,
   firstCreepDay,
-  LEARNING_DAYS,
   type Looks,
   looksAt,
   looksAtLoad,
   NEAR_RATIO,
+  referenceLevels,
 } from './creep-looks';
 import { daySumsOf, reportedHour } from './line-sums';
 import { drawnTruth, measuredHours, uniform } from './seeded-line';
@@ -53,18 +48,6 @@ function historyOf(truth: LineTruth, days: number): History {
     },
     levelAmps,
   };
-}
-
-/** Daily levels at the typical load of the first two months, by the composition of those. */
-function referenceLevels(days: readonly CompositionSums[]): {
-  levels: DailyLevel[];
-  levelAmps: number;
-} {
-  const first = totalOf(days.slice(0, LEARNING_DAYS))!;
-  const fit = { shape: { terminalCount: 2, hasVoltage: true }, coefficients: fittedCoefficients(first)! };
-  const point = typicalPoint(first)!;
-  const dated = days.map((sums, day) => ({ day, sums }));
-  return { levels: levelsAtReferenceLoad(dated, fit, point), levelAmps: levelAtPointAmps(fit, point) };
 }
 
 function measuredLevels(hours: readonly HourlyLevel[]): DailyLevel[] {

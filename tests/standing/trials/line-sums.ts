@@ -1,7 +1,8 @@
-import { addSnapshot, emptySums } from '../../../src/standing/composition-sums';
+import { addSnapshot, emptySums, totalOf } from '../../../src/standing/composition-sums';
 import type { CompositionSums } from '../../../src/standing/composition-sums';
 import type { HourlyLevel } from '../../../src/standing/load-response';
 import type { MeasuredHour } from './seeded-line';
+import type { TeeHour } from './seeded-tee';
 
 export function hourSums({ differential, voltageKv, second, throughAmps }: MeasuredHour): CompositionSums {
   const sums = emptySums({ terminalCount: 2, hasVoltage: true });
@@ -13,6 +14,21 @@ export function hourSums({ differential, voltageKv, second, throughAmps }: Measu
   });
   return sums;
 }
+
+export function teeSums({ differential, voltageKv, others, throughAmps }: TeeHour): CompositionSums {
+  const sums = emptySums({ terminalCount: 3, hasVoltage: true });
+  addSnapshot(sums, {
+    differentialAmps: differential,
+    voltageKv,
+    otherCurrentsAmps: others,
+    throughAmps,
+  });
+  return sums;
+}
+
+/** Day rows of hour rows that begin with the first hour of a day. */
+export const daysOf = (hours: readonly CompositionSums[]): CompositionSums[] =>
+  Array.from({ length: hours.length / 24 }, (_, day) => totalOf(hours.slice(24 * day, 24 * day + 24))!);
 
 /** How the terminal that reports forms its restraint. */
 export type ReportedRestraint = 'half the sum' | 'the greatest';

@@ -50,7 +50,7 @@ const HOURS_A_YEAR = 8766;
 
 export function* measuredHours(truth: LineTruth, hours: number): Generator<MeasuredHour> {
   const random = uniform(truth.seed);
-  const normal = () => Math.sqrt(-2 * Math.log(random() + 1e-12)) * Math.cos(2 * Math.PI * random());
+  const normal = normalOf(random);
   const noiseHours = truth.noiseHours ?? 2 + 6 * random();
   const phase = { year: random() * 6.28, day: random() * 1.5, angle: random() * 6.28 };
   const loadNoise = remembering(normal, 9);
@@ -102,15 +102,19 @@ export function uniform(seed: number): () => number {
   };
 }
 
+/** Normal numbers of mean 0 and standard deviation 1 (Box and Muller). */
+export const normalOf = (random: () => number) => (): number =>
+  Math.sqrt(-2 * Math.log(random() + 1e-12)) * Math.cos(2 * Math.PI * random());
+
 /** First-order autoregressive noise of standard deviation 1 with this correlation time in steps. */
-function remembering(normal: () => number, time: number): () => number {
+export function remembering(normal: () => number, time: number): () => number {
   const keep = Math.exp(-1 / time);
   const fresh = Math.sqrt(1 - keep * keep);
   let value = normal();
   return () => (value = keep * value + fresh * normal());
 }
 
-function polar(size: number, angle: number): Pair {
+export function polar(size: number, angle: number): Pair {
   return { re: size * Math.cos(angle), im: size * Math.sin(angle) };
 }
 
