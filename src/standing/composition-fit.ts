@@ -7,11 +7,11 @@ import {
   regressorCount,
   shapeOf,
   snapshotCount,
-  writeResidualProducts,
 } from './composition-sums';
 import type { CompositionSums, SumsShape } from './composition-sums';
 import { conditionNumber, hermitianForm, hermitianSolution } from './hermitian';
 import type { HermitianMatrix } from './hermitian';
+import { writeResidualProducts } from './residual-products';
 
 /**
  * Coefficients of D = Y·V̄ + Σ E_k·I_k by least squares, without a word on how sure they are: that is

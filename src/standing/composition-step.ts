@@ -1,11 +1,12 @@
 import type { Complex } from './complex';
 import { partsOf, settledCoefficients } from './composition-fit';
-import { normalSquares, shapeOf, snapshotCount, totalOf, writeResidualProducts } from './composition-sums';
+import { shapeOf, snapshotCount, totalOf } from './composition-sums';
 import type { CompositionSums } from './composition-sums';
 import { decided, explanations } from './moved-term';
 import type { MovedTerm } from './moved-term';
+import { normalSquares, writeResidualProducts } from './residual-products';
 import { stepVerdict } from './step';
-import type { HourlyValue, Step, StepPlan } from './step';
+import type { HourlyValue, NoStep, Step, StepPlan } from './step';
 
 /** The sums of one hour, hours counted from the epoch. */
 export interface HourSums {
@@ -27,7 +28,7 @@ export interface CompositionStep extends Step {
 
 export type CompositionStepVerdict =
   | { readonly kind: 'too few hours'; readonly hours: number; readonly hoursNeeded: number }
-  | { readonly kind: 'no step' }
+  | NoStep
   | CompositionStep;
 
 export interface CompositionStepPlan extends StepPlan {
@@ -63,13 +64,15 @@ export function compositionStep(
     series[seenIn].length === 0 ? [] : [{ seenIn, verdict: stepVerdict(series[seenIn], plan) }],
   );
   let surest: { seenIn: CompositionStep['seenIn']; step: Step } | undefined;
+  let alarmed = false;
   for (const { seenIn, verdict } of verdicts) {
     if (verdict.kind === 'too few hours') return verdict;
+    alarmed ||= verdict.kind === 'no step' && verdict.alarmed;
     if (verdict.kind === 'step' && !(surest && surest.step.evidence >= verdict.evidence)) {
       surest = { seenIn, step: verdict };
     }
   }
-  if (surest === undefined) return { kind: 'no step' };
+  if (surest === undefined) return { kind: 'no step', alarmed };
   return explained(within, surest, plan.pathChangeHours ?? []);
 }
 

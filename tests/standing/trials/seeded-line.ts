@@ -31,6 +31,8 @@ export interface LineTruth {
   readonly noiseHours?: number;
   /** Transformer error that grows at small current: so much at 10 % of the rating, falling with the current. */
   readonly smallCurrentError?: number;
+  /** Whose current it falls with; the first terminal's unless given. */
+  readonly smallCurrentAt?: 'first' | 'second';
   /** What is added to e and to the susceptance at an hour since the start. */
   readonly mismatchChange?: (hour: number) => Pair;
   readonly susceptanceChange?: (hour: number) => number;
@@ -77,7 +79,8 @@ export function* measuredHours(truth: LineTruth, hours: number): Generator<Measu
     const share = truth.noiseShare ?? 0.0006;
     const floor = (truth.ratingAmps * share) / 10 / amps;
     const change = truth.mismatchChange?.(hour) ?? { re: 0, im: 0 };
-    const bent = ((truth.smallCurrentError ?? 0) * 0.1 * truth.ratingAmps) / amps;
+    const own = truth.smallCurrentAt === 'second' ? Math.hypot(trueSecond.re, trueSecond.im) : amps;
+    const bent = ((truth.smallCurrentError ?? 0) * 0.1 * truth.ratingAmps) / own;
     const e = {
       re: truth.mismatch.re + change.re + bent + (share + floor) * noise[0]!() + 0.0002 * wander[0]!(),
       im: truth.mismatch.im + change.im + bent + (share + floor) * noise[1]!() + 0.0002 * wander[1]!(),
