@@ -11,10 +11,12 @@ export interface FirstOrder {
  * out too small, on average ρ − (1 + 4ρ)/n (M. G. Kendall, Biometrika 41, 1954, 403–404); that is corrected for,
  * within ±0.99. `undefined` for fewer than six values or values all alike.
  */
-export function firstOrder(values: readonly number[]): FirstOrder | undefined {
+export function firstOrder(values: ArrayLike<number>): FirstOrder | undefined {
   const n = values.length;
   if (n < 6) return undefined;
-  const mean = values.reduce((total, value) => total + value, 0) / n;
+  let total = 0;
+  for (let i = 0; i < n; i++) total += values[i]!;
+  const mean = total / n;
   let variance = 0;
   let covariance = 0;
   for (let i = 0; i < n; i++) {

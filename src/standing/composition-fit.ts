@@ -1,4 +1,4 @@
-import { conjugateProduct, plus, scaled, times, ZERO } from './complex';
+import { conjugateProduct, plus, scaled, ZERO } from './complex';
 import type { Complex } from './complex';
 import {
   crossProduct,
@@ -11,6 +11,7 @@ import {
 import type { CompositionSums, SumsShape } from './composition-sums';
 import { conditionNumber, hermitianForm, hermitianSolution } from './hermitian';
 import type { HermitianMatrix } from './hermitian';
+import { writeResidualProducts } from './residual-products';
 
 /**
  * Coefficients of D = Y·V̄ + Σ E_k·I_k by least squares, without a word on how sure they are: that is
@@ -91,16 +92,14 @@ export function settledCoefficients(sums: CompositionSums): Complex[] | undefine
 
 /** Σ conj(x)·(D − fit) of every regressor: what a set of coefficients leaves over of these sums. */
 export function residualProducts(sums: CompositionSums, coefficients: readonly Complex[]): Complex[] {
-  return coefficients.map((_, i) => {
-    let { re, im } = crossProduct(sums, i);
-    coefficients.forEach((coefficient, j) => {
-      const product = times(normalProduct(sums, i, j), coefficient);
-      re -= product.re;
-      im -= product.im;
-    });
-    return { re, im };
-  });
+  const target = new Float64Array(2 * coefficients.length);
+  writeResidualProducts(sums, partsOf(coefficients), { target, at: 0 });
+  return coefficients.map((_, i) => ({ re: target[2 * i]!, im: target[2 * i + 1]! }));
 }
+
+/** Real and imaginary parts in turn. */
+export const partsOf = (coefficients: readonly Complex[]): Float64Array =>
+  new Float64Array(coefficients.flatMap(({ re, im }) => [re, im]));
 
 /**
  * Rms over the window of D less what these coefficients make of it, amperes; they may come from another window.

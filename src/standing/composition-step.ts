@@ -1,11 +1,12 @@
 import type { Complex } from './complex';
-import { residualProducts, settledCoefficients } from './composition-fit';
-import { normalProduct, shapeOf, snapshotCount, totalOf } from './composition-sums';
+import { partsOf, settledCoefficients } from './composition-fit';
+import { shapeOf, snapshotCount, totalOf } from './composition-sums';
 import type { CompositionSums } from './composition-sums';
 import { decided, explanations } from './moved-term';
 import type { MovedTerm } from './moved-term';
+import { normalSquares, writeResidualProducts } from './residual-products';
 import { stepVerdict } from './step';
-import type { HourlyValue, Step, StepPlan } from './step';
+import type { HourlyValue, NoStep, Step, StepPlan } from './step';
 
 /** The sums of one hour, hours counted from the epoch. */
 export interface HourSums {
@@ -27,7 +28,7 @@ export interface CompositionStep extends Step {
 
 export type CompositionStepVerdict =
   | { readonly kind: 'too few hours'; readonly hours: number; readonly hoursNeeded: number }
-  | { readonly kind: 'no step' }
+  | NoStep
   | CompositionStep;
 
 export interface CompositionStepPlan extends StepPlan {
@@ -63,13 +64,15 @@ export function compositionStep(
     series[seenIn].length === 0 ? [] : [{ seenIn, verdict: stepVerdict(series[seenIn], plan) }],
   );
   let surest: { seenIn: CompositionStep['seenIn']; step: Step } | undefined;
+  let alarmed = false;
   for (const { seenIn, verdict } of verdicts) {
     if (verdict.kind === 'too few hours') return verdict;
+    alarmed ||= verdict.kind === 'no step' && verdict.alarmed;
     if (verdict.kind === 'step' && !(surest && surest.step.evidence >= verdict.evidence)) {
       surest = { seenIn, step: verdict };
     }
   }
-  if (surest === undefined) return { kind: 'no step' };
+  if (surest === undefined) return { kind: 'no step', alarmed };
   return explained(within, surest, plan.pathChangeHours ?? []);
 }
 
@@ -89,17 +92,19 @@ function deviations(
   coefficients: readonly Complex[],
 ): Record<CompositionStep['seenIn'], HourlyValue[]> {
   const series: Record<CompositionStep['seenIn'], HourlyValue[]> = { ratio: [], angle: [], charging: [] };
+  const parts = partsOf(coefficients);
+  const products = new Float64Array(parts.length);
   for (const { hour, sums } of hours) {
-    const products = residualProducts(sums, coefficients);
+    writeResidualProducts(sums, parts, { target: products, at: 0 });
     const { hasVoltage } = shapeOf(sums);
     const second = hasVoltage ? 1 : 0;
-    const currents = normalProduct(sums, second, second).re;
+    const currents = normalSquares(sums, second);
     if (currents > 0) {
-      series.ratio.push({ hour, value: products[second]!.re / currents });
-      series.angle.push({ hour, value: products[second]!.im / currents });
+      series.ratio.push({ hour, value: products[2 * second]! / currents });
+      series.angle.push({ hour, value: products[2 * second + 1]! / currents });
     }
-    const voltages = hasVoltage ? normalProduct(sums, 0, 0).re : 0;
-    if (voltages > 0) series.charging.push({ hour, value: products[0]!.im / voltages });
+    const voltages = hasVoltage ? normalSquares(sums, 0) : 0;
+    if (voltages > 0) series.charging.push({ hour, value: products[1]! / voltages });
   }
   return series;
 }

@@ -1,4 +1,4 @@
-import { creepVerdict } from './creep';
+import { creepVerdict, daysNeededOf, pOfRise } from './creep';
 import type { CreepLimits, CreepVerdict, DailyLevel } from './creep';
 import { mannKendall } from './mann-kendall';
 
@@ -52,14 +52,14 @@ export function surestRise(
   plan: Omit<CreepWatchPlan, 'markDays'> & { readonly markDay: number | undefined },
 ): WatchedCreep | undefined {
   const limits = { ...plan, pMost: plan.pMost ?? P_OF_ONE_LOOK };
-  let surest: WatchedCreep | undefined;
+  let surest: { span: readonly DailyLevel[]; p: number } | undefined;
   for (const span of spansOf(levels, plan.spansDays ?? SPANS_DAYS)) {
-    if (!mayRise(span, limits.pMost)) continue;
-    const found = watched(span, { limits, markDay: plan.markDay });
-    const isRise = found.verdict.kind === 'creep' || found.verdict.kind === 'within margin';
-    if (isRise && (surest === undefined || pOf(found.verdict) < pOf(surest.verdict))) surest = found;
+    if (span.length < daysNeededOf(limits) || !mayRise(span, limits.pMost)) continue;
+    const p = pOfRise(span);
+    if (p !== undefined && p < (surest?.p ?? limits.pMost)) surest = { span, p };
   }
-  return surest;
+  const found = surest && watched(surest.span, { limits, markDay: plan.markDay });
+  return found?.verdict.kind === 'creep' || found?.verdict.kind === 'within margin' ? found : undefined;
 }
 
 function watched(
@@ -73,8 +73,6 @@ function watched(
     markDay,
   };
 }
-
-const pOf = (verdict: CreepVerdict): number => (verdict.kind === 'too few days' ? 1 : verdict.pTwoSided);
 
 /** Every allowance for autocorrelation only raises the plain p, so that what fails by it need not be looked at. */
 function mayRise(levels: readonly DailyLevel[], pMost: number): boolean {

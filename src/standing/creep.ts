@@ -3,7 +3,7 @@ import { forecastDates } from './forecast';
 import type { Drift, ForecastDates } from './forecast';
 import { hamedRao } from './hamed-rao';
 import { mannKendall, mannKendallFrom } from './mann-kendall';
-import { detrended, senSlope } from './sen-slope';
+import { detrended, senSlope, senSlopeValue } from './sen-slope';
 import type { SeriesPoint } from './sen-slope';
 
 /** The standing level of one phase on one day, amperes rms primary. Days may be missing in between. */
@@ -44,6 +44,8 @@ export type CreepVerdict =
   | { readonly kind: 'too few days'; readonly days: number; readonly daysNeeded: number }
   | ({ readonly kind: 'no trend' | 'within margin' | 'creep' } & CreepTrend);
 
+const P_MOST = 0.01;
+
 const NO_DRIFT: Drift = { slopeAmpsPerDay: 0, slopeLowAmpsPerDay: 0, slopeHighAmpsPerDay: 0 };
 
 /** With fewer values than this, no slope between two of them is a 95 % limit. */
@@ -55,18 +57,23 @@ const LIMITS_DAYS_LEAST = 5;
  * Throws for a level that is not a number and for days out of order.
  */
 export function creepVerdict(levels: readonly DailyLevel[], limits: CreepLimits): CreepVerdict {
-  const series = levels.map(({ day, levelAmps }) => ({ time: day, value: levelAmps }));
-  const daysNeeded = Math.max(limits.daysLeast ?? 10, LIMITS_DAYS_LEAST);
+  const series = seriesOf(levels);
+  const daysNeeded = daysNeededOf(limits);
   const last = levels.at(-1);
-  const plain = senSlope(series);
-  if (levels.length < daysNeeded || last === undefined || plain?.limits === undefined) {
+  const plainSlope = senSlopeValue(series);
+  if (levels.length < daysNeeded || last === undefined || plainSlope === undefined) {
     return { kind: 'too few days', days: levels.length, daysNeeded };
   }
-  const { pTwoSided, varianceRatio } = significance(series, plain.slope);
-  const { slope, intercept } = plain;
-  const { low, high } = (varianceRatio > 1 && senSlope(series, { varianceRatio })?.limits) || plain.limits;
+  const { pTwoSided, varianceRatio } = significance(series, plainSlope);
+  const found = senSlope(series, { varianceRatio });
+  if (found?.limits === undefined) return { kind: 'too few days', days: levels.length, daysNeeded };
+  const {
+    slope,
+    intercept,
+    limits: { low, high },
+  } = found;
   const drift = { slopeAmpsPerDay: slope, slopeLowAmpsPerDay: low, slopeHighAmpsPerDay: high };
-  const isRising = slope > 0 && pTwoSided < (limits.pMost ?? 0.01);
+  const isRising = slope > 0 && pTwoSided < (limits.pMost ?? P_MOST);
   const levelNowAmps = intercept + slope * last.day;
   const forecast = (targetAmps: number) =>
     forecastDates(isRising ? drift : NO_DRIFT, { lastDay: last.day, levelNowAmps, targetAmps });
@@ -74,6 +81,23 @@ export function creepVerdict(levels: readonly DailyLevel[], limits: CreepLimits)
   const pickup = forecast(limits.pickupAmps);
   const kind = isRising ? kindOfRise(near, last.day + limits.horizonDays) : 'no trend';
   return { kind, ...drift, pTwoSided, days: levels.length, levelNowAmps, near, pickup };
+}
+
+/** Fewer levels than this yield no verdict. */
+export const daysNeededOf = ({ daysLeast = 10 }: Pick<CreepLimits, 'daysLeast'>): number =>
+  Math.max(daysLeast, LIMITS_DAYS_LEAST);
+
+const seriesOf = (levels: readonly DailyLevel[]): SeriesPoint[] =>
+  levels.map(({ day, levelAmps }) => ({ time: day, value: levelAmps }));
+
+/**
+ * The two-sided probability with which `creepVerdict` finds these levels to rise; `undefined` where they fall or stay.
+ * Far cheaper than the verdict.
+ */
+export function pOfRise(levels: readonly DailyLevel[]): number | undefined {
+  const series = seriesOf(levels);
+  const slope = senSlopeValue(series);
+  return slope !== undefined && slope > 0 ? significance(series, slope).pTwoSided : undefined;
 }
 
 function kindOfRise(near: ForecastDates, horizonDay: number): 'creep' | 'within margin' {

@@ -20,18 +20,20 @@ export interface Cusum {
  * and Probability for Engineers", chapter on statistical quality control. The high sum gathers what lies above
  * target + slack, the low sum what lies below target − slack; neither falls under 0. Throws for a NaN.
  */
-export function tabularCusum(values: readonly number[], { target, slack, decision }: CusumPlan): Cusum {
+export function tabularCusum(values: ArrayLike<number>, { target, slack, decision }: CusumPlan): Cusum {
   const high: number[] = [];
   const low: number[] = [];
   let crossing: Cusum['crossing'];
-  values.forEach((value, index) => {
+  let [above, below] = [0, 0];
+  for (let index = 0; index < values.length; index++) {
+    const value = values[index]!;
     if (Number.isNaN(value)) throw new RangeError('A sum can’t go on past a value that is not a number.');
-    const above = Math.max(0, (high.at(-1) ?? 0) + value - (target + slack));
-    const below = Math.max(0, (low.at(-1) ?? 0) + (target - slack) - value);
+    above = Math.max(0, above + value - (target + slack));
+    below = Math.max(0, below + (target - slack) - value);
     high.push(above);
     low.push(below);
     if (above > decision) crossing ??= { index, side: 'high' };
     if (below > decision) crossing ??= { index, side: 'low' };
-  });
+  }
   return { high, low, crossing };
 }

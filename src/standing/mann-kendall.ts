@@ -23,8 +23,9 @@ export interface MannKendall {
 export function mannKendall(values: readonly number[]): MannKendall | undefined {
   if (values.some(Number.isNaN)) throw new RangeError('There is no trend of values that are not numbers.');
   if (values.length < 2) return undefined;
-  const varianceS = tieCorrectedVariance(values);
-  return mannKendallFrom({ count: values.length, s: risesLessFalls(values), varianceS });
+  const sorted = ascending(values);
+  const varianceS = varianceOfSorted(sorted);
+  return mannKendallFrom({ count: values.length, s: risesLessFalls(values, sorted), varianceS });
 }
 
 /** The test of an S whose variance is known: z with continuity correction, and p by the normal distribution. */
@@ -39,29 +40,46 @@ export function mannKendallFrom({
 
 /** Variance of S for values without trend: [n(n−1)(2n+5) − Σ t(t−1)(2t+5)]/18 over the t of every tied group. */
 export function tieCorrectedVariance(values: readonly number[]): number {
-  const tiedSizes = new Map<number, number>();
-  for (const value of values) tiedSizes.set(value, (tiedSizes.get(value) ?? 0) + 1);
+  return varianceOfSorted(ascending(values));
+}
+
+function varianceOfSorted(sorted: Float64Array): number {
   const weight = (size: number) => size * (size - 1) * (2 * size + 5);
-  let total = weight(values.length);
-  for (const size of tiedSizes.values()) total -= weight(size);
+  let total = weight(sorted.length);
+  let tiedFrom = 0;
+  for (let at = 1; at <= sorted.length; at++) {
+    if (sorted[at] === sorted[tiedFrom]) continue;
+    total -= weight(at - tiedFrom);
+    tiedFrom = at;
+  }
   return total / 18;
 }
 
 /** Σ sign(later − earlier) over all pairs, counted by ranks in a binary indexed tree: n·log n steps instead of n². */
-function risesLessFalls(values: readonly number[]): number {
-  const ranks = new Map<number, number>();
-  for (const value of ascending(values)) if (!ranks.has(value)) ranks.set(value, ranks.size + 1);
-  const tree = new Int32Array(ranks.size + 1);
+function risesLessFalls(values: readonly number[], sorted: Float64Array): number {
+  const tree = new Int32Array(sorted.length + 1);
   const earlierUpTo = (rank: number): number => {
     let count = 0;
     for (let at = rank; at > 0; at -= at & -at) count += tree[at]!;
     return count;
   };
   let s = 0;
-  values.forEach((value, earlier) => {
-    const rank = ranks.get(value)!;
+  for (let earlier = 0; earlier < values.length; earlier++) {
+    // equal values share the place of the first of them
+    const rank = placeIn(sorted, values[earlier]!) + 1;
     s += earlierUpTo(rank - 1) - (earlier - earlierUpTo(rank));
     for (let at = rank; at < tree.length; at += at & -at) tree[at]! += 1;
-  });
+  }
   return s;
+}
+
+/** The first place of a value among ascending ones that it is one of. */
+function placeIn(sorted: Float64Array, value: number): number {
+  let [from, to] = [0, sorted.length - 1];
+  while (from < to) {
+    const middle = (from + to) >> 1;
+    if (sorted[middle]! < value) from = middle + 1;
+    else to = middle;
+  }
+  return from;
 }

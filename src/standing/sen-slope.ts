@@ -1,6 +1,6 @@
 import { tieCorrectedVariance } from './mann-kendall';
 import { normalQuantile } from './normal';
-import { ascending, quantileOfSome } from './quantile';
+import { medianInPlace, selectedInPlace } from './quantile';
 
 /** One value of a series at its time; the units are the caller's, days and amperes for daily levels. */
 export interface SeriesPoint {
@@ -36,15 +36,21 @@ export function senSlope(
 ): SenSlope | undefined {
   assertAscendingTimes(series);
   if (series.length < 2) return undefined;
-  const slopes = ascending(pairSlopes(series));
-  const slope = quantileOfSome(slopes, 0.5);
+  const slopes = pairSlopes(series);
+  const slope = medianInPlace(slopes);
   const varianceS = varianceRatio * tieCorrectedVariance(series.map((point) => point.value));
   return {
     slope,
-    intercept: quantileOfSome(ascending(detrended(series, slope)), 0.5),
+    intercept: medianInPlace(Float64Array.from(detrended(series, slope))),
     limits: gilbertLimits(slopes, { varianceS, confidence, isClamped: varianceRatio > 1 }),
     pairs: slopes.length,
   };
+}
+
+/** The slope alone; `undefined` and throws as `senSlope`. */
+export function senSlopeValue(series: readonly SeriesPoint[]): number | undefined {
+  assertAscendingTimes(series);
+  return series.length < 2 ? undefined : medianInPlace(pairSlopes(series));
 }
 
 /** The values less slope·time, in the unit of the values. */
@@ -76,8 +82,8 @@ function gilbertLimits(
   const c = normalQuantile((1 + confidence) / 2) * Math.sqrt(varianceS);
   const lowRank = Math.round((slopes.length - c) / 2) - 1;
   const highRank = Math.round((slopes.length + c) / 2);
-  const low = slopes[isClamped ? Math.max(0, lowRank) : lowRank];
-  const high = slopes[isClamped ? Math.min(slopes.length - 1, highRank) : highRank];
+  const low = selectedInPlace(slopes, isClamped ? Math.max(0, lowRank) : lowRank);
+  const high = selectedInPlace(slopes, isClamped ? Math.min(slopes.length - 1, highRank) : highRank);
   return low === undefined || high === undefined ? undefined : { low, high };
 }
 

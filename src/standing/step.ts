@@ -1,7 +1,7 @@
 import { firstOrder } from './autocorrelation';
 import { tabularCusum } from './cusum';
 import { mannWhitney } from './mann-whitney';
-import { median } from './quantile';
+import { medianInPlace } from './quantile';
 
 /** A value of one hour, hours counted from the epoch; hours may be missing. */
 export interface HourlyValue {
@@ -32,10 +32,14 @@ export interface Step {
   readonly evidence: number;
 }
 
+/** No step, though the sums may have passed their limit: a spike, a drift or a small change can carry them there. */
+export interface NoStep {
+  readonly kind: 'no step';
+  readonly alarmed: boolean;
+}
+
 export type StepVerdict =
-  | { readonly kind: 'too few hours'; readonly hours: number; readonly hoursNeeded: number }
-  | { readonly kind: 'no step' }
-  | Step;
+  { readonly kind: 'too few hours'; readonly hours: number; readonly hoursNeeded: number } | NoStep | Step;
 
 const WATCHED_HOURS = 96;
 const BASELINE_HOURS = 336;
@@ -67,29 +71,41 @@ const MAD_TO_DEVIATION = 1.4826;
  * out of order.
  */
 export function stepVerdict(series: readonly HourlyValue[], plan: StepPlan = {}): StepVerdict {
-  assertAscendingHours(series);
+  assertSeries(series);
   const watchedFrom = (series.at(-1)?.hour ?? 0) - (plan.watchedHours ?? WATCHED_HOURS) + 1;
-  const baselineFrom = watchedFrom - (plan.baselineHours ?? BASELINE_HOURS);
-  const within = series.filter(({ hour }) => hour >= baselineFrom);
-  const baseline = within.filter(({ hour }) => hour < watchedFrom).map(({ value }) => value);
-  const target = median(baseline);
-  if (target === undefined || baseline.length < BASELINE_LEAST) {
+  const within = from(series, watchedFrom - (plan.baselineHours ?? BASELINE_HOURS));
+  const values = new Float64Array(within.map(({ value }) => value));
+  const baseline = values.subarray(0, within.length - from(within, watchedFrom).length);
+  if (baseline.length < BASELINE_LEAST) {
     return { kind: 'too few hours', hours: baseline.length, hoursNeeded: BASELINE_LEAST };
   }
-  const spread = MAD_TO_DEVIATION * median(baseline.map((value) => Math.abs(value - target)))!;
-  if (!(spread > 0)) return { kind: 'no step' };
+  const target = medianInPlace(baseline.slice());
+  const spread = MAD_TO_DEVIATION * medianInPlace(baseline.map((value) => Math.abs(value - target)));
+  if (!(spread > 0)) return { kind: 'no step', alarmed: false };
   const rho = Math.max(0, firstOrder(baseline)?.rho ?? 0);
+  const watched = values.subarray(baseline.length);
   const run = alarmRun(
-    within.slice(baseline.length).map(({ value }) => (value - target) / spread),
+    watched.map((value) => (value - target) / spread),
     (DECISION * (1 + rho)) / (1 - rho),
   );
-  if (run === undefined) return { kind: 'no step' };
-  const from = baseline.length + run.from;
-  return stepWithin(within, { from, to: baseline.length + run.to, target, spread, rho });
+  if (run === undefined) return { kind: 'no step', alarmed: false };
+  return stepWithin(within, {
+    from: baseline.length + run.from,
+    to: baseline.length + run.to,
+    target,
+    spread,
+    rho,
+  });
+}
+
+/** The values of an ascending series from this hour on. */
+function from(series: readonly HourlyValue[], hour: number): readonly HourlyValue[] {
+  const place = series.findIndex((each) => each.hour >= hour);
+  return place < 0 ? [] : series.slice(place);
 }
 
 /** From where the sum that crossed its limit has been above 0, to where it crossed; places among the values. */
-function alarmRun(values: readonly number[], decision: number): { from: number; to: number } | undefined {
+function alarmRun(values: ArrayLike<number>, decision: number): { from: number; to: number } | undefined {
   const cusum = tabularCusum(values, { target: 0, slack: SLACK, decision });
   if (cusum.crossing === undefined) return undefined;
   const { index, side } = cusum.crossing;
@@ -117,11 +133,13 @@ function stepWithin(series: readonly HourlyValue[], alarm: Alarm): StepVerdict {
     const found = changeAt(deviations, { place, rho });
     if (best === undefined || found.gain > best.gain) best = { place, ...found };
   }
-  if (best === undefined || best.gain <= driftGain(series, deviations, rho)) return { kind: 'no step' };
+  if (best === undefined || best.gain <= driftGain(series, deviations, rho))
+    return { kind: 'no step', alarmed: true };
   const before = series.slice(0, best.place).map(({ value }) => value);
   const after = series.slice(best.place + 1).map(({ value }) => value);
   const size = mannWhitney(before, after)!.shift;
-  if (after.length < HOURS_AFTER_LEAST || Math.abs(size) < SIZE_LEAST * spread) return { kind: 'no step' };
+  if (after.length < HOURS_AFTER_LEAST || Math.abs(size) < SIZE_LEAST * spread)
+    return { kind: 'no step', alarmed: true };
   return {
     kind: 'step',
     atHour: series[best.place]!.hour + 1 - best.share,
@@ -178,10 +196,11 @@ function driftGain(series: readonly HourlyValue[], deviations: readonly number[]
   return tt > 0 ? yt ** 2 / tt : 0;
 }
 
-function assertAscendingHours(series: readonly HourlyValue[]): void {
+function assertSeries(series: readonly HourlyValue[]): void {
   let before = -Infinity;
-  for (const { hour } of series) {
+  for (const { hour, value } of series) {
     if (!(hour > before)) throw new RangeError('The hours of a series come in ascending order.');
+    if (Number.isNaN(value)) throw new RangeError('There is no step of values that are not numbers.');
     before = hour;
   }
 }

@@ -2,7 +2,7 @@ import { describe, expect, test } from 'vitest';
 import { compositionFit } from '../../src/standing/composition-fit';
 import { totalOf, emptySums } from '../../src/standing/composition-sums';
 import { levelAtPointAmps, typicalPoint } from '../../src/standing/operating-point';
-import { levelsAtReferenceLoad, loadAdjustedLevels } from '../../src/standing/reference-level';
+import { levelsAtReferenceLoad } from '../../src/standing/reference-level';
 import { dayOf, sumsOf } from './made-up-phase';
 
 const TRUTH = { susceptanceMillisiemens: 0.15, mismatches: [{ re: 0.02, im: 0.01 }] };
@@ -34,24 +34,5 @@ describe('levels at reference load', () => {
   test('leave out days without snapshots', () => {
     const none = { day: 7, sums: emptySums({ terminalCount: 2, hasVoltage: true }) };
     expect(levelsAtReferenceLoad([none], fit, point)).toEqual([]);
-  });
-});
-
-describe('levels adjusted for load without a composition', () => {
-  const hours = Array.from({ length: 24 * 30 }, (_, hour) => {
-    const throughAmps = 200 + 3 * (hour / 24) + 80 * Math.sin(hour / 3.9);
-    return { hour: hour + 480_000, throughAmps, levelAmps: 2 + 0.015 * throughAmps };
-  });
-
-  test('stay where they are while the load grows', () => {
-    const found = loadAdjustedLevels(hours, 250)!;
-    expect(found.loadSlope).toBeCloseTo(0.015, 6);
-    expect(found.levels).toHaveLength(30);
-    for (const { levelAmps } of found.levels) expect(levelAmps).toBeCloseTo(2 + 0.015 * 250, 6);
-  });
-
-  test('do not exist where the load never changes', () => {
-    expect(loadAdjustedLevels(hours.map((each) => ({ ...each, throughAmps: 200 })))).toBeUndefined();
-    expect(loadAdjustedLevels([])).toBeUndefined();
   });
 });

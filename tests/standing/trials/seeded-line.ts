@@ -24,11 +24,15 @@ export interface LineTruth {
   readonly growthShareAYear?: number;
   /** Swing of the daily cycle, as a share of the mean load; 0.3 unless given. */
   readonly daySwing?: number;
+  /** Swing of the daily cycle of the power-factor angle, radians; 0.08 unless given. */
+  readonly lagSwingRad?: number;
   /** Rms of the noise as a share of the current; 0.0006 unless given. And its correlation time, hours. */
   readonly noiseShare?: number;
   readonly noiseHours?: number;
   /** Transformer error that grows at small current: so much at 10 % of the rating, falling with the current. */
   readonly smallCurrentError?: number;
+  /** Whose current it falls with; the first terminal's unless given. */
+  readonly smallCurrentAt?: 'first' | 'second';
   /** What is added to e and to the susceptance at an hour since the start. */
   readonly mismatchChange?: (hour: number) => Pair;
   readonly susceptanceChange?: (hour: number) => number;
@@ -48,7 +52,7 @@ const HOURS_A_YEAR = 8766;
 
 export function* measuredHours(truth: LineTruth, hours: number): Generator<MeasuredHour> {
   const random = uniform(truth.seed);
-  const normal = () => Math.sqrt(-2 * Math.log(random() + 1e-12)) * Math.cos(2 * Math.PI * random());
+  const normal = normalOf(random);
   const noiseHours = truth.noiseHours ?? 2 + 6 * random();
   const phase = { year: random() * 6.28, day: random() * 1.5, angle: random() * 6.28 };
   const loadNoise = remembering(normal, 9);
@@ -63,7 +67,8 @@ export function* measuredHours(truth: LineTruth, hours: number): Generator<Measu
     const day = 1 + swing * (Math.sin((2 * Math.PI * hour) / 24 + phase.day) + 0.4 * loadNoise());
     const week = Math.floor(hour / 24) % 7 >= 5 ? 1 - swing / 2 : 1;
     const amps = Math.max(0.04, truth.loadShare * year * growth * day * week) * truth.ratingAmps;
-    const lag = 0.2 + 0.1 * factorNoise() + 0.08 * Math.sin((2 * Math.PI * hour) / 24);
+    const lagSwing = (truth.lagSwingRad ?? 0.08) * Math.sin((2 * Math.PI * hour) / 24);
+    const lag = 0.2 + 0.1 * factorNoise() + lagSwing;
     const volts = truth.voltageKv * (1 + 0.01 * voltageNoise());
     const absolute = phase.angle + 2.4 * hour;
     const voltage = polar(volts, absolute);
@@ -74,7 +79,8 @@ export function* measuredHours(truth: LineTruth, hours: number): Generator<Measu
     const share = truth.noiseShare ?? 0.0006;
     const floor = (truth.ratingAmps * share) / 10 / amps;
     const change = truth.mismatchChange?.(hour) ?? { re: 0, im: 0 };
-    const bent = ((truth.smallCurrentError ?? 0) * 0.1 * truth.ratingAmps) / amps;
+    const own = truth.smallCurrentAt === 'second' ? Math.hypot(trueSecond.re, trueSecond.im) : amps;
+    const bent = ((truth.smallCurrentError ?? 0) * 0.1 * truth.ratingAmps) / own;
     const e = {
       re: truth.mismatch.re + change.re + bent + (share + floor) * noise[0]!() + 0.0002 * wander[0]!(),
       im: truth.mismatch.im + change.im + bent + (share + floor) * noise[1]!() + 0.0002 * wander[1]!(),
@@ -99,15 +105,19 @@ export function uniform(seed: number): () => number {
   };
 }
 
+/** Normal numbers of mean 0 and standard deviation 1 (Box and Muller). */
+export const normalOf = (random: () => number) => (): number =>
+  Math.sqrt(-2 * Math.log(random() + 1e-12)) * Math.cos(2 * Math.PI * random());
+
 /** First-order autoregressive noise of standard deviation 1 with this correlation time in steps. */
-function remembering(normal: () => number, time: number): () => number {
+export function remembering(normal: () => number, time: number): () => number {
   const keep = Math.exp(-1 / time);
   const fresh = Math.sqrt(1 - keep * keep);
   let value = normal();
   return () => (value = keep * value + fresh * normal());
 }
 
-function polar(size: number, angle: number): Pair {
+export function polar(size: number, angle: number): Pair {
   return { re: size * Math.cos(angle), im: size * Math.sin(angle) };
 }
 
