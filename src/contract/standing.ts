@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { compositionSchema } from './composition';
+import { compositionSchema, estimateSchema } from './composition';
 import { keySchema } from './key';
 import { phaseNameSchema } from './phase';
 import { creepSchema, forecastDatesSchema } from './warning';
@@ -47,6 +47,19 @@ export const creepAtReferenceSchema = z.object({
   referenceThroughAmps: z.number(),
 });
 
+/** A mismatch that is another at light load than at heavy load, and what the charging may be if it is. */
+export const loadDependenceSchema = z.object({
+  terminal: keySchema,
+  against: keySchema,
+  /** at light load less at heavy load */
+  ratioChange: z.number(),
+  angleChangeDeg: z.number(),
+  lightAmps: z.number(),
+  heavyAmps: z.number(),
+  /** with and without such a change, whichever reaches further */
+  chargingAmps: estimateSchema,
+});
+
 /** The significant drift of utilisation at emergency rating, a ratio of the threshold; as `creepSchema` otherwise. */
 export const emergencyCreepSchema = z.object({
   verdict: z.enum(['creep', 'within margin']),
@@ -76,8 +89,13 @@ export const standingVerdictSchema = z.object({
   /** the last 30 days, and the 30 days that ended 60 days before */
   composition: compositionSchema,
   compositionBefore: compositionSchema.nullable(),
+  loadDependence: loadDependenceSchema.nullable(),
   creep: creepSchema.nullable(),
   creepAtReference: creepAtReferenceSchema.nullable(),
+  /** how the load was taken out of the levels: by their composition, by what magnitudes do with load, or not at all */
+  loadTakenOutBy: z.enum(['composition', 'magnitudes']).nullable(),
+  /** the drift as measured counts: nothing takes the load out, and the load has stood still */
+  measuredCounts: z.boolean(),
   /** of utilisation at emergency rating, where the composition separates */
   emergencyCreep: emergencyCreepSchema.nullable(),
   /** what parts the history, newest first */
@@ -101,6 +119,7 @@ export const marginRowSchema = standingVerdictSchema
   .omit({
     composition: true,
     compositionBefore: true,
+    loadDependence: true,
     creep: true,
     creepAtReference: true,
     marks: true,

@@ -40,6 +40,34 @@ export async function readLevels(
     .orderBy(asc(table.start), asc(table.phase));
 }
 
+/** The level of an hour beside its load, without the rest of its row. */
+export interface HourOfLoad {
+  readonly phase: LevelRow['phase'];
+  readonly start: Date;
+  readonly medianAmps: number;
+  readonly meanThroughAmps: number;
+}
+
+/** The hours of a line in [from, to) that have a level and a load, oldest first: a year of them is read at once. */
+export async function readHoursOfLoad(
+  store: Store,
+  { lineId, from, to }: { lineId: number; from: Date; to: Date },
+): Promise<HourOfLoad[]> {
+  const rows = await store.db
+    .select({
+      phase: hourLevel.phase,
+      start: hourLevel.start,
+      medianAmps: hourLevel.medianAmps,
+      meanThroughAmps: hourLevel.meanThroughAmps,
+    })
+    .from(hourLevel)
+    .where(and(eq(hourLevel.lineId, lineId), gte(hourLevel.start, from), lt(hourLevel.start, to)))
+    .orderBy(asc(hourLevel.start), asc(hourLevel.phase));
+  return rows.flatMap(({ medianAmps, meanThroughAmps, ...row }) =>
+    medianAmps === null || meanThroughAmps === null ? [] : [{ ...row, medianAmps, meanThroughAmps }],
+  );
+}
+
 /** The start of the newest hour row of a line. */
 export async function readNewestHour(store: Store, lineId: number): Promise<Date | undefined> {
   const [row] = await store.db

@@ -4,11 +4,11 @@ import { causeAmps, leakageMatters, POLYGON_CAUSES } from './composition-polygon
 import type { PolygonCause } from './composition-polygon';
 import { countedWords } from './composition-rows';
 import { tenthsText } from './composition-words';
-import type { SeparatedOnWire } from './composition-words';
+import type { SeparatedOnWire, StandingWordsContext } from './composition-words';
 import { dateText } from './figures';
 import { currentText } from './line-figures';
 import type { CurrentUnit } from './line-unit';
-import { listed } from './line-words';
+import { listed, terminalName } from './line-words';
 
 interface AmpsContext {
   readonly unit: CurrentUnit;
@@ -89,4 +89,24 @@ export function polygonWords(
 export function polygonSentence(composition: SeparatedOnWire, context: AmpsContext): string {
   const { differential, ...causes } = polygonWords(composition, context);
   return `Laid head to tail, ${Object.values(causes).join(', ')} lead to the ${differential ?? 'differential'}.`;
+}
+
+/**
+ * A mismatch that changes with load, in a sentence, with what that leaves of the charging; undefined where it does not.
+ * Transformers err most at small current.
+ */
+export function loadDependenceWords(
+  dependence: StandingVerdict['loadDependence'],
+  { substations, unit, ratingAmps }: Pick<StandingWordsContext, 'substations' | 'unit' | 'ratingAmps'>,
+): string | undefined {
+  if (dependence === null) return undefined;
+  const { terminal, against, ratioChange, angleChangeDeg, lightAmps, heavyAmps, chargingAmps } = dependence;
+  const amps = { unit, ratingAmps };
+  const signed = (value: number, digits: number) =>
+    `${value < 0 ? '−' : '+'}${Math.abs(value).toFixed(digits)}`;
+  return (
+    `The mismatch of ${terminalName(terminal, substations)} against ${terminalName(against, substations)} changes with load: ` +
+    `${signed(100 * ratioChange, 2)} % and ${signed(angleChangeDeg, 2)}° at ${tenthsText(lightAmps, amps)} compared with ${tenthsText(heavyAmps, amps)}. ` +
+    `The charging may then be anything from ${tenthsText(chargingAmps.low, amps)} to ${tenthsText(chargingAmps.high, amps)}.`
+  );
 }

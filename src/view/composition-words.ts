@@ -95,13 +95,20 @@ export function driftWords(verdict: StandingVerdict, context: StandingWordsConte
   const letter = context.site.phaseLetters[verdict.phase];
   const load = atReference
     ? ` at one and the same load (${currentText(verdict.creepAtReference!.referenceThroughAmps, context.unit, context.ratingAmps)} through)`
-    : ' as measured, load included';
+    : measuredWords(verdict);
   const parts = [
     `Phase ${letter} ${slopeWords(drift, context)}${load}${sinceWords(verdict, context)}`,
     forecastPart(verdict, drift, context),
     causePart(verdict, context),
   ];
   return `${parts.filter((part) => part !== undefined).join('; ')}.`;
+}
+
+/** Where the load could be taken out and left no drift, or has changed as well, what was measured is no drift of its own. */
+function measuredWords({ loadTakenOutBy, measuredCounts }: StandingVerdict): string {
+  const measured = ' as measured, load included';
+  if (loadTakenOutBy !== null) return `${measured}: none of it is left at one and the same load`;
+  return measuredCounts ? measured : `${measured}: the load has changed as well, so it raises no warning`;
 }
 
 function driftOf({ creep, creepAtReference }: StandingVerdict): {

@@ -21,13 +21,13 @@ export function phasePlace({ verdict, creepVerdict }: ForecastPhase, nearRatio: 
   return creepVerdict === 'creep' ? 'coming' : 'within margin';
 }
 
-/** The drift that counts: at one load wherever the causes are told apart, so that load and season are not in it. */
+/** The drift that counts: at one load wherever the load can be taken out, so that neither it nor the season is in it. */
 export const creepOf = ({
   creep,
   creepAtReference,
-  composition,
+  loadTakenOutBy,
 }: ForecastPhase['verdict']): ForecastPhase['verdict']['creep'] =>
-  composition.kind === 'separated' ? (creepAtReference?.creep ?? null) : creep;
+  loadTakenOutBy === null ? creep : (creepAtReference?.creep ?? null);
 
 /** A line by its most urgent phase. */
 export function forecastRow(line: ForecastLine, nearRatio: number): ForecastRow {

@@ -17,7 +17,7 @@ import {
   windowRows,
 } from '../../src/ingest/rungs/window-rows';
 import type { PhaseName } from '../../src/protection/phase';
-import type { LevelRow } from '../../src/store/levels';
+import type { HourOfLoad, LevelRow } from '../../src/store/levels';
 import type { SnapshotRow } from '../../src/store/snapshots';
 
 const CLOCK_LIMIT_US = 100;
@@ -62,6 +62,7 @@ export function demoHistoryOf(
   const feed = createDemoMeasurements({ seed: SEED, epochMs });
   const hours: LevelRow[] = [];
   const days: LevelRow[] = [];
+  const hoursOfLoad: HourOfLoad[] = [];
   let before: SnapshotRow | undefined;
   for (let dayMs = nowMs - daysBack * RUNG_MS.day; dayMs < nowMs; dayMs += RUNG_MS.day) {
     const rows = rawRows(line, feed, { fromMs: dayMs, toMs: dayMs + RUNG_MS.day, sampleMs });
@@ -72,6 +73,7 @@ export function demoHistoryOf(
       return built;
     });
     if (dayMs >= nowMs - HISTORY_DAYS.step * RUNG_MS.day) hours.push(...ofDay);
+    hoursOfLoad.push(...ofDay.flatMap(hourOfLoad));
     const window = { lineId: line.id, start: new Date(dayMs), ratingAmps: line.ratingAmps };
     days.push(
       ...rungRows(window, rows, beforeDay).map((row) => ({
@@ -81,8 +83,11 @@ export function demoHistoryOf(
       })),
     );
   }
-  return { nowMs, hours, days, works: [] };
+  return { nowMs, hours, days, works: [], hoursOfLoad };
 }
+
+const hourOfLoad = ({ phase, start, medianAmps, meanThroughAmps }: LevelRow): HourOfLoad[] =>
+  medianAmps === null || meanThroughAmps === null ? [] : [{ phase, start, medianAmps, meanThroughAmps }];
 
 function rawRows(
   line: RosterLine,

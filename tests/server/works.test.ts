@@ -74,7 +74,10 @@ describe('work done on a line', () => {
   it('parts the history that a verdict goes by, as long as it is not withdrawn', async () => {
     const line = demoRosterLine('dunmarsh-oxhollow');
     const demo = demoHistoryOf(line, { nowMs: NOW_MS, epochMs: NOW_MS, days: 20, sampleMs: 7_200_000 });
-    const { works: read } = await readLineHistory(store, ids.get(KEY)!, NOW_MS);
+    const { works: read } = await readLineHistory(store, ids.get(KEY)!, {
+      nowMs: NOW_MS,
+      withLoad: true,
+    });
     expect(read.map(({ doneOn }) => doneOn)).toEqual(['2026-02-25']);
     const marks = standingMarks(line, { ...demo, works: read }, { phase: 'a', step: null });
     expect(marks).toEqual([{ day: Date.parse('2026-02-25') / 86_400_000, kind: 'work recorded' }]);

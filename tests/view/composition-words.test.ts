@@ -60,10 +60,17 @@ describe('a drift as a planner needs it', () => {
     );
   });
 
-  it('as measured says that the load is in it', () => {
-    const words = driftWords(verdictWith({ creepAtReference: null }), context);
-    expect(plain(words)).toMatch(
+  it('as measured says that the load is in it, and whether it counts all the same', () => {
+    const measured = (change: Parameters<typeof verdictWith>[0]) =>
+      plain(driftWords(verdictWith({ creepAtReference: null, ...change }), context));
+    expect(measured({ loadTakenOutBy: null, measuredCounts: true })).toMatch(
       /^Phase L2 rises 3\.4 A a month, 95 % between 2\.9 and 3\.9 as measured, load included;/,
+    );
+    expect(measured({ loadTakenOutBy: null, measuredCounts: false })).toContain(
+      ' as measured, load included: the load has changed as well, so it raises no warning;',
+    );
+    expect(measured({ loadTakenOutBy: 'composition' })).toContain(
+      ' as measured, load included: none of it is left at one and the same load;',
     );
   });
 

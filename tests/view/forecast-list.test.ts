@@ -38,6 +38,8 @@ function verdictWith(change: Partial<StandingVerdict> = {}): StandingVerdict {
     shareOfPickup: 37 / 60,
     creep,
     creepAtReference: null,
+    loadTakenOutBy: null,
+    measuredCounts: true,
     composition: {
       kind: 'not separable',
       from: '2026-11-01',

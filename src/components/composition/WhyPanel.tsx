@@ -6,6 +6,7 @@ import { polygonFit, polygonPicture } from '../../view/composition-polygon';
 import type { PolygonCause } from '../../view/composition-polygon';
 import { againstRows, causeRows, qualityWords } from '../../view/composition-rows';
 import {
+  loadDependenceWords,
   polygonWords,
   polygonSentence,
   stepInWindowWords,
@@ -113,10 +114,12 @@ function Told({ line, site, unit, phase, verdict, composition }: ToldProps) {
   const ink = coloured ? CONDITION_INK[condition] : 'text-ink';
   const marked = SIDES[verdict.likelyCause];
   const caution = stepInWindowWords(composition, verdict.step, site.timeZone) ?? weakWords(composition);
+  const dependence = loadDependenceWords(verdict.loadDependence, context);
   const heads = before === null ? HEADS.slice(0, 1) : HEADS;
   return (
     <>
       {caution !== undefined && <p className="mt-2 max-w-[80ch] text-pretty">{caution}</p>}
+      {dependence !== undefined && <p className="mt-2 max-w-[80ch] text-pretty">{dependence}</p>}
       <div className="mt-2 grid items-center gap-x-6 gap-y-3 sm:grid-cols-[minmax(0,0.85fr)_minmax(0,1fr)]">
         <Polygon {...{ composition, phase, ink, marked }} context={context} />
         <CauseTable

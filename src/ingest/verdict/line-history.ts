@@ -2,7 +2,7 @@ import type { Work } from '../../contract/works';
 import type { PhaseName } from '../../protection/phase';
 import type { DailyLevel } from '../../standing/creep';
 import type { Store } from '../../store/client';
-import { type LevelRow, readLevels } from '../../store/levels';
+import { type HourOfLoad, type LevelRow, readHoursOfLoad, readLevels } from '../../store/levels';
 import { readWorksOfLine } from '../../store/works';
 import { RUNG_MS, rungStart } from '../rungs/rung';
 
@@ -18,13 +18,19 @@ export interface LineHistory {
   readonly hours: readonly LevelRow[];
   /** day rows of the last year without today: its level would be that of a part of the load cycle */
   readonly days: readonly LevelRow[];
+  /** hours of the last year with level and load alone: only for a line whose composition may not be had */
+  readonly hoursOfLoad: readonly HourOfLoad[];
   /** recorded works that were not withdrawn */
   readonly works: readonly Pick<Work, 'doneOn' | 'terminal'>[];
 }
 
-export async function readLineHistory(store: Store, lineId: number, nowMs: number): Promise<LineHistory> {
+export async function readLineHistory(
+  store: Store,
+  lineId: number,
+  { nowMs, withLoad }: { nowMs: number; withLoad: boolean },
+): Promise<LineHistory> {
   const lineIds = [lineId];
-  const [hours, days, works] = await Promise.all([
+  const [hours, days, works, hoursOfLoad] = await Promise.all([
     readLevels(store, 'hour', {
       lineIds,
       from: new Date(rungStart('hour', nowMs) - HISTORY_DAYS.step * DAY_MS),
@@ -36,8 +42,15 @@ export async function readLineHistory(store: Store, lineId: number, nowMs: numbe
       to: new Date(rungStart('day', nowMs)),
     }),
     readWorksOfLine(store, lineId),
+    withLoad
+      ? readHoursOfLoad(store, {
+          lineId,
+          from: new Date(rungStart('day', nowMs) - HISTORY_DAYS.drift * DAY_MS),
+          to: new Date(rungStart('day', nowMs)),
+        })
+      : [],
   ]);
-  return { nowMs, hours, days, works };
+  return { nowMs, hours, days, works, hoursOfLoad };
 }
 
 export const rowsOf = (rows: readonly LevelRow[], phase: PhaseName): LevelRow[] =>

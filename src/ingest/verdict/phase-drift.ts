@@ -2,10 +2,14 @@ import type { StandingVerdict } from '../../contract/standing';
 import type { Creep } from '../../contract/warning';
 import type { PhaseName } from '../../protection/phase';
 import { throughLoad } from '../../standing/composition-sums';
+import type { DailyLevel } from '../../standing/creep';
 import { levelsSinceMark, watchedCreep } from '../../standing/creep-watch';
+import { levelsAtLoad, loadResponse } from '../../standing/load-response';
 import { typicalPoint } from '../../standing/operating-point';
+import { median } from '../../standing/quantile';
 import { levelsAtReferenceLoad } from '../../standing/reference-level';
 import { dailyUtilisation, watchedUtilisation } from '../../standing/utilisation-forecast';
+import type { LevelRow } from '../../store/levels';
 import { creepOnWire, emergencyCreepOnWire } from './creep-on-wire';
 import type { ComposedWindow, Composing } from './composed-window';
 import { isTold } from './likely-cause';
@@ -15,6 +19,7 @@ import type { SchemeVersion } from '../roster';
 import { type MarkDay, markOnWire } from './standing-marks';
 
 const HORIZON_DAYS = 365;
+const HOUR_MS = 3_600_000;
 
 /** What a phase's levels are watched for, and by which composition they are brought to one load. */
 export interface DriftLook {
@@ -28,12 +33,20 @@ export interface DriftLook {
 
 type Drifts = Pick<
   StandingVerdict,
-  'creep' | 'creepAtReference' | 'emergencyCreep' | 'emergencyUtilisation' | 'driftSince'
+  | 'creep'
+  | 'creepAtReference'
+  | 'loadTakenOutBy'
+  | 'measuredCounts'
+  | 'emergencyCreep'
+  | 'emergencyUtilisation'
+  | 'driftSince'
 >;
 
 const NO_DRIFTS: Drifts = {
   creep: null,
   creepAtReference: null,
+  loadTakenOutBy: null,
+  measuredCounts: false,
   emergencyCreep: null,
   emergencyUtilisation: null,
   driftSince: null,
@@ -46,32 +59,77 @@ export function phaseDrifts(composing: Composing, history: LineHistory, look: Dr
   if (pickupAmps === undefined || line.obstacle !== undefined) return NO_DRIFTS;
   const markDays = marks.map(({ day }) => day);
   const plan = { pickupAmps, nearRatio, horizonDays: HORIZON_DAYS, markDays };
-  const levels = dailyLevels(rowsOf(history.days, phase));
+  const rows = rowsOf(history.days, phase);
+  const levels = dailyLevels(rows);
   const creep = creepOnWire(watchedCreep(levels, plan).verdict, phase) ?? null;
   const { markDay } = levelsSinceMark(levels, markDays);
   const since = marks.find(({ day }) => day === markDay);
+  const loadless = levelsWithoutLoad(composing, history, look);
   return {
     creep,
-    creepAtReference: driftAtReference(composing, look, plan),
+    creepAtReference: loadless === undefined ? null : driftAtReference(loadless, look, plan),
+    loadTakenOutBy: loadless?.by ?? null,
+    measuredCounts: loadless === undefined && creep !== null && isLoadSteady(rows, creep.days),
     ...atEmergency(composing, look, plan),
     driftSince: since === undefined ? null : markOnWire(since),
   };
 }
 
-type Plan = Parameters<typeof watchedCreep>[1];
+/** Daily levels at one and the same load, and how the load was taken out of them. */
+interface LoadlessLevels {
+  readonly by: NonNullable<StandingVerdict['loadTakenOutBy']>;
+  readonly levels: readonly DailyLevel[];
+  readonly referenceThroughAmps: number;
+}
 
-function driftAtReference(
+/** By the composition where there is one, else by what the magnitudes do with load; undefined where that is not told. */
+function levelsWithoutLoad(
   { days }: Composing,
+  { hoursOfLoad }: LineHistory,
   { phase, now: { composition, total } }: DriftLook,
-  plan: Plan,
-): StandingVerdict['creepAtReference'] {
+): LoadlessLevels | undefined {
   const point = total && typicalPoint(total);
   const load = total && throughLoad(total);
-  if (!isTold(composition) || point === undefined || load === undefined) return null;
-  const levels = levelsAtReferenceLoad(days, composition, point);
-  const creep = creepOnWire(watchedCreep(levels, plan).verdict, phase);
-  return creep === undefined ? null : { creep, referenceThroughAmps: load.meanAmps };
+  if (isTold(composition) && point !== undefined && load !== undefined)
+    return {
+      by: 'composition',
+      levels: levelsAtReferenceLoad(days, composition, point),
+      referenceThroughAmps: load.meanAmps,
+    };
+  const hours = hoursOfLoad.flatMap(({ phase: of, start, medianAmps, meanThroughAmps }) =>
+    of === phase
+      ? [{ hour: start.getTime() / HOUR_MS, levelAmps: medianAmps, throughAmps: meanThroughAmps }]
+      : [],
+  );
+  const response = loadResponse(hours);
+  if (response === undefined) return undefined;
+  const { referenceAmps } = response;
+  return { by: 'magnitudes', levels: levelsAtLoad(hours, response), referenceThroughAmps: referenceAmps };
 }
+
+function driftAtReference(
+  { levels, referenceThroughAmps }: LoadlessLevels,
+  { phase }: DriftLook,
+  plan: Plan,
+): StandingVerdict['creepAtReference'] {
+  const creep = creepOnWire(watchedCreep(levels, plan).verdict, phase);
+  return creep === undefined ? null : { creep, referenceThroughAmps };
+}
+
+/** Load that changes by less than this from the first third of a span to its last can't be what made a level rise. */
+const STEADY_SHARE = 0.03;
+
+function isLoadSteady(rows: readonly LevelRow[], days: number): boolean {
+  const loads = rows
+    .flatMap(({ medianAmps, meanThroughAmps }) => (medianAmps === null ? [] : (meanThroughAmps ?? [])))
+    .slice(-days);
+  const third = Math.floor(loads.length / 3);
+  const [first, last] = [median(loads.slice(0, third)), median(loads.slice(loads.length - third))];
+  if (first === undefined || last === undefined || first === 0) return false;
+  return Math.abs(last / first - 1) <= STEADY_SHARE;
+}
+
+type Plan = Parameters<typeof watchedCreep>[1];
 
 function atEmergency(
   { line, days }: Composing,
@@ -91,11 +149,14 @@ function atEmergency(
   };
 }
 
-/** A drift with the growth of load counts only where the load can't be taken out of it. */
+/** A drift with the load in it counts only where nothing takes the load out, and the load has stood still. */
 export function driftThatCounts({
   creep,
   creepAtReference,
-  composition: told,
-}: Pick<StandingVerdict, 'creep' | 'creepAtReference' | 'composition'>): Creep | undefined {
-  return told.kind === 'separated' ? creepAtReference?.creep : (creep ?? undefined);
+  loadTakenOutBy,
+  measuredCounts,
+}: Pick<StandingVerdict, 'creep' | 'creepAtReference' | 'loadTakenOutBy' | 'measuredCounts'>):
+  Creep | undefined {
+  if (loadTakenOutBy !== null) return creepAtReference?.creep;
+  return measuredCounts ? (creep ?? undefined) : undefined;
 }

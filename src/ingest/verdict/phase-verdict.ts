@@ -9,6 +9,7 @@ import { BEFORE_DAYS, COMPOSED_DAYS } from './cause-windows';
 import { type ComposedWindow, composedWindow, type Composing } from './composed-window';
 import { lastDayOf, type LineHistory, rowsOf } from './line-history';
 import { expectedLevelAmps } from './line-model-of';
+import { loadDependenceOf } from './load-dependence-of';
 import { driftThatCounts, phaseDrifts } from './phase-drift';
 import { type RosterLine, type SchemeVersion, versionInForce } from '../roster';
 import { standingCause } from './standing-cause';
@@ -43,7 +44,7 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
     now,
     marks,
   });
-  const counted = driftThatCounts({ ...drifts, composition: now.onWire });
+  const counted = driftThatCounts(drifts);
   const cause = standingCause(composing, history, {
     phase,
     now,
@@ -62,6 +63,7 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
     utilisationP95: utilisationP95(history, phase) ?? null,
     composition: now.onWire,
     compositionBefore: before.composition.kind === 'separated' ? before.onWire : null,
+    loadDependence: loadDependenceOf(composing, history, { phase, now }),
     ...drifts,
     ...cause,
     marks: marks.map(markOnWire),

@@ -20,8 +20,11 @@ export async function renewFindings(
   line: RosterLine,
   { nowMs, nearRatio, frequencyHz }: { nowMs: number; nearRatio: number; frequencyHz: number },
 ): Promise<StandingFindings> {
-  const history = await readLineHistory(store, line.id, nowMs);
   const earlier = await readVerdictsOfLine(store, line.id);
+  // a line that had its composition an hour ago will hardly need anything else
+  const withLoad =
+    earlier.length < PHASES.length || earlier.some(({ loadTakenOutBy }) => loadTakenOutBy !== 'composition');
+  const history = await readLineHistory(store, line.id, { nowMs, withLoad });
   const steps = await lineSteps(store, line, { history, earlier });
   const verdicts: StandingVerdict[] = [];
   for (const phase of PHASES) {

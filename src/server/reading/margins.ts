@@ -102,6 +102,7 @@ function marginRow(row: StoredMargin, ends: LineEnds, { live, now }: Site): Marg
   const {
     composition: _composition,
     compositionBefore: _before,
+    loadDependence: _dependence,
     creep: _creep,
     creepAtReference: _atReference,
     marks: _marks,

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { driftThatCounts } from '../../../src/ingest/verdict/phase-drift';
 import { phaseStep } from '../../../src/ingest/verdict/phase-step';
 import { demoHistoryOf, demoRosterLine, verdictOf } from '../demo-history';
 
@@ -72,6 +73,40 @@ describe('what can’t be told', () => {
       reason: expect.stringMatching(reason) as string,
     });
     expect([likelyCause, emergencyUtilisation]).toEqual(['not told', null]);
+  });
+});
+
+describe('a line without a composition', () => {
+  it('has its levels at one load by what magnitudes do with it', () => {
+    const verdict = verdictsOf('brindle-skelder')('a');
+    expect([verdict.loadTakenOutBy, verdict.measuredCounts]).toEqual(['magnitudes', false]);
+    expect(driftThatCounts(verdict)).toBeUndefined();
+  });
+});
+
+describe('a drift as measured', () => {
+  const line = demoRosterLine('low-pell-quillby');
+  const history = demoHistoryOf(line, TWO_MONTHS);
+  const rising = (loadGrowth: number) => ({
+    ...history,
+    hoursOfLoad: [],
+    days: history.days.map((row, index) => ({
+      ...row,
+      medianAmps: row.medianAmps! + 0.2 * Math.floor(index / 3),
+      meanThroughAmps: row.meanThroughAmps! * (1 + loadGrowth * (index / history.days.length)),
+    })),
+  });
+
+  it('counts where nothing takes the load out and the load has stood still', () => {
+    const verdict = verdictOf(line, rising(0), 'a');
+    expect([verdict.loadTakenOutBy, verdict.measuredCounts]).toEqual([null, true]);
+    expect(driftThatCounts(verdict)).toEqual(verdict.creep);
+  });
+
+  it('does not where the load has grown with it', () => {
+    const verdict = verdictOf(line, rising(0.2), 'a');
+    expect(verdict.creep).not.toBeNull();
+    expect(driftThatCounts(verdict)).toBeUndefined();
   });
 });
 
