@@ -42,6 +42,7 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
   const intake = createIntake({ settings, room, now });
   const isFirst = settings.WORKER_INDEX === 0;
   const keep = (work: typeof makeRoom) => untilDone(() => work(store, { settings, nowMs: now() }), database);
+  const keepAll = () => keep(makeRoom).then(() => keep(dropOutlived));
   // ahead of the feed
   if (isFirst) await keep(makeRoom);
   await refreshRegister(room, intake, database);
@@ -66,20 +67,11 @@ export async function startWorker({ settings, store, now, log, stop }: WorkerPar
     every(INGEST_LIMITS.rungEveryMs, stop.signal, async () => {
       for (const watch of room.watches()) {
         if (stop.signal.aborted) return;
-        storing.note(
-          watch,
-          await untilDone(() => lookBack(store, watch, { settings, limits, nowMs: now() }), database),
-        );
+        const looked = () => lookBack(store, watch, { settings, limits, nowMs: now() });
+        storing.note(watch, await untilDone(looked, database));
       }
     }),
-    ...(isFirst
-      ? [
-          every(INGEST_LIMITS.keepStoreEveryMs, stop.signal, async () => {
-            await keep(makeRoom);
-            await keep(dropOutlived);
-          }),
-        ]
-      : []),
+    ...(isFirst ? [every(INGEST_LIMITS.keepStoreEveryMs, stop.signal, keepAll)] : []),
   ];
   const stopped = Promise.all(loops).then(
     () => undefined,
