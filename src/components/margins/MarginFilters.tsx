@@ -1,7 +1,7 @@
 import { CREEP_FILTERS, isUsuallyDescending, type FleetChoices } from '../../contract/margins';
 import { MARGIN_SORTS } from '../../contract/standing';
 import { kilovoltsText } from '../../view/figures';
-import { MARGIN_COLUMN, MARGIN_COLUMNS, type MarginColumn } from '../../view/margin-columns';
+import { areUsual, MARGIN_COLUMN, MARGIN_COLUMNS, type MarginColumn } from '../../view/margin-columns';
 import {
   isFleetNarrowed,
   marginListParameters,
@@ -71,7 +71,7 @@ export function MarginFilters({ state, choices, shown }: MarginFiltersProps) {
 
 const saveParameters = (address: MarginAddress): string => {
   const asked = marginListParameters(address);
-  if (address.columns.length < MARGIN_COLUMNS.length) asked.set('columns', address.columns.join(','));
+  if (!areUsual(address.columns)) asked.set('columns', address.columns.join(','));
   return asked.toString();
 };
 
@@ -143,11 +143,10 @@ interface ColumnChoiceProps {
 }
 
 function ColumnChoice({ address: { columns }, onChoose }: ColumnChoiceProps) {
-  const all = columns.length === MARGIN_COLUMNS.length;
   return (
     <details className="relative">
       <summary className="button list-none [&::-webkit-details-marker]:hidden">
-        Columns{all ? '' : `, ${columns.length} of ${MARGIN_COLUMNS.length}`}
+        Columns{areUsual(columns) ? '' : `, ${columns.length} of ${MARGIN_COLUMNS.length}`}
       </summary>
       <fieldset className="panel absolute z-10 mt-1 grid w-max max-w-[80vw] gap-1 p-3">
         <legend className="sr-only">Columns shown</legend>
