@@ -54,7 +54,7 @@ const ORDER: Readonly<Record<StoredSort, SQL>> = {
   owner: sql`${line.owner}`,
 };
 
-/** Letter by letter: the database’s own comparison takes Böhm and bohm for one, which the register may not. */
+/** Told apart by every letter, as Forecast groups them: the database itself takes Böhm and bohm for one owner. */
 const ownerAsWritten = sql<string | null>`convert(${line.owner} using utf8mb4) collate utf8mb4_bin`;
 
 const { verdict: _verdict, ...FIGURES } = getTableColumns(standingVerdict);

@@ -3,3 +3,7 @@ export const ownerNames = (lines: readonly { readonly owner: string | null }[]):
   [...new Set(lines.flatMap(({ owner }) => owner ?? []))].sort((one, other) =>
     one.localeCompare(other, 'en', { numeric: true }),
   );
+
+/** What a filter by owner offers: the one chosen stays among them, else a list that it empties would seem unfiltered. */
+export const ownerChoices = (owners: readonly string[], chosen: string | undefined): readonly string[] =>
+  chosen === undefined || owners.includes(chosen) ? owners : [...owners, chosen];

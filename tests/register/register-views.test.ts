@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { RegisterLine } from '../../src/contract/register';
 import type { SettingsVersion } from '../../src/contract/settings-version';
-import { ownerNames } from '../../src/view/owner-names';
 import { chargingExample } from '../../src/view/register-charging';
 import type { Characteristic } from '../../src/protection/characteristic';
 import { schemeDrawing } from '../../src/view/register-drawing';
@@ -110,13 +109,6 @@ describe('the owner of a line', () => {
   it('comes back from the form as it went in', () => {
     for (const { line: one } of owned)
       expect(lineFromTyped(lineTyped(one))).toMatchObject({ value: { owner: one.owner }, problems: [] });
-  });
-
-  it('is offered to the form once however many lines it has', () => {
-    expect(ownerNames([...owned, ...owned].map(({ line: one }) => one))).toEqual([
-      'Pellwater Networks',
-      'Tarnside Transmission',
-    ]);
   });
 });
 

@@ -9,6 +9,8 @@ import {
   type MarginAddress,
 } from '../../view/margin-query';
 import { plainClick } from '../board/plain-click';
+import { OwnerFilter } from './OwnerFilter';
+import { Select } from './Select';
 import type { MarginAddressState } from './use-margin-address';
 
 interface MarginFiltersProps {
@@ -92,15 +94,7 @@ function Selects({ state: { address, choose }, choices }: Omit<MarginFiltersProp
         options={[['', 'all'], ...choices.voltagesKv.map((kv) => [`${kv}`, kilovoltsText(kv)] as const)]}
         onChoose={(value) => choose({ voltageKv: value === '' ? undefined : Number(value) })}
       />
-      {choices.owners.length > 0 && (
-        <Select
-          label="Owner"
-          name="owner"
-          value={address.owner ?? ''}
-          options={[['', 'all'], ...choices.owners.map((owner) => [owner, owner] as const)]}
-          onChoose={(value) => choose({ owner: value || undefined })}
-        />
-      )}
+      <OwnerFilter owners={choices.owners} chosen={address.owner} onChoose={(owner) => choose({ owner })} />
       <Select
         label="Drift"
         name="creep"
@@ -172,33 +166,5 @@ function ColumnChoice({ address: { columns }, onChoose }: ColumnChoiceProps) {
         ))}
       </fieldset>
     </details>
-  );
-}
-
-interface SelectProps {
-  label: string;
-  name: string;
-  value: string;
-  options: readonly (readonly [value: string, words: string])[];
-  onChoose: (value: string) => void;
-}
-
-export function Select({ label, name, value, options, onChoose }: SelectProps) {
-  return (
-    <label className="grid gap-0.5 text-caption text-ink-2">
-      {label}
-      <select
-        name={name}
-        value={value}
-        onChange={(event) => onChoose(event.target.value)}
-        className="field max-w-44 text-body"
-      >
-        {options.map(([key, words]) => (
-          <option key={key} value={key}>
-            {words}
-          </option>
-        ))}
-      </select>
-    </label>
   );
 }

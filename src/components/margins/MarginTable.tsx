@@ -94,7 +94,7 @@ const Row = memo(function Row({ row, columns, utilisation, site }: RowProps) {
 function OwnerCell({ owner }: { owner: string | null }) {
   return (
     <td className="wrap-anywhere max-lg:col-span-3 lg:min-w-32">
-      <span className="text-caption text-ink-2 lg:hidden">{MARGIN_COLUMN.owner.name} </span>
+      <span className="block text-caption text-ink-2 lg:hidden">{MARGIN_COLUMN.owner.name}</span>
       {owner ?? <span className="text-ink-2">not recorded</span>}
     </td>
   );
