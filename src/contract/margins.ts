@@ -16,13 +16,18 @@ export const marginFilterSchema = z.object({
   substation: keySchema.optional(),
   voltage: z.coerce.number('The voltage is a number.').positive('The voltage is above 0.').optional(),
   creep: z.enum(CREEP_FILTERS).optional(),
-  owner: z.string().trim().min(1).max(80, 'An owner’s name has at most 80 characters.').optional(),
+  owner: z
+    .string()
+    .trim()
+    .min(1, 'Give the owner’s name.')
+    .max(80, 'An owner’s name has at most 80 characters.')
+    .optional(),
 });
 export type MarginFilter = z.infer<typeof marginFilterSchema>;
 
 /** Figures are looked at from the largest down; names and dates from the first on. */
 export const isUsuallyDescending = (sort: MarginSort): boolean =>
-  sort !== 'lineName' && sort !== 'nearLikely';
+  sort !== 'lineName' && sort !== 'owner' && sort !== 'nearLikely';
 
 /** The query of GET /api/margins; without `descending` each column goes its usual way. */
 export const marginQuerySchema = marginFilterSchema

@@ -152,6 +152,7 @@ export const MARGIN_SORTS = [
   'mismatchAmps',
   'restAmps',
   'lineName',
+  'owner',
 ] as const;
 export const marginSortSchema = z.enum(MARGIN_SORTS);
 export type MarginSort = z.infer<typeof marginSortSchema>;

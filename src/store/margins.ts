@@ -51,7 +51,11 @@ const ORDER: Readonly<Record<StoredSort, SQL>> = {
   mismatchAmps: sql`${standingVerdict.mismatchAmps}`,
   restAmps: sql`${standingVerdict.restAmps}`,
   lineName: sql`${line.name}`,
+  owner: sql`${line.owner}`,
 };
+
+/** Told apart by every letter, as Forecast groups them: the database itself takes Böhm and bohm for one owner. */
+const ownerAsWritten = sql<string | null>`convert(${line.owner} using utf8mb4) collate utf8mb4_bin`;
 
 const { verdict: _verdict, ...FIGURES } = getTableColumns(standingVerdict);
 
@@ -321,10 +325,10 @@ export async function readFleetChoices(store: Store): Promise<{
     store.db.select().from(substation).orderBy(asc(substation.name)),
     store.db.selectDistinct({ kv: line.voltageKv }).from(line),
     store.db
-      .selectDistinct({ owner: line.owner })
+      .selectDistinct({ owner: ownerAsWritten })
       .from(line)
       .where(isNotNull(line.owner))
-      .orderBy(asc(line.owner)),
+      .orderBy(asc(ownerAsWritten)),
   ]);
   return {
     substations,
@@ -340,7 +344,7 @@ function filtered({ text, substation: at, voltage, creep, owner }: MarginFilter)
       .filter((word) => word !== '')
       .map(namesWord),
     at === undefined ? undefined : endsAt(sql`${terminal.substation} = ${at}`),
-    owner === undefined ? undefined : eq(line.owner, owner),
+    owner === undefined ? undefined : sql`${ownerAsWritten} = ${owner}`,
     voltage === undefined ? undefined : eq(line.voltageKv, voltage),
     creep === undefined
       ? undefined

@@ -128,8 +128,15 @@ export function forecastGroups(
     }
   return [...groups]
     .map(([key, group]) => ({ key, ...group }))
-    .sort((one, other) => one.name.localeCompare(other.name, 'en', { numeric: true }));
+    .sort(
+      (one, other) =>
+        Number(one.key === UNOWNED.key) - Number(other.key === UNOWNED.key) ||
+        one.name.localeCompare(other.name, 'en', { numeric: true }),
+    );
 }
+
+/** Stands behind the owners there are; its key is no owner's, since an owner has a name. */
+const UNOWNED = { key: '', name: 'owner not recorded' };
 
 function groupsOf(
   row: ForecastRow,
@@ -141,15 +148,9 @@ function groupsOf(
     case 'cause':
       return [causeGroup(row)];
     case 'owner':
-      return [{ key: row.line.owner ?? '', name: row.line.owner ?? 'owner not recorded' }];
+      return [row.line.owner === null ? UNOWNED : { key: row.line.owner, name: row.line.owner }];
   }
 }
-
-/** Owners of the lines listed, by name. */
-export const ownersOf = (lines: readonly ForecastLine[]): string[] =>
-  [...new Set(lines.flatMap(({ owner }) => owner ?? []))].sort((one, other) =>
-    one.localeCompare(other, 'en'),
-  );
 
 const causeGroup = ({ phase }: ForecastRow): { key: Cause; name: string } => ({
   key: phase.verdict.likelyCause,

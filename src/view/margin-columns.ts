@@ -4,6 +4,7 @@ import type { CsvCell } from './line-csv';
 
 /** Columns of the fleet's list beside the line itself, in the order in which they stand. */
 export const MARGIN_COLUMNS = [
+  'owner',
   'share',
   'level',
   'expected',
@@ -17,6 +18,15 @@ export const MARGIN_COLUMNS = [
   'forecast',
 ] as const;
 export type MarginColumn = (typeof MARGIN_COLUMNS)[number];
+export type MarginFigure = Exclude<MarginColumn, 'owner'>;
+
+export const isMarginFigure = (column: MarginColumn): column is MarginFigure => column !== 'owner';
+
+/** Shown unless others are chosen: the owner says nothing of a margin, and the figures need the width. */
+export const USUAL_COLUMNS: readonly MarginColumn[] = MARGIN_COLUMNS.filter(isMarginFigure);
+
+export const areUsual = (columns: readonly MarginColumn[]): boolean =>
+  columns.join() === USUAL_COLUMNS.join();
 
 export interface MarginColumnFacts {
   /** the name in full, for the saved file, the choices and a narrow screen */
@@ -27,6 +37,9 @@ export interface MarginColumnFacts {
   /** what the column says, in full */
   readonly meaning: string;
   readonly sort: MarginSort;
+}
+
+export interface MarginFigureFacts extends MarginColumnFacts {
   readonly unit: string;
   /** the figure in the saved file: amperes, per cent, a day */
   readonly saved: (row: MarginRow) => CsvCell;
@@ -35,7 +48,7 @@ export interface MarginColumnFacts {
 const tenth = (value: number | null): CsvCell => (value === null ? null : Math.round(value * 10) / 10);
 const perCent = (ratio: number | null): CsvCell => (ratio === null ? null : Math.round(ratio * 1000) / 10);
 
-export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = {
+export const MARGIN_FIGURE: Readonly<Record<MarginFigure, MarginFigureFacts>> = {
   share: {
     name: 'share of pickup',
     head: 'share of pickup',
@@ -132,11 +145,21 @@ export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = 
   },
 };
 
-/** The columns of an address; all of them when it names none that there is. */
+export const MARGIN_COLUMN: Readonly<Record<MarginColumn, MarginColumnFacts>> = {
+  owner: {
+    name: 'owner',
+    head: 'owner',
+    meaning: 'Who owns the line and answers for its protection',
+    sort: 'owner',
+  },
+  ...MARGIN_FIGURE,
+};
+
+/** The columns of an address; the usual ones when it names none that there is. */
 export function marginColumnsOf(asked: string | null): readonly MarginColumn[] {
   const named = (asked ?? '').split(',');
   const chosen = MARGIN_COLUMNS.filter((column) => named.includes(column));
-  return chosen.length === 0 ? MARGIN_COLUMNS : chosen;
+  return chosen.length === 0 ? USUAL_COLUMNS : chosen;
 }
 
 /** A dash on the screen where there is no figure: the row has many, and the head says what is missing. */
@@ -147,7 +170,7 @@ const markedText = (ratio: number | null, nearRatio: number): string =>
   orDash(percentOfMarkText(ratio, ratio !== null && ratio < nearRatio ? nearRatio : 1));
 
 /** A row's figures as they stand in the list. */
-export function marginText(row: MarginRow, column: MarginColumn, nearRatio: number): string {
+export function marginText(row: MarginRow, column: MarginFigure, nearRatio: number): string {
   switch (column) {
     case 'share':
       return markedText(row.shareOfPickup, nearRatio);

@@ -1,6 +1,6 @@
 import type { MarginRow } from '../contract/standing';
 import { csvText } from './line-csv';
-import { MARGIN_COLUMN, type MarginColumn } from './margin-columns';
+import { isMarginFigure, MARGIN_FIGURE, type MarginColumn, type MarginFigure } from './margin-columns';
 import type { PhaseLetters } from './site-custom';
 
 /** What every saved row begins with, and the cause that ends it. */
@@ -11,11 +11,14 @@ export const marginCsvHead = (columns: readonly MarginColumn[]): string =>
   csvText(
     [
       ...OWN,
-      ...columns.map((column) => `${MARGIN_COLUMN[column].name} (${MARGIN_COLUMN[column].unit})`),
+      ...figuresOf(columns).map((figure) => `${MARGIN_FIGURE[figure].name} (${MARGIN_FIGURE[figure].unit})`),
       ...LAST,
     ],
     [],
   );
+
+/** The owner is in the file in any case, with what else tells the lines apart. */
+const figuresOf = (columns: readonly MarginColumn[]): MarginFigure[] => columns.filter(isMarginFigure);
 
 /** Rows without a head, so that pieces can be put behind one another. */
 export function marginCsvRows(
@@ -24,13 +27,14 @@ export function marginCsvRows(
   letters: PhaseLetters,
 ): string {
   if (rows.length === 0) return '';
+  const figures = figuresOf(columns);
   const lines = rows.map((row) => [
     row.lineName,
     row.line,
     letters[row.phase],
     row.voltageKv,
     row.owner,
-    ...columns.map((column) => MARGIN_COLUMN[column].saved(row)),
+    ...figures.map((figure) => MARGIN_FIGURE[figure].saved(row)),
     row.likelyCause,
     row.computedAt,
   ]);

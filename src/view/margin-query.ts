@@ -1,6 +1,6 @@
 import { CREEP_FILTERS, isUsuallyDescending, type CreepFilter, type MarginQuery } from '../contract/margins';
 import { MARGIN_SORTS, type MarginSort } from '../contract/standing';
-import { MARGIN_COLUMNS, marginColumnsOf, type MarginColumn } from './margin-columns';
+import { areUsual, marginColumnsOf, USUAL_COLUMNS, type MarginColumn } from './margin-columns';
 
 /** What the Margins page shows and how; kept in the address. */
 export interface MarginAddress {
@@ -24,7 +24,7 @@ export const WHOLE_FLEET: MarginAddress = {
   owner: undefined,
   sort: 'shareOfPickup',
   descending: true,
-  columns: MARGIN_COLUMNS,
+  columns: USUAL_COLUMNS,
   points: 'worst',
 };
 
@@ -74,7 +74,7 @@ export function marginListParameters(address: MarginAddress): URLSearchParams {
 /** "" for the whole fleet, else "?…" with only what differs from it. */
 export function marginSearch(address: MarginAddress): string {
   const chosen = marginListParameters(address);
-  if (address.columns.length < MARGIN_COLUMNS.length) chosen.set('columns', address.columns.join(','));
+  if (!areUsual(address.columns)) chosen.set('columns', address.columns.join(','));
   if (address.points !== 'worst') chosen.set('points', address.points);
   const search = chosen.toString().replaceAll('%2C', ',');
   return search === '' ? '' : `?${search}`;

@@ -3,7 +3,15 @@ import type { SettingsVersion } from '../contract/settings-version';
 import { ampsText, dateText, kilovoltsText } from './figures';
 import { goesByText, lengthAndKindText } from './register-words';
 
-export const REGISTER_SORTS = ['name', 'voltage', 'length', 'rating', 'terminals', 'settings'] as const;
+export const REGISTER_SORTS = [
+  'name',
+  'voltage',
+  'length',
+  'rating',
+  'terminals',
+  'owner',
+  'settings',
+] as const;
 export type RegisterSort = (typeof REGISTER_SORTS)[number];
 
 /** What of the register a list shows: its state, as the address keeps it. */
@@ -22,6 +30,8 @@ export interface RegisterRow {
   readonly lengthAndKind: string;
   readonly rating: string;
   readonly terminals: readonly { readonly key: string; readonly name: string; readonly inService: boolean }[];
+  /** undefined when not recorded */
+  readonly owner: string | undefined;
   readonly goesBy: string;
   readonly inService: boolean;
   /** "since 12 May 2025", or undefined when nothing is in force and the line is not evaluated */
@@ -60,7 +70,7 @@ export function registerListAddress(
   return query === '' ? '/register' : `/register?${query}`;
 }
 
-/** The lines that a state asks for, in its order. A search looks at names, keys, substations, voltage and kind. */
+/** The lines that a state asks for, in its order. A search looks at names, keys, substations, owners, voltage and kind. */
 export function registerRows(
   lines: readonly ListedLine[],
   state: RegisterListState,
@@ -79,7 +89,8 @@ function searchedText({ line }: ListedLine): string {
   const substations = line.terminals.map(
     ({ substation, substationName }) => `${substation} ${substationName}`,
   );
-  return [line.name, line.key, ...substations, `${line.voltageKv} kV`, `${line.voltageKv}kV`, line.kind]
+  const voltage = [`${line.voltageKv} kV`, `${line.voltageKv}kV`];
+  return [line.name, line.key, ...substations, line.owner ?? '', ...voltage, line.kind]
     .join(' ')
     .toLowerCase();
 }
@@ -100,6 +111,9 @@ function compared(one: ListedLine, other: ListedLine, sort: RegisterSort): numbe
       return by(({ line }) => line.ratingAmps);
     case 'terminals':
       return by(({ line }) => line.terminals.length);
+    case 'owner':
+      // As with settings, what is not recorded comes first
+      return (one.line.owner ?? '').localeCompare(other.line.owner ?? '', 'en', { numeric: true });
     case 'settings':
       // A line without settings comes first: it is what somebody must see to
       return by(({ inForce }) => (inForce === undefined ? 0 : Date.parse(inForce.validFrom)));
@@ -118,6 +132,7 @@ function row({ line, inForce }: ListedLine, timeZone: string): RegisterRow {
       name: substationName,
       inService,
     })),
+    owner: line.owner ?? undefined,
     goesBy: goesByText(line.goesBy),
     inService: line.inService,
     hasTransformer: line.inZoneTransformer !== null,

@@ -23,7 +23,7 @@ export const lengthAndKindText = ({ lengthKm, kind }: Pick<RegisterLine, 'length
 export const goesByText = (goesBy: RegisterLine['goesBy']): string =>
   goesBy === 'phasors' ? 'phasors' : 'reported magnitudes';
 
-/** "380 kV · 71 km overhead · 1200 A, emergency 1440 A · two terminals" */
+/** "380 kV · 71 km overhead · 1200 A, emergency 1440 A · two terminals · of Tarnside Transmission" */
 export function lineFactsText(line: RegisterLine): string {
   const ratings = `${ampsText(line.ratingAmps)}, emergency ${ampsText(line.emergencyRatingAmps)}`;
   return [
@@ -31,6 +31,7 @@ export function lineFactsText(line: RegisterLine): string {
     lengthAndKindText(line),
     ratings,
     terminalCountText(line.terminals.length),
+    ...(line.owner === null ? [] : [`of ${line.owner}`]),
   ].join(' · ');
 }
 

@@ -133,6 +133,14 @@ describe('the owner of a line', () => {
     expect(taken.changes).toMatchObject([{ kind: 'line', patch: { owner: null } }]);
   });
 
+  it('that is a formula to a spreadsheet comes back as it was, and one too long is named by its column', () => {
+    const owned = [{ ...register[0]!, owner: '=Pell,"water"' }];
+    expect(registerPlan(registerFile('lines', owned), owned)).toMatchObject({ problems: [], changes: [] });
+    expect(problemsOf(file('lines', { owner: 'x'.repeat(81) }))).toEqual([
+      '2 owner: A name has at most 80 characters.',
+    ]);
+  });
+
   it('stays as it is by a file from before there was such a column', () => {
     const owned = [{ ...register[0]!, owner: 'Pellwater' }];
     const at = COLUMNS.lines.indexOf('owner');

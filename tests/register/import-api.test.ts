@@ -69,6 +69,38 @@ describe('the import', () => {
     expect((await readRegister(store))[0]?.lengthKm).toBe(43);
   });
 
+  it('tells the owner that it would record before it records it', async () => {
+    expect(await exported('lines')).toContain(',owner,');
+    const body = (await exported('lines')).replace(',yes,no,,', ',yes,no,Pellwater Networks,');
+    const ownerNow = async () => (await readRegister(store))[0]?.owner;
+    const row = { row: 2, outcome: 'changed', fields: ['owner'] };
+    expect(await imported({ body })).toMatchObject({ body: { written: false, problems: [], rows: [row] } });
+    expect(await ownerNow()).toBeNull();
+    expect(await imported({ body, query: '?dry=false' })).toMatchObject({
+      body: { written: true, rows: [row] },
+    });
+    expect(await ownerNow()).toBe('Pellwater Networks');
+    const emptied = (await exported('lines')).replace('Pellwater Networks', '');
+    expect(await imported({ body: emptied, query: '?dry=false' })).toMatchObject({ body: { rows: [row] } });
+    expect(await ownerNow()).toBeNull();
+  });
+
+  it('leaves the owners as they are by a file that has no such column', async () => {
+    const owned = (await exported('lines')).replace(',yes,no,,', ',yes,no,Pellwater Networks,');
+    await imported({ body: owned, query: '?dry=false' });
+    const body = (await exported('lines'))
+      .replace(',owner,', ',')
+      .replace('Pellwater Networks,', '')
+      .replace('42.5', '43');
+    expect(await imported({ body, query: '?dry=false' })).toMatchObject({
+      body: { written: true, problems: [], rows: [{ outcome: 'changed', fields: ['length_km'] }] },
+    });
+    expect((await readRegister(store))[0]).toMatchObject({ owner: 'Pellwater Networks', lengthKm: 43 });
+    await store.db.delete(line);
+    expect(await imported({ body, query: '?dry=false' })).toMatchObject({ body: { written: true } });
+    expect((await readRegister(store))[0]).toMatchObject({ key: 'arden-birk', owner: null });
+  });
+
   it('takes the file as part of a form too', async () => {
     const form = new FormData();
     form.set('file', new File([await exported('terminals')], 'terminals.csv'));

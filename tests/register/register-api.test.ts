@@ -72,6 +72,45 @@ describe('a script', () => {
   });
 });
 
+describe('the owner of a line', () => {
+  const patched = async (owner: unknown) =>
+    answerOf(store, patchLine, asEngineer({ params, body: { owner } }));
+
+  it('is null until it is given, stays when a patch leaves it out, and is taken away by null', async () => {
+    expect(await answerOf(store, postLine, asEngineer({ body: lineSent() }))).toMatchObject({
+      body: { owner: null },
+    });
+    expect(await patched(' Pellwater Networks ')).toMatchObject({
+      status: 200,
+      body: { owner: 'Pellwater Networks' },
+    });
+    const other = await answerOf(store, patchLine, asEngineer({ params, body: { lengthKm: 43 } }));
+    expect(other).toMatchObject({ body: { lengthKm: 43, owner: 'Pellwater Networks' } });
+    expect(await patched(null)).toMatchObject({ status: 200, body: { owner: null } });
+  });
+
+  it('may come with a new line', async () => {
+    const sent = lineSent({ owner: 'Tarnside Transmission' });
+    const { body } = await answerOf(store, postLine, asEngineer({ body: sent }));
+    expect(registerLineSchema.parse(body).owner).toBe('Tarnside Transmission');
+  });
+
+  it('has a name of at most 80 characters', async () => {
+    await answerOf(store, postLine, asEngineer({ body: lineSent({ owner: 'Pellwater Networks' }) }));
+    for (const [owner, problem] of [
+      [' ', 'Give the owner’s name.'],
+      ['x'.repeat(81), 'A name has at most 80 characters.'],
+    ]) {
+      const { status, body } = await patched(owner);
+      expect([status, fieldsOf(body)]).toEqual([400, { owner: problem }]);
+    }
+    expect((await patched(7)).status).toBe(400);
+    expect(await answerOf(store, getLine, asEngineer({ params }))).toMatchObject({
+      body: { owner: 'Pellwater Networks' },
+    });
+  });
+});
+
 describe('a refusal', () => {
   it('names every field with a sentence', async () => {
     const sent = lineSent({

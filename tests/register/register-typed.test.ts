@@ -70,6 +70,19 @@ describe('a line as typed', () => {
     });
   });
 
+  it('takes the owner without the blanks around it, and none for an empty field', () => {
+    const ownerOf = (owner: string) => {
+      const { value } = lineFromTyped({ ...lineTyped, owner });
+      return newLineSchema.parse({ ...value, key: lineTyped.key }).owner;
+    };
+    expect(['  Pellwater Networks ', '', '   '].map(ownerOf)).toEqual(['Pellwater Networks', null, null]);
+    const { value } = lineFromTyped({ ...lineTyped, owner: 'x'.repeat(81) });
+    const long = newLineSchema.safeParse({ ...value, key: lineTyped.key });
+    expect(long.error?.issues.map(({ path, message }) => [path.join('.'), message])).toEqual([
+      ['owner', 'A name has at most 80 characters.'],
+    ]);
+  });
+
   it('does not guess whether 1,200 is a thousand or a little over one', () => {
     const { problems } = lineFromTyped({ ...lineTyped, ratingAmps: '1,200' });
     expect(problems).toEqual([

@@ -10,7 +10,9 @@ import {
   registerListState,
   registerRows,
 } from '../../src/view/register-list';
-import { characteristicText, hindrances } from '../../src/view/register-words';
+import { lineTyped } from '../../src/view/register-standing';
+import { lineFromTyped } from '../../src/view/register-typed';
+import { characteristicText, hindrances, lineFactsText } from '../../src/view/register-words';
 import { newLine, settingsSent } from './made-up-line';
 
 const version = {
@@ -74,6 +76,39 @@ describe('the list of lines', () => {
       sort: 'length',
       descending: true,
     });
+  });
+});
+
+describe('the owner of a line', () => {
+  const owned = [
+    { line: line({ key: 'a', name: 'A', owner: 'Tarnside Transmission' }), inForce: version },
+    { line: line({ key: 'b', name: 'B' }), inForce: version },
+    { line: line({ key: 'c', name: 'C', owner: 'Pellwater Networks' }), inForce: version },
+  ];
+  const found = (query: string) =>
+    registerRows(owned, registerListState(new URLSearchParams(query)), 'UTC').map(({ key, owner }) => [
+      key,
+      owner,
+    ]);
+
+  it('is listed, searched and sorted by, a line without one first', () => {
+    expect(found('sort=owner')).toEqual([
+      ['b', undefined],
+      ['c', 'Pellwater Networks'],
+      ['a', 'Tarnside Transmission'],
+    ]);
+    expect(found('sort=-owner').map(([key]) => key)).toEqual(['a', 'c', 'b']);
+    expect(found('q=pellwater').map(([key]) => key)).toEqual(['c']);
+  });
+
+  it('stands among the facts where it is recorded', () => {
+    expect(lineFactsText(owned[0]!.line)).toMatch(/ · two terminals · of Tarnside Transmission$/);
+    expect(lineFactsText(owned[1]!.line)).toMatch(/ · two terminals$/);
+  });
+
+  it('comes back from the form as it went in', () => {
+    for (const { line: one } of owned)
+      expect(lineFromTyped(lineTyped(one))).toMatchObject({ value: { owner: one.owner }, problems: [] });
   });
 });
 

@@ -1,3 +1,4 @@
+import { eq } from 'drizzle-orm';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { MARGINS_A_PAGE, marginQuerySchema, marginScatterSchema } from '../../src/contract/margins';
 import { MARGIN_SORTS, marginListSchema, type MarginList, type MarginRow } from '../../src/contract/standing';
@@ -6,6 +7,8 @@ import { GET as getCsv } from '../../src/pages/api/margins/export.csv';
 import { GET as getScatter } from '../../src/pages/api/margins/scatter';
 import type { Site } from '../../src/server/site';
 import { readMarginList } from '../../src/server/reading/margins';
+import { readFleetChoices } from '../../src/store/margins';
+import { line } from '../../src/store/schema/register';
 import { testStore } from '../database';
 import { madeUpLineOf, ownerAt, storedFleet } from '../store/made-up-fleet';
 import type { APIContext } from 'astro';
@@ -79,6 +82,7 @@ const FIGURE: Record<(typeof MARGIN_SORTS)[number], (row: MarginRow) => number |
   mismatchAmps: (row) => row.mismatchAmps,
   restAmps: (row) => row.restAmps,
   lineName: (row) => row.lineName,
+  owner: (row) => row.owner,
 };
 
 async function everyRow(query: string): Promise<MarginRow[]> {
@@ -177,11 +181,27 @@ describe('the filters', () => {
     expect((await list('?owner=Nobody')).total).toBe(0);
   });
 
+  it('offer each owner once and tell owners apart by every letter', async () => {
+    const owner = ownerAt(220)!;
+    expect((await readFleetChoices(store)).owners).toEqual([ownerAt(380), owner]);
+    const before = (await list(`?owner=${owner}`)).total;
+    const ofOne = eq(line.key, madeUpLineOf(1).key);
+    const alike = 'HÖLM networks';
+    await store.db.update(line).set({ owner: alike }).where(ofOne);
+    const choices = await readFleetChoices(store);
+    const totals = [(await list(`?owner=${alike}`)).total, (await list(`?owner=${owner}`)).total];
+    await store.db.update(line).set({ owner }).where(ofOne);
+    expect(new Set(choices.owners)).toEqual(new Set([ownerAt(380), owner, alike]));
+    expect(totals).toEqual([3, before - 3]);
+  });
+
   it('are refused with the field named when they cannot be taken', async () => {
     const answer = await called(getMargins, '?sort=colour&voltage=high&creep=perhaps&after=-1');
     expect(answer.status).toBe(400);
     const { fields } = (await answer.json()) as { fields: { field: string }[] };
     expect(fields.map(({ field }) => field).sort()).toEqual(['after', 'creep', 'sort', 'voltage']);
+    const nameless = await called(getMargins, `?owner=${'x'.repeat(81)}`);
+    expect([nameless.status, await nameless.json()]).toMatchObject([400, { fields: [{ field: 'owner' }] }]);
   });
 });
 
@@ -196,6 +216,14 @@ describe('the scatter', () => {
     expect(point[2]).toBeCloseTo(row.chargingAmps! / row.pickupAmps!, 3);
     expect(point[3]).toBeCloseTo(row.mismatchAmps! / row.pickupAmps!, 3);
     expect(point[4]).toBeCloseTo(row.shareOfPickup!, 3);
+  });
+
+  it('follows the filter by owner', async () => {
+    const query = `owner=${encodeURIComponent(ownerAt(380)!)}`;
+    const scatter = marginScatterSchema.parse(await (await called(getScatter, `?${query}`)).json());
+    const rows = (await everyRow(query)).filter((row) => row.chargingAmps !== null);
+    expect(scatter.points.length).toBe(rows.length);
+    expect(new Set(scatter.lines.map(([key]) => key))).toEqual(new Set(rows.map((row) => row.line)));
   });
 });
 
@@ -212,6 +240,17 @@ describe('the saved file', () => {
     const levels = lines.slice(1).map((one) => Number(one.split(',')[5]));
     expect(levels).toEqual(levels.toSorted((one, other) => other - one));
     expect(lines[1]).toMatch(/,L[123],/);
+  });
+
+  it('holds one owner’s rows alone where the list does, and names the owner once', async () => {
+    const owner = ownerAt(380)!;
+    const answer = await called(getCsv, `?owner=${encodeURIComponent(owner)}&columns=owner,level`);
+    const [head, ...rows] = (await answer.text()).trimEnd().split('\r\n');
+    expect(head!.split(',').filter((name) => name === 'owner')).toHaveLength(1);
+    expect(rows.length).toBe((await list('?voltage=380')).total);
+    expect(rows.every((row) => row.split(',')[4] === owner)).toBe(true);
+    const unowned = await (await called(getCsv, '?voltage=110&columns=level')).text();
+    expect(unowned.split('\r\n')[1]!.split(',')[4]).toBe('');
   });
 });
 
@@ -234,8 +273,11 @@ describe(`with ${MANY_LINES} lines of three phases`, () => {
   const QUESTIONS: readonly (readonly [string, typeof getMargins, string])[] = [
     ...MARGIN_SORTS.map((sort) => [`list by ${sort}`, getMargins, `?sort=${sort}`] as const),
     ['list, last page', getMargins, `?sort=levelAmps&after=${3 * MANY_LINES - 50}`],
+    ['list, one owner’s, last page', getMargins, '?owner=Holm+Networks&sort=owner&after=1950'],
+    ['list, one owner’s by utilisation', getMargins, '?owner=Holm+Networks&sort=utilisation'],
     ['list, filtered', getMargins, '?text=esk&substation=holm&voltage=220&creep=none&owner=Holm+Networks'],
     ['scatter', getScatter, ''],
+    ['scatter, one owner’s', getScatter, '?owner=Holm+Networks'],
   ];
 
   it(`every question is answered within ${LIMIT_MS} ms`, async () => {

@@ -184,6 +184,28 @@ describe('changing a line', () => {
     });
   });
 
+  it('records who owns it and takes that away again, each before and after in the audit trail', async () => {
+    await insertLine(store, newLine(), editing);
+    const patched = async (owner: string | null) => {
+      const edit = await patchLine(store, { key: 'arden-birk', patch: { owner } }, editing);
+      return [edit.ok && edit.line.owner, (await audited())?.detail];
+    };
+    expect(await patched('Pellwater Networks')).toEqual([
+      'Pellwater Networks',
+      { before: { owner: null }, after: { owner: 'Pellwater Networks' } },
+    ]);
+    expect(await patched(null)).toEqual([
+      null,
+      { before: { owner: 'Pellwater Networks' }, after: { owner: null } },
+    ]);
+    const revision = await readRegisterRevision(store);
+    await patched(null);
+    expect(await readRegisterRevision(store)).toBe(revision);
+    await insertLine(store, newLine({ key: 'corl-dorn', owner: 'Tarnside Transmission' }), editing);
+    expect((await audited())?.detail).toMatchObject({ owner: 'Tarnside Transmission' });
+    expect((await readRegisterLine(store, 'corl-dorn'))?.owner).toBe('Tarnside Transmission');
+  });
+
   it('holds a rating against the emergency rating that stands', async () => {
     await insertLine(store, newLine(), editing);
     const refused = await patchLine(store, { key: 'arden-birk', patch: { ratingAmps: 1300 } }, editing);

@@ -2,9 +2,10 @@ import { describe, expect, it } from 'vitest';
 import type { ForecastLine } from '../../src/contract/forecast-list';
 import type { StandingVerdict } from '../../src/contract/standing';
 import { forecastAxis, forecastRange } from '../../src/view/forecast-axis';
-import { forecastGroups, forecastRow, forecastSections, ownersOf } from '../../src/view/forecast-list';
+import { forecastGroups, forecastRow, forecastSections } from '../../src/view/forecast-list';
 import { forecastSearch, parseForecastAddress, WHOLE_FORECAST } from '../../src/view/forecast-query';
 import { forecastSentence, phaseWords, unlistedWords } from '../../src/view/forecast-words';
+import { ownerNames } from '../../src/view/owner-names';
 import { madeUpVerdict } from '../store/made-up-fleet';
 import { AT_MS, SITE } from './sample-lines';
 
@@ -140,11 +141,11 @@ describe('where a line stands', () => {
     ];
     const rows = lines.map(rowOf);
     expect(forecastGroups(rows, 'owner').map(({ name, rows: own }) => [name, own.length])).toEqual([
-      ['owner not recorded', 1],
       ['Pellwater', 1],
       ['Tarnside', 2],
+      ['owner not recorded', 1],
     ]);
-    expect(ownersOf(lines)).toEqual(['Pellwater', 'Tarnside']);
+    expect(ownerNames(lines)).toEqual(['Pellwater', 'Tarnside']);
     const { coming } = forecastSections(rows, { ...WHOLE_FORECAST, owner: 'Tarnside' });
     expect(coming.map(({ line }) => line.key)).toEqual(['four', 'one']);
   });

@@ -48,6 +48,12 @@ describe('the facts beside a name', () => {
     ]);
   });
 
+  it('name the owner where one is recorded', () => {
+    expect(lineFacts(lineWith({ owner: 'Tarnside Transmission' }), context)).toContain(
+      'of Tarnside Transmission',
+    );
+  });
+
   it('name what makes a line special, and that settings are missing', () => {
     const special = lineWith({
       seriesCompensated: true,

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { marginQuerySchema } from '../../src/contract/margins';
+import { MARGIN_COLUMNS } from '../../src/view/margin-columns';
 import { marginOrder } from '../../src/view/margin-order';
 import {
   marginListParameters,
@@ -29,6 +30,13 @@ describe('the address of the margins', () => {
   it('comes back as it was, and is empty for the whole fleet', () => {
     expect(parseMarginAddress(marginSearch(NARROWED))).toEqual(NARROWED);
     expect(marginSearch(WHOLE_FLEET)).toBe('');
+    const owned: MarginAddress = {
+      ...WHOLE_FLEET,
+      sort: 'owner',
+      descending: false,
+      columns: MARGIN_COLUMNS,
+    };
+    expect(parseMarginAddress(marginSearch(owned))).toEqual(owned);
   });
 
   it('asks the endpoint for what the page asks the store', () => {
@@ -42,9 +50,15 @@ describe('the address of the margins', () => {
     expect(parseMarginAddress(strange)).toEqual(WHOLE_FLEET);
   });
 
+  it('shows the owner when that is chosen, and not otherwise', () => {
+    expect(WHOLE_FLEET.columns).toEqual(MARGIN_COLUMNS.filter((column) => column !== 'owner'));
+    expect(parseMarginAddress('?columns=level,owner').columns).toEqual(['owner', 'level']);
+  });
+
   it('turns the order round when the same head is chosen again', () => {
     expect(sortedBy(WHOLE_FLEET, 'shareOfPickup').descending).toBe(false);
     expect(sortedBy(WHOLE_FLEET, 'nearLikely')).toMatchObject({ sort: 'nearLikely', descending: false });
+    expect(sortedBy(WHOLE_FLEET, 'owner')).toMatchObject({ sort: 'owner', descending: false });
   });
 });
 

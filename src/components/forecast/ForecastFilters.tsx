@@ -8,7 +8,8 @@ import {
   type ForecastAddress,
 } from '../../view/forecast-query';
 import { plainClick } from '../board/plain-click';
-import { Select } from '../margins/MarginFilters';
+import { OwnerFilter } from '../margins/OwnerFilter';
+import { Select } from '../margins/Select';
 import type { ForecastAddressState } from './use-forecast-address';
 
 interface ForecastFiltersProps {
@@ -61,15 +62,7 @@ export function ForecastFilters({
         options={[['', 'all'], ...CAUSES.map((cause) => [cause, shortCauseName(cause)] as const)]}
         onChoose={(value) => choose({ cause: CAUSES.find((cause) => cause === value) })}
       />
-      {owners.length > 0 && (
-        <Select
-          label="Owner"
-          name="owner"
-          value={address.owner ?? ''}
-          options={[['', 'all'], ...owners.map((owner) => [owner, owner] as const)]}
-          onChoose={(value) => choose({ owner: value || undefined })}
-        />
-      )}
+      <OwnerFilter owners={owners} chosen={address.owner} onChoose={(owner) => choose({ owner })} />
       <Select
         label="Sort by"
         name="sort"

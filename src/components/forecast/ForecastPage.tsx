@@ -1,10 +1,11 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import type { ForecastList } from '../../contract/forecast-list';
-import { forecastRow, forecastSections, ownersOf, type ForecastRow } from '../../view/forecast-list';
+import { forecastRow, forecastSections, type ForecastRow } from '../../view/forecast-list';
 import { isForecastNarrowed, WHOLE_FORECAST } from '../../view/forecast-query';
 import { forecastSentence, unlistedWords } from '../../view/forecast-words';
 import { capital } from '../../view/margin-sentence';
+import { ownerNames } from '../../view/owner-names';
 import type { SiteCustom } from '../../view/site-custom';
 import { plainClick } from '../board/plain-click';
 import { OpenFollowUps } from '../follow-ups/OpenFollowUps';
@@ -57,7 +58,7 @@ function Forecast({ list, site, search, mayKeep }: ForecastPageProps) {
         )}
       </p>
       {rows.length > 0 && (
-        <ForecastFilters state={state} substations={endsOf(rows)} owners={ownersOf(list.lines)} />
+        <ForecastFilters state={state} substations={endsOf(rows)} owners={ownerNames(list.lines)} />
       )}
       {rows.length > 0 && shown === 0 && isForecastNarrowed(state.address) && (
         <p className="mt-8">

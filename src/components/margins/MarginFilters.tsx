@@ -1,7 +1,7 @@
 import { CREEP_FILTERS, isUsuallyDescending, type FleetChoices } from '../../contract/margins';
 import { MARGIN_SORTS } from '../../contract/standing';
 import { kilovoltsText } from '../../view/figures';
-import { MARGIN_COLUMN, MARGIN_COLUMNS, type MarginColumn } from '../../view/margin-columns';
+import { areUsual, MARGIN_COLUMN, MARGIN_COLUMNS, type MarginColumn } from '../../view/margin-columns';
 import {
   isFleetNarrowed,
   marginListParameters,
@@ -9,6 +9,8 @@ import {
   type MarginAddress,
 } from '../../view/margin-query';
 import { plainClick } from '../board/plain-click';
+import { OwnerFilter } from './OwnerFilter';
+import { Select } from './Select';
 import type { MarginAddressState } from './use-margin-address';
 
 interface MarginFiltersProps {
@@ -71,7 +73,7 @@ export function MarginFilters({ state, choices, shown }: MarginFiltersProps) {
 
 const saveParameters = (address: MarginAddress): string => {
   const asked = marginListParameters(address);
-  if (address.columns.length < MARGIN_COLUMNS.length) asked.set('columns', address.columns.join(','));
+  if (!areUsual(address.columns)) asked.set('columns', address.columns.join(','));
   return asked.toString();
 };
 
@@ -92,15 +94,7 @@ function Selects({ state: { address, choose }, choices }: Omit<MarginFiltersProp
         options={[['', 'all'], ...choices.voltagesKv.map((kv) => [`${kv}`, kilovoltsText(kv)] as const)]}
         onChoose={(value) => choose({ voltageKv: value === '' ? undefined : Number(value) })}
       />
-      {choices.owners.length > 0 && (
-        <Select
-          label="Owner"
-          name="owner"
-          value={address.owner ?? ''}
-          options={[['', 'all'], ...choices.owners.map((owner) => [owner, owner] as const)]}
-          onChoose={(value) => choose({ owner: value || undefined })}
-        />
-      )}
+      <OwnerFilter owners={choices.owners} chosen={address.owner} onChoose={(owner) => choose({ owner })} />
       <Select
         label="Drift"
         name="creep"
@@ -143,11 +137,10 @@ interface ColumnChoiceProps {
 }
 
 function ColumnChoice({ address: { columns }, onChoose }: ColumnChoiceProps) {
-  const all = columns.length === MARGIN_COLUMNS.length;
   return (
     <details className="relative">
       <summary className="button list-none [&::-webkit-details-marker]:hidden">
-        Columns{all ? '' : `, ${columns.length} of ${MARGIN_COLUMNS.length}`}
+        Columns{areUsual(columns) ? '' : `, ${columns.length} of ${MARGIN_COLUMNS.length}`}
       </summary>
       <fieldset className="panel absolute z-10 mt-1 grid w-max max-w-[80vw] gap-1 p-3">
         <legend className="sr-only">Columns shown</legend>
@@ -173,33 +166,5 @@ function ColumnChoice({ address: { columns }, onChoose }: ColumnChoiceProps) {
         ))}
       </fieldset>
     </details>
-  );
-}
-
-interface SelectProps {
-  label: string;
-  name: string;
-  value: string;
-  options: readonly (readonly [value: string, words: string])[];
-  onChoose: (value: string) => void;
-}
-
-export function Select({ label, name, value, options, onChoose }: SelectProps) {
-  return (
-    <label className="grid gap-0.5 text-caption text-ink-2">
-      {label}
-      <select
-        name={name}
-        value={value}
-        onChange={(event) => onChoose(event.target.value)}
-        className="field max-w-44 text-body"
-      >
-        {options.map(([key, words]) => (
-          <option key={key} value={key}>
-            {words}
-          </option>
-        ))}
-      </select>
-    </label>
   );
 }

@@ -51,7 +51,7 @@ function Head({ column, address, rows }: HeadProps) {
     <th
       scope="col"
       rowSpan={rows}
-      className={`align-bottom! ${column === 'share' ? '' : 'figure'}`}
+      className={`align-bottom! ${column === 'share' || column === 'owner' ? '' : 'figure'}`}
       aria-sort={ariaSort(address, sort)}
     >
       <SortLink address={address} sort={sort} head={head} meaning={meaning} />

@@ -3,7 +3,7 @@ import type { Condition } from '../../contract/condition';
 import type { Result } from '../../contract/result';
 import type { MarginRow } from '../../contract/standing';
 import { kilovoltsText } from '../../view/figures';
-import { MARGIN_COLUMN, marginText, type MarginColumn } from '../../view/margin-columns';
+import { MARGIN_COLUMN, marginText, type MarginColumn, type MarginFigure } from '../../view/margin-columns';
 import { liveUtilisation } from '../../view/margin-utilisation';
 import type { SiteCustom } from '../../view/site-custom';
 import { ConditionShape } from '../marks/ConditionMark';
@@ -79,7 +79,9 @@ const Row = memo(function Row({ row, columns, utilisation, site }: RowProps) {
         </span>
       </th>
       {columns.map((column) =>
-        column === 'share' ? (
+        column === 'owner' ? (
+          <OwnerCell key={column} owner={row.owner} />
+        ) : column === 'share' ? (
           <ShareCell key={column} row={row} nearRatio={site.nearRatio} />
         ) : (
           <FigureCell key={column} column={column} row={{ ...row, utilisation }} nearRatio={site.nearRatio} />
@@ -88,6 +90,15 @@ const Row = memo(function Row({ row, columns, utilisation, site }: RowProps) {
     </tr>
   );
 });
+
+function OwnerCell({ owner }: { owner: string | null }) {
+  return (
+    <td className="wrap-anywhere max-lg:col-span-3 lg:min-w-32">
+      <span className="block text-caption text-ink-2 lg:hidden">{MARGIN_COLUMN.owner.name}</span>
+      {owner ?? <span className="text-ink-2">not recorded</span>}
+    </td>
+  );
+}
 
 function ShareCell({ row, nearRatio }: { row: MarginRow; nearRatio: number }) {
   const near = (row.shareOfPickup ?? 0) >= nearRatio;
@@ -110,7 +121,7 @@ function ShareCell({ row, nearRatio }: { row: MarginRow; nearRatio: number }) {
 }
 
 interface FigureCellProps {
-  column: MarginColumn;
+  column: MarginFigure;
   row: MarginRow;
   nearRatio: number;
 }
@@ -145,7 +156,7 @@ function FigureCell({ column, row, nearRatio }: FigureCellProps) {
   );
 }
 
-function remarkOn(column: MarginColumn, row: MarginRow, nearRatio: number): Remark | undefined {
+function remarkOn(column: MarginFigure, row: MarginRow, nearRatio: number): Remark | undefined {
   const near = { condition: 'near', words: 'beyond the near mark', ink: 'text-near' } as const;
   switch (column) {
     case 'creep':
