@@ -12,6 +12,7 @@
 
 import type { DailyLevel } from './creep';
 import { medianInPlace } from './quantile';
+import type { HourlyValue } from './step';
 
 /** The standing level of an hour beside its mean through current. */
 export interface HourlyLevel {
@@ -156,6 +157,17 @@ export function levelsAtLoad(hours: readonly HourlyLevel[], response: LoadRespon
     count = 0;
   });
   return levels;
+}
+
+/**
+ * Hourly levels at the reference load of a response, amperes, for a step to be looked for in: the load cycle, which
+ * hides most steps of a level, is not in them. In the order of the hours.
+ */
+export function hoursAtLoad(hours: readonly HourlyLevel[], response: LoadResponse): HourlyValue[] {
+  return hours.map((each) => ({
+    hour: each.hour,
+    value: Math.sqrt(Math.max(0, squareAtLoad(each, response))),
+  }));
 }
 
 const dayOf = ({ hour }: HourlyLevel): number => Math.floor(hour / 24);

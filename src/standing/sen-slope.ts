@@ -34,7 +34,7 @@ export function senSlope(
     varianceRatio = 1,
   }: { readonly confidence?: number; readonly varianceRatio?: number } = {},
 ): SenSlope | undefined {
-  assertAscendingTimes(series);
+  assertSeries(series);
   if (series.length < 2) return undefined;
   const slopes = pairSlopes(series);
   const slope = medianInPlace(slopes);
@@ -49,7 +49,7 @@ export function senSlope(
 
 /** The slope alone; `undefined` and throws as `senSlope`. */
 export function senSlopeValue(series: readonly SeriesPoint[]): number | undefined {
-  assertAscendingTimes(series);
+  assertSeries(series);
   return series.length < 2 ? undefined : medianInPlace(pairSlopes(series));
 }
 
@@ -87,9 +87,10 @@ function gilbertLimits(
   return low === undefined || high === undefined ? undefined : { low, high };
 }
 
-function assertAscendingTimes(series: readonly SeriesPoint[]): void {
+function assertSeries(series: readonly SeriesPoint[]): void {
   let before = -Infinity;
-  for (const { time } of series) {
+  for (const { time, value } of series) {
+    if (Number.isNaN(value)) throw new RangeError('There is no slope of values that are not numbers.');
     if (!(time > before)) throw new RangeError('The points of a series come in ascending order of time.');
     before = time;
   }

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { levelsAtLoad, loadResponse } from '../../src/standing/load-response';
+import { hoursAtLoad, levelsAtLoad, loadResponse } from '../../src/standing/load-response';
 import type { HourlyLevel } from '../../src/standing/load-response';
 
 const MONDAY = 2_857 * 168;
@@ -27,6 +27,14 @@ describe('the load response', () => {
     const levels = levelsAtLoad(hours, response);
     expect(levels).toHaveLength(60);
     for (const { levelAmps } of levels) expect(levelAmps).toBeCloseTo(levelOf(response.referenceAmps), 8);
+  });
+
+  test('brings every hour to one load', () => {
+    const hours = madeUpHours(60);
+    const response = loadResponse(hours)!;
+    const values = hoursAtLoad(hours, response);
+    expect(values.map(({ hour }) => hour)).toEqual(hours.map(({ hour }) => hour));
+    for (const { value } of values) expect(value).toBeCloseTo(levelOf(response.referenceAmps), 8);
   });
 
   test('leaves a drift in them', () => {

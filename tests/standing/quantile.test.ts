@@ -1,5 +1,14 @@
 import { describe, expect, test } from 'vitest';
-import { ascending, averageRanks, median, quantileOfSome, quantileSorted } from '../../src/standing/quantile';
+import {
+  ascending,
+  averageRanks,
+  median,
+  medianInPlace,
+  quantileOfSome,
+  quantileSorted,
+  selectedInPlace,
+} from '../../src/standing/quantile';
+import { seededRandom } from '../protection/seeded-random';
 
 describe('quantile of sorted values', () => {
   test('of none does not exist', () => {
@@ -59,4 +68,33 @@ test('ranks count from 1, and equal values share the mean of theirs', () => {
 
 test('a value that is not a number has no rank', () => {
   expect(() => averageRanks([1, NaN])).toThrow(RangeError);
+});
+
+describe('selection', () => {
+  const random = seededRandom(3);
+  const samples = Array.from({ length: 60 }, (_, size) =>
+    // every other sample has many equal values
+    Array.from({ length: size + 1 }, () => (size % 2 === 0 ? random() : Math.floor(5 * random()))),
+  );
+
+  test('finds the median that sorting finds', () => {
+    for (const values of samples) expect(medianInPlace(new Float64Array(values))).toBe(median(values));
+  });
+
+  test('finds every rank, leaving what is less before it and what is greater behind it', () => {
+    for (const values of samples) {
+      ascending(values).forEach((expected, rank) => {
+        const shuffled = new Float64Array(values);
+        expect(selectedInPlace(shuffled, rank)).toBe(expected);
+        expect(Math.max(...shuffled.subarray(0, rank + 1))).toBe(expected);
+        expect(Math.min(...shuffled.subarray(rank))).toBe(expected);
+      });
+    }
+  });
+
+  test('has no median of no values and no rank that there is none of', () => {
+    expect(() => medianInPlace(new Float64Array(0))).toThrow(RangeError);
+    expect(selectedInPlace(new Float64Array([1, 2]), 2)).toBeUndefined();
+    expect(selectedInPlace(new Float64Array([1, 2]), -1)).toBeUndefined();
+  });
 });

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { detrended, senSlope } from '../../src/standing/sen-slope';
+import { detrended, senSlope, senSlopeValue } from '../../src/standing/sen-slope';
 import type { SeriesPoint } from '../../src/standing/sen-slope';
 import { seededRandom } from '../protection/seeded-random';
 
@@ -78,5 +78,12 @@ describe('Sen slope', () => {
     expect(() => mapped(({ time }) => ({ time, value: NaN }))).toThrow(RangeError);
     expect(() => mapped(({ value }) => ({ time: 1, value }))).toThrow(RangeError);
     expect(() => mapped(({ value }) => ({ time: NaN, value }))).toThrow(RangeError);
+  });
+
+  test('can be had by itself', () => {
+    expect(senSlopeValue(SERIES)).toBe(found?.slope);
+    expect(senSlopeValue(SERIES.slice(0, 1))).toBeUndefined();
+    expect(() => senSlopeValue([...SERIES].reverse())).toThrow(RangeError);
+    expect(() => senSlopeValue([{ time: 0, value: NaN }])).toThrow(RangeError);
   });
 });

@@ -44,6 +44,13 @@ describe('a step in hourly levels', () => {
     expect(stepVerdict(series((index) => index / 20)).kind).toBe('no step');
   });
 
+  test('says of no step whether something alarmed the sums', () => {
+    const quiet = { kind: 'no step', alarmed: false };
+    expect(stepVerdict(series(() => 0))).toEqual(quiet);
+    const tooNew = series((index) => (index >= HOURS - 8 ? 6 : 0));
+    expect(stepVerdict(tooNew)).toEqual({ ...quiet, alarmed: true });
+  });
+
   test('does not depend on the unit of the values, nor on their level', () => {
     const steps = series((index) => (index >= 400 ? 5 : 0));
     const scaled = steps.map(({ hour, value }) => ({ hour, value: 1000 * value - 77 }));
