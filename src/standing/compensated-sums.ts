@@ -1,16 +1,14 @@
 import { scaled, times } from './complex';
 import {
-  type CompositionSums,
+  CROSS_FROM,
   crossProduct,
+  SQUARES_AT,
+  type CompositionSums,
   differentialSquares,
   normalProduct,
   regressorCount,
   shapeOf,
 } from './composition-sums';
-
-/** Places of a row's numbers as composition-sums lays them out. */
-const SQUARES_AT = 7;
-const CROSS_FROM = 8;
 
 /**
  * The sums as they would be with jB·V̄ taken out of every differential: what a scheme that compensates its charging

@@ -40,7 +40,9 @@ export interface CompositionSnapshot {
 
 const VERSION = 1;
 const AT = { version: 0, terminals: 1, voltage: 2, count: 3, voltageless: 4, through: 5, through2: 6, d2: 7 };
-const CROSS_FROM = 8;
+/** Places in a row: Σ|D|², and from where on the products of the regressors stand. */
+export const SQUARES_AT = AT.d2;
+export const CROSS_FROM = 8;
 
 /** Sums of no snapshots. Throws for fewer than two terminals. */
 export function emptySums({ terminalCount, hasVoltage }: SumsShape): CompositionSums {

@@ -1,7 +1,4 @@
-import { type CompositionSums, regressorCount } from './composition-sums';
-
-/** Where composition-sums lays out the products of a row. */
-const CROSS_FROM = 8;
+import { type CompositionSums, CROSS_FROM, regressorCount } from './composition-sums';
 
 /** Σ|x|² of the regressor at this place. */
 export function normalSquares(sums: CompositionSums, regressor: number): number {

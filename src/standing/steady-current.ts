@@ -1,5 +1,6 @@
 import { scaled } from './complex';
 import {
+  CROSS_FROM,
   crossProduct,
   normalProduct,
   packedSums,
@@ -24,7 +25,7 @@ export function withSteadyCurrent(
   const factor = steadyAmps / rmsAmps(sums, terminal);
   if (!Number.isFinite(factor)) return undefined;
   const places = Array.from({ length: regressorCount(sums) }, (_, place) => place);
-  const [version, terminals, ...head] = packedSums(sums).slice(0, 8);
+  const [version, terminals, ...head] = packedSums(sums).slice(0, CROSS_FROM);
   const cross = places.map((place) => crossProduct(sums, place));
   const normal = places.flatMap((row) => [
     ...places.slice(row).map((column) => normalProduct(sums, row, column)),
