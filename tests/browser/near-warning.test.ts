@@ -8,11 +8,11 @@ import {
   instantsBefore,
   publishInstants,
 } from '../faults/site-under-test';
-import { emailOf, nameOf, PASSWORD, type RunningSite, startSite } from '../running-site';
+import { nameOf, type RunningSite, startSite } from '../running-site';
 import { startChromium } from './chromium';
+import { signedInPage } from './signed-in-page';
 
 const FOLLOWS_WITHIN_MS = 1_000;
-const PATIENCE_MS = 20_000;
 
 let broker: Broker;
 let site: RunningSite;
@@ -33,18 +33,8 @@ afterAll(async () => {
   await broker.close();
 });
 
-/** Signs in through the page, as a person does. */
-async function boardOf(role: 'operator' | 'engineer'): Promise<Page> {
-  const context = await browser.newContext({ viewport: { width: 1440, height: 900 } });
-  const page = await context.newPage();
-  page.setDefaultTimeout(PATIENCE_MS);
-  await page.goto(site.address);
-  await page.getByLabel(/e-mail/i).fill(emailOf(role));
-  await page.getByLabel(/password/i).fill(PASSWORD);
-  await page.getByRole('button', { name: /sign in/i }).click();
-  await page.getByRole('heading', { level: 1 }).waitFor();
-  return page;
-}
+const boardOf = (role: 'operator' | 'engineer'): Promise<Page> =>
+  signedInPage(browser, site, { role, path: '/' });
 
 it(
   'an operator sees a line turn near, acknowledges it, and a second browser follows',

@@ -2,11 +2,11 @@ import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import { type Broker, startBroker } from '../../simulator/broker';
 import { ACCOUNTS } from '../faults/site-under-test';
-import { emailOf, PASSWORD, type RunningSite, startSite } from '../running-site';
+import { type RunningSite, startSite } from '../running-site';
 import { madeUpLineOf, ownerAt, storedFleet } from '../store/made-up-fleet';
 import { startChromium } from './chromium';
+import { signedInPage } from './signed-in-page';
 
-const PATIENCE_MS = 20_000;
 const LINES = 30;
 /** a line of 110 kV, whose owner is not recorded */
 const UNOWNED = madeUpLineOf(0);
@@ -31,17 +31,7 @@ afterAll(async () => {
   await broker.close();
 });
 
-async function engineerAt(path: string): Promise<Page> {
-  const context = await browser.newContext({ viewport: { width: 1440, height: 900 } });
-  const page = await context.newPage();
-  page.setDefaultTimeout(PATIENCE_MS);
-  await page.goto(`${site.address}${path}`);
-  await page.getByLabel(/e-mail/i).fill(emailOf('engineer'));
-  await page.getByLabel(/password/i).fill(PASSWORD);
-  await page.getByRole('button', { name: /sign in/i }).click();
-  await page.waitForURL(`${site.address}${path}`);
-  return page;
-}
+const engineerAt = (path: string): Promise<Page> => signedInPage(browser, site, { role: 'engineer', path });
 
 /** An island that has come to life answers to its choices; before that a choice is lost. */
 const alive = (page: Page) =>
