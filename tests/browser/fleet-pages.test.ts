@@ -1,41 +1,20 @@
 import { readFile } from 'node:fs/promises';
-import type { Browser } from 'playwright-core';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { type Broker, startBroker } from '../../simulator/broker';
-import { ACCOUNTS } from '../faults/site-under-test';
-import { type RunningSite, startSite } from '../running-site';
+import { describe, expect, it } from 'vitest';
 import { madeUpLineOf, storedFleet } from '../store/made-up-fleet';
-import { startChromium } from './chromium';
+import { browsedSite } from './browsed-site';
 import { signedInPage, walkedByKeyboard } from './signed-in-page';
 
 const LINES = 30;
 const WALK_MS = 120_000;
 
-let broker: Broker;
-let site: RunningSite;
-let browser: Browser;
-
-beforeAll(async () => {
-  broker = await startBroker({ port: 0, accounts: ACCOUNTS });
-  site = await startSite(broker.url, [
-    { username: 'ingest', password: 'ingest-secret' },
-    { username: 'web', password: 'web-secret' },
-  ]);
-  await storedFleet(site.store, LINES);
-  browser = await startChromium();
-});
-afterAll(async () => {
-  await browser.close();
-  await site.close();
-  await broker.close();
-});
+const browsed = browsedSite((store) => storedFleet(store, LINES));
 
 describe('Margins', () => {
   it(
     'sorts, filters and chooses columns in its address, and saves what it shows',
     { timeout: 90_000 },
     async () => {
-      const page = await signedInPage(browser, site, { role: 'engineer', path: '/margins' });
+      const page = await signedInPage(browsed, { role: 'engineer', path: '/margins' });
       await page.locator('astro-island:not([ssr]) form[role=search]').first().waitFor();
       await page.getByRole('columnheader', { name: 'measured' }).getByRole('link').click();
       await page.waitForURL(/sort=levelAmps/);
@@ -75,11 +54,11 @@ describe('Compare', () => {
     { timeout: 60_000 },
     async () => {
       const { key } = madeUpLineOf(1);
-      const page = await signedInPage(browser, site, { role: 'planner', path: `/lines/${key}/compare` });
+      const page = await signedInPage(browsed, { role: 'planner', path: `/lines/${key}/compare` });
       await page.getByLabel('Date of the work or the change').fill('2026-02-01');
       await page.getByRole('button', { name: 'Compare', exact: true }).click();
       await page.getByText(/For phase A there are 0 days .* too few to tell/).waitFor();
-      await page.goto(`${site.address}/lines/${key}/compare?at=2026-02-30`);
+      await page.goto(`${browsed.site().address}/lines/${key}/compare?at=2026-02-30`);
       await page.getByText('The calendar has no day “2026-02-30”.').waitFor();
     },
   );
@@ -94,7 +73,7 @@ describe('by keyboard alone', () => {
   ] as const)(
     'every control of %s is reached, and shows that it is',
     async (path, role) => {
-      const page = await signedInPage(browser, site, { role, path });
+      const page = await signedInPage(browsed, { role, path });
       await page.locator('astro-island:not([ssr])').first().waitFor();
       const { count, ...found } = await walkedByKeyboard(page);
       console.log(`${path}: ${count} controls`);

@@ -1,46 +1,26 @@
-import type { Browser, Page } from 'playwright-core';
-import { afterAll, beforeAll, expect, it } from 'vitest';
-import { type Broker, startBroker } from '../../simulator/broker';
+import type { Page } from 'playwright-core';
+import { expect, it } from 'vitest';
 import {
-  ACCOUNTS,
   connectTerminals,
   insertMadeUpLine,
   instantsBefore,
   publishInstants,
 } from '../faults/site-under-test';
-import { nameOf, type RunningSite, startSite } from '../running-site';
-import { startChromium } from './chromium';
+import { nameOf } from '../running-site';
+import { browsedSite } from './browsed-site';
 import { signedInPage } from './signed-in-page';
 
 const FOLLOWS_WITHIN_MS = 1_000;
 
-let broker: Broker;
-let site: RunningSite;
-let browser: Browser;
+const browsed = browsedSite(insertMadeUpLine);
 
-beforeAll(async () => {
-  broker = await startBroker({ port: 0, accounts: ACCOUNTS });
-  site = await startSite(broker.url, [
-    { username: 'ingest', password: 'ingest-secret' },
-    { username: 'web', password: 'web-secret' },
-  ]);
-  await insertMadeUpLine(site.store);
-  browser = await startChromium();
-});
-afterAll(async () => {
-  await browser.close();
-  await site.close();
-  await broker.close();
-});
-
-const boardOf = (role: 'operator' | 'engineer'): Promise<Page> =>
-  signedInPage(browser, site, { role, path: '/' });
+const boardOf = (role: 'operator' | 'engineer'): Promise<Page> => signedInPage(browsed, { role, path: '/' });
 
 it(
   'an operator sees a line turn near, acknowledges it, and a second browser follows',
   { timeout: 180_000 },
   async () => {
-    const terminals = await connectTerminals(broker.url);
+    const terminals = await connectTerminals(browsed.broker().url);
     const operator = await boardOf('operator');
     const engineer = await boardOf('engineer');
     const settled = instantsBefore(Date.now() - 90_000, 10);

@@ -1,10 +1,7 @@
-import type { Browser, Page } from 'playwright-core';
-import { afterAll, beforeAll, expect, it } from 'vitest';
-import { type Broker, startBroker } from '../../simulator/broker';
-import { ACCOUNTS } from '../faults/site-under-test';
-import { type RunningSite, startSite } from '../running-site';
+import type { Page } from 'playwright-core';
+import { expect, it } from 'vitest';
 import { madeUpLineOf, ownerAt, storedFleet } from '../store/made-up-fleet';
-import { startChromium } from './chromium';
+import { browsedSite } from './browsed-site';
 import { signedInPage } from './signed-in-page';
 
 const LINES = 30;
@@ -12,26 +9,9 @@ const LINES = 30;
 const UNOWNED = madeUpLineOf(0);
 const TRANSMISSION = ownerAt(380)!;
 
-let broker: Broker;
-let site: RunningSite;
-let browser: Browser;
+const browsed = browsedSite((store) => storedFleet(store, LINES));
 
-beforeAll(async () => {
-  broker = await startBroker({ port: 0, accounts: ACCOUNTS });
-  site = await startSite(broker.url, [
-    { username: 'ingest', password: 'ingest-secret' },
-    { username: 'web', password: 'web-secret' },
-  ]);
-  await storedFleet(site.store, LINES);
-  browser = await startChromium();
-});
-afterAll(async () => {
-  await browser.close();
-  await site.close();
-  await broker.close();
-});
-
-const engineerAt = (path: string): Promise<Page> => signedInPage(browser, site, { role: 'engineer', path });
+const engineerAt = (path: string): Promise<Page> => signedInPage(browsed, { role: 'engineer', path });
 
 /** An island that has come to life answers to its choices; before that a choice is lost. */
 const alive = (page: Page) =>
@@ -50,7 +30,7 @@ it('an owner is recorded by the form, found in the list, and taken away', { time
   await page.getByText('The facts are saved.').waitFor();
   await page.getByText(/two terminals · of Pellwater Networks$/).waitFor();
 
-  await page.goto(`${site.address}/register?q=pellwater`);
+  await page.goto(`${browsed.site().address}/register?q=pellwater`);
   expect(await page.getByRole('row').count()).toBe(2);
   await page
     .getByRole('row', { name: /Pellwater Networks/ })
@@ -60,7 +40,7 @@ it('an owner is recorded by the form, found in the list, and taken away', { time
   await page.getByRole('button', { name: 'Save the facts' }).click();
   await page.getByText('The facts are saved.').waitFor();
   expect(await field.inputValue()).toBe('');
-  await page.goto(`${site.address}/register?q=pellwater`);
+  await page.goto(`${browsed.site().address}/register?q=pellwater`);
   await page.getByText('No line of the register matches.').waitFor();
 });
 
@@ -68,7 +48,7 @@ it('Forecast is grouped and narrowed by owner, as its address says', { timeout: 
   const page = await engineerAt('/forecast');
   await alive(page).waitFor();
   await page.getByRole('combobox', { name: 'Group by', exact: true }).selectOption('owner');
-  await page.waitForURL(`${site.address}/forecast?group=owner`);
+  await page.waitForURL(`${browsed.site().address}/forecast?group=owner`);
   const headings = async () => new Set(await page.getByRole('heading', { level: 3 }).allTextContents());
   await page.getByRole('heading', { name: 'owner not recorded' }).first().waitFor();
   for (const name of [TRANSMISSION, ownerAt(220)!]) expect(await headings()).toContain(name);
@@ -99,7 +79,7 @@ it('Margins are narrowed to one owner, and so is the file that is saved', { time
   expect(search.get('owner')).toBe(TRANSMISSION);
   expect(search.get('columns')).toMatch(/^owner,share,/);
   const file = await page.getByRole('link', { name: 'Save as CSV' }).getAttribute('href');
-  const saved = await (await page.request.get(`${site.address}${file}`)).text();
+  const saved = await (await page.request.get(`${browsed.site().address}${file}`)).text();
   const rows = saved.trimEnd().split('\r\n').slice(1);
   expect(rows).toHaveLength(LINES);
   expect(rows.every((row) => row.includes(`,${TRANSMISSION},`))).toBe(true);

@@ -1,47 +1,28 @@
 import { sql } from 'drizzle-orm';
-import type { Browser } from 'playwright-core';
-import { afterAll, beforeAll, expect, it } from 'vitest';
-import { type Broker, startBroker } from '../../simulator/broker';
+import { expect, it } from 'vitest';
 import { insertFollowUp } from '../../src/store/follow-ups';
 import { recordedWork } from '../../src/store/schema/standing';
-import { ACCOUNTS, insertMadeUpLine } from '../faults/site-under-test';
-import { emailOf, nameOf, PASSWORD, type RunningSite, startSite } from '../running-site';
-import { startChromium } from './chromium';
+import { insertMadeUpLine } from '../faults/site-under-test';
+import { emailOf, nameOf, PASSWORD } from '../running-site';
+import { browsedSite } from './browsed-site';
 
 const PATIENCE_MS = 20_000;
 
-let broker: Broker;
-let site: RunningSite;
-let browser: Browser;
-
-beforeAll(async () => {
-  broker = await startBroker({ port: 0, accounts: ACCOUNTS });
-  site = await startSite(broker.url, [
-    { username: 'ingest', password: 'ingest-secret' },
-    { username: 'web', password: 'web-secret' },
-  ]);
-  await insertMadeUpLine(site.store);
-  browser = await startChromium();
-});
-afterAll(async () => {
-  await browser.close();
-  await site.close();
-  await broker.close();
-});
+const browsed = browsedSite(insertMadeUpLine);
 
 it(
   'a planner ends a follow-up with what was done, finds it as a date to compare across, and withdraws it',
   { timeout: 120_000 },
   async () => {
     await insertFollowUp(
-      site.store,
+      browsed.site().store,
       { line: 'anvil-birch', phase: 'b', cause: 'ratio mismatch', due: null, note: 'Look at the wiring.' },
       { by: { id: 'someone', name: 'Somebody Else' }, nowMs: Date.now() },
     );
-    const context = await browser.newContext({ viewport: { width: 1440, height: 900 } });
+    const context = await browsed.browser().newContext({ viewport: { width: 1440, height: 900 } });
     const page = await context.newPage();
     page.setDefaultTimeout(PATIENCE_MS);
-    await page.goto(`${site.address}/forecast`);
+    await page.goto(`${browsed.site().address}/forecast`);
     await page.getByLabel(/e-mail/i).fill(emailOf('planner'));
     await page.getByLabel(/password/i).fill(PASSWORD);
     await page.getByRole('button', { name: /sign in/i }).click();
@@ -65,8 +46,9 @@ it(
     await page.getByRole('button', { name: 'Withdraw: Secondary terminals tightened.' }).click();
     await page.getByRole('button', { name: 'Withdraw it' }).click();
     await page.getByText(new RegExp(`withdrawn by ${nameOf('planner')}`)).waitFor();
-    const [kept] = await site.store.db
-      .select({
+    const [kept] = await browsed
+      .site()
+      .store.db.select({
         withdrawn: sql<number>`sum(${recordedWork.withdrawnAt} is not null)`,
         all: sql<number>`count(*)`,
       })

@@ -1,19 +1,19 @@
-import type { Browser, Page } from 'playwright-core';
+import type { Page } from 'playwright-core';
 import type { Role } from '../../src/contract/role';
-import { emailOf, PASSWORD, type RunningSite } from '../running-site';
+import { emailOf, PASSWORD } from '../running-site';
+import type { BrowsedSite } from './browsed-site';
 
 const PATIENCE_MS = 20_000;
 
 /** A page of the site in a browser of its own, signed in through the form as a person does. */
 export async function signedInPage(
-  browser: Browser,
-  site: RunningSite,
+  { browser, site }: BrowsedSite,
   { role, path }: { role: Role; path: string },
 ): Promise<Page> {
-  const context = await browser.newContext({ viewport: { width: 1440, height: 900 } });
+  const context = await browser().newContext({ viewport: { width: 1440, height: 900 } });
   const page = await context.newPage();
   page.setDefaultTimeout(PATIENCE_MS);
-  await page.goto(`${site.address}${path}`);
+  await page.goto(`${site().address}${path}`);
   await page.getByLabel(/e-mail/i).fill(emailOf(role));
   await page.getByLabel(/password/i).fill(PASSWORD);
   await page.getByRole('button', { name: /sign in/i }).click();

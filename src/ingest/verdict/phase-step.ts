@@ -2,6 +2,7 @@ import type { Cause, CausePlace, StandingVerdict, StepOnWire } from '../../contr
 import { perPhase, type PhaseName } from '../../protection/phase';
 import { compositionStep, type CompositionStep } from '../../standing/composition-step';
 import type { CompositionSums } from '../../standing/composition-sums';
+import { type HourlyLevel, hoursAtLoad, loadResponse } from '../../standing/load-response';
 import { movedTerminal, type UnbalanceSides } from '../../standing/moved-terminal';
 import type { MovedTerm } from '../../standing/moved-term';
 import { median } from '../../standing/quantile';
@@ -40,13 +41,11 @@ export function phaseStep(
   let step = earlier?.step ?? null;
   for (let look = looks - 1; look >= 0; look -= 1) {
     const since = step === null ? -Infinity : Date.parse(step.at) / HOUR_MS;
-    const found = stepWithin(
-      rows.filter(({ start }) => {
-        const hour = start.getTime() / HOUR_MS;
-        return hour > since && hour < nowHour - look * LOOK_HOURS;
-      }),
-      pathChangeHours,
-    );
+    const within = rows.filter(({ start }) => {
+      const hour = start.getTime() / HOUR_MS;
+      return hour > since && hour < nowHour - look * LOOK_HOURS;
+    });
+    const found = stepOfSums(within, pathChangeHours) ?? stepOfLevels(within, rows);
     if (found !== undefined) step = stepOnWire(line, history, { phase, found, pathChangeHours });
   }
   return step;
@@ -57,18 +56,35 @@ interface FoundStep {
   readonly composition: CompositionStep | undefined;
 }
 
-function stepWithin(rows: readonly LevelRow[], pathChangeHours: readonly number[]): FoundStep | undefined {
+function stepOfSums(rows: readonly LevelRow[], pathChangeHours: readonly number[]): FoundStep | undefined {
   const sums = alikeWindows(summedHours(rows)).map(({ day, ...each }) => ({ ...each, hour: day }));
-  if (sums.length > 0) {
-    const found = compositionStep(sums, { pathChangeHours });
-    return found.kind === 'step' ? { atHour: found.atHour, composition: found } : undefined;
-  }
-  const levels = rows.flatMap(({ start, medianAmps }) =>
-    medianAmps === null ? [] : [{ hour: start.getTime() / HOUR_MS, value: medianAmps }],
-  );
-  const found = levels.length === 0 ? undefined : stepVerdict(levels);
-  return found?.kind === 'step' ? { atHour: found.atHour, composition: undefined } : undefined;
+  const found = sums.length === 0 ? undefined : compositionStep(sums, { pathChangeHours });
+  return found?.kind === 'step' ? { atHour: found.atHour, composition: found } : undefined;
 }
+
+/**
+ * For a feed of magnitudes alone: a step of the levels, at one load where all its hours tell what load does to them,
+ * since the load cycle hides most steps of a level.
+ */
+function stepOfLevels(rows: readonly LevelRow[], all: readonly LevelRow[]): FoundStep | undefined {
+  if (all.some(({ sums }) => sums !== null)) return undefined;
+  const response = loadResponse(hoursOf(all));
+  const hours = hoursOf(rows);
+  if (hours.length === 0) return undefined;
+  const found = stepVerdict(
+    response === undefined
+      ? hours.map(({ hour, levelAmps }) => ({ hour, value: levelAmps }))
+      : hoursAtLoad(hours, response),
+  );
+  return found.kind === 'step' ? { atHour: found.atHour, composition: undefined } : undefined;
+}
+
+const hoursOf = (rows: readonly LevelRow[]): HourlyLevel[] =>
+  rows.flatMap(({ start, medianAmps, meanThroughAmps }) =>
+    medianAmps === null || meanThroughAmps === null
+      ? []
+      : [{ hour: start.getTime() / HOUR_MS, levelAmps: medianAmps, throughAmps: meanThroughAmps }],
+  );
 
 const CAUSES: Readonly<Record<'charging' | 'leakage' | 'ratio' | 'angle', Cause>> = {
   charging: 'charging',

@@ -84,6 +84,36 @@ describe('a line without a composition', () => {
   });
 });
 
+describe('a step on a line by magnitudes alone', () => {
+  const line = demoRosterLine('brindle-skelder');
+  const history = demoHistoryOf(line, TWO_MONTHS);
+  const stepHour = NOW_MS / 3_600_000 - 40;
+  /** A mismatch that follows the load at right angles to what stands, and a step on top of both. */
+  const stepped = (amps: number) => ({
+    ...history,
+    hours: history.hours.map((row) => ({
+      ...row,
+      medianAmps:
+        Math.hypot(row.medianAmps!, 0.05 * row.meanThroughAmps!) +
+        (row.start.getTime() / 3_600_000 >= stepHour ? amps : 0),
+    })),
+  });
+  const found = (amps: number) => phaseStep(line, stepped(amps), { phase: 'a', earlier: undefined });
+
+  it('is seen through the load cycle, with its hour and without a cause', () => {
+    const step = found(1.5);
+    expect(Math.abs(Date.parse(step!.at) / 3_600_000 - stepHour)).toBeLessThanOrEqual(1);
+    expect([step!.cause, step!.place]).toEqual(['not told', null]);
+    // the cycle itself swings the level by more than that
+    const levels = stepped(0)
+      .hours.filter(({ phase }) => phase === 'a')
+      .map(({ medianAmps }) => medianAmps);
+    expect(Math.max(...levels) - Math.min(...levels)).toBeGreaterThan(1.5);
+  });
+
+  it('is not seen where there is none', () => expect(found(0)).toBeNull());
+});
+
 describe('a drift as measured', () => {
   const line = demoRosterLine('low-pell-quillby');
   const history = demoHistoryOf(line, TWO_MONTHS);
