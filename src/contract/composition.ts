@@ -6,8 +6,11 @@ import { phaseNameSchema } from './phase';
 export const estimateSchema = z.object({ value: z.number(), low: z.number(), high: z.number() });
 export type EstimateOnWire = z.infer<typeof estimateSchema>;
 
-/** Real and imaginary part, amperes rms primary, against the direction of the reference terminal's current. */
-const phasor = z.tuple([z.number(), z.number()]);
+/** Real and imaginary part. */
+const complex = z.tuple([z.number(), z.number()]);
+
+/** Amperes rms primary, against the direction of the reference terminal's current. */
+const phasor = complex;
 
 /** Against the class of the two transformers; null where a class is not known. */
 export const budgetVerdictSchema = z.enum(['within', 'beyond', 'undecided']).nullable();
@@ -36,6 +39,14 @@ export const polygonSchema = z.object({
 });
 export type PolygonOnWire = z.infer<typeof polygonSchema>;
 
+/** What the differential takes of the mean voltage at whatever load: charging and leakage. */
+export const admittanceSchema = z.object({
+  /** against the voltage, siemens/1000: what the scheme in force was left with */
+  leftMillisiemens: complex,
+  /** susceptance that this scheme had taken out before by compensation, siemens/1000; 0 where it does not */
+  compensatedMillisiemens: z.number(),
+});
+
 const window = { from: z.iso.date(), to: z.iso.date(), days: z.int(), snapshotCount: z.int() };
 
 /** What a standing level consists of over a window of days, or why that can't be told. */
@@ -48,6 +59,8 @@ export const compositionSchema = z.discriminatedUnion('kind', [
     chargingAmps: estimateSchema.nullable(),
     expectedChargingAmps: z.number().nullable(),
     leakageAmps: estimateSchema.nullable(),
+    /** missing from findings that were kept before it was */
+    admittance: admittanceSchema.optional(),
     mismatches: z.array(mismatchSchema),
     residualRmsAmps: z.number(),
     /** condition number of the scaled normal matrix */

@@ -10,7 +10,7 @@
  */
 import type { CtClass } from './ct-class';
 import { LIMIT_SIGNS, opposite, transformerAtLimit } from './ct-class';
-import { conjugate, magnitude, multiply, phasor, phasorFromPolar, scale, subtract, sum } from './phasor';
+import { multiply, phasor, phasorFromPolar, quotient, scale, subtract, sum } from './phasor';
 import type { Phasor } from './phasor';
 
 /** One phase of a line as it answers to voltage and load. */
@@ -91,7 +91,17 @@ export function predictedCurrents(
   return [sum([charging, through, ...mismatched]), ...others];
 }
 
+/**
+ * E_k, as a mismatch acts on the terminal's measured current, of e_k, by which the terminal measures more (real part,
+ * per unit) and leads (imaginary part, radians) against terminal 1: E = e/(1 + e), since what it measures is 1 + e of
+ * what terminal 1 would. Not finite for e = −1, a terminal that measures nothing.
+ */
+export function actingMismatch(mismatchAgainstFirst: Phasor): Phasor {
+  return quotient(mismatchAgainstFirst, sum([ONE, mismatchAgainstFirst]));
+}
+
 const ZERO = phasor(0, 0);
+const ONE = phasor(1, 0);
 
 function model(
   { terminalCount, voltageKv, compensatedMillisiemens, shares }: LineUnderLoad,
@@ -112,8 +122,7 @@ function model(
   };
 }
 
-/** E of a terminal that makes `other` of 1∠0 against a first one that makes `first` of it: 1 − first/other. */
+/** E of a terminal that makes `other` of 1∠0 against a first one that makes `first` of it. */
 function mismatch(first: Phasor, other: Phasor): Phasor {
-  const quotient = scale(multiply(first, conjugate(other)), 1 / magnitude(other) ** 2);
-  return subtract(phasor(1, 0), quotient);
+  return actingMismatch(subtract(quotient(other, first), ONE));
 }

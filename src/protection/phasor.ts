@@ -51,6 +51,11 @@ export function multiply(p: Phasor, q: Phasor): Phasor {
   return { re: p.re * q.re - p.im * q.im, im: p.re * q.im + p.im * q.re };
 }
 
+/** Complex quotient p/q: magnitudes divide, angles subtract; not finite for a zero q. */
+export function quotient(p: Phasor, q: Phasor): Phasor {
+  return scale(multiply(p, conjugate(q)), 1 / (q.re * q.re + q.im * q.im));
+}
+
 /** The phasor times a real factor; a negative factor turns it round. */
 export function scale(p: Phasor, factor: number): Phasor {
   return { re: p.re * factor, im: p.im * factor };

@@ -30,6 +30,12 @@ export function greatestMagnitudeAmps(currents: readonly Phasor[]): number {
   return greatest;
 }
 
+/** The least magnitude among the terminals' currents, in amperes: what each of them carries at the least. */
+export function leastMagnitudeAmps(currents: readonly Phasor[]): number {
+  assertMeasured(currents);
+  return Math.min(...currents.map(magnitude));
+}
+
 function assertMeasured(currents: readonly Phasor[]): void {
   if (currents.length === 0)
     throw new RangeError('A line is evaluated from at least one terminal’s current.');

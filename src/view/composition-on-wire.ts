@@ -54,7 +54,8 @@ export function compositionOnWire(
     conductanceMillisiemens: conductance,
     voltageKv,
   } = composition;
-  if (susceptance === undefined) return { kind: 'not separable', ...counted, reason: NO_VOLTAGE };
+  if (susceptance === undefined || conductance === undefined)
+    return { kind: 'not separable', ...counted, reason: NO_VOLTAGE };
   const constant = lineSusceptanceMillisiemens(line, frequencyHz);
   // under a scheme that compensates, what is left of the charging is expected to be nothing
   const expected = constant === undefined ? undefined : constant - compensatedMillisiemens;
@@ -65,6 +66,10 @@ export function compositionOnWire(
     chargingAmps: currentOf(susceptance, voltageKv),
     expectedChargingAmps: expected === undefined || voltageKv === undefined ? null : expected * voltageKv,
     leakageAmps: currentOf(conductance, voltageKv),
+    admittance: {
+      leftMillisiemens: [conductance.value, susceptance.value],
+      compensatedMillisiemens,
+    },
     mismatches: composition.mismatches.map((mismatch) => mismatchOnWire(mismatch, line)),
     residualRmsAmps: composition.residualRmsAmps,
     condition: composition.condition,

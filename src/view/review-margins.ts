@@ -13,17 +13,14 @@ import type { PickupWindow } from '../protection/pickup-window';
 import { sensitivity } from '../protection/sensitivity';
 import type { Sensitivity } from '../protection/sensitivity';
 import { reviewScheme } from './review-line';
-import type { ReviewLine } from './review-line';
+import type { MismatchBasis } from './review-basis';
 import { reviewModel } from './review-model';
-import type { MismatchBasis, ReviewModel } from './review-model';
-import type { ReviewSnapshot } from './review-now';
+import type { ModelInput, ReviewModel } from './review-model';
 
 type Recorded = Pick<SettingsVersion, 'characteristic' | 'restraint' | 'chargingCompensation'>;
 
-interface MarginInput {
-  readonly line: ReviewLine;
+interface MarginInput extends ModelInput {
   readonly recorded: Recorded;
-  readonly snapshot: ReviewSnapshot | NotComputable;
 }
 
 /** Loadability of one phase, and what its mismatches come from. */
@@ -31,15 +28,16 @@ export type ReviewLoadability = Loadability & Pick<ReviewModel, 'words'> & { rea
 
 /** How much load each phase's scheme lets the line carry. */
 export function reviewLoadability(
-  { line, recorded, snapshot }: MarginInput,
+  input: MarginInput,
   { basis, lagDeg }: { basis: MismatchBasis; lagDeg: number },
 ): PerPhase<ReviewLoadability | NotComputable> {
+  const { line, recorded } = input;
   const scheme = reviewScheme(line, recorded);
   const lagRad = (lagDeg * Math.PI) / 180;
   const range = { frequencyHz: line.nominalFrequencyHz, lagRadLeast: -lagRad, lagRadMost: lagRad };
   const byModel = new Map<string, Loadability | NotComputable>();
   return perPhase((phase) => {
-    const found = reviewModel(line, recorded, { phase, snapshot, basis });
+    const found = reviewModel(input, { phase, basis });
     if (!isComputable(found)) return found;
     // by class limits the three phases are one calculation
     const known = JSON.stringify(found.model);
@@ -74,13 +72,11 @@ export interface ReviewSensitivity {
   readonly presentLoad: PerPhase<Sensitivity | NotComputable>;
 }
 
-export function reviewSensitivity(
-  { line, recorded, snapshot }: MarginInput,
-  fedFrom: Infeed,
-): ReviewSensitivity {
+export function reviewSensitivity(input: MarginInput, fedFrom: Infeed): ReviewSensitivity {
+  const { line, recorded, snapshot } = input;
   const scheme = reviewScheme(line, recorded);
   const { voltageKv, nominalFrequencyHz: frequencyHz } = line;
-  const model = reviewModel(line, recorded, { phase: 'a', snapshot, basis: 'class limits' });
+  const model = reviewModel(input, { phase: 'a', basis: 'class limits' });
   const noLoad = isComputable(model)
     ? sensitivity(scheme, { currents: chargingOnly(model.model), voltageKv, frequencyHz, fedFrom })
     : model;

@@ -2,19 +2,30 @@ import type { SettingsVersion } from '../contract/settings-version';
 import { isComputable } from '../protection/evaluation';
 import type { NotComputable } from '../protection/evaluation';
 import { classLimitModel, measuredModel } from '../protection/line-model';
-import type { LineModel } from '../protection/line-model';
+import type { LineModel, LineUnderLoad } from '../protection/line-model';
 import type { PhaseName } from '../protection/phase';
-import { conjugate, magnitude, multiply, phasor, scale, sum } from '../protection/phasor';
-import type { Phasor } from '../protection/phasor';
+import { phasor } from '../protection/phasor';
+import { snapshotMismatch } from '../protection/snapshot-mismatch';
+import { leastMagnitudeAmps } from '../protection/terminal-currents';
 import { zonePhases } from '../protection/zone';
+import { compensatedMillisiemens } from './line-zone';
+import { MISMATCH_BASES } from './review-basis';
+import type { MismatchBasis } from './review-basis';
 import { reviewClasses } from './review-classes';
+import { composedResponse } from './review-composition';
+import type { ReviewCompositions } from './review-composition';
 import { reviewZone, susceptanceMillisiemens, terminalsInService } from './review-line';
 import type { ReviewLine } from './review-line';
+import { FROM_MAGNITUDES_ALONE } from './review-now';
 import type { ReviewSnapshot } from './review-now';
 
-/** Where a prediction takes the mismatches of the terminals from. */
-export const MISMATCH_BASES = ['snapshot', 'class limits'] as const;
-export type MismatchBasis = (typeof MISMATCH_BASES)[number];
+/** What a prediction is made from. */
+export interface ModelInput {
+  readonly line: ReviewLine;
+  readonly recorded: Pick<SettingsVersion, 'chargingCompensation'>;
+  readonly snapshot: ReviewSnapshot | NotComputable;
+  readonly compositions: ReviewCompositions;
+}
 
 /** A line's answer to load, and what its mismatches come from, in words. */
 export interface ReviewModel {
@@ -23,86 +34,107 @@ export interface ReviewModel {
   readonly words: string;
 }
 
-type Recorded = Pick<SettingsVersion, 'chargingCompensation'>;
-type Snapshot = ReviewSnapshot | NotComputable;
+type Told = Pick<ReviewModel, 'model' | 'words'> | NotComputable;
 
 /** Under a smaller load the differential says little of the mismatch. */
 const LOADED_RATIO = 0.2;
 
-/** The model of one phase; mismatches from the present snapshot where that is asked for and can be done, else from the classes. */
-export function reviewModel(
-  line: ReviewLine,
-  recorded: Recorded,
-  { phase, snapshot, basis }: { phase: PhaseName; snapshot: Snapshot; basis: MismatchBasis },
-): ReviewModel | NotComputable {
-  const susceptance = susceptanceMillisiemens(line);
-  if (susceptance === undefined) return { notComputable: NO_CAPACITANCE };
-  const compensated = recorded.chargingCompensation && !hasFallenBack(snapshot);
-  const under = {
-    terminalCount: terminalsInService(line).length,
-    voltageKv: line.voltageKv,
-    compensatedMillisiemens: compensated ? susceptance : 0,
-  };
-  if (under.terminalCount < 2) return { notComputable: 'A through current needs two terminals in service.' };
-  const why = basis === 'class limits' ? undefined : snapshotObstacle(line, snapshot);
-  if (basis === 'snapshot' && why === undefined && isComputable(snapshot)) {
-    const mismatch = snapshotMismatch(line, recorded, { phase, snapshot });
-    if (mismatch !== undefined) {
-      return {
-        model: measuredModel(under, {
-          admittanceMillisiemens: phasor(0, susceptance),
-          mismatches: [mismatch],
-        }),
-        basis: 'snapshot',
-        words: 'Mismatch of the two ends measured in the present snapshot, charging by line constants.',
-      };
-    }
-  }
-  const classes = reviewClasses(line);
-  if (!isComputable(classes)) return classes;
-  return {
-    model: classLimitModel(under, { susceptanceMillisiemens: susceptance, classes }),
-    basis: 'class limits',
-    words: `Mismatches from the transformers’ classes at opposite limits, not measured${why === undefined ? '' : `: ${why}`}.`,
-  };
-}
-
 export const NO_CAPACITANCE =
   'The register does not hold the line’s capacitance, so its charging current can’t be told.';
 
-/** Whether the compensation that is recorded was left out of this snapshot, for want of voltages. */
-function hasFallenBack(snapshot: Snapshot): boolean {
-  return isComputable(snapshot) && snapshot.zone.a.compensation?.state === 'fallback';
-}
-
-/** Why the present snapshot does not give the mismatch, in the middle of a sentence; undefined when it does. */
-function snapshotObstacle(line: ReviewLine, snapshot: Snapshot): string | undefined {
-  if (!isComputable(snapshot)) return 'there is no snapshot with phasors of all ends now';
-  const count = snapshot.terminals.length;
-  if (count !== 2) return `one snapshot can’t part the mismatches of ${count} terminals`;
-  const loaded = loadAmps(snapshot) >= LOADED_RATIO * line.ratingAmps;
-  if (!loaded) return 'the line carries under 20 % of its rating now';
-  if (snapshot.sent.every(({ voltagesKv }) => voltagesKv === undefined))
-    return 'no terminal gives a valid voltage, by which charging could be parted from it';
-  return undefined;
-}
-
-function loadAmps({ zone }: ReviewSnapshot): number {
-  return Math.min(...zone.a.currents.map(magnitude));
-}
-
 /**
- * E of terminal 2 against terminal 1 from one snapshot: what is left of the differential without the charging that
- * the voltages drive, over the current of terminal 2. Undefined when the charging could not be parted from it.
+ * The model of one phase by the basis that is asked for, else by the next one that can be had: the words then say why
+ * it is not the better one.
  */
-export function snapshotMismatch(
-  line: ReviewLine,
-  recorded: Recorded,
-  { phase, snapshot }: { phase: PhaseName; snapshot: ReviewSnapshot },
-): Phasor | undefined {
-  const without = zonePhases(reviewZone(line, { chargingCompensation: true }), snapshot.sent)[phase];
-  if (without.compensation?.state !== 'compensated') return undefined;
-  const seen = recorded.chargingCompensation ? without.currents[1] : snapshot.zone[phase].currents[1];
-  if (seen === undefined || magnitude(seen) === 0) return undefined;
-  return scale(multiply(sum(without.currents), conjugate(seen)), 1 / magnitude(seen) ** 2);
+export function reviewModel(
+  input: ModelInput,
+  { phase, basis }: { phase: PhaseName; basis: MismatchBasis },
+): ReviewModel | NotComputable {
+  if (terminalsInService(input.line).length < 2)
+    return { notComputable: 'A through current needs two terminals in service.' };
+  // one and the same obstacle can stand in the way of two of them
+  const obstacles = new Set<string>();
+  for (const each of MISMATCH_BASES.slice(MISMATCH_BASES.indexOf(basis))) {
+    const told = MODELS[each](input, phase);
+    if (isComputable(told))
+      return { model: told.model, basis: each, words: [told.words, ...obstacles].join(' ') };
+    obstacles.add(told.notComputable);
+  }
+  return { notComputable: [...obstacles].join(' ') };
+}
+
+const MODELS: Readonly<Record<MismatchBasis, (input: ModelInput, phase: PhaseName) => Told>> = {
+  composition: composedModel,
+  snapshot: snapshotModel,
+  'class limits': classModel,
+};
+
+function composedModel({ line, recorded, snapshot, compositions }: ModelInput, phase: PhaseName): Told {
+  const response = composedResponse(line, compositions[phase]);
+  if (!isComputable(response)) return response;
+  const compensated = compensatedMillisiemens(line, {
+    isCompensated: recorded.chargingCompensation,
+    frequencyHz: line.nominalFrequencyHz,
+  });
+  const words =
+    compensated > 0 && hasFallenBack(snapshot)
+      ? `${response.words} Charging is taken as compensated, though just now it is not.`
+      : response.words;
+  return { model: measuredModel(underLoad(line, compensated), response), words };
+}
+
+function snapshotModel({ line, recorded, snapshot }: ModelInput, phase: PhaseName): Told {
+  if (line.goesBy === 'reported') return { notComputable: FROM_MAGNITUDES_ALONE };
+  const susceptance = susceptanceMillisiemens(line);
+  if (susceptance === undefined) return { notComputable: NO_CAPACITANCE };
+  if (!isComputable(snapshot)) return silent('there is no snapshot with phasors of all ends now');
+  const { terminals, sent, zone } = snapshot;
+  if (terminals.length !== 2)
+    return silent(`one snapshot can’t part the mismatches of ${terminals.length} terminals`);
+  const judged = zone[phase];
+  if (leastMagnitudeAmps(judged.currents) < LOADED_RATIO * line.ratingAmps)
+    return silent('the line carries under 20 % of its rating now');
+  const uncharged = zonePhases(reviewZone(line, { chargingCompensation: true }), sent)[phase];
+  const mismatch = snapshotMismatch(uncharged, judged);
+  if (mismatch === undefined)
+    return silent('no terminal gives a valid voltage of the line, by which charging could be parted from it');
+  return {
+    model: measuredModel(underLoad(line, recorded.chargingCompensation ? susceptance : 0), {
+      admittanceMillisiemens: phasor(0, susceptance),
+      mismatches: [mismatch],
+    }),
+    words: 'Mismatch of the two ends measured in the present snapshot, charging by line constants.',
+  };
+}
+
+function classModel({ line, recorded, snapshot }: ModelInput): Told {
+  const susceptance = susceptanceMillisiemens(line);
+  if (susceptance === undefined) return { notComputable: NO_CAPACITANCE };
+  const classes = reviewClasses(line);
+  if (!isComputable(classes)) return classes;
+  const isCompensated = recorded.chargingCompensation && !hasFallenBack(snapshot);
+  return {
+    model: classLimitModel(underLoad(line, isCompensated ? susceptance : 0), {
+      susceptanceMillisiemens: susceptance,
+      classes,
+    }),
+    words: 'Mismatches from the transformers’ classes at opposite limits, not measured.',
+  };
+}
+
+const silent = (why: string): NotComputable => ({
+  notComputable: `The present snapshot does not tell the mismatches: ${why}.`,
+});
+
+function underLoad(line: ReviewLine, compensated: number): LineUnderLoad {
+  return {
+    terminalCount: terminalsInService(line).length,
+    voltageKv: line.voltageKv,
+    compensatedMillisiemens: compensated,
+  };
+}
+
+/** Whether the compensation that is recorded was left out of this snapshot, for want of voltages. */
+function hasFallenBack(snapshot: ModelInput['snapshot']): boolean {
+  return isComputable(snapshot) && snapshot.zone.a.compensation?.state === 'fallback';
 }

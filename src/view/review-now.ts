@@ -29,6 +29,10 @@ export interface ReviewSnapshot {
 export const NOT_FROM_MAGNITUDES =
   'This line goes by reported magnitudes: its feed holds what one terminal computed, so this can’t be told from this feed.';
 
+/** Why such a line has no mismatch that is measured. */
+export const FROM_MAGNITUDES_ALONE =
+  'This line goes by reported magnitudes, by which the mismatches can’t be measured.';
+
 type Recorded = Pick<SettingsVersion, 'characteristic' | 'restraint' | 'chargingCompensation'>;
 
 const DEG = Math.PI / 180;

@@ -1,6 +1,11 @@
 import { describe, expect, test } from 'vitest';
 import { CT_CLASSES, pairBudget } from '../../src/protection/ct-class';
-import { classLimitModel, measuredModel, predictedCurrents } from '../../src/protection/line-model';
+import {
+  actingMismatch,
+  classLimitModel,
+  measuredModel,
+  predictedCurrents,
+} from '../../src/protection/line-model';
 import {
   magnitude,
   multiply,
@@ -53,6 +58,22 @@ describe('predicted currents', () => {
     const one = predictedCurrents(model, [phasor(0.01, 0)], { throughAmps: 500, lagRad: 0.3 });
     const other = predictedCurrents(model, [phasor(0.01, 0)], { throughAmps: 500, lagRad: 0.3 + Math.PI });
     one.forEach((current, index) => expect(magnitude(sum([current, other[index]!]))).toBeLessThan(1e-9));
+  });
+});
+
+describe('a mismatch as it acts on the measured current', () => {
+  test('of a terminal that measures more by a twentieth is a twenty-first', () => {
+    const acting = actingMismatch(phasor(0.05, 0));
+    expect(acting.re).toBeCloseTo(1 / 21, 12);
+    expect(acting.im).toBe(0);
+  });
+
+  test('leaves a differential of what the terminal measures too much, whatever its ratio and angle', () => {
+    const through = phasorFromPolar(700, -0.3);
+    const e = phasor(-0.012, 0.02);
+    const measured = scale(multiply(sum([phasor(1, 0), e]), through), -1);
+    const left = multiply(actingMismatch(e), measured);
+    expect(magnitude(subtract(left, sum([through, measured])))).toBeLessThan(1e-9);
   });
 });
 

@@ -6,6 +6,7 @@ import {
   multiply,
   phasor,
   phasorFromPolar,
+  quotient,
   rotate,
   scale,
   subtract,
@@ -47,6 +48,11 @@ describe('phasor', () => {
 
   test('a phasor times its conjugate is its squared magnitude', () => {
     expectPhasor(multiply(p, conjugate(p)), phasor(25, 0));
+  });
+
+  test('a quotient undoes a product, and is not finite over the zero phasor', () => {
+    expectPhasor(quotient(multiply(p, q), q), p);
+    expect(magnitude(quotient(p, phasor(0, 0)))).toBeNaN();
   });
 
   test('scaling by a negative factor turns it round', () => {

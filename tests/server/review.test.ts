@@ -1,16 +1,21 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import type { Measurement } from '../../src/contract/feed';
+import { lineDetailSchema } from '../../src/contract/lines';
 import { reviewCloudSchema, type ReviewCloud } from '../../src/contract/review';
 import { GET } from '../../src/pages/api/lines/[key]/review';
+import { readLineDetail } from '../../src/server/reading/lines';
 import { readReviewCloud, readReviewLine } from '../../src/server/reading/review';
 import type { Site } from '../../src/server/site';
 import type { Store } from '../../src/store/client';
 import { writeLevels } from '../../src/store/levels';
 import { packMeasurements } from '../../src/store/packing';
 import type { RegisteredLine } from '../../src/store/register';
+import { writeVerdicts } from '../../src/store/standing';
+import { reviewCompositions } from '../../src/view/review-composition';
 import { testStore } from '../database';
 import { answerOf } from '../register/endpoint-call';
 import { settingsSent } from '../register/made-up-line';
+import { separatedWith, verdictWith } from '../view/sample-compositions';
 import { snapshotRowOf, storedLine, storeRows } from '../store/made-up-rows';
 
 const START_MS = Date.parse('2026-03-02T00:00:00Z');
@@ -25,7 +30,8 @@ beforeAll(async () => {
   site = {
     store,
     now: () => END_MS,
-    settings: { NOMINAL_FREQUENCY_HZ: 50 },
+    live: { results: () => new Map() },
+    settings: { NOMINAL_FREQUENCY_HZ: 50, NEAR_RATIO: 0.7, PERIOD_MS: 2_000 },
   } as unknown as Site;
 });
 
@@ -230,6 +236,21 @@ describe('what a review knows of a line', () => {
     const known = await readReviewLine(site, line.key);
     expect(known).toMatchObject({ nominalFrequencyHz: 50, leastInternalFaultAmps: 900, dayThroughAmps: 250 });
     expect(known).not.toHaveProperty('id');
+  });
+
+  it('has the newest composition of a phase with what a prediction needs, or as it was kept before', async () => {
+    const line = await storedLine(store, { key: 'review-composition' });
+    const kept = { lineId: line.id, computedAt: new Date(END_MS), likelyCause: 'not told' } as const;
+    const before = separatedWith({ admittance: undefined });
+    await writeVerdicts(store, [
+      { ...kept, phase: 'b', verdict: verdictWith({ phase: 'b' }) },
+      { ...kept, phase: 'c', verdict: verdictWith({ phase: 'c', composition: before }) },
+    ]);
+    const detail = lineDetailSchema.parse(
+      JSON.parse(JSON.stringify(await readLineDetail(site, line.key))) as unknown,
+    );
+    const { a, b, c } = reviewCompositions(detail.standing);
+    expect([a, b, c]).toEqual([undefined, separatedWith(), before]);
   });
 
   it('an unknown line has none', async () => {

@@ -12,6 +12,7 @@ const PLACES = ['Arden', 'Birk', 'Corrin', 'Dunmoor', 'Esk Ford', 'Fallow', 'Gar
 const VOLTAGES = [110, 220, 380];
 const PHASES = ['a', 'b', 'c'] as const;
 const ROWS_A_STATEMENT = 250;
+const PHASE_KV = 110 / Math.sqrt(3);
 
 /** A number from 0 to 1 that depends on the seed alone. */
 function fraction(seed: number): number {
@@ -103,6 +104,7 @@ function composition(
     chargingAmps: estimate(charging, 0.4),
     expectedChargingAmps: charging,
     leakageAmps: estimate(0.1, 0.3),
+    admittance: { leftMillisiemens: [0.1 / PHASE_KV, charging / PHASE_KV], compensatedMillisiemens: 0 },
     mismatches: [
       {
         terminal,

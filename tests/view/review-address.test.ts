@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { basisFromAddress, basisInAddress, MISMATCH_BASES } from '../../src/view/review-basis';
 import { lagFromAddress, MULTIPLE_BOUNDS, numberFromAddress } from '../../src/view/review-number';
 import { periodFromAddress, periodInAddress, periodWindow, periodWords } from '../../src/view/review-period';
 import { pickupStrip } from '../../src/view/review-pickup-strip';
@@ -46,6 +47,17 @@ describe('numbers in the address', () => {
   it('an angle that is not offered is the usual one', () => {
     expect(lagFromAddress('45')).toBe('45');
     expect(lagFromAddress('1000')).toBe('30');
+  });
+});
+
+describe('the basis of a prediction in the address', () => {
+  it('is the composition where the address holds none or nonsense', () => {
+    for (const text of [null, '', 'composition', 'guess']) expect(basisFromAddress(text)).toBe('composition');
+  });
+
+  it('is kept for the others alone, and read back as what it was', () => {
+    expect(MISMATCH_BASES.map(basisInAddress)).toEqual([undefined, 'snapshot', 'class']);
+    for (const basis of MISMATCH_BASES) expect(basisFromAddress(basisInAddress(basis) ?? null)).toBe(basis);
   });
 });
 

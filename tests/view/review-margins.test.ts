@@ -6,67 +6,20 @@ import {
   reviewSensitivity,
   worstLoadability,
 } from '../../src/view/review-margins';
-import { reviewModel } from '../../src/view/review-model';
 import { reviewSnapshot } from '../../src/view/review-now';
-import { COMPARISON, reviewLine, terminalSaying, TWO_SLOPE } from './sample-review';
+import { COMPARISON, NO_COMPOSITIONS, reviewLine, terminalSaying, TWO_SLOPE } from './sample-review';
 
 const line = reviewLine();
 const susceptanceMs = (2 * Math.PI * 50 * 9 * 71) / 1e6;
 /** charging of the whole line leads the voltage by 90° and stands in terminal 1 alone here */
 const chargingAmps = (susceptanceMs * 110) / Math.sqrt(3);
 const LOADED = [terminalSaying('skelder', [400, 0]), terminalSaying('hask', [400, 180])];
-const input = { line, recorded: TWO_SLOPE, snapshot: reviewSnapshot(line, TWO_SLOPE, LOADED) };
-
-const model = (change: Parameters<typeof reviewModel>[2]) => {
-  const found = reviewModel(line, TWO_SLOPE, change);
-  if (!isComputable(found)) throw new Error(found.notComputable);
-  return found;
+const input = {
+  line,
+  recorded: TWO_SLOPE,
+  snapshot: reviewSnapshot(line, TWO_SLOPE, LOADED),
+  compositions: NO_COMPOSITIONS,
 };
-
-describe('what a prediction takes its mismatches from', () => {
-  it('a loaded line of two terminals with voltages gives them by its present snapshot', () => {
-    const found = model({ phase: 'a', snapshot: input.snapshot, basis: 'snapshot' });
-    expect(found.basis).toBe('snapshot');
-    // nothing is left over, though charging should be: the mismatch has to account for just that
-    const [[mismatch]] = found.model.mismatchSets as [[{ re: number; im: number }]];
-    expect(Math.hypot(mismatch.re, mismatch.im)).toBeCloseTo(chargingAmps / 400, 6);
-  });
-
-  it.each([
-    [
-      'without voltages',
-      LOADED.map((each) => ({ ...each, voltage: null })),
-      'no terminal gives a valid voltage',
-    ],
-    [
-      'under little load',
-      [terminalSaying('skelder', [60, 0]), terminalSaying('hask', [60, 180])],
-      'the line carries under 20 % of its rating now',
-    ],
-    ['without a snapshot', [], 'there is no snapshot with phasors of all ends now'],
-  ])('%s the class limits stand in, and it is said why', (_name, sent, why) => {
-    const found = model({ phase: 'a', snapshot: reviewSnapshot(line, TWO_SLOPE, sent), basis: 'snapshot' });
-    expect(found.basis).toBe('class limits');
-    expect(found.words).toContain(why);
-  });
-
-  it('a terminal without a class leaves no class limits, and is named', () => {
-    const unknown = reviewLine({ terminals: line.terminals.map((each) => ({ ...each, ctClass: '' })) });
-    const found = reviewModel(unknown, TWO_SLOPE, {
-      phase: 'a',
-      snapshot: input.snapshot,
-      basis: 'class limits',
-    });
-    expect(found).toMatchObject({ notComputable: expect.stringContaining('at Skelder and Hask') as string });
-  });
-
-  it('a line without a recorded capacitance has no prediction, and says so', () => {
-    const bare = reviewLine({ capacitanceNfPerKm: null });
-    const found = reviewLoadability({ ...input, line: bare }, { basis: 'class limits', lagDeg: 30 });
-    expect(found.a).toMatchObject({ notComputable: expect.stringContaining('capacitance') as string });
-    expect(worstLoadability(found)).toBeUndefined();
-  });
-});
 
 describe('the margins of a line', () => {
   it('utilisation at emergency rating by class limits is that of the worst corner, the same for all phases', () => {
@@ -75,6 +28,13 @@ describe('the margins of a line', () => {
     expect(found.a.atEmergency).toEqual(found.c.atEmergency);
     expect(found.a.atEmergency.differentialAmps).toBeGreaterThan(0.03 * 960);
     expect(found.a.limitAmps).toBeUndefined();
+  });
+
+  it('a line without a recorded capacitance has no prediction by class limits, and says so', () => {
+    const bare = reviewLine({ capacitanceNfPerKm: null });
+    const found = reviewLoadability({ ...input, line: bare }, { basis: 'class limits', lagDeg: 30 });
+    expect(found.a).toMatchObject({ notComputable: expect.stringContaining('capacitance') as string });
+    expect(worstLoadability(found)).toBeUndefined();
   });
 
   it('with no load a fault beyond the pickup by what charging opposes is seen', () => {
@@ -87,7 +47,7 @@ describe('the margins of a line', () => {
   it('over the present load a line by magnitudes says why nothing can be told', () => {
     const reported = reviewLine({ goesBy: 'reported' });
     const snapshot = reviewSnapshot(reported, TWO_SLOPE, LOADED);
-    const found = reviewSensitivity({ line: reported, recorded: TWO_SLOPE, snapshot }, 'one end');
+    const found = reviewSensitivity({ ...input, line: reported, snapshot }, 'one end');
     expect(isComputable(found.noLoad)).toBe(true);
     expect(found.presentLoad.b).toMatchObject({
       notComputable: expect.stringContaining('can’t be told from this feed') as string,

@@ -34,6 +34,8 @@ export const separatedWith = (change: Partial<SeparatedOnWire> = {}): SeparatedO
   chargingAmps: estimate(14, 0.8),
   expectedChargingAmps: 13.8,
   leakageAmps: estimate(0.1, 0.4),
+  // at 110 kV between phases
+  admittance: { leftMillisiemens: [0.0016, 0.2204], compensatedMillisiemens: 0 },
   mismatches: [mismatchWith()],
   residualRmsAmps: 0.8,
   condition: 41.6,

@@ -1,5 +1,6 @@
 import type { TerminalResult } from '../../src/contract/result';
 import type { SettingsVersion } from '../../src/contract/settings-version';
+import type { ReviewCompositions } from '../../src/view/review-composition';
 import type { ReviewLine } from '../../src/view/review-line';
 
 /** A two-terminal line of 110 kV with 5P transformers at both ends. */
@@ -29,6 +30,9 @@ export function reviewLine(change: Partial<ReviewLine> = {}): ReviewLine {
     ...change,
   };
 }
+
+/** Before the levels of any phase have been looked at. */
+export const NO_COMPOSITIONS: ReviewCompositions = { a: undefined, b: undefined, c: undefined };
 
 type Recorded = Pick<SettingsVersion, 'characteristic' | 'restraint' | 'chargingCompensation'>;
 

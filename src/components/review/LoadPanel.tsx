@@ -6,9 +6,10 @@ import { DASH } from '../../view/line-figures';
 import { PHASES } from '../../view/phase';
 import type { PhaseName } from '../../view/phase';
 import type { ReviewLoadability } from '../../view/review-margins';
-import type { MismatchBasis } from '../../view/review-model';
+import type { MismatchBasis } from '../../view/review-basis';
 import { LAG_CHOICES } from '../../view/review-number';
 import type { LagChoice } from '../../view/review-number';
+import { phaseSentences } from '../../view/review-phase-words';
 import { loadTable } from '../../view/review-tables';
 import type { SiteCustom } from '../../view/site-custom';
 import { ChartPanel } from '../charts/ChartPanel';
@@ -31,6 +32,7 @@ interface Props {
 }
 
 const BASES: readonly { value: MismatchBasis; label: string }[] = [
+  { value: 'composition', label: 'Last 30 days' },
   { value: 'snapshot', label: 'Present snapshot' },
   { value: 'class limits', label: 'Class limits' },
 ];
@@ -40,9 +42,10 @@ const LAGS = LAG_CHOICES.map((value) => ({ value, label: `±${value}°` }));
 export function LoadPanel(props: Props) {
   const { line, site, nowMs, convention, load, basis, onBasis, lag, onLag } = props;
   const letters = site.phaseLetters;
-  const reasons = [
-    ...new Set(PHASES.flatMap((phase) => (isComputable(load[phase]) ? [] : [load[phase].notComputable]))),
-  ];
+  const reasons = phaseSentences(
+    (phase) => (isComputable(load[phase]) ? undefined : load[phase].notComputable),
+    letters,
+  );
   return (
     <ChartPanel
       title="Loadability"
@@ -63,7 +66,7 @@ export function LoadPanel(props: Props) {
             {reason}
           </p>
         ))}
-        {reasons.length < 3 && PHASES.some((phase) => isComputable(load[phase])) && (
+        {PHASES.some((phase) => isComputable(load[phase])) && (
           <>
             <LoadFigures {...props} />
             <Assumptions sentences={assumptions(props)} />
@@ -107,12 +110,12 @@ function LoadFigures({ line, site, load, convention }: Props) {
   );
 }
 
-function assumptions({ line, load, hasTransformer }: Props): string[] {
-  const words = [
-    ...new Set(PHASES.flatMap((phase) => (isComputable(load[phase]) ? [load[phase].words] : []))),
-  ];
+function assumptions({ line, site, load, hasTransformer }: Props): string[] {
   return [
-    ...words,
+    ...phaseSentences(
+      (phase) => (isComputable(load[phase]) ? load[phase].words : undefined),
+      site.phaseLetters,
+    ),
     `Looked for up to twice the emergency rating, ${ampsText(2 * line.emergencyRatingAmps)}. Voltage is nominal; the through current enters at the first terminal and leaves by the others in equal shares.`,
     ...(hasTransformer ? ['Magnetising and tap changing of the transformer in the zone are left out.'] : []),
   ];

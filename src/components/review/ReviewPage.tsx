@@ -3,10 +3,11 @@ import { useMemo, useState } from 'react';
 import type { LineDetail } from '../../contract/lines';
 import { isComputable } from '../../protection/evaluation';
 import type { PhaseName } from '../../view/phase';
+import { basisInAddress } from '../../view/review-basis';
+import type { MismatchBasis } from '../../view/review-basis';
 import type { ReviewLine } from '../../view/review-line';
 import { broughtBy, terminalsInService } from '../../view/review-line';
 import { reviewPickupWindow } from '../../view/review-margins';
-import type { MismatchBasis } from '../../view/review-model';
 import type { LagChoice } from '../../view/review-number';
 import type { ReviewPeriod } from '../../view/review-period';
 import { conventionWords } from '../../view/review-words';
@@ -52,14 +53,13 @@ export function ReviewPage(props: ReviewPageProps) {
   );
 }
 
-const basisKept = (basis: MismatchBasis) => (basis === 'class limits' ? 'class' : undefined);
 const lagKept = (lag: LagChoice) => (lag === '30' ? undefined : lag);
 const multipleKept = (multiple: string) => (multiple === '2.5' ? undefined : multiple);
 
 function ReviewView({ detail: initial, review, site, mayRegister, address }: ReviewPageProps) {
   const { detail, line, result, nowMs, faded } = useLine(initial);
   const [period, setPeriod] = usePeriod(address.period);
-  const [basis, setBasis] = useAddressSwitch('mismatch', address.basis, basisKept);
+  const [basis, setBasis] = useAddressSwitch('mismatch', address.basis, basisInAddress);
   const [lag, setLag] = useAddressSwitch('angle', address.lag, lagKept);
   const [multiple, setMultiple] = useAddressSwitch('multiple', String(address.multiple), multipleKept);
   const [summed, setSummed] = useState<PhaseName>(() => worstStandingPhase(initial.line, site.nearRatio));

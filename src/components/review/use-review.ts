@@ -2,10 +2,11 @@ import { useQuery } from '@tanstack/react-query';
 import { useCallback, useMemo, useState } from 'react';
 import type { LineDetail } from '../../contract/lines';
 import type { SettingsVersion } from '../../contract/settings-version';
+import type { MismatchBasis } from '../../view/review-basis';
+import { reviewCompositions } from '../../view/review-composition';
 import { expectedLevels } from '../../view/review-expected';
 import type { ReviewLine } from '../../view/review-line';
 import { INFEEDS, reviewLoadability, reviewSensitivity } from '../../view/review-margins';
-import type { MismatchBasis } from '../../view/review-model';
 import { reviewSnapshot } from '../../view/review-now';
 import { periodInAddress, periodWindow } from '../../view/review-period';
 import type { ReviewPeriod } from '../../view/review-period';
@@ -46,13 +47,14 @@ interface MarginChoices {
   readonly lagDeg: number;
 }
 
-/** What follows from constants and one snapshot: of the minute, since it takes a while to compute. */
+/** What follows from constants, from the newest findings and from one snapshot: of the minute, since it takes a while to compute. */
 export function useFigures({ review, detail, inForce }: Reviewed, { basis, lagDeg }: MarginChoices) {
   const standing = useMemo(() => {
     if (inForce === undefined) return undefined;
     const results = detail.result?.terminals ?? [];
     const snapshot = reviewSnapshot(review, inForce, results);
-    const input = { line: review, recorded: inForce, snapshot };
+    const compositions = reviewCompositions(detail.standing);
+    const input = { line: review, recorded: inForce, snapshot, compositions };
     const expected = expectedLevels({
       ...input,
       results,
