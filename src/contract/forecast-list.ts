@@ -1,5 +1,6 @@
+import type { FollowUpInFull } from './follow-ups';
 import type { LineSummary } from './lines';
-import type { FollowUp, MarginRow, StandingVerdict } from './standing';
+import type { MarginRow, StandingVerdict } from './standing';
 
 /** Levels day by day from a first day on; null for days without. Short, since a page carries hundreds of these. */
 export interface ForecastHistory {
@@ -39,5 +40,8 @@ export interface ForecastList {
   readonly unknownCount: number;
   /** lines that the list leaves out because it holds no more; the most urgent ones are there */
   readonly leftOutCount: number;
-  readonly followUps: readonly FollowUp[];
+  /** the open ones, the one due first first */
+  readonly followUps: readonly FollowUpInFull[];
+  /** the ones done last, newest first */
+  readonly doneFollowUps: readonly FollowUpInFull[];
 }

@@ -6,6 +6,7 @@ import { resultSchema } from './result';
 import { standingVerdictSchema } from './standing';
 import { settingsVersionSchema } from './settings-version';
 import { creepSchema, warningSchema } from './warning';
+import { workSchema } from './works';
 
 /** The last 24 hours of one phase: the 24-hour standing level, and the lowest 5th and highest 95th hourly percentile. */
 export const dayBandSchema = z.object({
@@ -61,6 +62,8 @@ export const lineDetailSchema = z.object({
   standing: z.array(standingVerdictSchema),
   /** past and open, newest first */
   warnings: z.array(warningSchema),
+  /** recorded works that were not withdrawn, oldest first */
+  works: z.array(workSchema),
 });
 export type LineDetail = z.infer<typeof lineDetailSchema>;
 

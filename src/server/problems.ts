@@ -38,20 +38,28 @@ export function parseSent<Schema extends z.ZodType>(schema: Schema, sent: unknow
   return parsed.success ? { ok: true, value: parsed.data } : { ok: false, problem: problemOf(parsed.error) };
 }
 
+/** What stands for a body that was left out, where it may be. */
+interface EmptyBody {
+  readonly whenEmpty?: unknown;
+}
+
 /** The JSON body of a request, or the answer that refuses it. */
 export async function readJson(
   request: Request,
+  { whenEmpty }: EmptyBody = {},
 ): Promise<{ ok: true; value: unknown } | { ok: false; answer: Response }> {
   const refused = (status: number, sentence: string) => ({
     ok: false as const,
     answer: jsonProblem(status, sentence),
   });
+  const isJson = /^application\/json\b/i.test(request.headers.get('content-type') ?? '');
   // A page of another origin can post text or forms unasked, but not this type
-  if (!/^application\/json\b/i.test(request.headers.get('content-type') ?? ''))
-    return refused(415, 'Send JSON, with the content type application/json.');
+  if (!isJson && whenEmpty === undefined) return refused(415, WANTS_JSON);
   const bytes = await bodyBytes(request);
   if (bytes === undefined)
     return refused(413, `The body is larger than the ${BODY_BYTES_MOST / 1024} KB allowed.`);
+  if (bytes.length === 0 && whenEmpty !== undefined) return { ok: true, value: whenEmpty };
+  if (!isJson) return refused(415, WANTS_JSON);
   try {
     return { ok: true, value: JSON.parse(new TextDecoder('utf-8', { fatal: true }).decode(bytes)) };
   } catch {
@@ -59,12 +67,15 @@ export async function readJson(
   }
 }
 
+const WANTS_JSON = 'Send JSON, with the content type application/json.';
+
 /** A request's JSON body by a schema, or the answer that refuses it. */
 export async function readSent<Schema extends z.ZodType>(
   request: Request,
   schema: Schema,
+  empty: EmptyBody = {},
 ): Promise<{ ok: true; value: z.output<Schema> } | { ok: false; answer: Response }> {
-  const body = await readJson(request);
+  const body = await readJson(request, empty);
   if (!body.ok) return body;
   const parsed = parseSent(schema, body.value);
   return parsed.ok ? parsed : { ok: false, answer: jsonProblem(400, parsed.problem) };

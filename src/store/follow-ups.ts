@@ -1,15 +1,14 @@
-import { and, asc, desc, eq, isNotNull, isNull, sql, type SQL } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, isNotNull, isNull, sql, type SQL } from 'drizzle-orm';
 import type { z } from 'zod';
-import type { FollowUpQuery } from '../contract/follow-ups';
-import type { FollowUp, newFollowUpSchema } from '../contract/standing';
+import { FOLLOW_UPS_MOST, type FollowUpInFull, type FollowUpQuery } from '../contract/follow-ups';
+import type { newFollowUpSchema } from '../contract/standing';
 import type { FollowUpDone } from '../contract/works';
 import { insertAuditEntry } from './audit';
 import { inTransaction, type Store } from './client';
-import { line } from './schema/register';
+import { groupedBy } from './grouped';
+import { line, substation, terminal } from './schema/register';
 import { followUp } from './schema/standing';
-import { insertWorkWithin, type WorkRefusal } from './works';
-
-const FOLLOW_UPS_MOST = 500;
+import { insertWorkWithin, readWorksOfFollowUps, type WorkRefusal } from './works';
 
 interface Keeping {
   readonly by: { readonly id: string; readonly name: string };
@@ -21,7 +20,7 @@ export async function insertFollowUp(
   store: Store,
   { line: key, ...opened }: z.output<typeof newFollowUpSchema>,
   { by, nowMs }: Keeping,
-): Promise<FollowUp | undefined> {
+): Promise<FollowUpInFull | undefined> {
   const [known] = await store.db.select({ id: line.id }).from(line).where(eq(line.key, key));
   if (known === undefined) return undefined;
   const openedAt = new Date(nowMs);
@@ -92,12 +91,12 @@ async function endFollowUpWithin(
   return { kind: 'done', line: kept.line };
 }
 
-export async function readFollowUp(store: Store, id: number): Promise<FollowUp | undefined> {
+export async function readFollowUp(store: Store, id: number): Promise<FollowUpInFull | undefined> {
   return (await readWhere(store, eq(followUp.id, id)))[0];
 }
 
 /** Follow-ups, open ones before done ones; among the open the one due first, those without a date last. */
-export const readFollowUps = (store: Store, asked: FollowUpQuery = {}): Promise<FollowUp[]> =>
+export const readFollowUps = (store: Store, asked: FollowUpQuery = {}): Promise<FollowUpInFull[]> =>
   readWhere(
     store,
     and(
@@ -108,9 +107,14 @@ export const readFollowUps = (store: Store, asked: FollowUpQuery = {}): Promise<
           ? isNull(followUp.doneAt)
           : isNotNull(followUp.doneAt),
     ),
+    asked.limit,
   );
 
-async function readWhere(store: Store, condition: SQL | undefined): Promise<FollowUp[]> {
+async function readWhere(
+  store: Store,
+  condition: SQL | undefined,
+  most = FOLLOW_UPS_MOST,
+): Promise<FollowUpInFull[]> {
   const rows = await store.db
     .select({ followUp, key: line.key, name: line.name })
     .from(followUp)
@@ -123,13 +127,38 @@ async function readWhere(store: Store, condition: SQL | undefined): Promise<Foll
       asc(followUp.due),
       desc(followUp.id),
     )
-    .limit(FOLLOW_UPS_MOST);
-  return rows.map(({ followUp: { lineId: _lineId, openedAt, doneAt, ...rest }, key, name }) => ({
+    .limit(most);
+  const [works, terminals] = await Promise.all([
+    readWorksOfFollowUps(
+      store,
+      rows.map((row) => row.followUp.id),
+    ),
+    readTerminalNames(
+      store,
+      rows.map((row) => row.followUp.lineId),
+    ),
+  ]);
+  const worksOf = groupedBy(works, (work) => work.followUp);
+  return rows.map(({ followUp: { lineId, openedAt, doneAt, ...rest }, key, name }) => ({
     ...rest,
     line: key,
     lineName: name,
     state: doneAt === null ? 'open' : 'done',
     openedAt: openedAt.toISOString(),
     doneAt: doneAt?.toISOString() ?? null,
+    terminals: (terminals.get(lineId) ?? []).map(({ key, name }) => ({ key, name })),
+    works: worksOf.get(rest.id) ?? [],
   }));
+}
+
+/** The terminals of these lines in their order, each by the name of its substation. */
+async function readTerminalNames(store: Store, lineIds: readonly number[]) {
+  if (lineIds.length === 0) return new Map<number, never[]>();
+  const rows = await store.db
+    .select({ lineId: terminal.lineId, key: terminal.key, name: substation.name })
+    .from(terminal)
+    .innerJoin(substation, eq(terminal.substation, substation.key))
+    .where(inArray(terminal.lineId, [...new Set(lineIds)]))
+    .orderBy(asc(terminal.position));
+  return groupedBy(rows, ({ lineId }) => lineId);
 }

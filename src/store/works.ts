@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, isNull, type SQL } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, isNull, type SQL } from 'drizzle-orm';
 import type { NewWork, Work } from '../contract/works';
 import { insertAuditEntry } from './audit';
 import { inTransaction, type Store } from './client';
@@ -142,6 +142,11 @@ export async function readWorksOfLine(store: Store, lineId: number): Promise<Wor
     and(eq(recordedWork.lineId, lineId), isNull(recordedWork.withdrawnAt)),
   );
   return works.reverse();
+}
+
+/** The works recorded with these follow-ups, the newest first, those withdrawn among them. */
+export async function readWorksOfFollowUps(store: Store, ids: readonly number[]): Promise<Work[]> {
+  return ids.length === 0 ? [] : readWhere(store, inArray(recordedWork.followUpId, [...ids]));
 }
 
 async function readWhere(store: Store, condition: SQL | undefined): Promise<Work[]> {

@@ -1,3 +1,4 @@
+import type { FollowUpInFull } from '../contract/follow-ups';
 import type { FollowUp } from '../contract/standing';
 import { dateText, instantText } from './figures';
 import type { SiteCustom } from './site-custom';
@@ -11,6 +12,16 @@ export function dueWords(followUp: Pick<FollowUp, 'due' | 'state'>, nowMs: numbe
   if (followUp.due === null) return 'without a date';
   const day = dateText(`${followUp.due}T12:00:00Z`, 'UTC');
   return isOverdue(followUp, nowMs) ? `overdue since ${day}` : `due ${day}`;
+}
+
+/** "done 12 May 2026, 14:32, without recorded work" */
+export function doneWords(
+  { doneAt, works }: Pick<FollowUpInFull, 'doneAt' | 'works'>,
+  nowMs: number,
+  { timeZone }: SiteCustom,
+): string {
+  const done = doneAt === null ? 'done' : `done ${instantText(doneAt, nowMs, timeZone)}`;
+  return works.length === 0 ? `${done}, without recorded work` : done;
 }
 
 /** "phase B, ratio mismatch, opened by Mira Solano, 12 May 2026, 14:32" */

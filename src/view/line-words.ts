@@ -15,7 +15,7 @@ export const lineWords = (
 ): string => `${kilovoltsText(line.voltageKv)} · ${buildWords(line)} · ${loadWords(line)}`;
 
 /** What the register calls a terminal's place; its key when no substation carries it. */
-export const terminalName = (key: string, substations: LineSummary['substations']): string =>
+export const terminalName = (key: string, substations: Readonly<LineSummary['substations']>): string =>
   substations.find((substation) => substation.key === key)?.name ?? key;
 
 /** "Quillby", "Quillby and Hask", "Quillby, Hask and Ostrel" */

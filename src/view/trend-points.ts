@@ -15,7 +15,7 @@ export interface TrendPoint {
   readonly allCount: number | null;
 }
 
-const RUNG_MS: Record<Rung, number> = { minute: 60_000, hour: 3_600_000, day: 86_400_000 };
+export const RUNG_MS: Record<Rung, number> = { minute: 60_000, hour: 3_600_000, day: 86_400_000 };
 
 /** The hour or day rows of one phase inside the window, oldest first. */
 export function trendOfLevels(

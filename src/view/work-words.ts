@@ -1,6 +1,20 @@
 import type { Work } from '../contract/works';
 import { instantText } from './figures';
+import { terminalName } from './line-words';
 import type { SiteCustom } from './site-custom';
+
+/** A line's terminals by the names of their substations. */
+export type NamedTerminals = readonly { readonly key: string; readonly name: string }[];
+
+export const namedTerminals = (
+  terminals: readonly { readonly key: string; readonly substationName: string }[],
+): NamedTerminals => terminals.map(({ key, substationName }) => ({ key, name: substationName }));
+
+/** "work at Skelder: transformer exchanged", or "work: …" where it was on the line itself */
+export const doneWorkWords = (
+  { terminal, what }: Pick<Work, 'terminal' | 'what'>,
+  terminals: NamedTerminals,
+): string => `${terminal === null ? 'work' : `work at ${terminalName(terminal, terminals)}`}: ${what}`;
 
 interface WorkContext {
   readonly site: SiteCustom;

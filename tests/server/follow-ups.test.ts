@@ -1,5 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest';
-import { followUpListSchema } from '../../src/contract/follow-ups';
+import { followUpInFullSchema, followUpListSchema } from '../../src/contract/follow-ups';
 import { followUpSchema } from '../../src/contract/standing';
 import { GET as getFollowUps, POST as postFollowUp } from '../../src/pages/api/follow-ups';
 import { POST as postDone } from '../../src/pages/api/follow-ups/[id]/done';
@@ -24,8 +24,8 @@ const asPlanner = (sent: Sent = {}): Sent => ({ role: 'planner', ...sent });
 const open = (body: Record<string, unknown>) => answerOf(store, postFollowUp, asPlanner({ body }));
 const list = async (query: string) =>
   followUpListSchema.parse((await answerOf(store, getFollowUps, asPlanner({ query }))).body).followUps;
-const done = (id: number | string) =>
-  answerOf(store, postDone, asPlanner({ params: { id: String(id) }, body: {} }));
+const done = (id: number | string, sent: Sent = { body: {} }) =>
+  answerOf(store, postDone, asPlanner({ params: { id: String(id) }, ...sent }));
 
 describe('a follow-up', () => {
   it('is opened, listed the one due first first, done once, and each step stands in the audit trail', async () => {
@@ -74,6 +74,35 @@ describe('a follow-up', () => {
     expect((await done(4711)).status).toBe(404);
     expect((await done('x')).status).toBe(404);
     expect((await answerOf(store, getFollowUps, asPlanner({ query: '?state=asleep' }))).status).toBe(400);
+  });
+
+  it('that is done is listed with the work that ended it and with its line’s terminals', async () => {
+    const { id } = followUpInFullSchema.parse((await open({ line: KEY, note: 'Exchange it.' })).body);
+    const work = { terminal: 'corrin', doneOn: '2026-03-01', what: 'Transformer of phase B exchanged.' };
+    const ended = followUpInFullSchema.parse((await done(id, { body: { work } })).body);
+    expect(ended).toMatchObject({
+      state: 'done',
+      terminals: [
+        { key: 'birk', name: 'Birk' },
+        { key: 'corrin', name: 'Corrin' },
+      ],
+      works: [{ ...work, line: KEY, followUp: id, recordedBy: 'Mira Holt' }],
+    });
+    expect((await list('?state=done')).find((one) => one.id === id)).toEqual(ended);
+  });
+
+  it('is done without work by a body of nothing, and not by one that is no JSON', async () => {
+    const { id } = followUpInFullSchema.parse((await open({ line: KEY, note: 'Another.' })).body);
+    expect((await done(id, { body: 'done=yes', contentType: 'text/plain' })).status).toBe(415);
+    expect((await list('?state=open')).map((one) => one.id)).toContain(id);
+    expect((await done(id, { body: '', contentType: '' })).status).toBe(200);
+    expect((await list('?state=done')).find((one) => one.id === id)?.works).toEqual([]);
+  });
+
+  it('of those done, as many are listed as are asked for', async () => {
+    expect(await list('?state=done&limit=1')).toHaveLength(1);
+    const few = await answerOf(store, getFollowUps, asPlanner({ query: '?limit=0' }));
+    expect(few.status).toBe(400);
   });
 
   it('is for planner and engineer alone', async () => {
@@ -140,6 +169,7 @@ describe('the forecast', () => {
     expect(list.steadyCount).toBe(90 - list.lines.length);
     expect([list.unknownCount, list.leftOutCount]).toEqual([1, 0]);
     expect(list.followUps.map(({ note }) => note)).toEqual(['Soon.', 'Some day.']);
+    expect(list.doneFollowUps).toHaveLength(3);
   });
 
   it('brings the daily levels of the last sixty days of each phase, days without a level as such', async () => {

@@ -1,4 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest';
+import { lineDetailSchema } from '../../src/contract/lines';
 import { followUpSchema } from '../../src/contract/standing';
 import { workListSchema, workSchema, type Work } from '../../src/contract/works';
 import { readLineHistory } from '../../src/ingest/verdict/line-history';
@@ -7,12 +8,17 @@ import { POST as postFollowUp } from '../../src/pages/api/follow-ups';
 import { POST as postDone } from '../../src/pages/api/follow-ups/[id]/done';
 import { GET as getWorks, POST as postWork } from '../../src/pages/api/works';
 import { POST as postWithdrawn } from '../../src/pages/api/works/[id]/withdrawn';
+import { readComparison } from '../../src/server/reading/comparison';
+import { readLineDetail } from '../../src/server/reading/lines';
+import type { Site } from '../../src/server/site';
 import { readFollowUp } from '../../src/store/follow-ups';
+import { writeLevels } from '../../src/store/levels';
 import { auditEntry } from '../../src/store/schema/people';
+import { writeVerdicts } from '../../src/store/standing';
 import { testStore } from '../database';
 import { demoHistoryOf, demoRosterLine } from '../ingest/demo-history';
 import { answerOf, NOW_MS, type Sent } from '../register/endpoint-call';
-import { madeUpLineOf, storedFleet } from '../store/made-up-fleet';
+import { madeUpLineOf, madeUpVerdict, storedFleet, verdictRow } from '../store/made-up-fleet';
 
 const store = await testStore();
 let ids: Map<string, number>;
@@ -140,5 +146,67 @@ describe('a follow-up that ends with work', () => {
     expect((await readFollowUp(store, id))?.state).toBe('open');
     expect(await works()).toHaveLength(before);
     expect((await end(id, {})).status).toBe(200);
+  });
+});
+
+describe('what goes by recorded works', () => {
+  const GONE_BY = madeUpLineOf(3).key;
+  const kept = async (change: Record<string, unknown> = {}): Promise<Work> =>
+    workSchema.parse(
+      (await record({ line: GONE_BY, doneOn: '2026-03-02', what: 'Relay replaced.', ...change })).body,
+    );
+  const DAY_MS = 86_400_000;
+  const site = {
+    store,
+    now: () => NOW_MS,
+    live: { results: () => new Map() },
+    settings: { NEAR_RATIO: 0.7, NOMINAL_FREQUENCY_HZ: 50, PERIOD_MS: 2_000 },
+  } as unknown as Site;
+
+  it('a line’s detail has those that were not withdrawn', async () => {
+    const { id } = await kept({ what: 'In error.' });
+    await kept();
+    await withdraw(id);
+    const detail = lineDetailSchema.parse(await readLineDetail(site, GONE_BY));
+    expect(detail.works.map(({ what }) => what)).toEqual(['Relay replaced.']);
+  });
+
+  it('a comparison reaches to the next work as it is recorded now, whatever the last look at the line knew', async () => {
+    const lineId = ids.get(GONE_BY)!;
+    const startOf = (day: number) => new Date(Date.UTC(2026, 0, 1) + day * DAY_MS);
+    await writeLevels(
+      store,
+      'day',
+      Array.from({ length: 60 }, (_, day) => ({
+        lineId,
+        phase: 'a' as const,
+        start: startOf(day),
+        leastAmps: 10,
+        p05Amps: 10,
+        medianAmps: 10,
+        p95Amps: 10,
+        greatestAmps: 10,
+        meanRestraintAmps: null,
+        meanThroughAmps: null,
+        greatestUtilisation: null,
+        qualifiedCount: 1,
+        allCount: 1,
+        disqualified: null,
+        sums: null,
+        channelPath: null,
+      })),
+    );
+    const stale = { on: '2026-01-25', kind: 'work recorded' as const };
+    await writeVerdicts(store, [verdictRow(lineId, { ...madeUpVerdict(0, 'a'), marks: [stale] })]);
+    const daysAround = async () => {
+      const [a] = (await readComparison(site, GONE_BY, '2026-02-10'))!.phases;
+      return [a!.before.days, a!.after.days];
+    };
+    expect(await daysAround()).toEqual([40, 19]);
+    // 1 January and nine days after it are cut off, and the day of the work is on neither side
+    const { id } = await kept({ doneOn: '2026-01-10' });
+    expect(await daysAround()).toEqual([30, 19]);
+    await withdraw(id);
+    expect(await daysAround()).toEqual([40, 19]);
   });
 });

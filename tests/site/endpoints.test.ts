@@ -30,6 +30,7 @@ const READS = [
   `/api/lines/anvil-birch/levels?${WINDOW}&rung=hour`,
   '/api/warnings',
   '/api/warnings?state=acknowledged',
+  '/api/works?line=anvil-birch',
   '/api/feed',
   '/api/feed/refusals',
   '/api/register/lines',
@@ -58,6 +59,8 @@ describe('with the wrong role', () => {
     ['operator', 'POST', '/api/register/lines'],
     ['planner', 'POST', '/api/warnings/1/acknowledge'],
     ['admin', 'POST', '/api/warnings/1/acknowledge'],
+    ['operator', 'POST', '/api/works'],
+    ['admin', 'POST', '/api/works/1/withdrawn'],
   ] as const)('%s %s %s answers 403', async (role, method, path) => {
     const answer =
       method === 'GET' ? await people[role].get(path) : await people[role].send(method, path, { note: 'x' });

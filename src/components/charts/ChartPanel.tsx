@@ -11,13 +11,16 @@ interface Props {
   readonly controls?: ReactNode;
   /** the figures behind the chart; undefined while there are none */
   readonly table: LineTable | undefined;
+  /** what else the drawing says, above the figures */
+  readonly overTable?: ReactNode;
   readonly fileName: string;
   readonly timeZone: string;
   readonly children: ReactNode;
 }
 
 /** A chart with its title, its switches, the table behind it and the way to save it. */
-export function ChartPanel({ title, caption, controls, table, fileName, timeZone, children }: Props) {
+export function ChartPanel(props: Props) {
+  const { title, caption, controls, table, overTable, fileName, timeZone, children } = props;
   const [tableOpen, setTableOpen] = useState(false);
   const id = useId();
   return (
@@ -52,6 +55,7 @@ export function ChartPanel({ title, caption, controls, table, fileName, timeZone
         </button>
       </div>
       <div id={`${id}-table`} className={tableOpen ? 'mt-3' : 'hidden'}>
+        {tableOpen && overTable}
         {tableOpen &&
           (table === undefined ? (
             <p className="text-ink-2">There are no figures yet.</p>

@@ -23,8 +23,8 @@ export function FiguresTable({ table, timeZone }: Props) {
         <caption className="sr-only">{table.caption}</caption>
         <thead className="sticky top-0 bg-panel">
           <tr>
-            {table.columns.map((column) => (
-              <th key={column.head} scope="col" className={column.kind === 'figure' ? 'figure' : ''}>
+            {table.columns.map((column, at) => (
+              <th key={column.head} scope="col" className={cellClass(table.columns, at)}>
                 {column.head}
               </th>
             ))}
@@ -34,7 +34,7 @@ export function FiguresTable({ table, timeZone }: Props) {
           {rows.map((row, index) => (
             <tr key={index}>
               {table.columns.map((column, at) => (
-                <td key={column.head} className={column.kind === 'figure' ? 'figure' : ''}>
+                <td key={column.head} className={cellClass(table.columns, at)}>
                   {cellText(row[at] ?? null, column, timeZone)}
                 </td>
               ))}
@@ -49,6 +49,13 @@ export function FiguresTable({ table, timeZone }: Props) {
       )}
     </div>
   );
+}
+
+/** Figures stand to the right; words that come after them need their distance, and room where they are many. */
+function cellClass(columns: readonly TableColumn[], at: number): string {
+  if (columns[at]?.kind === 'figure') return 'figure';
+  if (columns[at]?.kind === 'instant') return 'whitespace-nowrap';
+  return columns[at - 1]?.kind === 'figure' ? 'min-w-48 pl-6' : '';
 }
 
 function cellText(cell: string | number | null, column: TableColumn, timeZone: string): string {

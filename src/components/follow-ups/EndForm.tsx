@@ -1,14 +1,14 @@
 import { useState, type FormEvent } from 'react';
-import type { FollowUp } from '../../contract/standing';
+import type { FollowUpInFull } from '../../contract/follow-ups';
 import { followUpDoneSchema, type FollowUpDone } from '../../contract/works';
 import { workProblems, type WorkProblems, type WorkTyped } from '../../view/work-typed';
 import { fieldsOf, refusedProblems } from '../works/WorkForm';
 import { WorkFields } from '../works/WorkFields';
 
 interface EndFormProps {
-  followUp: FollowUp;
+  followUp: FollowUpInFull;
   today: string;
-  onEnd: (followUp: FollowUp, done: FollowUpDone) => Promise<void>;
+  onEnd: (followUp: FollowUpInFull, done: FollowUpDone) => Promise<void>;
   onClose: () => void;
 }
 
@@ -20,7 +20,9 @@ export function EndForm({ followUp, today, onEnd, onClose }: EndFormProps) {
   const end = async (event: FormEvent) => {
     event.preventDefault();
     const { what, doneOn } = typed;
-    const checked = followUpDoneSchema.safeParse({ work: what.trim() === '' ? null : { what, doneOn } });
+    const terminal = typed.terminal || null;
+    const work = what.trim() === '' ? null : { what, doneOn, terminal };
+    const checked = followUpDoneSchema.safeParse({ work });
     if (!checked.success) return setProblems(workProblems(fieldsOf(checked.error.issues)));
     setSending(true);
     setProblems({});
@@ -41,7 +43,7 @@ export function EndForm({ followUp, today, onEnd, onClose }: EndFormProps) {
     >
       <WorkFields
         {...{ typed, problems, today }}
-        terminals={[]}
+        terminals={followUp.terminals}
         whatLabel="What was done on the line; leave it empty where nothing was"
         onType={(change) => setTyped((before) => ({ ...before, ...change }))}
       />

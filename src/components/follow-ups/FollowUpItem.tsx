@@ -1,5 +1,5 @@
-import { useState } from 'react';
-import type { FollowUp } from '../../contract/standing';
+import { useRef, useState } from 'react';
+import type { FollowUpInFull } from '../../contract/follow-ups';
 import type { FollowUpDone } from '../../contract/works';
 import { dueWords, isOverdue, openedWords } from '../../view/follow-up-words';
 import { comparedDay } from '../../view/line-comparison';
@@ -7,16 +7,17 @@ import type { SiteCustom } from '../../view/site-custom';
 import { EndForm } from './EndForm';
 
 interface FollowUpItemProps {
-  followUp: FollowUp;
+  followUp: FollowUpInFull;
   site: SiteCustom;
   nowMs: number;
   /** undefined for whoever may not */
-  onDone: ((followUp: FollowUp, done: FollowUpDone) => Promise<void>) | undefined;
+  onDone: ((followUp: FollowUpInFull, done: FollowUpDone) => Promise<void>) | undefined;
 }
 
 /** One follow-up: what is to be done, until when, who asked for it, and the way to end it. */
 export function FollowUpItem({ followUp, site, nowMs, onDone }: FollowUpItemProps) {
   const [ending, setEnding] = useState(false);
+  const cancelled = useRef(false);
   return (
     <div
       className="flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1"
@@ -33,6 +34,11 @@ export function FollowUpItem({ followUp, site, nowMs, onDone }: FollowUpItemProp
         <button
           type="button"
           className="button"
+          ref={(button) => {
+            if (!cancelled.current || button === null) return;
+            cancelled.current = false;
+            button.focus();
+          }}
           onClick={() => setEnding(true)}
           aria-label={`Done: ${followUp.note}, ${followUp.lineName}`}
         >
@@ -44,7 +50,10 @@ export function FollowUpItem({ followUp, site, nowMs, onDone }: FollowUpItemProp
           followUp={followUp}
           today={comparedDay(new Date(nowMs).toISOString(), site.timeZone)}
           onEnd={onDone}
-          onClose={() => setEnding(false)}
+          onClose={() => {
+            cancelled.current = true;
+            setEnding(false);
+          }}
         />
       )}
     </div>

@@ -1,12 +1,17 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import { followUpListSchema } from '../../contract/follow-ups';
-import { followUpSchema, type FollowUp } from '../../contract/standing';
+import {
+  DONE_MOST,
+  followUpInFullSchema,
+  followUpListSchema,
+  type FollowUpInFull,
+} from '../../contract/follow-ups';
+import type { FollowUp } from '../../contract/standing';
 import type { FollowUpDone } from '../../contract/works';
 import { apiRequest, RequestRefused } from '../shell/api-request';
 
 const REFETCH_MS = 60_000;
-const KEY = ['follow-ups', 'open'];
+const KEY = ['follow-ups'];
 
 export interface NewFollowUp {
   readonly line: string;
@@ -16,8 +21,13 @@ export interface NewFollowUp {
   readonly note: string;
 }
 
-export interface FollowUps {
-  readonly open: readonly FollowUp[];
+interface Listed {
+  readonly open: readonly FollowUpInFull[];
+  /** those done last, newest first */
+  readonly done: readonly FollowUpInFull[];
+}
+
+export interface FollowUps extends Listed {
   /** what was done last, for whoever listens: a sentence */
   readonly told: string | undefined;
   /** where the work that was just recorded can be seen before and after */
@@ -27,28 +37,33 @@ export interface FollowUps {
   end(followUp: FollowUp, done: FollowUpDone): Promise<void>;
 }
 
-/** The open follow-ups, as the page brought them and as they are asked for anew each minute. */
-export function useFollowUps(initial: readonly FollowUp[]): FollowUps {
+/** The open follow-ups and those done last, as the page brought them and as they are asked for anew each minute. */
+export function useFollowUps(initial: Listed): FollowUps {
   const client = useQueryClient();
   const [told, setTold] = useState<string>();
   const [compare, setCompare] = useState<string>();
   const { data } = useQuery({
     queryKey: KEY,
-    queryFn: async ({ signal }) =>
-      (await apiRequest('/api/follow-ups?state=open', { answer: followUpListSchema, signal })).followUps,
-    initialData: [...initial],
+    queryFn: async ({ signal }): Promise<Listed> => {
+      const [open, done] = await Promise.all([
+        fetchFollowUps('state=open', signal),
+        fetchFollowUps(`state=done&limit=${DONE_MOST}`, signal),
+      ]);
+      return { open, done };
+    },
+    initialData: initial,
     staleTime: REFETCH_MS,
     refetchInterval: REFETCH_MS,
     retry: false,
   });
   const asked = () => client.invalidateQueries({ queryKey: KEY });
   return {
-    open: data,
+    ...data,
     told,
     compare,
     async add(opened) {
       const kept = await apiRequest('/api/follow-ups', {
-        answer: followUpSchema,
+        answer: followUpInFullSchema,
         method: 'POST',
         body: opened,
       });
@@ -59,7 +74,7 @@ export function useFollowUps(initial: readonly FollowUp[]): FollowUps {
       setCompare(undefined);
       try {
         await apiRequest(`/api/follow-ups/${followUp.id}/done`, {
-          answer: followUpSchema,
+          answer: followUpInFullSchema,
           method: 'POST',
           body: done,
         });
@@ -74,3 +89,6 @@ export function useFollowUps(initial: readonly FollowUp[]): FollowUps {
     },
   };
 }
+
+const fetchFollowUps = async (query: string, signal: AbortSignal): Promise<FollowUpInFull[]> =>
+  (await apiRequest(`/api/follow-ups?${query}`, { answer: followUpListSchema, signal })).followUps;

@@ -8,6 +8,7 @@ import { capital } from '../../view/margin-sentence';
 import { ownerNames } from '../../view/owner-names';
 import type { SiteCustom } from '../../view/site-custom';
 import { plainClick } from '../board/plain-click';
+import { DoneFollowUps } from '../follow-ups/DoneFollowUps';
 import { OpenFollowUps } from '../follow-ups/OpenFollowUps';
 import { useFollowUps } from '../follow-ups/use-follow-ups';
 import { ForecastFilters } from './ForecastFilters';
@@ -33,7 +34,7 @@ export function ForecastPage(props: ForecastPageProps) {
 
 function Forecast({ list, site, search, mayKeep }: ForecastPageProps) {
   const state = useForecastAddress(search);
-  const followUps = useFollowUps(list.followUps);
+  const followUps = useFollowUps({ open: list.followUps, done: list.doneFollowUps });
   const nowMs = Date.parse(list.at);
   const rows = useMemo(
     () => list.lines.map((line) => forecastRow(line, site.nearRatio)),
@@ -90,6 +91,7 @@ function Forecast({ list, site, search, mayKeep }: ForecastPageProps) {
         rows={sections['within margin']}
       />
       <OpenFollowUps followUps={followUps} site={site} nowMs={nowMs} mayKeep={mayKeep} hasRows={shown > 0} />
+      <DoneFollowUps done={followUps.done} site={site} nowMs={nowMs} />
     </>
   );
 }

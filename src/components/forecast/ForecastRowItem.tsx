@@ -1,5 +1,4 @@
 import { useRef, useState } from 'react';
-import type { FollowUp } from '../../contract/standing';
 import type { Condition } from '../../contract/condition';
 import { kilovoltsText } from '../../view/figures';
 import { dayOf, forecastRange, type ForecastAxis } from '../../view/forecast-axis';
@@ -130,7 +129,7 @@ function LineFollowUps({ row, site, nowMs, followUps, mayKeep }: Omit<ForecastRo
   const [writing, setWriting] = useState(false);
   const closed = useRef(false);
   const { line, phase, place } = row;
-  const own: readonly FollowUp[] = followUps.open.filter((one) => one.line === line.key);
+  const own = followUps.open.filter((one) => one.line === line.key);
   return (
     <>
       {own.length > 0 && (

@@ -122,6 +122,8 @@ function LineView({ detail: initial, review, site, mayAcknowledge, address }: Li
         {...shared}
         settings={detail.settings}
         standing={detail.standing}
+        works={detail.works}
+        terminals={detail.terminals}
         live={live}
         unit={unit}
         span={span}

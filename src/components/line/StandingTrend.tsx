@@ -1,8 +1,10 @@
 import { useMemo } from 'react';
 import type { LineSummary } from '../../contract/lines';
+import type { Terminal } from '../../contract/register';
 import type { SettingsVersion } from '../../contract/settings-version';
 import type { StandingVerdict } from '../../contract/standing';
 import type { Creep } from '../../contract/warning';
+import type { Work } from '../../contract/works';
 import { stepSizeWords } from '../../view/composition-words';
 import { csvName } from '../../view/line-csv';
 import type { Reading } from '../../view/line-readings';
@@ -12,17 +14,19 @@ import { PHASES } from '../../view/phase';
 import type { PhaseName } from '../../view/phase';
 import { phaseCondition } from '../../view/phase-condition';
 import type { SiteCustom } from '../../view/site-custom';
-import { trendMarks } from '../../view/trend-marks';
+import { trendMarks, type TrendMark } from '../../view/trend-marks';
 import type { TrendPhase } from '../../view/trend-phase';
 import { TREND_SPANS } from '../../view/trend-span';
 import type { TrendSpan, TrendWindow } from '../../view/trend-span';
 import { trendTable } from '../../view/trend-table';
 import { creepWords, spanWords } from '../../view/trend-words';
+import { namedTerminals } from '../../view/work-words';
 import { ChartPanel } from '../charts/ChartPanel';
 import { ChartPlace } from '../charts/ChartPlace';
 import { Choice } from '../charts/Choice';
 import { FetchState } from '../charts/FetchState';
 import { useChartInk } from '../charts/use-chart-ink';
+import { MarkTable } from './MarkTable';
 import { TrendFindings } from './TrendFindings';
 import { useNarrow } from './use-narrow';
 import { useTrend } from './use-trend';
@@ -34,6 +38,8 @@ interface Props {
   readonly line: LineSummary;
   readonly settings: readonly SettingsVersion[];
   readonly standing: readonly StandingVerdict[];
+  readonly works: readonly Work[];
+  readonly terminals: readonly Terminal[];
   readonly live: readonly Reading[];
   readonly unit: CurrentUnit;
   readonly site: SiteCustom;
@@ -62,12 +68,13 @@ export function StandingTrend(props: Props) {
   const found = [...trend.creep, ...line.creep].find((each) => each.phase === phase);
   const creep = daysShown ? found : undefined;
   const verdicts = standing.filter((each) => phases.includes(each.phase));
+  const marks = useMarks(props, trend.window, phase);
   const option = useTrendOption({
     settings,
     trend,
     drawn,
     creep,
-    marks: useMarks(props, trend.window, phase),
+    marks,
     unit,
     ratingAmps: line.ratingAmps,
     site,
@@ -75,7 +82,7 @@ export function StandingTrend(props: Props) {
     faded,
     narrow,
   });
-  const { caption, title, table } = toldTrend(props, { trend, phases, creep });
+  const { caption, title, table } = toldTrend(props, { trend, phases, creep, marks });
   const empty = phases.every((each) => trend.series[each].every((point) => point.medianAmps === null));
   const rung = trend.source === 'day' ? 'day' : 'hour';
   return (
@@ -83,6 +90,7 @@ export function StandingTrend(props: Props) {
       title={title}
       caption={caption}
       controls={<TrendChoices {...props} />}
+      overTable={marks.length > 0 && <MarkTable line={line.key} marks={marks} timeZone={site.timeZone} />}
       table={table.rows.length === 0 ? undefined : table}
       fileName={csvName([line.key, 'standing', span], nowMs)}
       timeZone={site.timeZone}
@@ -107,7 +115,17 @@ export function StandingTrend(props: Props) {
 /** The trend in words and figures. */
 function toldTrend(
   { line, unit, site, span, phase }: Props,
-  { trend, phases, creep }: { trend: Trend; phases: readonly PhaseName[]; creep: Creep | undefined },
+  {
+    trend,
+    phases,
+    creep,
+    marks,
+  }: {
+    trend: Trend;
+    phases: readonly PhaseName[];
+    creep: Creep | undefined;
+    marks: readonly TrendMark[];
+  },
 ) {
   const words = spanWords(span, { several: phase === 'all' });
   const context = { unit, ratingAmps: line.ratingAmps, timeZone: site.timeZone };
@@ -119,6 +137,7 @@ function toldTrend(
     phases,
     letters: site.phaseLetters,
     caption: title,
+    marks,
     ...context,
   });
   return { caption, title, table };
@@ -140,7 +159,11 @@ function NothingDrawn({ trend, span }: { trend: Trend; span: TrendSpan }) {
 }
 
 /** What is marked on the drawing; the same array while nothing of it changes. */
-function useMarks({ standing, settings, line, unit, site }: Props, window: TrendWindow, phase: TrendPhase) {
+function useMarks(
+  { standing, settings, works, terminals, line, unit, site }: Props,
+  window: TrendWindow,
+  phase: TrendPhase,
+) {
   const { ratingAmps } = line;
   const { phaseLetters } = site;
   return useMemo(() => {
@@ -152,8 +175,11 @@ function useMarks({ standing, settings, line, unit, site }: Props, window: Trend
       words: `${phase === 'all' ? `${letter}: ` : ''}step ${stepSizeWords(step, { unit, ratingAmps })}`,
     }));
     const others = standing.flatMap(({ phase: of, marks }) => (phase === 'all' || phase === of ? marks : []));
-    return trendMarks({ steps: named, settings, others }, window);
-  }, [standing, settings, unit, ratingAmps, phaseLetters, phase, window]);
+    return trendMarks(
+      { steps: named, settings, works, terminals: namedTerminals(terminals), others },
+      window,
+    );
+  }, [standing, settings, works, terminals, unit, ratingAmps, phaseLetters, phase, window]);
 }
 
 /** The phases shown with their conditions; the same array while nothing of it changes. */

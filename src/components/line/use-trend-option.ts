@@ -7,7 +7,7 @@ import { unitWords } from '../../view/line-unit';
 import type { CurrentUnit } from '../../view/line-unit';
 import type { PhaseName } from '../../view/phase';
 import type { SiteCustom } from '../../view/site-custom';
-import { placedMarks } from '../../view/trend-marks';
+import { marksTold, placedMarks } from '../../view/trend-marks';
 import type { TrendMark } from '../../view/trend-marks';
 import { pickupSteps } from '../../view/trend-pickup';
 import { senPoints } from '../../view/trend-sen';
@@ -81,7 +81,10 @@ export function useTrendOption(input: TrendInput) {
       changes: placedMarks(marks, window, narrow ? NARROW_PLOT_PX : PLOT_PX),
       levelName: `differential, ${unitWords(unit, ratingAmps)}`,
       levelText: (level) => currentText(level * unitAmps, unit, ratingAmps),
-      tooltip: (atMs) => trendTooltip(told, atMs, { source, unit, ratingAmps, nowMs: window.toMs, timeZone }),
+      tooltip: (atMs) => [
+        ...trendTooltip(told, atMs, { source, unit, ratingAmps, nowMs: window.toMs, timeZone }),
+        ...marksTold(marks, atMs, source),
+      ],
     });
   }, [settings, window, series, source, drawn, creep, marks, unit, ratingAmps, site, ink, faded, narrow]);
 }

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import type { Work } from '../../contract/works';
 import { dayText } from '../../view/line-comparison';
 import type { SiteCustom } from '../../view/site-custom';
@@ -22,6 +22,7 @@ export function RecordedWorks({ works: initial, ...props }: RecordedWorksProps) 
   const { line, terminals, today, mayRecord } = props;
   const works = useWorks(line.key, initial);
   const [writing, setWriting] = useState(false);
+  const recordButton = useFocusBack();
   return (
     <section aria-labelledby="works-title" className="mt-6 max-w-[80ch]">
       <h2 id="works-title" className="m-0 text-body font-semibold">
@@ -49,10 +50,18 @@ export function RecordedWorks({ works: initial, ...props }: RecordedWorksProps) 
             terminals={terminals}
             today={today}
             onSend={works.add}
-            onClose={() => setWriting(false)}
+            onClose={() => {
+              recordButton.wanted();
+              setWriting(false);
+            }}
           />
         ) : (
-          <button type="button" className="button mt-2" onClick={() => setWriting(true)}>
+          <button
+            type="button"
+            ref={recordButton.ref}
+            className="button mt-2"
+            onClick={() => setWriting(true)}
+          >
             Record work
           </button>
         ))}
@@ -64,6 +73,7 @@ type WorkItemProps = Omit<RecordedWorksProps, 'works'> & { readonly work: Work; 
 
 function WorkItem({ work, works, line, terminals, site, nowMs, mayRecord }: WorkItemProps) {
   const [asking, setAsking] = useState(false);
+  const withdrawButton = useFocusBack();
   const isStanding = work.withdrawn === null;
   return (
     <li className="flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1 border-b border-hairline py-1.5">
@@ -83,6 +93,7 @@ function WorkItem({ work, works, line, terminals, site, nowMs, mayRecord }: Work
       {mayRecord && isStanding && !asking && (
         <button
           type="button"
+          ref={withdrawButton.ref}
           className="link cursor-pointer"
           aria-label={`Withdraw: ${work.what}`}
           onClick={() => setAsking(true)}
@@ -96,11 +107,33 @@ function WorkItem({ work, works, line, terminals, site, nowMs, mayRecord }: Work
           <button type="button" className="button" autoFocus onClick={() => void works.withdraw(work)}>
             Withdraw it
           </button>
-          <button type="button" className="button" onClick={() => setAsking(false)}>
+          <button
+            type="button"
+            className="button"
+            onClick={() => {
+              withdrawButton.wanted();
+              setAsking(false);
+            }}
+          >
             Keep it
           </button>
         </span>
       )}
     </li>
   );
+}
+
+/** Gives the keyboard back to a button that comes again, when that is wanted. */
+function useFocusBack() {
+  const wanted = useRef(false);
+  return {
+    wanted: () => {
+      wanted.current = true;
+    },
+    ref: (button: HTMLButtonElement | null) => {
+      if (!wanted.current || button === null) return;
+      wanted.current = false;
+      button.focus();
+    },
+  };
 }

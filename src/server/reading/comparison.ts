@@ -10,6 +10,7 @@ import { levelsAtReferenceLoad } from '../../standing/reference-level';
 import { type LevelRow, readLevels } from '../../store/levels';
 import { readRegisterLine } from '../../store/register';
 import { readVerdictsOfLine } from '../../store/standing';
+import { readWorksOfLine } from '../../store/works';
 import { type SummedDay, summedDays } from '../../view/day-sums';
 import type { Site } from '../site';
 import { compensatedNow, composed, type ComposedOf, type Window } from './composition';
@@ -31,7 +32,10 @@ export async function readComparison(site: Site, key: string, at: string): Promi
     from: new Date(atMs - COMPARED_DAYS * DAY_MS),
     to: new Date(atMs + COMPARED_DAYS * DAY_MS),
   });
-  const verdicts = await readVerdictsOfLine(site.store, line.id);
+  const [verdicts, works] = await Promise.all([
+    readVerdictsOfLine(site.store, line.id),
+    readWorksOfLine(site.store, line.id),
+  ]);
   const compared = {
     line,
     frequencyHz: site.settings.NOMINAL_FREQUENCY_HZ,
@@ -41,8 +45,10 @@ export async function readComparison(site: Site, key: string, at: string): Promi
     line: key,
     at,
     phases: PHASES.map((phase) => {
-      const marks = verdicts.find((verdict) => verdict.phase === phase)?.marks ?? [];
-      const windows = comparedWindows(atMs, marks);
+      const found = verdicts.find((verdict) => verdict.phase === phase)?.marks ?? [];
+      // works as they are recorded now: the verdict’s are as old as the last look, and one may be withdrawn since
+      const others = found.filter(({ kind }) => kind !== 'work recorded');
+      const windows = comparedWindows(atMs, [...others, ...works.map(({ doneOn }) => ({ on: doneOn }))]);
       return comparedPhase(phase, { rows, windows, compared });
     }),
   };

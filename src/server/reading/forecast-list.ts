@@ -1,4 +1,5 @@
 import type { CompositionOnWire } from '../../contract/composition';
+import { DONE_MOST } from '../../contract/follow-ups';
 import type { ForecastHistory, ForecastLine, ForecastList } from '../../contract/forecast-list';
 import type { StandingVerdict } from '../../contract/standing';
 import { groupedBy } from '../../store/grouped';
@@ -21,10 +22,11 @@ const PHASES_MOST = 400;
 export async function readForecastList({ store, settings, now }: Site): Promise<ForecastList> {
   const nowMs = now();
   const { NEAR_RATIO } = settings;
-  const [keys, counts, followUps] = await Promise.all([
+  const [keys, counts, followUps, doneFollowUps] = await Promise.all([
     readForecastKeys(store, NEAR_RATIO, PHASES_MOST),
     countForecastLines(store, NEAR_RATIO),
     readFollowUps(store, { state: 'open' }),
+    readFollowUps(store, { state: 'done', limit: DONE_MOST }),
   ]);
   const lineIds = [...new Set(keys.map(({ lineId }) => lineId))];
   const [margins, ends, days] = await Promise.all([
@@ -55,6 +57,7 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
     unknownCount: counts.unknown,
     leftOutCount: listed - lines.length,
     followUps,
+    doneFollowUps,
   };
 }
 

@@ -5,6 +5,7 @@ import { groupedBy } from '../../store/grouped';
 import { readRegister, readRegisterLine, type RegisteredLine } from '../../store/register';
 import { readVerdictsOfLine } from '../../store/standing';
 import { readOpenWarnings, readWarningsOfLine } from '../../store/warnings';
+import { readWorksOfLine } from '../../store/works';
 import { lineSummary } from '../../view/line-summary';
 import type { Site } from '../site';
 
@@ -38,6 +39,7 @@ export async function readLineDetail(site: Site, key: string): Promise<LineDetai
     settings: registered.settings.toReversed(),
     standing: await readVerdictsOfLine(site.store, registered.id),
     warnings,
+    works: await readWorksOfLine(site.store, registered.id),
   };
 }
 

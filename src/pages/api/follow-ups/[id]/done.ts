@@ -13,7 +13,7 @@ export const POST: APIRoute = async (context) => {
   const id = Number(context.params.id);
   const unknown = () => jsonProblem(404, `There is no follow-up with the number ${context.params.id}.`);
   if (!Number.isSafeInteger(id)) return unknown();
-  const sent = await readSent(context.request, followUpDoneSchema.strict());
+  const sent = await readSent(context.request, followUpDoneSchema.strict(), { whenEmpty: {} });
   if (!sent.ok) return sent.answer;
   const outcome = await endFollowUp(site.store, id, { by: person!, nowMs: site.now(), ...sent.value });
   if (outcome === 'unknown') return unknown();
