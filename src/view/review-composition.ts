@@ -73,8 +73,12 @@ function mismatchesOf(
       };
 }
 
-/** "2 Nov to 1 Dec 2026, 28 days with qualified snapshots": the days are those of UTC. */
+const DAY_MS = 86_400_000;
+const WHOLE_DAYS = 30;
+
+/** "1 Nov 2026 to 1 Dec 2026, 28 days with qualified snapshots": the days are those of UTC. */
 function windowWords({ from, to, days }: SeparatedOnWire): string {
   const date = (day: string) => dateText(`${day}T12:00:00Z`, 'UTC');
-  return `${date(from)} to ${date(to)}, ${days} days with qualified snapshots`;
+  const isParted = Date.parse(to) - Date.parse(from) < WHOLE_DAYS * DAY_MS;
+  return `${isParted ? 'since the last known mark only, ' : ''}${date(from)} to ${date(to)}, ${days} days with qualified snapshots`;
 }

@@ -24,7 +24,8 @@ interface MarginInput extends ModelInput {
 }
 
 /** Loadability of one phase, and what its mismatches come from. */
-export type ReviewLoadability = Loadability & Pick<ReviewModel, 'words'> & { readonly from: MismatchBasis };
+export type ReviewLoadability = Loadability &
+  Pick<ReviewModel, 'words' | 'obstacles'> & { readonly from: MismatchBasis };
 
 /** How much load each phase's scheme lets the line carry. */
 export function reviewLoadability(
@@ -43,7 +44,9 @@ export function reviewLoadability(
     const known = JSON.stringify(found.model);
     const load = byModel.get(known) ?? loadability({ scheme, model: found.model, range }, line);
     byModel.set(known, load);
-    return isComputable(load) ? { ...load, words: found.words, from: found.basis } : load;
+    return isComputable(load)
+      ? { ...load, words: found.words, obstacles: found.obstacles, from: found.basis }
+      : load;
   });
 }
 

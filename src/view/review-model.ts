@@ -27,11 +27,14 @@ export interface ModelInput {
   readonly compositions: ReviewCompositions;
 }
 
-/** A line's answer to load, and what its mismatches come from, in words. */
+/** A line's answer to load, and what its mismatches come from. */
 export interface ReviewModel {
   readonly model: LineModel;
   readonly basis: MismatchBasis;
+  /** the basis, as a sentence */
   readonly words: string;
+  /** why it is not the one that was asked for, in sentences; none where it is */
+  readonly obstacles: readonly string[];
 }
 
 type Told = Pick<ReviewModel, 'model' | 'words'> | NotComputable;
@@ -42,10 +45,7 @@ const LOADED_RATIO = 0.2;
 export const NO_CAPACITANCE =
   'The register does not hold the line’s capacitance, so its charging current can’t be told.';
 
-/**
- * The model of one phase by the basis that is asked for, else by the next one that can be had: the words then say why
- * it is not the better one.
- */
+/** The model of one phase by the basis that is asked for, else by the next one that can be had. */
 export function reviewModel(
   input: ModelInput,
   { phase, basis }: { phase: PhaseName; basis: MismatchBasis },
@@ -56,8 +56,7 @@ export function reviewModel(
   const obstacles = new Set<string>();
   for (const each of MISMATCH_BASES.slice(MISMATCH_BASES.indexOf(basis))) {
     const told = MODELS[each](input, phase);
-    if (isComputable(told))
-      return { model: told.model, basis: each, words: [told.words, ...obstacles].join(' ') };
+    if (isComputable(told)) return { ...told, basis: each, obstacles: [...obstacles] };
     obstacles.add(told.notComputable);
   }
   return { notComputable: [...obstacles].join(' ') };

@@ -69,6 +69,11 @@ export function LoadPanel(props: Props) {
         {PHASES.some((phase) => isComputable(load[phase])) && (
           <>
             <LoadFigures {...props} />
+            {insteadOfChosen(props).map((sentences) => (
+              <p key={sentences} className="mt-2 text-pretty">
+                {sentences}
+              </p>
+            ))}
             <Assumptions sentences={assumptions(props)} />
           </>
         )}
@@ -110,12 +115,21 @@ function LoadFigures({ line, site, load, convention }: Props) {
   );
 }
 
-function assumptions({ line, site, load, hasTransformer }: Props): string[] {
+/** What stands in for the basis that was chosen, and why, where it could not be had. */
+function insteadOfChosen({ load, basis, site }: Props): string[] {
+  return phaseSentences((phase) => {
+    const own = load[phase];
+    if (!isComputable(own) || own.from === basis) return undefined;
+    return [own.words, ...own.obstacles].join(' ');
+  }, site.phaseLetters);
+}
+
+function assumptions({ line, site, load, basis, hasTransformer }: Props): string[] {
   return [
-    ...phaseSentences(
-      (phase) => (isComputable(load[phase]) ? load[phase].words : undefined),
-      site.phaseLetters,
-    ),
+    ...phaseSentences((phase) => {
+      const own = load[phase];
+      return isComputable(own) && own.from === basis ? own.words : undefined;
+    }, site.phaseLetters),
     `Looked for up to twice the emergency rating, ${ampsText(2 * line.emergencyRatingAmps)}. Voltage is nominal; the through current enters at the first terminal and leaves by the others in equal shares.`,
     ...(hasTransformer ? ['Magnetising and tap changing of the transformer in the zone are left out.'] : []),
   ];
