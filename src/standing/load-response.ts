@@ -77,7 +77,9 @@ function wholeWeeks(hours: readonly HourlyLevel[]): readonly HourlyLevel[] {
   if (first === undefined || last === undefined) return [];
   const to = Math.floor((last.hour + 1) / WEEK_HOURS) * WEEK_HOURS;
   const from = Math.max(Math.ceil(first.hour / WEEK_HOURS) * WEEK_HOURS, to - WEEKS_MOST * WEEK_HOURS);
-  return hours.filter(({ hour }) => hour >= from && hour < to);
+  const firstPlace = hours.findIndex(({ hour }) => hour >= from);
+  const afterLast = hours.findLastIndex(({ hour }) => hour < to);
+  return firstPlace < 0 ? [] : hours.slice(firstPlace, afterLast + 1);
 }
 
 /** Sums of products of deviations: t is load, q its square, both of the reference; y the level squared, A². */
@@ -93,23 +95,25 @@ interface DeviationSums {
 
 function deviationSums(hours: readonly HourlyLevel[], referenceAmps: number): DeviationSums {
   const sums: DeviationSums = { tt: 0, tq: 0, qq: 0, ty: 0, qy: 0, count: 0, weeks: 0 };
-  let week: HourlyLevel[] = [];
-  hours.forEach((each, index) => {
-    week.push(each);
-    const next = hours[index + 1];
-    if (next !== undefined && weekOf(next) === weekOf(each)) return;
-    addWeek(sums, week, referenceAmps);
-    week = [];
-  });
+  for (let from = 0, to = 0; from < hours.length; from = to) {
+    while (to < hours.length && weekOf(hours[to]!) === weekOf(hours[from]!)) to += 1;
+    addWeek(sums, hours, { from, to, referenceAmps });
+  }
   return sums;
 }
 
 const weekOf = ({ hour }: HourlyLevel): number => Math.floor(hour / WEEK_HOURS);
 
-function addWeek(sums: DeviationSums, week: readonly HourlyLevel[], referenceAmps: number): void {
+/** Adds the hours at the places `from` to before `to`, those of one week. */
+function addWeek(
+  sums: DeviationSums,
+  hours: readonly HourlyLevel[],
+  { from, to, referenceAmps }: { from: number; to: number; referenceAmps: number },
+): void {
   sums.weeks += 1;
   const means = new Float64Array(24 * 4);
-  for (const { hour, levelAmps, throughAmps } of week) {
+  for (let place = from; place < to; place++) {
+    const { hour, levelAmps, throughAmps } = hours[place]!;
     const at = 4 * (hour % 24);
     const load = throughAmps / referenceAmps;
     means[at]! += 1;
@@ -117,7 +121,8 @@ function addWeek(sums: DeviationSums, week: readonly HourlyLevel[], referenceAmp
     means[at + 2]! += load * load;
     means[at + 3]! += levelAmps * levelAmps;
   }
-  for (const { hour, levelAmps, throughAmps } of week) {
+  for (let place = from; place < to; place++) {
+    const { hour, levelAmps, throughAmps } = hours[place]!;
     const at = 4 * (hour % 24);
     const count = means[at]!;
     const load = throughAmps / referenceAmps;
@@ -144,18 +149,15 @@ export function levelsAtLoad(hours: readonly HourlyLevel[], response: LoadRespon
   assertAscendingHours(hours);
   const levels: DailyLevel[] = [];
   const squares = new Float64Array(24);
-  let count = 0;
-  hours.forEach((each, index) => {
-    const next = hours[index + 1];
-    squares[count++] = squareAtLoad(each, response);
-    const day = dayOf(each);
-    if (next !== undefined && dayOf(next) === day) return;
-    if (count >= HOURS_A_DAY_LEAST) {
-      const square = medianInPlace(squares.subarray(0, count));
-      levels.push({ day, levelAmps: Math.sqrt(Math.max(0, square)) });
+  for (let from = 0, to = 0; from < hours.length; from = to) {
+    const day = dayOf(hours[from]!);
+    for (; to < hours.length && dayOf(hours[to]!) === day; to++) {
+      squares[to - from] = squareAtLoad(hours[to]!, response);
     }
-    count = 0;
-  });
+    if (to - from < HOURS_A_DAY_LEAST) continue;
+    const square = medianInPlace(squares.subarray(0, to - from));
+    levels.push({ day, levelAmps: Math.sqrt(Math.max(0, square)) });
+  }
   return levels;
 }
 

@@ -32,7 +32,7 @@ const METHODS = ['composition', 'magnitudes', 'as measured'] as const;
 type Method = (typeof METHODS)[number];
 
 /** What is measured rises with load more often than not, and every rise takes its time to be judged. */
-const LOOK_DAYS: Readonly<Record<Method, number>> = { composition: 1, magnitudes: 1, 'as measured': 7 };
+const LOOK_DAYS: Readonly<Record<Method, number>> = { composition: 1, magnitudes: 1, 'as measured': 14 };
 
 function historyOf(truth: LineTruth, days: number): History {
   const measured = Array.from(measuredHours(truth, days * 24));
