@@ -4,6 +4,7 @@ import { WORST_FIRST } from '../../view/condition-words';
 import { kilovoltsText } from '../../view/figures';
 import { plainClick } from './plain-click';
 import type { BoardAddress } from './use-board-query';
+import { Select } from '../shell/Select';
 
 interface BoardFiltersProps {
   address: BoardAddress;
@@ -117,33 +118,5 @@ function Selects({ address: { query, choose }, choices }: BoardFiltersProps) {
         onChoose={(value) => choose({ sort: SORTS.find((sort) => sort === value) ?? 'worst' })}
       />
     </>
-  );
-}
-
-interface SelectProps {
-  label: string;
-  name: string;
-  value: string;
-  options: readonly (readonly [value: string, words: string])[];
-  onChoose: (value: string) => void;
-}
-
-function Select({ label, name, value, options, onChoose }: SelectProps) {
-  return (
-    <label className="grid gap-0.5 text-caption text-ink-2">
-      {label}
-      <select
-        name={name}
-        value={value}
-        onChange={(event) => onChoose(event.target.value)}
-        className="field max-w-44 text-body"
-      >
-        {options.map(([key, words]) => (
-          <option key={key} value={key}>
-            {words}
-          </option>
-        ))}
-      </select>
-    </label>
   );
 }

@@ -4,6 +4,7 @@ import { followUpDoneSchema, type FollowUpDone } from '../../contract/works';
 import { workProblems, type WorkProblems, type WorkTyped } from '../../view/work-typed';
 import { fieldsOf, refusedProblems } from '../works/WorkForm';
 import { WorkFields } from '../works/WorkFields';
+import { FormButtons } from '../shell/FormButtons';
 
 interface EndFormProps {
   followUp: FollowUpInFull;
@@ -47,18 +48,11 @@ export function EndForm({ followUp, today, onEnd, onClose }: EndFormProps) {
         whatLabel="What was done on the line; leave it empty where nothing was"
         onType={(change) => setTyped((before) => ({ ...before, ...change }))}
       />
-      <div className="flex gap-2">
-        <button type="submit" disabled={sending} className="button button-first">
-          {sending
-            ? 'Sending…'
-            : typed.what.trim() === ''
-              ? 'End the follow-up'
-              : 'End it and record the work'}
-        </button>
-        <button type="button" onClick={onClose} className="button">
-          Cancel
-        </button>
-      </div>
+      <FormButtons
+        words={typed.what.trim() === '' ? 'End the follow-up' : 'End it and record the work'}
+        sending={sending}
+        onClose={onClose}
+      />
     </form>
   );
 }

@@ -3,6 +3,7 @@ import { CAUSES, newFollowUpSchema, type Cause, type FollowUp } from '../../cont
 import { RequestRefused } from '../shell/api-request';
 import { FieldProblem } from '../shell/FieldProblem';
 import type { NewFollowUp } from './use-follow-ups';
+import { FormButtons } from '../shell/FormButtons';
 
 interface FollowUpFormProps {
   line: { readonly key: string; readonly name: string };
@@ -97,14 +98,7 @@ export function FollowUpForm({ line, phase, cause: likely, today, onSend, onClos
       </div>
       <FieldProblem id={`${id}-due-problem`} words={problems.due} />
       <FieldProblem id={`${id}-problem`} words={problems.whole} />
-      <div className="flex gap-2">
-        <button type="submit" disabled={sending} className="button button-first">
-          {sending ? 'Sending…' : 'Open the follow-up'}
-        </button>
-        <button type="button" onClick={onClose} className="button">
-          Cancel
-        </button>
-      </div>
+      <FormButtons words="Open the follow-up" sending={sending} onClose={onClose} />
     </form>
   );
 }

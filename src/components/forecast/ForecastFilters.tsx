@@ -9,7 +9,7 @@ import {
 } from '../../view/forecast-query';
 import { plainClick } from '../board/plain-click';
 import { OwnerFilter } from '../margins/OwnerFilter';
-import { Select } from '../margins/Select';
+import { Select } from '../shell/Select';
 import type { ForecastAddressState } from './use-forecast-address';
 
 interface ForecastFiltersProps {

@@ -10,7 +10,7 @@ import {
 } from '../../view/margin-query';
 import { plainClick } from '../board/plain-click';
 import { OwnerFilter } from './OwnerFilter';
-import { Select } from './Select';
+import { Select } from '../shell/Select';
 import type { MarginAddressState } from './use-margin-address';
 
 interface MarginFiltersProps {

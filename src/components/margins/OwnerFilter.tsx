@@ -1,5 +1,5 @@
 import { ownerChoices } from '../../view/owner-names';
-import { Select } from './Select';
+import { Select } from '../shell/Select';
 
 interface OwnerFilterProps {
   owners: readonly string[];

@@ -3,6 +3,7 @@ import { newWorkSchema, type NewWork } from '../../contract/works';
 import { workProblems, type WorkProblems, type WorkTyped } from '../../view/work-typed';
 import { RequestRefused } from '../shell/api-request';
 import { WorkFields } from './WorkFields';
+import { FormButtons } from '../shell/FormButtons';
 
 interface WorkFormProps {
   line: { readonly key: string; readonly name: string };
@@ -44,14 +45,7 @@ export function WorkForm({ line, terminals, today, onSend, onClose }: WorkFormPr
         whatLabel="What was done"
         onType={(change) => setTyped((before) => ({ ...before, ...change }))}
       />
-      <div className="flex gap-2">
-        <button type="submit" disabled={sending} className="button button-first">
-          {sending ? 'Sending…' : 'Record the work'}
-        </button>
-        <button type="button" onClick={onClose} className="button">
-          Cancel
-        </button>
-      </div>
+      <FormButtons words="Record the work" sending={sending} onClose={onClose} />
     </form>
   );
 }
