@@ -65,7 +65,7 @@ export function FollowUpForm({ line, phase, cause: likely, today, onSend, onClos
         aria-invalid={problems.note !== undefined}
         aria-describedby={`${id}-note-problem`}
         onChange={(event) => setNote(event.target.value)}
-        className="field -mt-1.5 w-full py-1"
+        className="field -mt-0.5 w-full py-1"
       />
       <FieldProblem id={`${id}-note-problem`} words={problems.note} />
       <div className="flex flex-wrap gap-x-4 gap-y-2">

@@ -17,11 +17,15 @@ interface RecordedWorksProps {
   mayRecord: boolean;
 }
 
+/** Each is a date to compare across: more of them than this would push the comparison out of sight. */
+const ROWS_FIRST = 6;
+
 /** What was done on the line: each a date to compare across, and a mark that parts its trends. */
 export function RecordedWorks({ works: initial, ...props }: RecordedWorksProps) {
   const { line, terminals, today, mayRecord } = props;
   const works = useWorks(line.key, initial);
   const [writing, setWriting] = useState(false);
+  const [most, setMost] = useState(ROWS_FIRST);
   const recordButton = useFocusBack();
   return (
     <section aria-labelledby="works-title" className="mt-6 max-w-[80ch]">
@@ -38,10 +42,15 @@ export function RecordedWorks({ works: initial, ...props }: RecordedWorksProps) 
         <p className="mt-1 text-ink-2">No work is recorded on this line.</p>
       ) : (
         <ul className="mt-1 border-t border-hairline">
-          {works.list.map((work) => (
+          {works.list.slice(0, most).map((work) => (
             <WorkItem key={work.id} {...{ ...props, work, works }} />
           ))}
         </ul>
+      )}
+      {works.list.length > most && (
+        <button type="button" className="button mt-2 mr-2" onClick={() => setMost(works.list.length)}>
+          Show {works.list.length - most} more
+        </button>
       )}
       {mayRecord &&
         (writing ? (

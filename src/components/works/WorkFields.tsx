@@ -30,7 +30,7 @@ export function WorkFields({ typed, problems, today, terminals, whatLabel, onTyp
         aria-invalid={problems.what !== undefined}
         aria-describedby={`${id}-what-problem`}
         onChange={(event) => onType({ what: event.target.value })}
-        className="field -mt-1.5 w-full py-1"
+        className="field -mt-0.5 w-full py-1"
       />
       <FieldProblem id={`${id}-what-problem`} words={problems.what} />
       <div className="flex flex-wrap gap-x-4 gap-y-2">
