@@ -21,14 +21,6 @@ export function phasePlace({ verdict, creepVerdict }: ForecastPhase, nearRatio: 
   return creepVerdict === 'creep' ? 'coming' : 'within margin';
 }
 
-/** The drift that counts: at one load wherever the load can be taken out, so that neither it nor the season is in it. */
-export const creepOf = ({
-  creep,
-  creepAtReference,
-  loadTakenOutBy,
-}: ForecastPhase['verdict']): ForecastPhase['verdict']['creep'] =>
-  loadTakenOutBy === null ? creep : (creepAtReference?.creep ?? null);
-
 /** A line by its most urgent phase. */
 export function forecastRow(line: ForecastLine, nearRatio: number): ForecastRow {
   const [phase, ...others] = line.phases.toSorted(

@@ -2,9 +2,10 @@ import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
 import type { StandingVerdict, StepOnWire } from '../contract/standing';
 import { causeName, movedAndStill, movedCauses, TIME_WORDS } from './cause-names';
 import { sinceWords } from './composition-words';
+import { countedDrift } from './counted-drift';
 import { ampsText, dateText, percentText, timeText } from './figures';
 import { forecastWords, halfMonthWords, slopeWords } from './forecast';
-import { creepOf, phasePlace, type ForecastSections } from './forecast-list';
+import { phasePlace, type ForecastSections } from './forecast-list';
 import { capital, countWords } from './margin-sentence';
 import type { SiteCustom } from './site-custom';
 
@@ -33,8 +34,8 @@ export function phaseWords(phase: ForecastPhase, context: ForecastContext): Fore
 
 function leadWords({ verdict, creepVerdict }: ForecastPhase, { site }: ForecastContext): string {
   const phase = `Phase ${site.phaseLetters[verdict.phase]}`;
-  const creep = creepVerdict === null ? null : creepOf(verdict);
-  if (creep !== null)
+  const creep = creepVerdict === null ? undefined : countedDrift(verdict);
+  if (creep !== undefined)
     return `${phase} rises ${slopeWords(creep)}${atReference(verdict)}${sinceWords(verdict, { site })}.`;
   return `${phase} stands at ${percentText(verdict.shareOfPickup)} of the pickup, beyond the near mark.`;
 }

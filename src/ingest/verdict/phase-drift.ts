@@ -1,5 +1,4 @@
 import type { StandingVerdict } from '../../contract/standing';
-import type { Creep } from '../../contract/warning';
 import type { PhaseName } from '../../protection/phase';
 import { throughLoad } from '../../standing/composition-sums';
 import type { DailyLevel } from '../../standing/creep';
@@ -147,16 +146,4 @@ function atEmergency(
     emergencyUtilisation: utilisationOf(composition.coefficients) ?? null,
     emergencyCreep: emergencyCreepOnWire(watchedUtilisation(daily, plan).verdict) ?? null,
   };
-}
-
-/** A drift with the load in it counts only where nothing takes the load out, and the load has stood still. */
-export function driftThatCounts({
-  creep,
-  creepAtReference,
-  loadTakenOutBy,
-  measuredCounts,
-}: Pick<StandingVerdict, 'creep' | 'creepAtReference' | 'loadTakenOutBy' | 'measuredCounts'>):
-  Creep | undefined {
-  if (loadTakenOutBy !== null) return creepAtReference?.creep;
-  return measuredCounts ? (creep ?? undefined) : undefined;
 }

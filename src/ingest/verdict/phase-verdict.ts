@@ -10,7 +10,8 @@ import { type ComposedWindow, composedWindow, type Composing } from './composed-
 import { lastDayOf, type LineHistory, rowsOf } from './line-history';
 import { expectedLevelAmps } from './line-model-of';
 import { loadDependenceOf } from './load-dependence-of';
-import { driftThatCounts, phaseDrifts } from './phase-drift';
+import { phaseDrifts } from './phase-drift';
+import { countedDrift } from '../../view/counted-drift';
 import { type RosterLine, type SchemeVersion, versionInForce } from '../roster';
 import { standingCause } from './standing-cause';
 import { type MarkDay, markOnWire, standingMarks } from './standing-marks';
@@ -44,7 +45,7 @@ export function phaseVerdict(line: RosterLine, history: LineHistory, look: Phase
     now,
     marks,
   });
-  const counted = driftThatCounts(drifts);
+  const counted = countedDrift(drifts);
   const cause = standingCause(composing, history, {
     phase,
     now,

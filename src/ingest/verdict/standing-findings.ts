@@ -10,7 +10,7 @@ import { STEP_WARNING } from '../../warnings/limits';
 import { readLineHistory } from './line-history';
 import { lineSteps } from './line-steps';
 import type { StandingFindings } from '../line-watch';
-import { driftThatCounts } from './phase-drift';
+import { countedDrift } from '../../view/counted-drift';
 import { phaseVerdict } from './phase-verdict';
 import type { RosterLine } from '../roster';
 
@@ -32,7 +32,7 @@ export async function renewFindings(
     // a verdict is a tenth of a second of arithmetic: the feed has its turn between two
     await setImmediate();
   }
-  const creep = verdicts.flatMap((verdict) => driftThatCounts(verdict) ?? []);
+  const creep = verdicts.flatMap((verdict) => countedDrift(verdict) ?? []);
   await writeVerdicts(
     store,
     verdicts.map((verdict) => verdictRow(line.id, verdict)),
@@ -62,7 +62,7 @@ function stepThatCounts(verdicts: readonly StandingVerdict[], nowMs: number): Wa
 
 function verdictRow(lineId: number, verdict: StandingVerdict): VerdictRow {
   const polygon = verdict.composition.kind === 'separated' ? verdict.composition.polygon : null;
-  const drift = driftThatCounts(verdict);
+  const drift = countedDrift(verdict);
   return {
     lineId,
     phase: verdict.phase,

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { driftThatCounts } from '../../../src/ingest/verdict/phase-drift';
+import { countedDrift } from '../../../src/view/counted-drift';
 import { phaseStep } from '../../../src/ingest/verdict/phase-step';
 import { demoHistoryOf, demoRosterLine, verdictOf } from '../demo-history';
 
@@ -80,7 +80,7 @@ describe('a line without a composition', () => {
   it('has its levels at one load by what magnitudes do with it', () => {
     const verdict = verdictsOf('brindle-skelder')('a');
     expect([verdict.loadTakenOutBy, verdict.measuredCounts]).toEqual(['magnitudes', false]);
-    expect(driftThatCounts(verdict)).toBeUndefined();
+    expect(countedDrift(verdict)).toBeUndefined();
   });
 });
 
@@ -130,13 +130,13 @@ describe('a drift as measured', () => {
   it('counts where nothing takes the load out and the load has stood still', () => {
     const verdict = verdictOf(line, rising(0), 'a');
     expect([verdict.loadTakenOutBy, verdict.measuredCounts]).toEqual([null, true]);
-    expect(driftThatCounts(verdict)).toEqual(verdict.creep);
+    expect(countedDrift(verdict)).toEqual(verdict.creep);
   });
 
   it('does not where the load has grown with it', () => {
     const verdict = verdictOf(line, rising(0.2), 'a');
     expect(verdict.creep).not.toBeNull();
-    expect(driftThatCounts(verdict)).toBeUndefined();
+    expect(countedDrift(verdict)).toBeUndefined();
   });
 });
 

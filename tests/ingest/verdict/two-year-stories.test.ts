@@ -3,7 +3,7 @@ import { storyTruths } from '../../../simulator/stories/story-lines';
 import { toldTruths, type ToldTruth } from '../../../simulator/stories/told-truth';
 import type { StandingVerdict } from '../../../src/contract/standing';
 import { HISTORY_DAYS } from '../../../src/ingest/verdict/line-history';
-import { driftThatCounts } from '../../../src/ingest/verdict/phase-drift';
+import { countedDrift } from '../../../src/view/counted-drift';
 import { demoHistoryOf, demoRosterLine, verdictOf } from '../demo-history';
 
 // in the coldest weeks: a seasonal load has risen for half a year
@@ -136,7 +136,7 @@ describe('a terminal silent for a month', () => {
       });
       expect([verdict.likelyCause, verdict.causePlace], truth.phase).toEqual(['not told', null]);
       expect([verdict.creepAtReference, verdict.step], truth.phase).toEqual([null, null]);
-      expect(driftThatCounts(verdict), truth.phase).toBeUndefined();
+      expect(countedDrift(verdict), truth.phase).toBeUndefined();
       expect(verdict.levelAmps === null, truth.phase).toBe(day < 0);
     }
   });
