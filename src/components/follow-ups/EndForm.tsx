@@ -2,9 +2,9 @@ import { useState, type FormEvent } from 'react';
 import type { FollowUpInFull } from '../../contract/follow-ups';
 import { followUpDoneSchema, type FollowUpDone } from '../../contract/works';
 import { workProblems, type WorkProblems, type WorkTyped } from '../../view/work-typed';
-import { fieldsOf, refusedProblems } from '../works/WorkForm';
 import { WorkFields } from '../works/WorkFields';
 import { FormButtons } from '../shell/FormButtons';
+import { fieldsOf, useSending } from '../shell/use-sending';
 
 interface EndFormProps {
   followUp: FollowUpInFull;
@@ -17,7 +17,7 @@ interface EndFormProps {
 export function EndForm({ followUp, today, onEnd, onClose }: EndFormProps) {
   const [typed, setTyped] = useState<WorkTyped>({ what: '', doneOn: today, terminal: '' });
   const [problems, setProblems] = useState<WorkProblems>({});
-  const [sending, setSending] = useState(false);
+  const { sending, send } = useSending('The follow-up could not be ended.');
   const end = async (event: FormEvent) => {
     event.preventDefault();
     const { what, doneOn } = typed;
@@ -25,14 +25,9 @@ export function EndForm({ followUp, today, onEnd, onClose }: EndFormProps) {
     const work = what.trim() === '' ? null : { what, doneOn, terminal };
     const checked = followUpDoneSchema.safeParse({ work });
     if (!checked.success) return setProblems(workProblems(fieldsOf(checked.error.issues)));
-    setSending(true);
     setProblems({});
-    try {
-      await onEnd(followUp, checked.data);
-    } catch (error) {
-      setProblems(refusedProblems(error));
-      setSending(false);
-    }
+    const refused = await send(() => onEnd(followUp, checked.data));
+    if (refused !== undefined) setProblems(workProblems(refused));
   };
   return (
     <form

@@ -1,9 +1,10 @@
 import { useId, useState, type FormEvent } from 'react';
+import type { Problem } from '../../contract/problem';
 import { CAUSES, newFollowUpSchema, type Cause, type FollowUp } from '../../contract/standing';
-import { RequestRefused } from '../shell/api-request';
 import { FieldProblem } from '../shell/FieldProblem';
 import type { NewFollowUp } from './use-follow-ups';
 import { FormButtons } from '../shell/FormButtons';
+import { fieldsOf, useSending } from '../shell/use-sending';
 
 interface FollowUpFormProps {
   line: { readonly key: string; readonly name: string };
@@ -25,30 +26,21 @@ export function FollowUpForm({ line, phase, cause: likely, today, onSend, onClos
   const [cause, setCause] = useState<Cause>(likely);
   const [due, setDue] = useState('');
   const [problems, setProblems] = useState<Problems>({});
-  const [sending, setSending] = useState(false);
-  const send = async (event: FormEvent) => {
+  const { sending, send } = useSending('The follow-up could not be sent.');
+  const submit = async (event: FormEvent) => {
     event.preventDefault();
     const opened = { line: line.key, phase, cause, due: due === '' ? null : due, note };
     const checked = newFollowUpSchema.safeParse(opened);
-    if (!checked.success) return setProblems(problemsOf(checked.error.issues));
-    setSending(true);
+    if (!checked.success) return setProblems(problemsOf(fieldsOf(checked.error.issues)));
     setProblems({});
-    try {
-      await onSend(checked.data);
-      onClose();
-    } catch (error) {
-      setProblems(
-        error instanceof RequestRefused && error.fields.length > 0
-          ? problemsOf(error.fields.map(({ field, problem }) => ({ path: [field], message: problem })))
-          : { whole: error instanceof Error ? error.message : 'The follow-up could not be sent.' },
-      );
-      setSending(false);
-    }
+    const refused = await send(() => onSend(checked.data));
+    if (refused === undefined) onClose();
+    else setProblems(problemsOf(refused));
   };
   return (
     <form
       noValidate
-      onSubmit={(event) => void send(event)}
+      onSubmit={(event) => void submit(event)}
       onKeyDown={(event) => event.key === 'Escape' && onClose()}
       aria-label={`Follow-up for ${line.name}`}
       className="mt-2 grid w-full max-w-[32rem] gap-2 border-l-2 border-rule pl-3"
@@ -103,11 +95,11 @@ export function FollowUpForm({ line, phase, cause: likely, today, onSend, onClos
   );
 }
 
-function problemsOf(issues: readonly { path: readonly PropertyKey[]; message: string }[]): Problems {
-  const of = (field: string) => issues.find(({ path }) => path[0] === field)?.message;
+function problemsOf(fields: Problem['fields']): Problems {
+  const of = (name: string) => fields.find(({ field }) => field === name)?.problem;
   const note = of('note');
   const due = of('due') === undefined ? undefined : 'Give a day, such as 12 May 2027, or none.';
-  const other = issues.find(({ path }) => path[0] !== 'note' && path[0] !== 'due')?.message;
+  const other = fields.find(({ field }) => field !== 'note' && field !== 'due')?.problem;
   return {
     ...(note === undefined ? {} : { note }),
     ...(due === undefined ? {} : { due }),
