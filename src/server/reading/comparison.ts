@@ -1,7 +1,6 @@
-import type { CompositionOnWire } from '../../contract/composition';
 import type { Comparison, StandingVerdict } from '../../contract/standing';
 import { PHASES, type PhaseName } from '../../protection/phase';
-import { composition, type SeparatedComposition } from '../../standing/composition';
+import type { SeparatedComposition } from '../../standing/composition';
 import { throughLoad, totalOf } from '../../standing/composition-sums';
 import { levelShift } from '../../standing/level-shift';
 import { typicalPoint } from '../../standing/operating-point';
@@ -13,7 +12,7 @@ import { readVerdictsOfLine } from '../../store/standing';
 import { readWorksOfLine } from '../../store/works';
 import { type SummedDay, summedDays } from '../../view/day-sums';
 import type { Site } from '../site';
-import { compensatedNow, composed, type ComposedOf, type Window } from './composition';
+import { compensatedNow, type Composed, composed, type ComposedOf, type Window } from './composition';
 
 type ComparedPhase = Comparison['phases'][number];
 
@@ -81,10 +80,9 @@ export function comparedWindows(
   };
 }
 
-interface Side {
+interface Side extends Composed {
   readonly levels: readonly number[];
   readonly days: readonly SummedDay[];
-  readonly onWire: CompositionOnWire;
 }
 
 function comparedPhase(
@@ -103,7 +101,7 @@ function comparedPhase(
     return {
       levels: own.flatMap(({ medianAmps }) => medianAmps ?? []),
       days,
-      onWire: composed(days, { ...compared, window }),
+      ...composed(days, { ...compared, window }),
     };
   };
   const [before, after] = [side(windows.before), side(windows.after)];
@@ -112,7 +110,7 @@ function comparedPhase(
     before: summary(before),
     after: summary(after),
     test: shiftTest(before.levels, after.levels),
-    atReference: atOneLoad(before, after, compared.frequencyHz),
+    atReference: atOneLoad(before, after),
   };
 }
 
@@ -123,9 +121,8 @@ const summary = ({ levels, onWire }: Side): ComparedPhase['before'] => ({
 });
 
 /** Both sides' levels at the typical load of both together, each by its own composition. */
-function atOneLoad(before: Side, after: Side, frequencyHz: number): ComparedPhase['atReference'] {
-  const fits = [before, after].map((side) => separated(side, frequencyHz));
-  const [early, late] = fits;
+function atOneLoad(before: Side, after: Side): ComparedPhase['atReference'] {
+  const [early, late] = [before.fit, after.fit];
   if (early === undefined || late === undefined) return null;
   const sums = [...before.days, ...after.days].map((day) => day.sums);
   if (early.shape.terminalCount !== late.shape.terminalCount) return null;
@@ -142,16 +139,6 @@ function atOneLoad(before: Side, after: Side, frequencyHz: number): ComparedPhas
     afterAmps: median(levels[1])!,
     test: shiftTest(...levels),
   };
-}
-
-/** The composition of a side, where it parts charging from mismatch. */
-function separated({ days, onWire }: Side, frequencyHz: number): SeparatedComposition | undefined {
-  if (onWire.kind !== 'separated') return undefined;
-  const found = composition(
-    days.map(({ sums }) => sums),
-    { frequencyHz },
-  );
-  return found.kind === 'separated' ? found : undefined;
 }
 
 function shiftTest(before: readonly number[], after: readonly number[]): ComparedPhase['test'] {

@@ -1,7 +1,7 @@
 import type { CompositionOnWire, LineComposition } from '../../contract/composition';
 import { perPhase, PHASES, type PhaseName } from '../../protection/phase';
 import { modulus } from '../../standing/complex';
-import { composition } from '../../standing/composition';
+import { composition, type SeparatedComposition } from '../../standing/composition';
 import { shrunkCoefficients } from '../../standing/composition-fit';
 import { totalOf } from '../../standing/composition-sums';
 import { compositionPolygon } from '../../standing/operating-point';
@@ -39,7 +39,7 @@ export async function readComposition(
   const steps = new Map(verdicts.map(({ phase, step }) => [phase, step?.at]));
   return {
     line: key,
-    phases: perPhase((phase) => composed(daysOf(phase), { line, window, frequencyHz, compensated })),
+    phases: perPhase((phase) => composed(daysOf(phase), { line, window, frequencyHz, compensated }).onWire),
     history: PHASES.flatMap((phase) =>
       sides(daysOf(phase), steps.get(phase)).flatMap((days) => history(days, { phase, frequencyHz })),
     ),
@@ -61,27 +61,36 @@ export function compensatedNow({ settings, now }: Site, line: RegisteredLine): n
   });
 }
 
+/** A composition as it is published, and where it parts charging from mismatch what was fitted. */
+export interface Composed {
+  readonly onWire: CompositionOnWire;
+  readonly fit: SeparatedComposition | undefined;
+}
+
 export function composed(
   days: readonly SummedDay[],
   { line, window, frequencyHz, compensated }: ComposedOf,
-): CompositionOnWire {
+): Composed {
   const sums = days.map((each) => each.sums);
   const dates = { from: window.from.toISOString().slice(0, 10), to: window.to.toISOString().slice(0, 10) };
-  if (line.goesBy === 'reported')
-    return {
-      kind: 'not separable',
-      ...dates,
-      days: 0,
-      snapshotCount: 0,
-      reason:
-        'This feed holds magnitudes alone; what a differential consists of can’t be told from it. Phasors of every terminal would tell.',
-    };
-  return compositionOnWire(
-    composition(sums, { frequencyHz }),
+  if (line.goesBy === 'reported') return { onWire: { ...NOT_FROM_MAGNITUDES, ...dates }, fit: undefined };
+  const found = composition(sums, { frequencyHz });
+  const onWire = compositionOnWire(
+    found,
     { ...dates, sums },
     { line, frequencyHz, compensatedMillisiemens: compensated },
   );
+  const isTold = found.kind === 'separated' && onWire.kind === 'separated';
+  return { onWire, fit: isTold ? found : undefined };
 }
+
+const NOT_FROM_MAGNITUDES = {
+  kind: 'not separable',
+  days: 0,
+  snapshotCount: 0,
+  reason:
+    'This feed holds magnitudes alone; what a differential consists of can’t be told from it. Phasors of every terminal would tell.',
+} as const;
 
 /** The days before a step and those after it; the day itself is half of each and belongs to neither. */
 function sides(days: readonly SummedDay[], stepAt: string | undefined): SummedDay[][] {
