@@ -5,8 +5,6 @@ import { fittedCoefficients } from '../../standing/composition-fit';
 import { type CompositionSums, shapeOf, totalOf } from '../../standing/composition-sums';
 import { movedTerminal, type UnbalanceSides } from '../../standing/moved-terminal';
 import { phaseUnbalance } from '../../standing/phase-unbalance';
-import type { SummedDay } from '../../view/day-sums';
-import { type DayRange, within } from './composed-window';
 import type { RosterLine } from '../roster';
 
 export interface FoundPlace {
@@ -15,10 +13,25 @@ export interface FoundPlace {
   readonly isTime: boolean;
 }
 
-export const NOWHERE: FoundPlace = { place: null, isTime: false };
+const NOWHERE: FoundPlace = { place: null, isTime: false };
 
-/** The sums of every phase by windows of one rung: days, or hours where a step is new. */
-export type SummedPhases = Readonly<Record<PhaseName, readonly SummedDay[]>>;
+/** The sums of a window, by its place in time: counted in days, or in hours where a step is new. */
+export interface SummedWindow {
+  readonly at: number;
+  readonly sums: CompositionSums;
+}
+export type SummedPhases = Readonly<Record<PhaseName, readonly SummedWindow[]>>;
+
+/** Places in time, the last one not among them; counted as those of the windows are. */
+export interface Span {
+  readonly from: number;
+  readonly to: number;
+}
+
+export const inSpan = <Window extends { readonly at: number }>(
+  windows: readonly Window[],
+  { from, to }: Span,
+): Window[] => windows.filter(({ at }) => at >= from && at < to);
 
 /** Angles are alike where no phase's is further from their mean than this share of it. */
 const ALIKE_SHARE = 1 / 3;
@@ -30,12 +43,7 @@ const ALIKE_SHARE = 1 / 3;
 export function causePlace(
   line: RosterLine,
   sums: SummedPhases,
-  {
-    phase,
-    cause,
-    now,
-    before,
-  }: { phase: PhaseName; cause: Cause; now: DayRange; before: DayRange | undefined },
+  { phase, cause, now, before }: { phase: PhaseName; cause: Cause; now: Span; before: Span | undefined },
 ): FoundPlace {
   if (cause !== 'ratio mismatch' && cause !== 'angle mismatch') return NOWHERE;
   const part = cause === 'ratio mismatch' ? 're' : 'im';
@@ -61,8 +69,8 @@ export function causePlace(
   };
 }
 
-function mismatchesIn(days: readonly SummedDay[], range: DayRange) {
-  const total = totalOf(within(days, range).map(({ sums }) => sums));
+function mismatchesIn(windows: readonly SummedWindow[], span: Span) {
+  const total = totalOf(inSpan(windows, span).map(({ sums }) => sums));
   const coefficients = total && fittedCoefficients(total);
   return total && coefficients?.slice(shapeOf(total).hasVoltage ? 1 : 0).map(mismatchFrom);
 }
@@ -78,13 +86,13 @@ function areAlike(ofPhases: readonly (readonly number[] | undefined)[], terminal
 /** The unbalance of a phase in every window of both sides that all three phases have sums of. */
 export function unbalanceSides(
   sums: SummedPhases,
-  { phase, now, before }: { phase: PhaseName; now: DayRange; before: DayRange },
+  { phase, now, before }: { phase: PhaseName; now: Span; before: Span },
 ): UnbalanceSides {
   const others = PHASES.filter((each) => each !== phase);
-  const byDay = others.map((each) => new Map(sums[each].map((day) => [day.day, day.sums])));
-  const side = (range: DayRange) =>
-    within(sums[phase], range).flatMap(({ day, sums: own }) => {
-      const theirs = byDay.flatMap((days) => days.get(day) ?? []);
+  const byPlace = others.map((each) => new Map(sums[each].map((window) => [window.at, window.sums])));
+  const side = (span: Span) =>
+    inSpan(sums[phase], span).flatMap(({ at, sums: own }) => {
+      const theirs = byPlace.flatMap((windows) => windows.get(at) ?? []);
       const values = isPair(theirs) ? phaseUnbalance(own, theirs) : undefined;
       return values === undefined ? [] : [values];
     });

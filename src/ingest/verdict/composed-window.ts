@@ -32,7 +32,7 @@ export function composedWindow(
   { line, days, frequencyHz, compensatedMillisiemens }: Composing,
   range: DayRange,
 ): ComposedWindow {
-  const sums = within(days, range).map((each) => each.sums);
+  const sums = days.flatMap(({ day, sums: ofDay }) => (day >= range.from && day < range.to ? [ofDay] : []));
   const found = composition(sums, { frequencyHz });
   const window = { from: dateOfDay(range.from), to: dateOfDay(range.to), sums };
   const onWire = compositionOnWire(found, window, {
@@ -42,8 +42,3 @@ export function composedWindow(
   });
   return { range, composition: found, onWire, total: totalOf(sums) };
 }
-
-export const within = <Day extends { readonly day: number }>(
-  days: readonly Day[],
-  { from, to }: DayRange,
-): Day[] => days.filter(({ day }) => day >= from && day < to);

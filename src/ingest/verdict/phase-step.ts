@@ -1,7 +1,6 @@
 import type { Cause, CausePlace, StandingVerdict, StepOnWire } from '../../contract/standing';
 import { perPhase, type PhaseName } from '../../protection/phase';
 import { compositionStep, type CompositionStep } from '../../standing/composition-step';
-import type { CompositionSums } from '../../standing/composition-sums';
 import { type HourlyLevel, hoursAtLoad, loadResponse } from '../../standing/load-response';
 import { movedTerminal, type UnbalanceSides } from '../../standing/moved-terminal';
 import type { MovedTerm } from '../../standing/moved-term';
@@ -10,8 +9,7 @@ import { stepVerdict } from '../../standing/step';
 import { unpackSums } from '../../store/composition-packing';
 import type { LevelRow } from '../../store/levels';
 import { alikeWindows } from '../../view/day-sums';
-import { unbalanceSides } from './cause-place';
-import { type DayRange, within } from './composed-window';
+import { inSpan, type Span, type SummedWindow, unbalanceSides } from './cause-place';
 import { type LineHistory, rowsOf } from './line-history';
 import type { RosterLine } from '../roster';
 import { pathChangeStarts } from './standing-marks';
@@ -57,7 +55,7 @@ interface FoundStep {
 }
 
 function stepOfSums(rows: readonly LevelRow[], pathChangeHours: readonly number[]): FoundStep | undefined {
-  const sums = alikeWindows(summedHours(rows)).map(({ day, ...each }) => ({ ...each, hour: day }));
+  const sums = alikeWindows(summedHours(rows)).map(({ at, sums: own }) => ({ hour: at, sums: own }));
   const found = sums.length === 0 ? undefined : compositionStep(sums, { pathChangeHours });
   return found?.kind === 'step' ? { atHour: found.atHour, composition: found } : undefined;
 }
@@ -105,12 +103,12 @@ function stepOnWire(
   const hour = Math.floor(atHour);
   const before = { from: hour - SIDE_HOURS, to: hour };
   const now = { from: hour + 1, to: hour + 1 + SIDE_HOURS };
-  const levelIn = (range: DayRange): number => {
+  const levelIn = (span: Span): number => {
     const levels = rowsOf(history.hours, phase).map(({ start, medianAmps }) => ({
-      day: start.getTime() / HOUR_MS,
+      at: start.getTime() / HOUR_MS,
       medianAmps,
     }));
-    return median(within(levels, range).flatMap(({ medianAmps }) => medianAmps ?? [])) ?? 0;
+    return median(inSpan(levels, span).flatMap(({ medianAmps }) => medianAmps ?? [])) ?? 0;
   };
   const moved = composition?.moved;
   const sides = () =>
@@ -146,8 +144,8 @@ function placeOf(
 }
 
 /** The sums of some hour rows, hours counted from the epoch. */
-const summedHours = (rows: readonly LevelRow[]): { day: number; sums: CompositionSums }[] =>
+const summedHours = (rows: readonly LevelRow[]): SummedWindow[] =>
   rows.flatMap((row) => {
     const sums = unpackSums(row.sums);
-    return sums === undefined ? [] : [{ day: row.start.getTime() / HOUR_MS, sums }];
+    return sums === undefined ? [] : [{ at: row.start.getTime() / HOUR_MS, sums }];
   });

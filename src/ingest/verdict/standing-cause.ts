@@ -1,7 +1,7 @@
 import type { StandingVerdict, StepOnWire } from '../../contract/standing';
 import { perPhase, type PhaseName } from '../../protection/phase';
 import { summedDays } from '../../view/day-sums';
-import { causePlace, NOWHERE, type SummedPhases } from './cause-place';
+import { causePlace, type SummedPhases } from './cause-place';
 import { causeWindows, type Moved } from './cause-windows';
 import { type ComposedWindow, composedWindow, type Composing } from './composed-window';
 import { likelyCause } from './likely-cause';
@@ -28,15 +28,14 @@ export function standingCause(
   history: LineHistory,
   { phase, now, marks, step, hasDrift }: CauseLook,
 ): Pick<StandingVerdict, 'likelyCause' | 'causePlace' | 'causeIsTime' | 'step'> {
-  const phases = perPhase((each) => summedDays(history.days, each, 0));
+  const phases = perPhase((each) =>
+    summedDays(history.days, each, 0).map(({ day, sums }) => ({ at: day, sums })),
+  );
   const spans = spansOf(composing, history, { phase, marks });
   const told = (moved: Moved) => toldBy(composing, { phase, phases, windows: causeWindows(moved, spans) });
   const stepMove = step === null ? undefined : told(stepOf(step, marks));
   const move = hasDrift ? told({ kind: 'drift' }) : stepMove;
-  const found = move ?? {
-    cause: likelyCause(now, undefined),
-    ...placeOf(composing, { phase, phases, now, before: undefined }),
-  };
+  const found = move ?? toldOf(composing, { phase, phases, now, before: undefined });
   return {
     likelyCause: found.cause,
     causePlace: found.place,
@@ -81,11 +80,10 @@ function toldBy(
   if (windows === undefined) return undefined;
   const [now, before] = [windows.now, windows.before].map((range) => composedWindow(composing, range));
   if (now!.onWire.kind !== 'separated' || before!.onWire.kind !== 'separated') return undefined;
-  const place = placeOf(composing, { phase, phases, now: now!, before });
-  return { cause: likelyCause(now!, before), ...place };
+  return toldOf(composing, { phase, phases, now: now!, before });
 }
 
-function placeOf(
+function toldOf(
   { line }: Composing,
   {
     phase,
@@ -93,8 +91,7 @@ function placeOf(
     now,
     before,
   }: { phase: PhaseName; phases: SummedPhases; now: ComposedWindow; before: ComposedWindow | undefined },
-) {
-  if (now.onWire.kind !== 'separated') return NOWHERE;
+): Told {
   const cause = likelyCause(now, before);
-  return causePlace(line, phases, { phase, cause, now: now.range, before: before?.range });
+  return { cause, ...causePlace(line, phases, { phase, cause, now: now.range, before: before?.range }) };
 }
