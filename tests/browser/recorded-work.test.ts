@@ -7,6 +7,7 @@ import { readRegisterLine } from '../../src/store/register';
 import { recordedWork } from '../../src/store/schema/standing';
 import { dateText } from '../../src/view/figures';
 import { insertMadeUpLine, LINE } from '../faults/site-under-test';
+import { levelRow } from '../store/made-up-levels';
 import { nameOf } from '../running-site';
 import { browsedSite } from './browsed-site';
 import { signedInPage } from './signed-in-page';
@@ -23,24 +24,9 @@ const browsed = browsedSite(async (store) => {
 });
 
 const steadyLevels = (lineId: number): LevelRow[] =>
-  Array.from({ length: 40 }, (_, ago) => ({
-    lineId,
-    phase: 'a' as const,
-    start: new Date(TODAY_MS - ago * DAY_MS),
-    leastAmps: 20,
-    p05Amps: 20,
-    medianAmps: 20,
-    p95Amps: 20,
-    greatestAmps: 20,
-    meanRestraintAmps: null,
-    meanThroughAmps: null,
-    greatestUtilisation: null,
-    qualifiedCount: 1,
-    allCount: 1,
-    disqualified: null,
-    sums: null,
-    channelPath: null,
-  }));
+  Array.from({ length: 40 }, (_, ago) =>
+    levelRow({ lineId, phase: 'a', start: new Date(TODAY_MS - ago * DAY_MS) }, 20),
+  );
 
 /** A click on what the server drew does nothing before its island has woken up. */
 const islandsAwake = (page: Page) =>

@@ -5,12 +5,13 @@ import { GET as getFollowUps, POST as postFollowUp } from '../../src/pages/api/f
 import { POST as postDone } from '../../src/pages/api/follow-ups/[id]/done';
 import { readForecastList } from '../../src/server/reading/forecast-list';
 import type { Site } from '../../src/server/site';
-import { writeLevels, type LevelRow } from '../../src/store/levels';
+import { writeLevels } from '../../src/store/levels';
 import { auditEntry } from '../../src/store/schema/people';
 import { line } from '../../src/store/schema/register';
 import { standingVerdict } from '../../src/store/schema/standing';
 import { testStore } from '../database';
 import { answerOf, NOW_MS, type Sent } from '../register/endpoint-call';
+import { levelRow } from '../store/made-up-levels';
 import { madeUpLineOf, storedFleet } from '../store/made-up-fleet';
 
 const store = await testStore();
@@ -120,29 +121,8 @@ describe('a follow-up', () => {
 
 describe('the forecast', () => {
   const site = { store, now: () => NOW_MS, settings: { NEAR_RATIO: 0.7 } } as unknown as Site;
-  const dayRow = (
-    lineId: number,
-    phase: 'a' | 'b' | 'c',
-    day: string,
-    medianAmps: number | null,
-  ): LevelRow => ({
-    lineId,
-    phase,
-    start: new Date(`${day}T00:00:00Z`),
-    leastAmps: medianAmps,
-    p05Amps: medianAmps,
-    medianAmps,
-    p95Amps: medianAmps,
-    greatestAmps: medianAmps,
-    meanRestraintAmps: null,
-    meanThroughAmps: null,
-    greatestUtilisation: null,
-    qualifiedCount: 1,
-    allCount: 1,
-    disqualified: null,
-    sums: null,
-    channelPath: null,
-  });
+  const dayRow = (lineId: number, phase: 'a' | 'b' | 'c', day: string, medianAmps: number | null) =>
+    levelRow({ lineId, phase, start: new Date(`${day}T00:00:00Z`) }, medianAmps);
 
   it('lists every line that rises or stands beyond the near mark, and counts the others', async () => {
     const rows = await store.db.select().from(standingVerdict);

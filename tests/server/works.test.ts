@@ -18,6 +18,7 @@ import { writeVerdicts } from '../../src/store/standing';
 import { testStore } from '../database';
 import { demoHistoryOf, demoRosterLine } from '../ingest/demo-history';
 import { answerOf, NOW_MS, type Sent } from '../register/endpoint-call';
+import { levelRow } from '../store/made-up-levels';
 import { madeUpLineOf, madeUpVerdict, storedFleet, verdictRow } from '../store/made-up-fleet';
 
 const store = await testStore();
@@ -177,24 +178,7 @@ describe('what goes by recorded works', () => {
     await writeLevels(
       store,
       'day',
-      Array.from({ length: 60 }, (_, day) => ({
-        lineId,
-        phase: 'a' as const,
-        start: startOf(day),
-        leastAmps: 10,
-        p05Amps: 10,
-        medianAmps: 10,
-        p95Amps: 10,
-        greatestAmps: 10,
-        meanRestraintAmps: null,
-        meanThroughAmps: null,
-        greatestUtilisation: null,
-        qualifiedCount: 1,
-        allCount: 1,
-        disqualified: null,
-        sums: null,
-        channelPath: null,
-      })),
+      Array.from({ length: 60 }, (_, day) => levelRow({ lineId, phase: 'a', start: startOf(day) }, 10)),
     );
     const stale = { on: '2026-01-25', kind: 'work recorded' as const };
     await writeVerdicts(store, [verdictRow(lineId, { ...madeUpVerdict(0, 'a'), marks: [stale] })]);

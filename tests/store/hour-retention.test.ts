@@ -1,6 +1,7 @@
 import { expect, it } from 'vitest';
 import { dropHourLevelsBefore, type LevelRow, readLevels, writeLevels } from '../../src/store/levels';
 import { testStore } from '../database';
+import { levelRow } from './made-up-levels';
 
 const HOUR_MS = 3_600_000;
 const DAY_MS = 24 * HOUR_MS;
@@ -9,24 +10,8 @@ const PHASES = ['a', 'b', 'c'] as const;
 
 const store = await testStore();
 
-const rowAt = (lineId: number, phase: (typeof PHASES)[number], atMs: number): LevelRow => ({
-  lineId,
-  phase,
-  start: new Date(atMs),
-  leastAmps: 1,
-  p05Amps: 1,
-  medianAmps: 2,
-  p95Amps: 3,
-  greatestAmps: 3,
-  meanRestraintAmps: 400,
-  meanThroughAmps: 400,
-  greatestUtilisation: 0.1,
-  qualifiedCount: 1800,
-  allCount: 1800,
-  disqualified: null,
-  sums: null,
-  channelPath: null,
-});
+const rowAt = (lineId: number, phase: (typeof PHASES)[number], atMs: number): LevelRow =>
+  levelRow({ lineId, phase, start: new Date(atMs) }, 2);
 
 const countedHours = async (lineId: number): Promise<number[]> => {
   const rows = await readLevels(store, 'hour', {
