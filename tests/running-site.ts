@@ -24,9 +24,11 @@ export const nameOf = (role: Role): string => `The ${role}`;
 
 const START_MS = 60_000;
 
+/** What `filled` puts into the store is there before the entries start. */
 export async function startSite(
   brokerUrl: string,
   login: { username: string; password: string }[] = [],
+  filled: (store: Store) => Promise<unknown> = () => Promise.resolve(),
 ): Promise<RunningSite> {
   if (!existsSync('dist/server/entry.mjs'))
     throw new Error('The pages are not built; run "npm run build" before these tests.');
@@ -34,6 +36,7 @@ export async function startSite(
   const store = createStore(databaseUrl);
   await migrateStore(store);
   await insertPeople(store);
+  await filled(store);
   const port = await freePort();
   const address = `http://127.0.0.1:${port}`;
   const common = { DATABASE_URL: databaseUrl, BROKER_URL: brokerUrl };

@@ -238,12 +238,20 @@ export async function countForecastLines(store: Store, nearRatio: number): Promi
   return { found, beyond, coming, withinMargin, unknown: without?.lines ?? 0 };
 }
 
-/** Daily standing levels of these phases, oldest first: without the sums, which are most of a day row. */
+export interface DailyLevels extends MarginKey {
+  /** days after the first day asked for, with the level in tenths of an ampere; null on a day without one */
+  readonly days: readonly (readonly [place: number, levelAmps: number | null])[];
+}
+
+/**
+ * Daily standing levels of these phases from a day on, to a tenth of an ampere. A phase's days come as one text: as
+ * rows of their own, the driver would make tens of thousands of objects for a page.
+ */
 export async function readDailyLevels(
   store: Store,
   keys: readonly MarginKey[],
   from: Date,
-): Promise<(MarginKey & { start: Date; medianAmps: number | null })[]> {
+): Promise<DailyLevels[]> {
   if (keys.length === 0) return [];
   const ofPhase = [...groupedBy(keys, ({ phase }) => phase)].map(([phase, own]) =>
     and(
@@ -254,16 +262,23 @@ export async function readDailyLevels(
       eq(dayLevel.phase, phase),
     ),
   );
-  return store.db
+  const place = sql`datediff(${dayLevel.start}, ${from})`;
+  const rows = await store.db
     .select({
       lineId: dayLevel.lineId,
       phase: dayLevel.phase,
-      start: dayLevel.start,
-      medianAmps: dayLevel.medianAmps,
+      days: sql<string>`group_concat(
+        concat(${place}, ':', coalesce(round(${dayLevel.medianAmps}, 1), '')) order by ${dayLevel.start})`,
     })
     .from(dayLevel)
     .where(and(or(...ofPhase), gte(dayLevel.start, from)))
-    .orderBy(asc(dayLevel.start));
+    .groupBy(dayLevel.lineId, dayLevel.phase);
+  return rows.map(({ days, ...key }) => ({ ...key, days: days.split(',').map(placedLevel) }));
+}
+
+function placedLevel(text: string): [place: number, levelAmps: number | null] {
+  const [place = '', levelAmps = ''] = text.split(':');
+  return [Number(place), levelAmps === '' ? null : Number(levelAmps)];
 }
 
 export interface FleetCounts {

@@ -16,18 +16,13 @@ export interface ForecastRow {
 
 const RANK: Readonly<Record<ForecastPlace, number>> = { beyond: 0, coming: 1, 'within margin': 2 };
 
-export function phasePlace({ verdict, creepVerdict }: ForecastPhase, nearRatio: number): ForecastPlace {
+export function phasePlace(
+  { verdict, creepVerdict }: Pick<ForecastPhase, 'verdict' | 'creepVerdict'>,
+  nearRatio: number,
+): ForecastPlace {
   if (verdict.shareOfPickup !== null && verdict.shareOfPickup >= nearRatio) return 'beyond';
   return creepVerdict === 'creep' ? 'coming' : 'within margin';
 }
-
-/** The drift that counts: at one load wherever the load can be taken out, so that neither it nor the season is in it. */
-export const creepOf = ({
-  creep,
-  creepAtReference,
-  loadTakenOutBy,
-}: ForecastPhase['verdict']): ForecastPhase['verdict']['creep'] =>
-  loadTakenOutBy === null ? creep : (creepAtReference?.creep ?? null);
 
 /** A line by its most urgent phase. */
 export function forecastRow(line: ForecastLine, nearRatio: number): ForecastRow {

@@ -1,10 +1,10 @@
-import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
-import type { StandingVerdict, StepOnWire } from '../contract/standing';
+import type { ForecastLine, ForecastWords } from '../contract/forecast-list';
+import type { MarginRow, StandingVerdict, StepOnWire } from '../contract/standing';
 import { causeName, movedAndStill, movedCauses, TIME_WORDS } from './cause-names';
 import { sinceWords } from './composition-words';
 import { ampsText, dateText, percentText, timeText } from './figures';
 import { forecastWords, halfMonthWords, slopeWords } from './forecast';
-import { creepOf, phasePlace, type ForecastSections } from './forecast-list';
+import { phasePlace, type ForecastSections } from './forecast-list';
 import { capital, countWords } from './margin-sentence';
 import type { SiteCustom } from './site-custom';
 
@@ -14,15 +14,14 @@ export interface ForecastContext {
   readonly substations: ForecastLine['substations'];
 }
 
-/** What a planner needs of one phase: how it rises, when it gets there, and what has moved. */
-export interface ForecastWords {
-  readonly lead: string;
-  readonly when: string;
-  /** undefined when the causes cannot be told */
-  readonly why: string | undefined;
+interface FoundPhase {
+  readonly verdict: StandingVerdict;
+  /** of the drift that counts */
+  readonly creepVerdict: MarginRow['creepVerdict'];
 }
 
-export function phaseWords(phase: ForecastPhase, context: ForecastContext): ForecastWords {
+/** One phase’s findings for a planner, in words. */
+export function phaseWords(phase: FoundPhase, context: ForecastContext): ForecastWords {
   const { verdict } = phase;
   return {
     lead: leadWords(phase, context),
@@ -31,7 +30,7 @@ export function phaseWords(phase: ForecastPhase, context: ForecastContext): Fore
   };
 }
 
-function leadWords({ verdict, creepVerdict }: ForecastPhase, { site }: ForecastContext): string {
+function leadWords({ verdict, creepVerdict }: FoundPhase, { site }: ForecastContext): string {
   const phase = `Phase ${site.phaseLetters[verdict.phase]}`;
   const creep = creepVerdict === null ? null : creepOf(verdict);
   if (creep !== null)
@@ -39,10 +38,14 @@ function leadWords({ verdict, creepVerdict }: ForecastPhase, { site }: ForecastC
   return `${phase} stands at ${percentText(verdict.shareOfPickup)} of the pickup, beyond the near mark.`;
 }
 
+/** The drift that counts: at one load wherever the load can be taken out, so that neither it nor the season is in it. */
+const creepOf = ({ creep, creepAtReference, loadTakenOutBy }: StandingVerdict): StandingVerdict['creep'] =>
+  loadTakenOutBy === null ? creep : (creepAtReference?.creep ?? null);
+
 const atReference = ({ creepAtReference }: StandingVerdict): string =>
   creepAtReference === null ? '' : ` at a load of ${ampsText(creepAtReference.referenceThroughAmps)}`;
 
-function whenWords(phase: ForecastPhase, { site, nowMs }: ForecastContext): string {
+function whenWords(phase: FoundPhase, { site, nowMs }: ForecastContext): string {
   const { verdict } = phase;
   const rises = phase.creepVerdict !== null;
   if (phasePlace(phase, site.nearRatio) !== 'beyond')
