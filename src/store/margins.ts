@@ -13,6 +13,7 @@ import {
   type SQL,
 } from 'drizzle-orm';
 import type { MarginFilter } from '../contract/margins';
+import type { MarginPlace } from '../contract/margin-place';
 import type { MarginSort, StandingVerdict } from '../contract/standing';
 import type { PhaseName } from '../protection/phase';
 import type { Store } from './client';
@@ -69,44 +70,70 @@ export async function countMargins(store: Store, filter: MarginFilter): Promise<
   return row?.rows ?? 0;
 }
 
+/** A row in an order: its line's key and the figure that it is sorted by. */
+export interface PlacedMargin extends MarginKey {
+  readonly key: string;
+  readonly value: MarginPlace['value'];
+}
+
+interface OrderedPage {
+  readonly sort: StoredSort;
+  readonly descending: boolean;
+  /** the row before the first one; from the top without it */
+  readonly after?: MarginPlace;
+  readonly limit: number;
+}
+
 /**
  * The rows of one page, in order. A row without the figure stands last whichever way the order goes; rows alike stand
- * by name and phase, so that pages neither repeat nor miss one. Only keys are sorted: with the findings themselves
- * in the sort, the database would carry megabytes through it.
+ * by the line's key and phase, so that a page begins behind one row and no other. Only keys are sorted: with the
+ * findings themselves in the sort, the database would carry megabytes through it.
  */
 export async function readMarginKeys(
   store: Store,
   filter: MarginFilter,
-  page: { sort: StoredSort; descending: boolean; after: number; limit: number },
-): Promise<MarginKey[]> {
+  page: OrderedPage,
+): Promise<PlacedMargin[]> {
   const by = ORDER[page.sort];
   return store.db
-    .select({ lineId: standingVerdict.lineId, phase: standingVerdict.phase })
+    .select({
+      lineId: standingVerdict.lineId,
+      phase: standingVerdict.phase,
+      key: line.key,
+      value: sql<PlacedMargin['value']>`${by}`,
+    })
     .from(standingVerdict)
     .innerJoin(line, eq(standingVerdict.lineId, line.id))
-    .where(filtered(filter))
+    .where(and(filtered(filter), behind(by, page)))
     .orderBy(
       sql`${by} is null`,
       page.descending ? sql`${by} desc` : sql`${by} asc`,
-      asc(line.name),
-      asc(standingVerdict.lineId),
+      asc(line.key),
       asc(standingVerdict.phase),
     )
-    .limit(page.limit)
-    .offset(page.after);
+    .limit(page.limit);
 }
 
-/** Every row that a filter leaves, by name and phase, with the line's key: for an order that the database does not know. */
+function behind(by: SQL, { after, descending }: OrderedPage): SQL | undefined {
+  if (after === undefined) return undefined;
+  const alikeAndLater = sql`(${line.key} > ${after.line}
+    or (${line.key} = ${after.line} and ${standingVerdict.phase} > ${after.phase}))`;
+  if (after.value === null) return sql`(${by} is null and ${alikeAndLater})`;
+  const further = descending ? sql`${by} < ${after.value}` : sql`${by} > ${after.value}`;
+  return sql`(${by} is null or ${further} or (${by} = ${after.value} and ${alikeAndLater}))`;
+}
+
+/** Every row that a filter leaves, by the line's key and phase: for an order that the database does not know. */
 export async function readAllMarginKeys(
   store: Store,
   filter: MarginFilter,
-): Promise<(MarginKey & { key: string })[]> {
+): Promise<Omit<PlacedMargin, 'value'>[]> {
   return store.db
     .select({ lineId: standingVerdict.lineId, phase: standingVerdict.phase, key: line.key })
     .from(standingVerdict)
     .innerJoin(line, eq(standingVerdict.lineId, line.id))
     .where(filtered(filter))
-    .orderBy(asc(line.name), asc(standingVerdict.lineId), asc(standingVerdict.phase));
+    .orderBy(asc(line.key), asc(standingVerdict.phase));
 }
 
 /** Whole rows, in the order of their keys. */
