@@ -24,7 +24,7 @@ export const nameOf = (role: Role): string => `The ${role}`;
 
 const START_MS = 60_000;
 
-interface SiteParts {
+export interface SiteParts {
   /** puts things into the store before the entries start */
   readonly filled?: (store: Store) => Promise<unknown>;
   /** without the worker, which would renew findings that a test has made up */
