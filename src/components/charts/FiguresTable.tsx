@@ -57,7 +57,7 @@ export function FiguresTable({ table, timeZone }: Props) {
 function Cell({ text, leadsTo }: { text: string; leadsTo: string | undefined }) {
   if (leadsTo === undefined) return text;
   return (
-    <a href={leadsTo} className="link">
+    <a href={leadsTo} className="link whitespace-nowrap">
       {text}
     </a>
   );
