@@ -24,9 +24,17 @@ export const nameOf = (role: Role): string => `The ${role}`;
 
 const START_MS = 60_000;
 
+export interface SiteParts {
+  /** puts things into the store before the entries start */
+  readonly filled?: (store: Store) => Promise<unknown>;
+  /** without the worker, which would renew findings that a test has made up */
+  readonly webOnly?: boolean;
+}
+
 export async function startSite(
   brokerUrl: string,
   login: { username: string; password: string }[] = [],
+  { filled, webOnly = false }: SiteParts = {},
 ): Promise<RunningSite> {
   if (!existsSync('dist/server/entry.mjs'))
     throw new Error('The pages are not built; run "npm run build" before these tests.');
@@ -34,6 +42,7 @@ export async function startSite(
   const store = createStore(databaseUrl);
   await migrateStore(store);
   await insertPeople(store);
+  await filled?.(store);
   const port = await freePort();
   const address = `http://127.0.0.1:${port}`;
   const common = { DATABASE_URL: databaseUrl, BROKER_URL: brokerUrl };
@@ -44,7 +53,7 @@ export async function startSite(
       stream?.on('data', (chunk: Buffer) => (output += chunk.toString()));
     return child;
   };
-  const ingest = hear(entry('src/ingest/main.ts', { ...common, ...ingestLogin }));
+  const ingest = webOnly ? undefined : hear(entry('src/ingest/main.ts', { ...common, ...ingestLogin }));
   const web = hear(
     entry('src/server/main.ts', {
       ...common,
@@ -56,7 +65,7 @@ export async function startSite(
     }),
   );
   await until(
-    () => output.includes('listening to the feed') && output.includes('Tareline answers'),
+    () => (webOnly || output.includes('listening to the feed')) && output.includes('Tareline answers'),
     START_MS,
     () => `running site: ${output}`,
   );
@@ -66,7 +75,7 @@ export async function startSite(
     databaseUrl,
     output: () => output,
     async close() {
-      await Promise.all([ended(web), ended(ingest)]);
+      await Promise.all([ended(web), ingest && ended(ingest)]);
       await store.close();
     },
   };

@@ -8,9 +8,24 @@ export interface ForecastHistory {
   readonly levelsAmps: readonly (number | null)[];
 }
 
+/** What a list is drawn and sorted by; the rest of the findings is told in words. */
+export type ForecastVerdict = Pick<
+  StandingVerdict,
+  'phase' | 'pickupAmps' | 'shareOfPickup' | 'likelyCause' | 'near' | 'pickup'
+>;
+
+/** What a planner needs of one phase: how it rises, when it gets there, and what has moved. */
+export interface ForecastWords {
+  readonly lead: string;
+  readonly when: string;
+  /** empty where there is nothing to say of the causes */
+  readonly why: string;
+}
+
 /** One phase whose standing level rises, or stands beyond the near mark already. */
 export interface ForecastPhase {
-  readonly verdict: StandingVerdict;
+  readonly verdict: ForecastVerdict;
+  readonly words: ForecastWords;
   /** of the drift that counts; null where the level stands beyond the mark and does not rise */
   readonly creepVerdict: MarginRow['creepVerdict'];
   /** daily standing levels of this phase; undefined when there are none */

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { keySchema } from './key';
+import { MARGIN_PLACE, parseMarginPlace } from './margin-place';
 import { phaseNameSchema } from './phase';
 import { marginSortSchema, type MarginSort } from './standing';
 
@@ -29,22 +30,25 @@ export type MarginFilter = z.infer<typeof marginFilterSchema>;
 export const isUsuallyDescending = (sort: MarginSort): boolean =>
   sort !== 'lineName' && sort !== 'owner' && sort !== 'nearLikely';
 
-/** The query of GET /api/margins; without `descending` each column goes its usual way. */
+const NOT_A_PLACE = 'This is not where a page of this order ends. Give what the page before said in “next”.';
+
+/** The query of GET /api/margins; without `descending` each column goes its usual way, without `after` from the top. */
 export const marginQuerySchema = marginFilterSchema
   .extend({
     sort: marginSortSchema.default('shareOfPickup'),
     descending: z.enum(['true', 'false']).optional(),
-    after: z.coerce
-      .number('This is the number of rows to pass over.')
-      .int('This is a whole number of rows.')
-      .min(0, 'This is at least 0.')
-      .max(1_000_000, 'This is at most 1,000,000.')
-      .default(0),
+    after: z.string().max(200, NOT_A_PLACE).regex(MARGIN_PLACE, NOT_A_PLACE).optional(),
   })
-  .transform(({ descending, ...query }) => ({
-    ...query,
-    descending: descending === undefined ? isUsuallyDescending(query.sort) : descending === 'true',
-  }));
+  .transform(({ descending, after, ...query }, context) => {
+    const place = after === undefined ? undefined : parseMarginPlace(after, query.sort);
+    if (after !== undefined && place === undefined)
+      context.addIssue({ code: 'custom', path: ['after'], message: NOT_A_PLACE });
+    return {
+      ...query,
+      descending: descending === undefined ? isUsuallyDescending(query.sort) : descending === 'true',
+      ...(place === undefined ? {} : { after: place }),
+    };
+  });
 export type MarginQuery = z.infer<typeof marginQuerySchema>;
 
 /** GET /api/margins/scatter: every phase whose causes are separated, as shares of its pickup. */

@@ -162,7 +162,7 @@ export const marginListSchema = z.object({
   at: z.iso.datetime(),
   total: z.int(),
   rows: z.array(marginRowSchema),
-  next: z.int().nullable(),
+  next: z.string().nullable(),
 });
 export type MarginList = z.infer<typeof marginListSchema>;
 

@@ -1,10 +1,12 @@
-import { and, asc, desc, eq, getTableColumns, gte, inArray, lt, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, getTableColumns, gte, inArray, lt, sql, type SQL } from 'drizzle-orm';
 import type { Rung } from '../contract/lines';
 import type { Creep } from '../contract/warning';
 import type { Store } from './client';
 import { creepVerdict, dayLevel, hourLevel, minuteLevel, staleHour } from './schema/levels';
 
 export type LevelRow = typeof hourLevel.$inferSelect;
+/** A level row without what only the composition and the marks need, which is most of its bytes. */
+export type LevelFigures = Omit<LevelRow, 'sums' | 'channelPath'>;
 
 const TABLES = { minute: minuteLevel, hour: hourLevel, day: dayLevel } as const;
 const KEYS: readonly string[] = ['lineId', 'phase', 'start'];
@@ -25,20 +27,41 @@ export async function writeLevels(store: Store, rung: Rung, rows: readonly Level
       .onDuplicateKeyUpdate({ set: replaced });
 }
 
+interface LevelWindow {
+  readonly lineIds: readonly number[];
+  readonly from: Date;
+  readonly to: Date;
+}
+
 /** Level rows of these lines with a start in [from, to), oldest first. */
-export async function readLevels(
-  store: Store,
-  rung: Rung,
-  { lineIds, from, to }: { lineIds: readonly number[]; from: Date; to: Date },
-): Promise<LevelRow[]> {
-  if (lineIds.length === 0) return [];
+export async function readLevels(store: Store, rung: Rung, window: LevelWindow): Promise<LevelRow[]> {
+  if (window.lineIds.length === 0) return [];
   const table = TABLES[rung];
   return store.db
     .select()
     .from(table)
-    .where(and(inArray(table.lineId, [...lineIds]), gte(table.start, from), lt(table.start, to)))
+    .where(startsWithin(table, window))
     .orderBy(asc(table.start), asc(table.phase));
 }
+
+/** The same rows, their figures alone: two years of a line are read in a third of the time. */
+export async function readLevelFigures(
+  store: Store,
+  rung: Rung,
+  window: LevelWindow,
+): Promise<LevelFigures[]> {
+  if (window.lineIds.length === 0) return [];
+  const table = TABLES[rung];
+  const { sums: _sums, channelPath: _channelPath, ...figures } = getTableColumns(table);
+  return store.db
+    .select(figures)
+    .from(table)
+    .where(startsWithin(table, window))
+    .orderBy(asc(table.start), asc(table.phase));
+}
+
+const startsWithin = (table: (typeof TABLES)[Rung], { lineIds, from, to }: LevelWindow): SQL | undefined =>
+  and(inArray(table.lineId, [...lineIds]), gte(table.start, from), lt(table.start, to));
 
 /** The level of an hour beside its load, without the rest of its row. */
 export interface HourOfLoad {

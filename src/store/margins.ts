@@ -13,6 +13,7 @@ import {
   type SQL,
 } from 'drizzle-orm';
 import type { MarginFilter } from '../contract/margins';
+import type { MarginPlace } from '../contract/margin-place';
 import type { MarginSort, StandingVerdict } from '../contract/standing';
 import type { PhaseName } from '../protection/phase';
 import type { Store } from './client';
@@ -69,44 +70,70 @@ export async function countMargins(store: Store, filter: MarginFilter): Promise<
   return row?.rows ?? 0;
 }
 
+/** A row in an order: its line's key and the figure that it is sorted by. */
+export interface PlacedMargin extends MarginKey {
+  readonly key: string;
+  readonly value: MarginPlace['value'];
+}
+
+interface OrderedPage {
+  readonly sort: StoredSort;
+  readonly descending: boolean;
+  /** the row before the first one; from the top without it */
+  readonly after?: MarginPlace;
+  readonly limit: number;
+}
+
 /**
  * The rows of one page, in order. A row without the figure stands last whichever way the order goes; rows alike stand
- * by name and phase, so that pages neither repeat nor miss one. Only keys are sorted: with the findings themselves
- * in the sort, the database would carry megabytes through it.
+ * by the line's key and phase, so that a page begins behind one row and no other. Only keys are sorted: with the
+ * findings themselves in the sort, the database would carry megabytes through it.
  */
 export async function readMarginKeys(
   store: Store,
   filter: MarginFilter,
-  page: { sort: StoredSort; descending: boolean; after: number; limit: number },
-): Promise<MarginKey[]> {
+  page: OrderedPage,
+): Promise<PlacedMargin[]> {
   const by = ORDER[page.sort];
   return store.db
-    .select({ lineId: standingVerdict.lineId, phase: standingVerdict.phase })
+    .select({
+      lineId: standingVerdict.lineId,
+      phase: standingVerdict.phase,
+      key: line.key,
+      value: sql<PlacedMargin['value']>`${by}`,
+    })
     .from(standingVerdict)
     .innerJoin(line, eq(standingVerdict.lineId, line.id))
-    .where(filtered(filter))
+    .where(and(filtered(filter), behind(by, page)))
     .orderBy(
       sql`${by} is null`,
       page.descending ? sql`${by} desc` : sql`${by} asc`,
-      asc(line.name),
-      asc(standingVerdict.lineId),
+      asc(line.key),
       asc(standingVerdict.phase),
     )
-    .limit(page.limit)
-    .offset(page.after);
+    .limit(page.limit);
 }
 
-/** Every row that a filter leaves, by name and phase, with the line's key: for an order that the database does not know. */
+function behind(by: SQL, { after, descending }: OrderedPage): SQL | undefined {
+  if (after === undefined) return undefined;
+  const alikeAndLater = sql`(${line.key} > ${after.line}
+    or (${line.key} = ${after.line} and ${standingVerdict.phase} > ${after.phase}))`;
+  if (after.value === null) return sql`(${by} is null and ${alikeAndLater})`;
+  const further = descending ? sql`${by} < ${after.value}` : sql`${by} > ${after.value}`;
+  return sql`(${by} is null or ${further} or (${by} = ${after.value} and ${alikeAndLater}))`;
+}
+
+/** Every row that a filter leaves, by the line's key and phase: for an order that the database does not know. */
 export async function readAllMarginKeys(
   store: Store,
   filter: MarginFilter,
-): Promise<(MarginKey & { key: string })[]> {
+): Promise<Omit<PlacedMargin, 'value'>[]> {
   return store.db
     .select({ lineId: standingVerdict.lineId, phase: standingVerdict.phase, key: line.key })
     .from(standingVerdict)
     .innerJoin(line, eq(standingVerdict.lineId, line.id))
     .where(filtered(filter))
-    .orderBy(asc(line.name), asc(standingVerdict.lineId), asc(standingVerdict.phase));
+    .orderBy(asc(line.key), asc(standingVerdict.phase));
 }
 
 /** Whole rows, in the order of their keys. */
@@ -238,12 +265,20 @@ export async function countForecastLines(store: Store, nearRatio: number): Promi
   return { found, beyond, coming, withinMargin, unknown: without?.lines ?? 0 };
 }
 
-/** Daily standing levels of these phases, oldest first: without the sums, which are most of a day row. */
+export interface DailyLevels extends MarginKey {
+  /** days after the first day asked for, each with its level; null on a day without one */
+  readonly days: readonly (readonly [place: number, levelAmps: number | null])[];
+}
+
+/**
+ * Daily standing levels of these phases from a day on, to a tenth of an ampere. A phase's days come as one text: as
+ * rows of their own, the driver would make tens of thousands of objects for a page.
+ */
 export async function readDailyLevels(
   store: Store,
   keys: readonly MarginKey[],
   from: Date,
-): Promise<(MarginKey & { start: Date; medianAmps: number | null })[]> {
+): Promise<DailyLevels[]> {
   if (keys.length === 0) return [];
   const ofPhase = [...groupedBy(keys, ({ phase }) => phase)].map(([phase, own]) =>
     and(
@@ -254,16 +289,23 @@ export async function readDailyLevels(
       eq(dayLevel.phase, phase),
     ),
   );
-  return store.db
+  const place = sql`datediff(${dayLevel.start}, ${from})`;
+  const rows = await store.db
     .select({
       lineId: dayLevel.lineId,
       phase: dayLevel.phase,
-      start: dayLevel.start,
-      medianAmps: dayLevel.medianAmps,
+      days: sql<string>`group_concat(
+        concat(${place}, ':', coalesce(round(${dayLevel.medianAmps}, 1), '')) order by ${dayLevel.start})`,
     })
     .from(dayLevel)
     .where(and(or(...ofPhase), gte(dayLevel.start, from)))
-    .orderBy(asc(dayLevel.start));
+    .groupBy(dayLevel.lineId, dayLevel.phase);
+  return rows.map(({ days, ...key }) => ({ ...key, days: days.split(',').map(placedLevel) }));
+}
+
+function placedLevel(text: string): [place: number, levelAmps: number | null] {
+  const [place = '', levelAmps = ''] = text.split(':');
+  return [Number(place), levelAmps === '' ? null : Number(levelAmps)];
 }
 
 export interface FleetCounts {

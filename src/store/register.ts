@@ -1,4 +1,5 @@
-import { asc, eq } from 'drizzle-orm';
+import { asc, eq, inArray } from 'drizzle-orm';
+import type { AnyMySqlColumn } from 'drizzle-orm/mysql-core';
 import { inZoneTransformerSchema, type RegisterLine } from '../contract/register';
 import type { SettingsVersion } from '../contract/settings-version';
 import type { Store } from './client';
@@ -12,15 +13,31 @@ export interface RegisteredLine extends RegisterLine {
 }
 
 /** The whole register; terminals in position order, settings oldest first. */
-export async function readRegister(store: Store): Promise<RegisteredLine[]> {
+export const readRegister = (store: Store): Promise<RegisteredLine[]> => readLines(store, undefined);
+
+export async function readRegisterLine(store: Store, key: string): Promise<RegisteredLine | undefined> {
+  return (await readLines(store, key))[0];
+}
+
+async function readLines(store: Store, key: string | undefined): Promise<RegisteredLine[]> {
+  const asked = key === undefined ? undefined : eq(line.key, key);
+  const own = (lineId: AnyMySqlColumn) =>
+    key === undefined
+      ? undefined
+      : inArray(lineId, store.db.select({ id: line.id }).from(line).where(eq(line.key, key)));
   const [lines, terminals, settings] = await Promise.all([
-    store.db.select().from(line).orderBy(asc(line.name)),
+    store.db.select().from(line).where(asked).orderBy(asc(line.name)),
     store.db
       .select({ terminal, substationName: substation.name })
       .from(terminal)
       .innerJoin(substation, eq(terminal.substation, substation.key))
+      .where(own(terminal.lineId))
       .orderBy(asc(terminal.position)),
-    store.db.select().from(settingRecord).orderBy(asc(settingRecord.validFrom), asc(settingRecord.id)),
+    store.db
+      .select()
+      .from(settingRecord)
+      .where(own(settingRecord.lineId))
+      .orderBy(asc(settingRecord.validFrom), asc(settingRecord.id)),
   ]);
   const terminalsOf = groupedBy(terminals, (row) => row.terminal.lineId);
   const settingsOf = groupedBy(settings, (row) => row.lineId);
@@ -38,11 +55,6 @@ export async function readRegister(store: Store): Promise<RegisteredLine[]> {
       settings: (settingsOf.get(row.id) ?? []).map(settingsVersion),
     };
   });
-}
-
-export async function readRegisterLine(store: Store, key: string): Promise<RegisteredLine | undefined> {
-  // the register is small and read seldom: one way of reading it keeps one meaning
-  return (await readRegister(store)).find((entry) => entry.key === key);
 }
 
 export async function readRegisterRevision(store: Store): Promise<number> {

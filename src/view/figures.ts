@@ -8,12 +8,18 @@ const UNIT_SPACE = '\u00a0';
 type Figure = number | null | undefined;
 const isFigure = (value: Figure): value is number => typeof value === 'number' && Number.isFinite(value);
 
-const grouped = (value: number, digits: number): string =>
-  value.toLocaleString(LANGUAGE, {
-    minimumFractionDigits: digits,
-    maximumFractionDigits: digits,
-    useGrouping: 'min2',
-  });
+// built once: a format costs far more to build than to use, and a fleet's page writes thousands of figures
+const WITH_DIGITS = [0, 1].map(
+  (digits) =>
+    new Intl.NumberFormat(LANGUAGE, {
+      minimumFractionDigits: digits,
+      maximumFractionDigits: digits,
+      useGrouping: 'min2',
+    }),
+);
+const UP_TO_ONE_DIGIT = new Intl.NumberFormat(LANGUAGE, { maximumFractionDigits: 1 });
+
+const grouped = (value: number, digits: 0 | 1): string => WITH_DIGITS[digits]!.format(value);
 
 /** "38 A", "4.2 A" below ten; 'not computable' for null. */
 export function ampsText(amps: Figure): string {
@@ -40,15 +46,11 @@ export function percentOfMarkText(ratio: Figure, markRatio = 1): string {
 
 /** "110 kV" */
 export const kilovoltsText = (kv: Figure): string =>
-  isFigure(kv)
-    ? `${kv.toLocaleString(LANGUAGE, { maximumFractionDigits: 1 })}${UNIT_SPACE}kV`
-    : NOT_COMPUTABLE;
+  isFigure(kv) ? `${UP_TO_ONE_DIGIT.format(kv)}${UNIT_SPACE}kV` : NOT_COMPUTABLE;
 
 /** "18.4 km", "71 km" */
 export const kilometresText = (km: Figure): string =>
-  isFigure(km)
-    ? `${km.toLocaleString(LANGUAGE, { maximumFractionDigits: 1 })}${UNIT_SPACE}km`
-    : NOT_COMPUTABLE;
+  isFigure(km) ? `${UP_TO_ONE_DIGIT.format(km)}${UNIT_SPACE}km` : NOT_COMPUTABLE;
 
 const SECOND_MS = 1_000;
 const MINUTE_MS = 60 * SECOND_MS;

@@ -16,7 +16,10 @@ export interface ForecastRow {
 
 const RANK: Readonly<Record<ForecastPlace, number>> = { beyond: 0, coming: 1, 'within margin': 2 };
 
-export function phasePlace({ verdict, creepVerdict }: ForecastPhase, nearRatio: number): ForecastPlace {
+export function phasePlace(
+  { verdict, creepVerdict }: Pick<ForecastPhase, 'verdict' | 'creepVerdict'>,
+  nearRatio: number,
+): ForecastPlace {
   if (verdict.shareOfPickup !== null && verdict.shareOfPickup >= nearRatio) return 'beyond';
   return creepVerdict === 'creep' ? 'coming' : 'within margin';
 }

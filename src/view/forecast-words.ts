@@ -1,5 +1,5 @@
-import type { ForecastLine, ForecastPhase } from '../contract/forecast-list';
-import type { StandingVerdict, StepOnWire } from '../contract/standing';
+import type { ForecastLine, ForecastWords } from '../contract/forecast-list';
+import type { MarginRow, StandingVerdict, StepOnWire } from '../contract/standing';
 import { causeName, movedAndStill, movedCauses, TIME_WORDS } from './cause-names';
 import { sinceWords } from './composition-words';
 import { countedDrift } from './counted-drift';
@@ -15,15 +15,14 @@ export interface ForecastContext {
   readonly substations: ForecastLine['substations'];
 }
 
-/** What a planner needs of one phase: how it rises, when it gets there, and what has moved. */
-export interface ForecastWords {
-  readonly lead: string;
-  readonly when: string;
-  /** undefined when the causes cannot be told */
-  readonly why: string | undefined;
+interface FoundPhase {
+  readonly verdict: StandingVerdict;
+  /** of the drift that counts */
+  readonly creepVerdict: MarginRow['creepVerdict'];
 }
 
-export function phaseWords(phase: ForecastPhase, context: ForecastContext): ForecastWords {
+/** One phase’s findings for a planner, in words. */
+export function phaseWords(phase: FoundPhase, context: ForecastContext): ForecastWords {
   const { verdict } = phase;
   return {
     lead: leadWords(phase, context),
@@ -32,7 +31,7 @@ export function phaseWords(phase: ForecastPhase, context: ForecastContext): Fore
   };
 }
 
-function leadWords({ verdict, creepVerdict }: ForecastPhase, { site }: ForecastContext): string {
+function leadWords({ verdict, creepVerdict }: FoundPhase, { site }: ForecastContext): string {
   const phase = `Phase ${site.phaseLetters[verdict.phase]}`;
   const creep = creepVerdict === null ? undefined : countedDrift(verdict);
   if (creep !== undefined)
@@ -43,7 +42,7 @@ function leadWords({ verdict, creepVerdict }: ForecastPhase, { site }: ForecastC
 const atReference = ({ creepAtReference }: StandingVerdict): string =>
   creepAtReference === null ? '' : ` at a load of ${ampsText(creepAtReference.referenceThroughAmps)}`;
 
-function whenWords(phase: ForecastPhase, { site, nowMs }: ForecastContext): string {
+function whenWords(phase: FoundPhase, { site, nowMs }: ForecastContext): string {
   const { verdict } = phase;
   const rises = phase.creepVerdict !== null;
   if (phasePlace(phase, site.nearRatio) !== 'beyond')

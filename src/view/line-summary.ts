@@ -7,7 +7,7 @@ import { chargingAmps, susceptanceMicrosiemensPerKm } from '../protection/chargi
 import { pickupAmps } from '../protection/characteristic';
 import { perPhase, PHASES, type PhaseName } from '../protection/phase';
 import { standingLevel24h } from '../standing/level';
-import type { LevelRow } from '../store/levels';
+import type { LevelFigures } from '../store/levels';
 import { settingsInForce } from '../store/register';
 import { obstacle } from '../warnings/obstacle';
 
@@ -15,9 +15,9 @@ import { obstacle } from '../warnings/obstacle';
 export interface LineKnowledge {
   readonly result: Result | undefined;
   /** hour rows of the last 24 hours */
-  readonly hours: readonly LevelRow[];
+  readonly hours: readonly LevelFigures[];
   /** day rows of the last two months */
-  readonly days: readonly LevelRow[];
+  readonly days: readonly LevelFigures[];
   readonly creep: readonly Creep[];
   readonly warnings: readonly Warning[];
   readonly nowMs: number;
@@ -95,7 +95,7 @@ function expectedChargingAmps(line: RegisterLine, frequencyHz: number): number |
 }
 
 /** The band from the lowest hourly 5th to the highest hourly 95th percentile, so that the whole load cycle lies in it. */
-function lastDay(hours: readonly LevelRow[], phase: PhaseName): LineSummary['lastDay'][PhaseName] {
+function lastDay(hours: readonly LevelFigures[], phase: PhaseName): LineSummary['lastDay'][PhaseName] {
   const own = hours.filter((row) => row.phase === phase);
   const known = (values: readonly (number | null)[]) => values.filter((value) => value !== null);
   const lows = known(own.map(({ p05Amps }) => p05Amps));
@@ -106,7 +106,7 @@ function lastDay(hours: readonly LevelRow[], phase: PhaseName): LineSummary['las
 }
 
 /** The history in small: of the phase that stands highest on the newest day, so that the curve does not change phase midway. */
-function dailyLevels(days: readonly LevelRow[]): LineSummary['dailyLevels'] {
+function dailyLevels(days: readonly LevelFigures[]): LineSummary['dailyLevels'] {
   const newest = days.findLast(({ medianAmps }) => medianAmps !== null)?.start.getTime();
   const level = (phase: PhaseName) =>
     days.find((row) => row.phase === phase && row.start.getTime() === newest)?.medianAmps ?? 0;

@@ -11,6 +11,8 @@ export interface LineTable {
   readonly caption: string;
   readonly columns: readonly TableColumn[];
   readonly rows: readonly (readonly CsvCell[])[];
+  /** where the first cell of each row leads, for a chart whose points lead there */
+  readonly links?: readonly string[];
 }
 
 /** The table as a file: instants in UTC, figures to their decimals, empty where there is none. */

@@ -97,7 +97,6 @@ export const marginQueryOf = ({
   ...(owner === undefined ? {} : { owner }),
   sort,
   descending,
-  after: 0,
 });
 
 /** What a click on a column's head asks for: its usual way, or the other one when it is sorted by already. */

@@ -32,8 +32,9 @@ export function scatterPoints(scatter: MarginScatter, which: 'worst' | 'all'): S
 export const reach = ({ chargingShare, mismatchShare }: ScatterPoint): number =>
   Math.hypot(chargingShare, mismatchShare);
 
-/** The figures behind the scatter, those that reach furthest first. */
+/** The figures behind the scatter, those that reach furthest first; each leads to its line, as its point does. */
 export function scatterTable(points: readonly ScatterPoint[], letters: PhaseLetters): LineTable {
+  const furthestFirst = points.toSorted((one, other) => reach(other) - reach(one));
   return {
     caption: 'Charging and mismatch as shares of the pickup, %',
     columns: [
@@ -43,15 +44,14 @@ export function scatterTable(points: readonly ScatterPoint[], letters: PhaseLett
       { kind: 'figure', head: 'mismatch, % of pickup', digits: 1 },
       { kind: 'figure', head: 'standing level, % of pickup', digits: 1 },
     ],
-    rows: points
-      .toSorted((one, other) => reach(other) - reach(one))
-      .map((point) => [
-        point.lineName,
-        letters[point.phase],
-        100 * point.chargingShare,
-        100 * point.mismatchShare,
-        point.shareOfPickup === null ? null : 100 * point.shareOfPickup,
-      ]),
+    rows: furthestFirst.map((point) => [
+      point.lineName,
+      letters[point.phase],
+      100 * point.chargingShare,
+      100 * point.mismatchShare,
+      point.shareOfPickup === null ? null : 100 * point.shareOfPickup,
+    ]),
+    links: furthestFirst.map(({ key }) => `/lines/${key}`),
   };
 }
 

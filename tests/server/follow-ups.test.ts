@@ -120,7 +120,11 @@ describe('a follow-up', () => {
 });
 
 describe('the forecast', () => {
-  const site = { store, now: () => NOW_MS, settings: { NEAR_RATIO: 0.7 } } as unknown as Site;
+  const site = {
+    store,
+    now: () => NOW_MS,
+    settings: { NEAR_RATIO: 0.7, PHASE_LETTERS: 'A,B,C', SITE_TIME_ZONE: 'Europe/Berlin' },
+  } as unknown as Site;
   const dayRow = (lineId: number, phase: 'a' | 'b' | 'c', day: string, medianAmps: number | null) =>
     levelRow({ lineId, phase, start: new Date(`${day}T00:00:00Z`) }, medianAmps);
 

@@ -1,4 +1,3 @@
-import { eq } from 'drizzle-orm';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { MARGINS_A_PAGE, marginQuerySchema, marginScatterSchema } from '../../src/contract/margins';
 import { MARGIN_SORTS, marginListSchema, type MarginList, type MarginRow } from '../../src/contract/standing';
@@ -11,7 +10,9 @@ import { readFleetChoices } from '../../src/store/margins';
 import { line } from '../../src/store/schema/register';
 import { testStore } from '../database';
 import { madeUpLineOf, ownerAt, storedFleet } from '../store/made-up-fleet';
+import { standingVerdict } from '../../src/store/schema/standing';
 import type { APIContext } from 'astro';
+import { and, eq } from 'drizzle-orm';
 import type { Role } from '../../src/contract/role';
 
 const LINES = 90;
@@ -87,10 +88,13 @@ const FIGURE: Record<(typeof MARGIN_SORTS)[number], (row: MarginRow) => number |
 
 async function everyRow(query: string): Promise<MarginRow[]> {
   const rows: MarginRow[] = [];
-  let after = 0;
+  let after: string | undefined;
   for (;;) {
-    const asked = marginQuerySchema.parse({ ...Object.fromEntries(new URLSearchParams(query)), after });
-    const page = await readMarginList(site, asked);
+    const asked = {
+      ...Object.fromEntries(new URLSearchParams(query)),
+      ...(after === undefined ? {} : { after }),
+    };
+    const page = await readMarginList(site, marginQuerySchema.parse(asked));
     rows.push(...page.rows);
     if (page.next === null) return rows;
     after = page.next;
@@ -125,10 +129,50 @@ describe('the order of the fleet', () => {
 describe('a page', () => {
   it('holds fifty rows and says where the next one begins, and the last one says that there is none', async () => {
     const first = await list('');
-    expect([first.rows.length, first.total, first.next]).toEqual([MARGINS_A_PAGE, ROWS, 50]);
-    const last = await list(`?after=${ROWS - 10}`);
+    expect([first.rows.length, first.total]).toEqual([MARGINS_A_PAGE, ROWS]);
+    const inOrder = await everyRow('');
+    const behind = ({ shareOfPickup, line, phase }: MarginRow) =>
+      list(`?after=${encodeURIComponent(`${shareOfPickup}~${line}~${phase}`)}`);
+    expect((await behind(first.rows.at(-1)!)).rows[0]).toEqual(inOrder[MARGINS_A_PAGE]);
+    const last = await behind(inOrder.at(-11)!);
     expect([last.rows.length, last.next]).toEqual([10, null]);
-    expect((await list(`?after=${ROWS}`)).rows).toEqual([]);
+    expect((await behind(inOrder.at(-1)!)).rows).toEqual([]);
+  });
+
+  it.each(['shareOfPickup', 'utilisation', 'lineName'])(
+    'by %s begins behind the last row shown, though findings before it have moved or gone since',
+    async (sort) => {
+      const [renewed, gone] = (await everyRow(`sort=${sort}`)).slice(3, 5);
+      const first = await list(`?sort=${sort}`);
+      const second = `?sort=${sort}&after=${encodeURIComponent(first.next!)}`;
+      const before = (await list(second)).rows;
+      const kept = await store.db.select().from(standingVerdict);
+      const idOf = new Map((await store.db.select().from(line)).map(({ id, key }) => [key, id]));
+      const rowOf = ({ line: key, phase }: MarginRow) =>
+        and(eq(standingVerdict.lineId, idOf.get(key)!), eq(standingVerdict.phase, phase));
+      await store.db.update(standingVerdict).set({ shareOfPickup: 0 }).where(rowOf(renewed!));
+      await store.db.delete(standingVerdict).where(rowOf(gone!));
+      const after = (await list(second)).rows;
+      await store.db.delete(standingVerdict);
+      await store.db.insert(standingVerdict).values(kept);
+      expect(after.map(({ line: key, phase }) => `${key} ${phase}`)).toEqual(
+        before.map(({ line: key, phase }) => `${key} ${phase}`),
+      );
+    },
+  );
+
+  it('of another order, or of none, is refused with a sentence', async () => {
+    for (const query of [
+      '?sort=levelAmps&after=Esk~esk-holm-1~a',
+      '?sort=nearLikely&after=4.5~esk-holm-1~a',
+      '?after=50',
+    ]) {
+      const answer = await called(getMargins, query);
+      expect([answer.status, await answer.json()]).toMatchObject([
+        400,
+        { fields: [{ field: 'after', problem: expect.stringContaining('Give what the page before said') }] },
+      ]);
+    }
   });
 
   it('carries the ends of each line and utilisation only where it is fresh', async () => {
@@ -272,8 +316,12 @@ describe('who may see margins', () => {
 describe(`with ${MANY_LINES} lines of three phases`, () => {
   const QUESTIONS: readonly (readonly [string, typeof getMargins, string])[] = [
     ...MARGIN_SORTS.map((sort) => [`list by ${sort}`, getMargins, `?sort=${sort}`] as const),
-    ['list, last page', getMargins, `?sort=levelAmps&after=${3 * MANY_LINES - 50}`],
-    ['list, one owner’s, last page', getMargins, '?owner=Holm+Networks&sort=owner&after=1950'],
+    ['list, far down', getMargins, '?sort=lineName&after=Kell~kell-inver-20~a'],
+    [
+      'list, one owner’s, far down',
+      getMargins,
+      '?owner=Holm+Networks&sort=owner&after=Holm+Networks~kell-inver-20~a',
+    ],
     ['list, one owner’s by utilisation', getMargins, '?owner=Holm+Networks&sort=utilisation'],
     ['list, filtered', getMargins, '?text=esk&substation=holm&voltage=220&creep=none&owner=Holm+Networks'],
     ['scatter', getScatter, ''],

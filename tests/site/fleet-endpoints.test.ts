@@ -33,7 +33,7 @@ const COMPOSITION = '/api/lines/anvil-birch/composition?from=2026-01-01T00:00:00
 
 const READS: readonly (readonly [path: string, roles: readonly Role[], answer: z.ZodType | 'text/csv'])[] = [
   ['/api/margins', MARGINS, marginListSchema],
-  ['/api/margins?sort=nearLikely&owner=Nobody&after=50', MARGINS, marginListSchema],
+  ['/api/margins?sort=nearLikely&owner=Nobody&after=2026-05-01~anvil-birch~b', MARGINS, marginListSchema],
   ['/api/margins/scatter', MARGINS, marginScatterSchema],
   ['/api/margins/export.csv?columns=level,forecast', MARGINS, 'text/csv'],
   ['/api/follow-ups?state=open', PLANNING, followUpListSchema],
@@ -63,6 +63,7 @@ describe('with bad parameters', () => {
     ['/api/margins?sort=colour', 'sort'],
     ['/api/margins?voltage=high', 'voltage'],
     ['/api/margins?after=-1', 'after'],
+    ['/api/margins?sort=nearLikely&after=0.4~anvil-birch~b', 'after'],
     ['/api/margins/scatter?creep=perhaps', 'creep'],
     ['/api/follow-ups?state=asleep', 'state'],
     ['/api/works?line=No%20Key', 'line'],

@@ -72,6 +72,7 @@ const lineOf = (
   phases: verdicts.map((verdict) => ({
     verdict,
     creepVerdict: verdict.creep?.verdict ?? null,
+    words: { lead: '', when: '', why: '' },
     history: undefined,
   })),
 });
@@ -153,7 +154,10 @@ describe('where a line stands', () => {
 
 describe('the words for a planner', () => {
   const words = (verdict: StandingVerdict) =>
-    phaseWords(lineOf('one', [verdict]).phases[0]!, { site: SITE, nowMs: AT_MS, substations: SUBSTATIONS });
+    phaseWords(
+      { verdict, creepVerdict: verdict.creep?.verdict ?? null },
+      { site: SITE, nowMs: AT_MS, substations: SUBSTATIONS },
+    );
 
   it('say how fast, when, and the likely cause', () => {
     expect(words(verdictWith())).toEqual({

@@ -35,7 +35,10 @@ export function FiguresTable({ table, timeZone }: Props) {
             <tr key={index}>
               {table.columns.map((column, at) => (
                 <td key={column.head} className={cellClass(table.columns, at)}>
-                  {cellText(row[at] ?? null, column, timeZone)}
+                  <Cell
+                    text={cellText(row[at] ?? null, column, timeZone)}
+                    leadsTo={at === 0 ? table.links?.[index] : undefined}
+                  />
                 </td>
               ))}
             </tr>
@@ -48,6 +51,15 @@ export function FiguresTable({ table, timeZone }: Props) {
         </p>
       )}
     </div>
+  );
+}
+
+function Cell({ text, leadsTo }: { text: string; leadsTo: string | undefined }) {
+  if (leadsTo === undefined) return text;
+  return (
+    <a href={leadsTo} className="link whitespace-nowrap">
+      {text}
+    </a>
   );
 }
 

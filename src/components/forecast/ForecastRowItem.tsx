@@ -9,7 +9,6 @@ import {
   type ForecastPlace,
   type ForecastRow,
 } from '../../view/forecast-list';
-import { phaseWords } from '../../view/forecast-words';
 import type { SiteCustom } from '../../view/site-custom';
 import { sparkline } from '../../view/sparkline';
 import { FollowUpForm } from '../follow-ups/FollowUpForm';
@@ -62,8 +61,7 @@ export function ForecastRowItem({ row, axis, site, nowMs, followUps, mayKeep }: 
   const { line, phase, place } = row;
   const { verdict } = phase;
   const mark = MARKS[place];
-  const context = { site, nowMs, substations: line.substations };
-  const words = phaseWords(phase, context);
+  const { words } = phase;
   const nearAmps = verdict.pickupAmps === null ? undefined : site.nearRatio * verdict.pickupAmps;
   const range = forecastRange(shownDates(row), axis);
   return (
@@ -106,21 +104,17 @@ export function ForecastRowItem({ row, axis, site, nowMs, followUps, mayKeep }: 
           <strong className="font-semibold">{words.lead}</strong> {words.when}
           {words.why !== '' && <span className="text-ink-2"> {words.why}</span>}
         </p>
-        {row.others.length > 0 && <Others row={row} context={context} />}
+        {row.others.length > 0 && <Others row={row} />}
         <LineFollowUps {...{ row, site, nowMs, followUps, mayKeep }} />
       </div>
     </li>
   );
 }
 
-function Others({ row, context }: { row: ForecastRow; context: Parameters<typeof phaseWords>[1] }) {
+function Others({ row }: { row: ForecastRow }) {
   return (
     <p className="mt-1 max-w-[64ch] text-pretty text-ink-2">
-      As well:{' '}
-      {row.others
-        .map((other) => phaseWords(other, context))
-        .map(({ lead, when }) => `${lead} ${when}`)
-        .join(' ')}
+      As well: {row.others.map(({ words: { lead, when } }) => `${lead} ${when}`).join(' ')}
     </p>
   );
 }

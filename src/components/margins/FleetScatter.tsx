@@ -44,7 +44,7 @@ export function FleetScatter({ state, site, nowMs }: FleetScatterProps) {
   return (
     <ChartPanel
       title="Charging against mismatch"
-      caption="Each line as shares of its pickup, from the last 30 days; a point opens its line"
+      caption="Each line as shares of its pickup, from the last 30 days; a point opens its line, and so does its name in the table"
       controls={
         <Choice
           legend="Points shown"

@@ -1,6 +1,7 @@
 import { keepPreviousData, useInfiniteQuery, useQuery } from '@tanstack/react-query';
 import { marginScatterSchema, type MarginScatter } from '../../contract/margins';
 import { marginListSchema, type MarginList, type MarginRow } from '../../contract/standing';
+import { rowsOfPages } from '../../view/margin-order';
 import { marginFilterParameters, marginListParameters, type MarginAddress } from '../../view/margin-query';
 import { apiRequest } from '../shell/api-request';
 
@@ -29,19 +30,19 @@ export function useMargins(
     queryKey: ['margins', asked],
     queryFn: ({ pageParam, signal }) => {
       const parameters = new URLSearchParams(asked);
-      if (pageParam > 0) parameters.set('after', `${pageParam}`);
+      if (pageParam !== null) parameters.set('after', pageParam);
       return apiRequest(`/api/margins?${parameters}`, { answer: marginListSchema, signal });
     },
-    initialPageParam: 0,
+    initialPageParam: null as string | null,
     getNextPageParam: (last: MarginList) => last.next,
-    ...(asked === initial.search ? { initialData: { pages: [initial.list], pageParams: [0] } } : {}),
+    ...(asked === initial.search ? { initialData: { pages: [initial.list], pageParams: [null] } } : {}),
     placeholderData: keepPreviousData,
     staleTime: FRESH_MS,
     retry: false,
   });
   const pages = query.data?.pages ?? [];
   return {
-    rows: pages.flatMap(({ rows }) => rows),
+    rows: rowsOfPages(pages),
     total: pages[0]?.total ?? 0,
     hasMore: query.hasNextPage,
     error: query.error,

@@ -1,6 +1,10 @@
-import type { CompositionOnWire } from '../../contract/composition';
 import { DONE_MOST } from '../../contract/follow-ups';
-import type { ForecastHistory, ForecastLine, ForecastList } from '../../contract/forecast-list';
+import type {
+  ForecastHistory,
+  ForecastLine,
+  ForecastList,
+  ForecastVerdict,
+} from '../../contract/forecast-list';
 import type { StandingVerdict } from '../../contract/standing';
 import { groupedBy } from '../../store/grouped';
 import { readFollowUps } from '../../store/follow-ups';
@@ -10,7 +14,10 @@ import {
   readForecastKeys,
   readLineEnds,
   readMargins,
+  type DailyLevels,
 } from '../../store/margins';
+import { phaseWords } from '../../view/forecast-words';
+import { siteCustom } from '../../view/site-custom';
 import type { Site } from '../site';
 
 const DAY_MS = 86_400_000;
@@ -21,7 +28,9 @@ const PHASES_MOST = 400;
 /** Lines that rise or stand beyond the near mark, most urgent first, with what is kept to be done about them. */
 export async function readForecastList({ store, settings, now }: Site): Promise<ForecastList> {
   const nowMs = now();
+  const from = new Date((Math.floor(nowMs / DAY_MS) - HISTORY_DAYS) * DAY_MS);
   const { NEAR_RATIO } = settings;
+  const custom = siteCustom(settings);
   const [keys, counts, followUps, doneFollowUps] = await Promise.all([
     readForecastKeys(store, NEAR_RATIO, PHASES_MOST),
     countForecastLines(store, NEAR_RATIO),
@@ -32,21 +41,25 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
   const [margins, ends, days] = await Promise.all([
     readMargins(store, keys),
     readLineEnds(store, lineIds),
-    readDailyLevels(store, keys, new Date(nowMs - HISTORY_DAYS * DAY_MS)),
+    readDailyLevels(store, keys, from),
   ]);
-  const daysOf = groupedBy(days, ({ lineId, phase }) => `${lineId} ${phase}`);
-  const lines = [...groupedBy(margins, ({ lineId }) => lineId)].map(([lineId, own]): ForecastLine => ({
-    key: own[0]!.key,
-    name: own[0]!.lineName,
-    owner: own[0]!.owner,
-    voltageKv: own[0]!.voltageKv,
-    substations: [...(ends.get(lineId) ?? [])],
-    phases: own.map(({ phase, verdict, figures }) => ({
-      verdict: withoutPolygons(verdict),
-      creepVerdict: figures.creepVerdict,
-      history: history(daysOf.get(`${lineId} ${phase}`) ?? []),
-    })),
-  }));
+  const daysOf = new Map(days.map((own) => [`${own.lineId} ${own.phase}`, own.days]));
+  const lines = [...groupedBy(margins, ({ lineId }) => lineId)].map(([lineId, own]): ForecastLine => {
+    const substations = [...(ends.get(lineId) ?? [])];
+    return {
+      key: own[0]!.key,
+      name: own[0]!.lineName,
+      owner: own[0]!.owner,
+      voltageKv: own[0]!.voltageKv,
+      substations,
+      phases: own.map(({ phase, verdict, figures: { creepVerdict } }) => ({
+        verdict: shown(verdict),
+        creepVerdict,
+        words: phaseWords({ verdict, creepVerdict }, { site: custom, nowMs, substations }),
+        history: history(daysOf.get(`${lineId} ${phase}`) ?? [], from),
+      })),
+    };
+  });
   const listed = counts.beyond + counts.coming + counts.withinMargin;
   return {
     at: new Date(nowMs).toISOString(),
@@ -61,26 +74,24 @@ export async function readForecastList({ store, settings, now }: Site): Promise<
   };
 }
 
-type Day = Awaited<ReturnType<typeof readDailyLevels>>[number];
-
-function history(days: readonly Day[]): ForecastHistory | undefined {
+function history(days: DailyLevels['days'], from: Date): ForecastHistory | undefined {
   const first = days[0];
   const last = days.at(-1);
   if (first === undefined || last === undefined) return undefined;
-  const place = ({ start }: Day) => Math.round((start.getTime() - first.start.getTime()) / DAY_MS);
-  const levelsAmps = Array<number | null>(place(last) + 1).fill(null);
-  for (const day of days) levelsAmps[place(day)] = day.medianAmps === null ? null : tenths(day.medianAmps);
-  return { from: first.start.toISOString().slice(0, 10), levelsAmps };
+  const levelsAmps = Array<number | null>(last[0] - first[0] + 1).fill(null);
+  for (const [place, levelAmps] of days) levelsAmps[place - first[0]] = levelAmps;
+  return {
+    from: new Date(from.getTime() + first[0] * DAY_MS).toISOString().slice(0, 10),
+    levelsAmps,
+  };
 }
 
-const tenths = (amps: number): number => Math.round(amps * 10) / 10;
-
-/** The page draws no polygon: what it does not show, it is not sent. */
-const withoutPolygons = (verdict: StandingVerdict): StandingVerdict => ({
-  ...verdict,
-  composition: bare(verdict.composition),
-  compositionBefore: verdict.compositionBefore && bare(verdict.compositionBefore),
-});
-
-const bare = (found: CompositionOnWire): CompositionOnWire =>
-  found.kind === 'separated' ? { ...found, polygon: null } : found;
+/** What the page draws and sorts by; everything else of a verdict is in the words. */
+const shown = ({
+  phase,
+  pickupAmps,
+  shareOfPickup,
+  likelyCause,
+  near,
+  pickup,
+}: StandingVerdict): ForecastVerdict => ({ phase, pickupAmps, shareOfPickup, likelyCause, near, pickup });

@@ -1,7 +1,7 @@
 import type { Level, LevelList, Rung, Snapshot, SnapshotList } from '../../contract/lines';
 import type { PhaseResult } from '../../contract/result';
 import { obstacle } from '../../warnings/obstacle';
-import { readCreep, readLevels } from '../../store/levels';
+import { readCreep, readLevelFigures } from '../../store/levels';
 import { unpackMeasurements } from '../../store/packing';
 import { readRegisterLine, type RegisteredLine } from '../../store/register';
 import { hasFlag } from '../../store/snapshot-flags';
@@ -42,10 +42,10 @@ export async function readLevelList(
   const line = await readRegisterLine(site.store, key);
   if (line === undefined) return undefined;
   const [rows, creep] = await Promise.all([
-    readLevels(site.store, rung, { lineIds: [line.id], from, to }),
+    readLevelFigures(site.store, rung, { lineIds: [line.id], from, to }),
     readCreep(site.store, [line.id]),
   ]);
-  const levels: Level[] = rows.map(({ lineId: _lineId, sums: _sums, channelPath: _path, ...row }) => ({
+  const levels: Level[] = rows.map(({ lineId: _lineId, ...row }) => ({
     ...row,
     start: row.start.toISOString(),
   }));

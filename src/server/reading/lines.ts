@@ -1,6 +1,6 @@
 import type { LineDetail, LineList, LineSummary } from '../../contract/lines';
 import type { Warning } from '../../contract/warning';
-import { readCreep, readLevels } from '../../store/levels';
+import { readCreep, readLevelFigures } from '../../store/levels';
 import { groupedBy } from '../../store/grouped';
 import { readRegister, readRegisterLine, type RegisteredLine } from '../../store/register';
 import { readVerdictsOfLine } from '../../store/standing';
@@ -52,8 +52,8 @@ async function readSummaries(
   const lineIds = register.map(({ id }) => id);
   const to = new Date(nowMs);
   const [hours, days, creep] = await Promise.all([
-    readLevels(store, 'hour', { lineIds, from: new Date(nowMs - DAY_MS), to }),
-    readLevels(store, 'day', { lineIds, from: new Date(nowMs - HISTORY_DAYS * DAY_MS), to }),
+    readLevelFigures(store, 'hour', { lineIds, from: new Date(nowMs - DAY_MS), to }),
+    readLevelFigures(store, 'day', { lineIds, from: new Date(nowMs - HISTORY_DAYS * DAY_MS), to }),
     readCreep(store, lineIds),
   ]);
   const hoursOf = groupedBy(hours, ({ lineId }) => lineId);

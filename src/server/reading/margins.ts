@@ -1,4 +1,5 @@
 import type { MarginFilter, MarginQuery, MarginScatter } from '../../contract/margins';
+import { marginPlaceText } from '../../contract/margin-place';
 import { MARGINS_A_PAGE } from '../../contract/margins';
 import type { MarginList, MarginRow } from '../../contract/standing';
 import {
@@ -10,9 +11,10 @@ import {
   readMargins,
   type LineEnds,
   type MarginKey,
+  type PlacedMargin,
   type StoredMargin,
 } from '../../store/margins';
-import { marginOrder } from '../../view/margin-order';
+import { marginOrder, marginsBehind } from '../../view/margin-order';
 import { liveUtilisation } from '../../view/margin-utilisation';
 import type { Site } from '../site';
 
@@ -30,11 +32,12 @@ export async function readMarginList(
     sortedKeys(site, query, limit + 1),
   ]);
   const shown = keys.slice(0, limit);
+  const last = keys.length > limit ? shown.at(-1) : undefined;
   return {
     at: new Date(site.now()).toISOString(),
     total,
     rows: await marginRows(site, shown),
-    next: keys.length > limit ? query.after + limit : null,
+    next: last === undefined ? null : marginPlaceText({ ...last, line: last.key }),
   };
 }
 
@@ -43,7 +46,7 @@ export async function* readEveryMargin(
   site: Site,
   query: Omit<MarginQuery, 'after'>,
 ): AsyncGenerator<MarginRow[]> {
-  const keys = await sortedKeys(site, { ...query, after: 0 }, Number.MAX_SAFE_INTEGER);
+  const keys = await sortedKeys(site, query, Number.MAX_SAFE_INTEGER);
   for (let from = 0; from < keys.length; from += ROWS_A_READ)
     yield marginRows(site, keys.slice(from, from + ROWS_A_READ));
 }
@@ -79,16 +82,18 @@ async function sortedKeys(
   { store, live, now }: Site,
   query: MarginQuery,
   limit: number,
-): Promise<readonly MarginKey[]> {
+): Promise<readonly PlacedMargin[]> {
   const { sort, descending, after } = query;
-  if (sort !== 'utilisation') return readMarginKeys(store, query, { sort, descending, after, limit });
+  const begin = after === undefined ? {} : { after };
+  if (sort !== 'utilisation') return readMarginKeys(store, query, { sort, descending, limit, ...begin });
   const results = live.results();
   const nowMs = now();
   const keys = (await readAllMarginKeys(store, query)).map((one) => ({
     ...one,
-    utilisation: liveUtilisation(results.get(one.key), one.phase, nowMs),
+    value: liveUtilisation(results.get(one.key), one.phase, nowMs),
   }));
-  return marginOrder(keys, ({ utilisation }) => utilisation, descending).slice(after, after + limit);
+  const ordered = marginOrder(keys, ({ value }) => value, descending);
+  return marginsBehind(ordered, after, descending).slice(0, limit);
 }
 
 async function marginRows(site: Site, keys: readonly MarginKey[]): Promise<MarginRow[]> {
